@@ -1,0 +1,8 @@
+/** @type {import("next").NextConfig} */
+const nextConfig = {
+  poweredByHeader: false,
+  reactStrictMode: true,
+  serverExternalPackages: ["knex", "pg", "pg-boss", "@node-rs/argon2", "sharp", "pino", "smtp-server", "nodemailer"],
+};
+
+export default nextConfig;
