@@ -98,12 +98,19 @@ export async function up(knex: Knex): Promise<void> {
     create table round_transition (
       from_state text not null,
       to_state text not null,
+      by text[] not null,
+      needs_reason boolean not null,
       primary key (from_state, to_state)
     );
     insert into round_transition values
-      ('planned', 'measuring'), ('measuring', 'in_review'), ('in_review', 'signed'), ('in_review', 'measuring'),
-      ('signed', 'scheduled'), ('signed', 'published'), ('scheduled', 'published'),
-      ('signed', 'in_review'), ('scheduled', 'in_review');
+      ('planned', 'measuring', '{operator,host}', false),
+      ('measuring', 'in_review', '{operator,host}', false),
+      ('in_review', 'measuring', '{reviewer}', true),
+      ('in_review', 'signed', '{reviewer}', false),
+      ('signed', 'scheduled', '{host}', false),
+      ('scheduled', 'published', '{publication}', false),
+      ('signed', 'in_review', '{change}', true),
+      ('scheduled', 'in_review', '{change}', true);
     select keep_as_written('round_transition');
 
     create table round (
@@ -132,9 +139,13 @@ export async function up(knex: Knex): Promise<void> {
     select keep_as_written('round_move');
 
     create function carry_round() returns trigger language plpgsql as $$
-    declare now_in text;
+    declare now_in text; reason_needed boolean;
     begin
       select state into now_in from round where id = new.round_id for update;
+      select needs_reason into reason_needed from round_transition where from_state = new.from_state and to_state = new.to_state;
+      if reason_needed and coalesce(btrim(new.reason), '') = '' then
+        raise exception 'a move from % to % needs a reason', new.from_state, new.to_state using errcode = 'not_null_violation';
+      end if;
       if now_in is distinct from new.from_state then
         raise exception 'the round is %, not %', now_in, new.from_state using errcode = 'serialization_failure';
       end if;
@@ -166,42 +177,46 @@ export async function up(knex: Knex): Promise<void> {
     create table entry_transition (
       from_state text not null,
       to_state text not null,
+      history text not null check (history in ('any', 'never_published', 'ever_published')),
       by text[] not null,
       needs_reason boolean not null,
-      primary key (from_state, to_state)
+      primary key (from_state, to_state, history)
     );
     insert into entry_transition values
-      ('draft', 'sent_in', '{designer}', false),
-      ('sent_in', 'returned', '{host}', true),
-      ('sent_in', 'declined', '{host}', true),
-      ('sent_in', 'accepted', '{host}', false),
-      ('returned', 'sent_in', '{designer}', false),
-      ('returned', 'replaced', '{designer}', false),
-      ('accepted', 'printing', '{operator,host}', false),
-      ('accepted', 'declined', '{host}', true),
-      ('printing', 'declined', '{host}', true),
-      ('on_the_bench', 'declined', '{host}', true),
-      ('printing', 'printing', '{operator,host}', true),
-      ('printing', 'on_the_bench', '{operator}', false),
-      ('on_the_bench', 'printing', '{operator}', true),
-      ('on_the_bench', 'in_review', '{operator}', false),
-      ('in_review', 'on_the_bench', '{reviewer}', true),
-      ('in_review', 'published', '{publication}', false),
-      ('published', 'on_the_bench', '{host}', true),
-      ('published', 'withdrawn', '{host}', true),
-      ('draft', 'withdrawn', '{designer}', false),
-      ('sent_in', 'withdrawn', '{designer}', false),
-      ('returned', 'withdrawn', '{designer}', false),
-      ('accepted', 'withdrawn', '{designer}', false),
-      ('printing', 'withdrawn', '{designer}', false),
-      ('on_the_bench', 'withdrawn', '{designer}', false),
-      ('in_review', 'withdrawn', '{designer}', false),
-      ('sent_in', 'carried_over', '{host}', false),
-      ('returned', 'carried_over', '{host}', false),
-      ('accepted', 'carried_over', '{host}', false),
-      ('printing', 'carried_over', '{host}', false),
-      ('on_the_bench', 'carried_over', '{host}', false),
-      ('in_review', 'carried_over', '{host}', false);
+      ('draft', 'sent_in', 'any', '{designer}', false),
+      ('sent_in', 'returned', 'any', '{host}', false),
+      ('sent_in', 'declined', 'any', '{host}', false),
+      ('sent_in', 'accepted', 'any', '{host}', false),
+      ('returned', 'sent_in', 'any', '{designer}', false),
+      ('returned', 'replaced', 'any', '{designer}', false),
+      ('accepted', 'printing', 'any', '{operator,host}', false),
+      ('accepted', 'declined', 'any', '{host}', true),
+      ('printing', 'declined', 'never_published', '{host}', true),
+      ('on_the_bench', 'declined', 'never_published', '{host}', true),
+      ('printing', 'printing', 'any', '{operator,host}', false),
+      ('printing', 'on_the_bench', 'any', '{operator}', false),
+      ('on_the_bench', 'printing', 'any', '{operator}', false),
+      ('on_the_bench', 'in_review', 'any', '{operator}', false),
+      ('in_review', 'on_the_bench', 'any', '{reviewer}', true),
+      ('in_review', 'published', 'any', '{publication}', false),
+      ('published', 'on_the_bench', 'any', '{host}', false),
+      ('published', 'withdrawn', 'ever_published', '{host}', true),
+      ('draft', 'withdrawn', 'never_published', '{designer}', false),
+      ('sent_in', 'withdrawn', 'never_published', '{designer}', false),
+      ('returned', 'withdrawn', 'never_published', '{designer}', false),
+      ('accepted', 'withdrawn', 'never_published', '{designer}', false),
+      ('printing', 'withdrawn', 'never_published', '{designer}', false),
+      ('on_the_bench', 'withdrawn', 'never_published', '{designer}', false),
+      ('in_review', 'withdrawn', 'never_published', '{designer}', false),
+      ('printing', 'withdrawn', 'ever_published', '{host}', true),
+      ('on_the_bench', 'withdrawn', 'ever_published', '{host}', true),
+      ('in_review', 'withdrawn', 'ever_published', '{host}', true),
+      ('sent_in', 'carried_over', 'never_published', '{host}', false),
+      ('returned', 'carried_over', 'never_published', '{host}', false),
+      ('accepted', 'carried_over', 'never_published', '{host}', false),
+      ('printing', 'carried_over', 'never_published', '{host}', false),
+      ('on_the_bench', 'carried_over', 'never_published', '{host}', false),
+      ('in_review', 'carried_over', 'never_published', '{host}', false);
     select keep_as_written('entry_transition');
 
     create table entry (
@@ -228,8 +243,7 @@ export async function up(knex: Knex): Promise<void> {
       by_person uuid references person,
       by_right text not null check (by_right in ('designer', 'operator', 'host', 'reviewer', 'publication')),
       reason text,
-      at timestamptz not null default now(),
-      foreign key (from_state, to_state) references entry_transition
+      at timestamptz not null default now()
     );
     create index entry_move_entry on entry_move (entry_id, at);
     select keep_as_written('entry_move');
@@ -241,17 +255,17 @@ export async function up(knex: Knex): Promise<void> {
       if e.state is distinct from new.from_state then
         raise exception 'the entry is %, not %', e.state, new.from_state using errcode = 'serialization_failure';
       end if;
-      select * into t from entry_transition where from_state = new.from_state and to_state = new.to_state;
+      select * into t from entry_transition where from_state = new.from_state and to_state = new.to_state
+        and history <> case when e.ever_published then 'never_published' else 'ever_published' end;
+      if not found then
+        raise exception 'an entry does not go from % to %', new.from_state, new.to_state using errcode = 'restrict_violation';
+      end if;
       if not (new.by_right = any (t.by)) then
         raise exception 'a % may not move an entry from % to %', new.by_right, new.from_state, new.to_state
           using errcode = 'insufficient_privilege';
       end if;
       if t.needs_reason and coalesce(btrim(new.reason), '') = '' then
         raise exception 'a move from % to % needs a reason', new.from_state, new.to_state using errcode = 'not_null_violation';
-      end if;
-      if e.ever_published and (new.to_state = 'carried_over' or new.to_state = 'declined'
-        or (new.to_state = 'withdrawn' and new.by_right <> 'host')) then
-        raise exception 'a published entry leaves only by publication or by the host withdrawing it' using errcode = 'restrict_violation';
       end if;
       update entry set state = new.to_state, state_at = new.at,
         ever_published = ever_published or new.to_state = 'published' where id = new.entry_id;

@@ -65,8 +65,8 @@ export async function up(knex: Knex): Promise<void> {
     revoke insert on round_transition, entry_transition from fanfold_app;
     revoke update on demo_seed from fanfold_app;
     do $$ begin
-      if to_regclass('public.knex_migrations') is not null then
-        revoke all on knex_migrations, knex_migrations_lock from fanfold_app;
+      if to_regclass('public.schema_migration') is not null then
+        revoke all on schema_migration, schema_migration_lock from fanfold_app;
       end if;
     end $$;
     grant delete on ${deletable.join(", ")} to fanfold_app;
