@@ -5,11 +5,11 @@ import type { Passwords } from "./passwords";
 export const roleNames = { owner: "fanfold_owner", app: "fanfold_app", public: "fanfold_public" } as const;
 
 /** Runs statements over one connection and closes it. */
-export async function withClient<T>(url: string, use: (client: pg.Client) => Promise<T>): Promise<T> {
+export async function withClient<T>(url: string, work: (client: pg.Client) => Promise<T>): Promise<T> {
   const client = new pg.Client({ connectionString: url, connectionTimeoutMillis: 5_000 });
   await client.connect();
   try {
-    return await use(client);
+    return await work(client);
   } finally {
     await client.end();
   }

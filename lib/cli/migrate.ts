@@ -1,0 +1,43 @@
+import type { Knex } from "knex";
+import { migrateDown, migrateUp, pendingMigrations } from "@/db/client/migrator";
+import { roleNames } from "@/db/cluster/roles";
+import { ownerDb } from "@/db/client/handles";
+import { requiredEnv } from "@/lib/env/env";
+import { installJobs } from "@/lib/services/jobs/install";
+
+/**
+ * Brings a database up to date: the product's tables, then the job queues'.
+ *
+ * @param ownerUrl the owner's address
+ * @returns the names of the migrations applied
+ */
+export function migrateEverything(ownerUrl: string): Promise<string[]> {
+  return migrateUp(ownerUrl, async (owner: Knex) => {
+    await installJobs(ownerUrl, (sql) => Promise.resolve(owner.raw(sql)), roleNames.app);
+  });
+}
+
+async function main(order: string): Promise<void> {
+  const url = requiredEnv("MIGRATE_DATABASE_URL");
+  if (order === "up") return report("Applied", await migrateEverything(url));
+  if (order === "down") return report("Taken back", await migrateDown(url, false));
+  if (order === "down-all") return report("Taken back", await migrateDown(url, true));
+  if (order === "status") {
+    const owner = ownerDb(url);
+    return report("Pending", await pendingMigrations(owner).finally(() => owner.destroy()));
+  }
+  throw new Error(`Unknown order ${order}. Use: npm run migrate -- up | down | down-all | status`);
+}
+
+function report(what: string, names: string[]): void {
+  console.log(names.length === 0 ? `${what}: nothing` : `${what}:\n  ${names.join("\n  ")}`);
+}
+
+if (process.argv[1] === import.meta.filename) {
+  try {
+    await main(process.argv[2] ?? "up");
+  } catch (error) {
+    console.error(error instanceof Error ? error.message : error);
+    process.exitCode = 1;
+  }
+}
