@@ -13,6 +13,8 @@ import { installJobs } from "@/lib/services/jobs/install";
  */
 export function migrateEverything(ownerUrl: string): Promise<string[]> {
   return migrateUp(ownerUrl, async (owner: Knex) => {
+    // So that a process that may not migrate can see that somebody has to.
+    await owner.raw("grant select on schema_migration to ??", [roleNames.app]);
     await installJobs(ownerUrl, (sql) => Promise.resolve(owner.raw(sql)), roleNames.app);
   });
 }

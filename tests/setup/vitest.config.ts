@@ -6,13 +6,40 @@ const root = path.resolve(import.meta.dirname, "../..");
 /** One project a kind of test, so that each can be run alone: `--project reference`. */
 const plain = (name: string, extra: Record<string, unknown> = {}) => ({
   extends: true as const,
-  test: { name, include: [`tests/${name}/**/*.test.{ts,tsx}`], environment: "node" as const, ...extra },
+  test: {
+    name,
+    include: [`tests/${name}/**/*.test.{ts,tsx}`],
+    environment: "node" as const,
+    setupFiles: ["tests/setup/quiet-console.ts"],
+    ...extra,
+  },
 });
+
+/** Real servers answer, so a hook may wait for one to come up; no test asserts on time. */
+const patient = { testTimeout: 30_000, hookTimeout: 120_000 };
+
+/** Runs against the product as `npm start` serves it, one file after the other: they share its database. */
+const served = {
+  ...patient,
+  testTimeout: 120_000,
+  globalSetup: ["tests/setup/server-setup.ts"],
+  fileParallelism: false,
+};
 
 export default defineConfig({
   root,
   resolve: { alias: { "@": root } },
   test: {
-    projects: [plain("architecture"), plain("unit"), plain("reference"), plain("recorded")],
+    maxWorkers: 2,
+    projects: [
+      plain("architecture", { testTimeout: 60_000 }),
+      plain("unit"),
+      plain("reference", { testTimeout: 30_000 }),
+      plain("recorded", { testTimeout: 30_000 }),
+      plain("db", { ...patient, globalSetup: ["tests/setup/cluster-setup.ts"] }),
+      plain("faults", { ...patient, testTimeout: 240_000, fileParallelism: false }),
+      plain("api", served),
+      plain("browser", served),
+    ],
   },
 });

@@ -34,8 +34,9 @@ export async function installJobs(
     for (const name of queueNames) {
       const { retryLimit, expireInSeconds } = jobQueues[name];
       // "short" keeps one waiting job a key; jobs that may pile up are sent with a key of their own.
-      await boss.createQueue(name, { name, policy: "short", retryLimit, retryBackoff: true, expireInSeconds });
-      await boss.updateQueue(name, { name, retryLimit, retryBackoff: true, expireInSeconds });
+      const settings = { name, policy: "short", retryLimit, retryBackoff: true, expireInSeconds } as const;
+      await boss.createQueue(name, settings);
+      await boss.updateQueue(name, settings);
     }
   } finally {
     await boss.stop({ graceful: false });
