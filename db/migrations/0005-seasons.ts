@@ -98,7 +98,7 @@ export async function up(knex: Knex): Promise<void> {
     create table round_transition (
       from_state text not null,
       to_state text not null,
-      by text[] not null,
+      movers text[] not null,
       needs_reason boolean not null,
       primary key (from_state, to_state)
     );
@@ -178,7 +178,7 @@ export async function up(knex: Knex): Promise<void> {
       from_state text not null,
       to_state text not null,
       history text not null check (history in ('any', 'never_published', 'ever_published')),
-      by text[] not null,
+      movers text[] not null,
       needs_reason boolean not null,
       primary key (from_state, to_state, history)
     );
@@ -260,7 +260,7 @@ export async function up(knex: Knex): Promise<void> {
       if not found then
         raise exception 'an entry does not go from % to %', new.from_state, new.to_state using errcode = 'restrict_violation';
       end if;
-      if not (new.by_right = any (t.by)) then
+      if not (new.by_right = any (t.movers)) then
         raise exception 'a % may not move an entry from % to %', new.by_right, new.from_state, new.to_state
           using errcode = 'insufficient_privilege';
       end if;

@@ -1,0 +1,207 @@
+import type { Knex } from "knex";
+import { v7 as uuidv7 } from "uuid";
+import type { Random } from "@/lib/science/statistics/random";
+import type { DemoBench } from "./seed-bench";
+import type { DemoSeason } from "./seed-seasons";
+import { levelDba, referenceFan, resistanceKPerW, type ToyFan } from "./toy-model";
+
+/** Something on the bench: an entry's specimen, or the baseline unit. */
+export interface DemoSubject {
+  fan: ToyFan;
+  entryId?: string;
+  specimenId?: string;
+  baselineUnitId?: string;
+}
+
+export interface DemoSession {
+  season: DemoSeason;
+  roundId: string;
+  operatorId: string;
+  beganAt: Date;
+  subjects: readonly DemoSubject[];
+  /** False leaves the session open, with the baseline's last mount still to come. */
+  closed: boolean;
+}
+
+const setSpeeds = [750, 1100, 1450, 1800];
+const mounts = 3;
+const round1 = (value: number): number => Math.round(value * 10) / 10;
+
+interface Draft {
+  runs: Record<string, unknown>[];
+  speeds: Record<string, unknown>[];
+  readings: Record<string, unknown>[];
+}
+
+interface Circumstances {
+  sessionId: string;
+  operatorId: string;
+  positions: readonly { id: string; name: string }[];
+  levelOffsetDb: number;
+  deltaTOffsetK: number;
+  ambientC: number;
+  minute: number;
+  ordinal: number;
+  beganAt: Date;
+}
+
+function reading(
+  c: Circumstances,
+  runId: string | null,
+  quantity: string,
+  value: number,
+  unit: string,
+  more: object = {},
+) {
+  return {
+    id: uuidv7(),
+    session_id: c.sessionId,
+    run_id: runId,
+    quantity,
+    value,
+    unit,
+    source: "typed",
+    taken_by: c.operatorId,
+    taken_at: new Date(c.beganAt.getTime() + c.minute * 60_000),
+    position_id: null,
+    phase: null,
+    rotor_position: null,
+    ...more,
+  };
+}
+
+/** One mount of one subject through all set speeds, with the noise of the toy bench. */
+function measureMount(random: Random, c: Circumstances, subject: DemoSubject, mount: number, draft: Draft): void {
+  const mountLevelDb = 0.25 * random.normal();
+  const mountK = 0.2 * random.normal();
+  for (const setSpeed of setSpeeds) {
+    const runId = uuidv7();
+    c.ordinal += 1;
+    c.minute += 12;
+    c.ambientC += 0.02 * random.normal();
+    const speedRpm = Math.round(setSpeed * (1 + 0.002 * random.normal()));
+    const powerW = round1(150 + 0.15 * random.normal());
+    const deltaTK = powerW * resistanceKPerW(subject.fan, speedRpm) + c.deltaTOffsetK + mountK + 0.08 * random.normal();
+    const ambientC = round1(c.ambientC);
+    draft.runs.push({
+      id: runId,
+      session_id: c.sessionId,
+      entry_id: subject.entryId ?? null,
+      specimen_id: subject.specimenId ?? null,
+      baseline_unit_id: subject.baselineUnitId ?? null,
+      set_speed: setSpeed,
+      mount_number: mount,
+      ordinal: c.ordinal,
+      state: "done",
+      by_person: c.operatorId,
+      began_at: new Date(c.beganAt.getTime() + c.minute * 60_000),
+    });
+    subject.fan.rotors.forEach((_rotor, i) => {
+      const rpm = speedRpm + (i === 0 ? 0 : Math.round(3 * random.normal()));
+      draft.speeds.push({ run_id: runId, rotor_position: i + 1, speed_rpm: rpm, source: "tachometer" });
+      draft.readings.push(reading(c, runId, "speed_rpm", rpm, "rpm", { rotor_position: i + 1 }));
+    });
+    for (const position of c.positions) {
+      const aside = position.name === "on axis" ? 0 : -1.1;
+      const own = levelDba(subject.fan, speedRpm) + aside + c.levelOffsetDb + mountLevelDb + 0.12 * random.normal();
+      const heard = 10 * Math.log10(10 ** (own / 10) + 10 ** (backgroundOf(position.name) / 10));
+      draft.readings.push(reading(c, runId, "level_dba", round1(heard), "dB(A)", { position_id: position.id }));
+    }
+    draft.readings.push(reading(c, runId, "ambient_c", ambientC, "°C"));
+    draft.readings.push(reading(c, runId, "sensor_c", round1(ambientC + deltaTK), "°C"));
+    draft.readings.push(reading(c, runId, "power_w", powerW, "W"));
+  }
+}
+
+const backgroundOf = (position: string): number => (position === "on axis" ? 27.6 : 27.3);
+
+async function insertDraft(db: Knex, draft: Draft): Promise<void> {
+  await db.batchInsert("run", draft.runs, 200);
+  await db.batchInsert("run_speed", draft.speeds, 500);
+  await db.batchInsert("reading", draft.readings, 500);
+}
+
+/** Calibrator and background at the start or the end of a session. */
+async function insertChecks(db: Knex, random: Random, c: Circumstances, phase: "before" | "after"): Promise<void> {
+  for (const position of c.positions) {
+    const calibrator = reading(c, null, "calibrator_db", round1(94 + 0.07 * random.normal()), "dB", {
+      position_id: position.id,
+      phase,
+    });
+    const background = reading(
+      c,
+      null,
+      "background_dba",
+      round1(backgroundOf(position.name) + 0.15 * random.normal()),
+      "dB(A)",
+      {
+        position_id: position.id,
+      },
+    );
+    await db("reading").insert([calibrator, background]);
+    await db("calibration_check").insert({
+      session_id: c.sessionId,
+      position_id: position.id,
+      phase,
+      calibrator_level_db: 94,
+      reading_id: calibrator.id,
+    });
+    await db("background_level").insert({
+      session_id: c.sessionId,
+      position_id: position.id,
+      heated: false,
+      duration_s: 30,
+      reading_id: background.id,
+    });
+  }
+}
+
+/**
+ * A sitting at the bench: calibrator and background, the baseline's first two mounts, three mounts of each subject, the
+ * baseline's last mount, calibrator and background again. @returns the session's id
+ */
+export async function seedSession(db: Knex, random: Random, bench: DemoBench, session: DemoSession): Promise<string> {
+  const version = bench.versions[session.season.benchIndex];
+  if (!version) throw new Error("no such bench version in the demo");
+  const sessionId = uuidv7();
+  await db("session").insert({
+    id: sessionId,
+    bench_id: bench.benchId,
+    bench_version_id: version.id,
+    protocol_version_id: session.season.protocolVersionId,
+    budget_version_id: version.budgetId,
+    baseline_unit_id: session.season.baselineUnitId,
+    round_id: session.roundId,
+    operator_id: session.operatorId,
+    began_at: session.beganAt,
+    checklist: { guard: true, cut_out: true, ear_protection: true, paste: true },
+  });
+  const c: Circumstances = {
+    sessionId,
+    operatorId: session.operatorId,
+    positions: version.positions,
+    levelOffsetDb: 0.2 * random.normal(),
+    deltaTOffsetK: 0.1 * random.normal(),
+    ambientC: 21.5 + random.uniform() * 2,
+    minute: 5,
+    ordinal: 0,
+    beganAt: session.beganAt,
+  };
+  const humidity = reading(c, null, "humidity_percent", Math.round(40 + 10 * random.uniform()), "%");
+  const pressure = reading(c, null, "pressure_pa", Math.round(100_200 + 900 * random.normal()), "Pa");
+  await db("reading").insert([humidity, pressure]);
+  await insertChecks(db, random, c, "before");
+  const draft: Draft = { runs: [], speeds: [], readings: [] };
+  const baseline: DemoSubject = { fan: referenceFan, baselineUnitId: session.season.baselineUnitId };
+  for (const mount of [1, 2]) measureMount(random, c, baseline, mount, draft);
+  for (const subject of session.subjects)
+    for (let mount = 1; mount <= mounts; mount += 1) measureMount(random, c, subject, mount, draft);
+  if (session.closed) measureMount(random, c, baseline, 3, draft);
+  await insertDraft(db, draft);
+  if (session.closed) {
+    await insertChecks(db, random, c, "after");
+    const endedAt = new Date(c.beganAt.getTime() + (c.minute + 10) * 60_000);
+    await db("session").where({ id: sessionId }).update({ ended_at: endedAt });
+  }
+  return sessionId;
+}
