@@ -4,6 +4,13 @@ import path from "node:path";
 import type { ServerAccount } from "./account";
 import { findServerBinaries, type ServerBinaries } from "./binaries";
 
+/** What PostgreSQL's programs get of the environment: none of ours, so that no PG* variable or secret reaches them. */
+export const serverEnvironment: NodeJS.ProcessEnv = {
+  NODE_ENV: "production",
+  PATH: "/usr/bin:/bin",
+  LC_ALL: "C.UTF-8",
+};
+
 export const adminRole = "fanfold_admin";
 
 /** Which version made the cluster in this folder; undefined when there is no cluster yet. */
@@ -58,7 +65,7 @@ export function initialiseCluster(pgdata: string, account: ServerAccount | undef
         uid: account?.uid,
         gid: account?.gid,
         encoding: "utf8",
-        env: { PATH: "/usr/bin:/bin", LC_ALL: "C.UTF-8" },
+        env: serverEnvironment,
       },
     );
     if (made.status !== 0) throw new Error(`The database's folder could not be made:\n${made.stderr || made.error}`);

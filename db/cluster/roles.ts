@@ -23,7 +23,7 @@ export async function ensureRoles(adminUrl: string, passwords: Passwords): Promi
       const known = await client.query("select 1 from pg_roles where rolname = $1", [roleNames[key]]);
       if (known.rowCount === 0) await client.query(`create role ${name}`);
       const password = client.escapeLiteral(passwords[key]);
-      await client.query(`alter role ${name} login nosuperuser nocreatedb nocreaterole noinherit password ${password}`);
+      await client.query(`alter role ${name} login nosuperuser nocreatedb nocreaterole inherit password ${password}`);
     }
     await client.query(
       `alter role ${client.escapeIdentifier(roleNames.public)} set default_transaction_read_only = on`,

@@ -2,7 +2,7 @@ import { spawn, type ChildProcess } from "node:child_process";
 import { closeSync, openSync, readFileSync, rmSync } from "node:fs";
 import path from "node:path";
 import type { ServerAccount } from "./account";
-import { binariesFor } from "./initialise";
+import { binariesFor, serverEnvironment } from "./initialise";
 import { isAlive, postmasterPid, processesIn, signal, until } from "./processes";
 
 /** Fast shutdown: sessions are ended and everything is written. */
@@ -68,7 +68,7 @@ export function spawnServer(
       gid: account?.gid,
       detached: true,
       stdio: ["ignore", log, log],
-      env: { PATH: "/usr/bin:/bin", LC_ALL: "C.UTF-8" },
+      env: serverEnvironment,
     },
   );
   closeSync(log);

@@ -1,7 +1,7 @@
 import next from "eslint-config-next";
 import typescript from "eslint-config-next/typescript";
 
-export default [
+const rules = [
   { ignores: [".next/**", "data/**", "node_modules/**", "next-env.d.ts"] },
   ...next,
   ...typescript,
@@ -13,3 +13,5 @@ export default [
     },
   },
 ];
+
+export default rules;
