@@ -1,0 +1,126 @@
+import type { Document } from "./paths";
+import { eachLeaf } from "./paths";
+import { scalarText, tokenise } from "./words";
+import { Vocabulary } from "./vocabulary";
+
+/** Where a word occurs: a document slot and a packed place, in order of slot. */
+export type Posting = { slots: number[]; places: number[] };
+
+const POSITION_BITS = 17;
+const SOLE_BIT = 1 << 16;
+const POSITION_MAX = SOLE_BIT - 1;
+/** Words of neighbouring array items stand this far apart. */
+const ITEM_GAP = 8;
+
+export const attributeOf = (place: number): number => place >> POSITION_BITS;
+export const positionOf = (place: number): number => place & POSITION_MAX;
+/** Whether the word is the attribute's only one, so that typing it is typing the whole value. */
+export const isSole = (place: number): boolean => (place & SOLE_BIT) !== 0;
+
+/** Words of the searchable attributes; one entry a word, document and attribute, at its first position. */
+export class Postings {
+  private byWord = new Map<string, Posting>();
+  private vocabularyCache: Vocabulary | undefined;
+  private readonly attributeIds = new Map<string, number>();
+  /** Paths by attribute number, in the order in which documents brought them. */
+  readonly attributes: string[] = [];
+
+  constructor(
+    private readonly isSearchable: (path: string) => boolean,
+    private readonly stopWords: ReadonlySet<string>,
+  ) {}
+
+  get vocabulary(): Vocabulary {
+    return (this.vocabularyCache ??= new Vocabulary(this.byWord.keys()));
+  }
+
+  get(word: string): Posting | undefined {
+    return this.byWord.get(word);
+  }
+
+  add(slot: number, document: Document): void {
+    for (const [attribute, words] of this.read(document)) {
+      const sole = words.length === 1 ? SOLE_BIT : 0;
+      for (const { word, position } of words) {
+        const place = attribute * (1 << POSITION_BITS) + sole + Math.min(position, POSITION_MAX);
+        this.insert(word, slot, place);
+      }
+    }
+  }
+
+  remove(slot: number, document: Document): void {
+    const gone = new Set<string>();
+    for (const words of this.read(document).values()) for (const { word } of words) gone.add(word);
+    for (const word of gone) {
+      const posting = this.byWord.get(word);
+      if (posting === undefined) continue;
+      const from = lowerBound(posting.slots, slot);
+      let to = from;
+      while (posting.slots[to] === slot) to += 1;
+      posting.slots.splice(from, to - from);
+      posting.places.splice(from, to - from);
+      if (posting.slots.length > 0) continue;
+      this.byWord.delete(word);
+      this.vocabularyCache = undefined;
+    }
+  }
+
+  private read(document: Document): Map<number, { word: string; position: number }[]> {
+    const found = new Map<number, { word: string; position: number }[]>();
+    eachLeaf(document, "", (path, leaf) => {
+      const text = scalarText(leaf);
+      if (text === undefined || !this.isSearchable(path)) return;
+      const attribute = this.attributeId(path);
+      const words = found.get(attribute) ?? [];
+      const last = words[words.length - 1];
+      const start = last === undefined ? 0 : last.position + ITEM_GAP;
+      tokenise(text).forEach(({ word }, index) => {
+        if (!this.stopWords.has(word)) words.push({ word, position: start + index });
+      });
+      if (words.length > 0) found.set(attribute, words);
+    });
+    return found;
+  }
+
+  private attributeId(path: string): number {
+    let id = this.attributeIds.get(path);
+    if (id === undefined) {
+      id = this.attributes.push(path) - 1;
+      this.attributeIds.set(path, id);
+    }
+    return id;
+  }
+
+  private insert(word: string, slot: number, place: number): void {
+    let posting = this.byWord.get(word);
+    if (posting === undefined) {
+      posting = { slots: [], places: [] };
+      this.byWord.set(word, posting);
+      this.vocabularyCache = undefined;
+    }
+    const { slots, places } = posting;
+    const isLast = slots.length === 0 || (slots[slots.length - 1] as number) <= slot;
+    const at = isLast ? slots.length : lowerBound(slots, slot + 1);
+    for (let i = at - 1; i >= 0 && slots[i] === slot; i -= 1) {
+      if (attributeOf(places[i] as number) === attributeOf(place)) return;
+    }
+    if (isLast) {
+      slots.push(slot);
+      places.push(place);
+    } else {
+      slots.splice(at, 0, slot);
+      places.splice(at, 0, place);
+    }
+  }
+}
+
+function lowerBound(sorted: readonly number[], value: number): number {
+  let low = 0;
+  let high = sorted.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((sorted[middle] as number) < value) low = middle + 1;
+    else high = middle;
+  }
+  return low;
+}

@@ -1,0 +1,40 @@
+/** One word of a text: its normal form and where it stands in the original, in UTF-16 units. */
+export type Token = { word: string; start: number; end: number };
+
+const WORD = /[\p{L}\p{N}\p{M}]+/gu;
+const MARKS = /\p{Mn}/gu;
+/** Longer words are not indexed, as in the service. */
+const WORD_LENGTH_MAX = 250;
+const ASCII_LOWER = /^[a-z0-9]+$/;
+
+/** Lower case, compatibility-decomposed, without combining marks: the form in which words are compared. */
+export function normaliseWord(word: string): string {
+  if (ASCII_LOWER.test(word)) return word;
+  return word.normalize("NFKD").replace(MARKS, "").toLowerCase();
+}
+
+/**
+ * Words of a text in order. Everything but letters, digits and marks separates, hyphen and apostrophe included;
+ * scripts written without spaces are not segmented.
+ */
+export function tokenise(text: string): Token[] {
+  const tokens: Token[] = [];
+  for (const match of text.matchAll(WORD)) {
+    const word = normaliseWord(match[0]);
+    if (word !== "" && word.length <= WORD_LENGTH_MAX)
+      tokens.push({ word, start: match.index, end: match.index + match[0].length });
+  }
+  return tokens;
+}
+
+/** Form in which facet strings are compared: trimmed, lower case, compatibility-decomposed, accents kept. */
+export function normaliseFacet(value: string): string {
+  return value.trim().normalize("NFKD").toLowerCase();
+}
+
+/** The text by which a scalar is searched; undefined for what is not searched (null). */
+export function scalarText(value: unknown): string | undefined {
+  if (typeof value === "string") return value;
+  if (typeof value === "number" || typeof value === "boolean") return String(value);
+  return undefined;
+}
