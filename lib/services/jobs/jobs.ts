@@ -3,6 +3,8 @@ import PgBoss from "pg-boss";
 import { jobsSchema } from "./install";
 import { jobQueues, type JobData, type QueueName } from "./queues";
 
+export type { JobData, QueueName };
+
 /** A connection on which a job can be sent as part of the caller's transaction. */
 export interface JobExecutor {
   executeSql(text: string, values?: unknown[]): Promise<{ rows: unknown[] }>;
