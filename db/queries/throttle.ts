@@ -59,11 +59,28 @@ export async function countFailedAttempts(
   return { failedOnAccount: row?.on_account ?? 0, failedFromAddress: row?.from_address ?? 0 };
 }
 
-export async function insertAttempt(
+/** Records an attempt as failed until it is known better; gives its id. */
+export async function beginAttempt(
   handle: Handle,
-  { accountKey, address, succeeded }: { accountKey: string; address: string; succeeded: boolean },
-): Promise<void> {
-  await handle("sign_in_attempt").insert({ account_key: accountKey, address, succeeded });
+  { accountKey, address }: { accountKey: string; address: string },
+): Promise<number> {
+  const rows: { id: number }[] = await handle("sign_in_attempt")
+    .insert({ account_key: accountKey, address, succeeded: false, at: handle.raw("clock_timestamp()") })
+    .returning("id");
+  const row = rows[0];
+  if (!row) throw new Error("The attempt got no id.");
+  return row.id;
+}
+
+export async function markSucceeded(handle: Handle, { attemptId }: { attemptId: number }): Promise<void> {
+  await handle("sign_in_attempt")
+    .where({ id: attemptId })
+    .update({ succeeded: true, at: handle.raw("clock_timestamp()") });
+}
+
+/** An attempt that wasn't looked at doesn't count, or whoever keeps trying would keep the owner out for ever. */
+export async function dropAttempt(handle: Handle, { attemptId }: { attemptId: number }): Promise<void> {
+  await handle("sign_in_attempt").where({ id: attemptId }).delete();
 }
 
 /** Deletes what no window looks at any more. */

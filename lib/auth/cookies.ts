@@ -1,7 +1,7 @@
 import type { CookiesOptions } from "next-auth";
 import { secureCookies } from "@/lib/env/site";
 
-/** How long a session lasts without being used. */
+/** How long a session lasts, from signing in. */
 export const sessionMaxAgeS = 14 * 24 * 3600;
 
 /** Names with `__Host-` (which asks for Secure, Path=/ and no Domain) beyond loopback, plain names on it. */

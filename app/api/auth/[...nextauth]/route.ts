@@ -1,0 +1,1 @@
+export { authRoute as GET, authRoute as POST } from "@/lib/http/auth-route";
