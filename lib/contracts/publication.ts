@@ -1,0 +1,96 @@
+import { z } from "zod";
+
+/** A figure with its standard uncertainty u and degrees of freedom (null: taken as known exactly). */
+export const figureSchema = z.strictObject({
+  value: z.number(),
+  u: z.number().min(0),
+  dof: z.number().positive().nullable(),
+});
+export type Figure = z.infer<typeof figureSchema>;
+
+/** One kind of part of a figure's uncertainty: size in the figure's unit, share of the variance, what cancels. */
+export const budgetLineSchema = z.strictObject({
+  quantity: z.enum(["level", "delta_t", "ratio"]),
+  kind: z.enum(["own_run", "own_mount", "shared_offset", "shared_gain", "bridge"]),
+  of: z.enum(["entry", "baseline", "session"]),
+  u: z.number().min(0),
+  share: z.number().min(0).max(1),
+  dof: z.number().positive().nullable(),
+  parts: z.array(
+    z.strictObject({ name: z.string(), evaluation: z.enum(["A", "B"]), u: z.number(), source: z.string() }),
+  ),
+});
+export type BudgetLine = z.infer<typeof budgetLineSchema>;
+
+/** One set speed of a subject: levels in dB(A) at the bench's microphone, ΔT in K, resistance in K/W. */
+export const snapshotPointSchema = z.strictObject({
+  setSpeed: z.number(),
+  speedsRpm: z.array(z.number()),
+  levelReadDba: z.number(),
+  backgroundDba: z.number().nullable(),
+  level: figureSchema.extend({ upperBound: z.boolean(), correctionDb: z.number() }),
+  deltaT: figureSchema,
+  resistance: figureSchema,
+  powerW: z.number(),
+  runs: z.number().int(),
+  mounts: z.number().int(),
+  readingIds: z.array(z.uuid()),
+  otherPositions: z.array(z.strictObject({ name: z.string(), levelDba: z.number(), u: z.number() })),
+});
+export type SnapshotPoint = z.infer<typeof snapshotPointSchema>;
+
+export const againstSchema = z.strictObject({
+  setSpeed: z.number(),
+  levelDifferenceDb: figureSchema,
+  levelIsBound: z.boolean(),
+  deltaTDifferenceK: figureSchema,
+  resistanceRatio: figureSchema,
+});
+
+export const notReachedWhy = z.enum(["entry-not-reached", "baseline-not-reached", "baseline-rests-on-bound"]);
+
+export const equalNoiseSchema = z.union([
+  z.strictObject({
+    levelDba: z.number(),
+    ratio: figureSchema,
+    deltaT: figureSchema,
+    difference: figureSchema,
+    upperBound: z.boolean(),
+  }),
+  z.strictObject({ levelDba: z.number(), why: notReachedWhy }),
+]);
+export type EqualNoise = z.infer<typeof equalNoiseSchema>;
+
+/**
+ * What a publication froze: an entry's figures with where each came from. Ids of people only, no rank: ranks stand in
+ * standings, names are resolved when read. Version 1.
+ */
+export const snapshotSchema = z.strictObject({
+  schemaVersion: z.literal(1),
+  entryId: z.uuid(),
+  revisionId: z.uuid(),
+  designId: z.uuid(),
+  seasonId: z.uuid(),
+  roundId: z.uuid(),
+  sessionId: z.uuid(),
+  benchVersionId: z.uuid(),
+  protocolVersionId: z.uuid(),
+  budgetVersionId: z.uuid(),
+  baselineUnitId: z.uuid(),
+  ruleVersionId: z.uuid(),
+  methodVersion: z.number().int().positive(),
+  ownerIds: z.array(z.uuid()),
+  specimenIds: z.array(z.uuid()),
+  microphoneDistanceMm: z.number(),
+  levelsDba: z.array(z.number()),
+  headlineDba: z.number(),
+  points: z.array(snapshotPointSchema),
+  baselinePoints: z.array(snapshotPointSchema),
+  against: z.array(againstSchema),
+  equalNoise: z.array(equalNoiseSchema),
+  equalCooling: z.strictObject({ levelDba: z.number(), differenceDb: figureSchema }).nullable(),
+  budget: z.array(budgetLineSchema),
+  notes: z.array(z.strictObject({ code: z.string(), message: z.string() })),
+  leftOutRuns: z.array(z.strictObject({ runId: z.uuid(), why: z.string() })),
+});
+export type Snapshot = z.infer<typeof snapshotSchema>;
