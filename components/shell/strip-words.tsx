@@ -2,18 +2,7 @@
 
 import Link from "next/link";
 import { usePathname } from "next/navigation";
-
-export type StripWord = { href: string; word: string };
-
-/** The words everybody sees; an operator's and a host's come after them. */
-export const publicWords: readonly StripWord[] = [
-  { href: "/designs", word: "Index" },
-  { href: "/compare", word: "Compare" },
-  { href: "/traits", word: "Traits" },
-  { href: "/seasons", word: "Seasons" },
-  { href: "/baselines", word: "Baselines" },
-  { href: "/method", word: "Method" },
-];
+import type { StripWord } from "./public-words";
 
 /** Plain words; the current one is underlined twice. */
 export function StripWords({ words }: { words: readonly StripWord[] }) {

@@ -1,6 +1,7 @@
 import type { ReactNode } from "react";
 import { SearchBlank } from "./search-blank";
-import { publicWords, StripWords, type StripWord } from "./strip-words";
+import { publicWords, type StripWord } from "./public-words";
+import { StripWords } from "./strip-words";
 import { Wordmark } from "./wordmark";
 
 export type StripProps = {

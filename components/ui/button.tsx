@@ -1,15 +1,9 @@
 "use client";
 
-import clsx from "clsx";
 import Link from "next/link";
 import type { ButtonHTMLAttributes, ComponentProps, MouseEvent, ReactNode } from "react";
 import { useFormStatus } from "react-dom";
-
-export type ButtonKind = "outline" | "solid" | "quiet" | "danger";
-
-export function buttonClass(kind: ButtonKind = "outline", small = false, className?: string): string {
-  return clsx("button", kind !== "outline" && `button-${kind}`, small && "button-small", className);
-}
+import { buttonClass, type ButtonKind } from "./button-class";
 
 export type ButtonProps = ButtonHTMLAttributes<HTMLButtonElement> & {
   kind?: ButtonKind;

@@ -4,8 +4,8 @@ export type StateProps = { title: string; children?: ReactNode; action?: ReactNo
 
 function State({ title, children, action, mark }: StateProps & { mark: string }) {
   return (
-    <div className="grid max-w-2xl gap-2 py-6">
-      <p aria-hidden className="figures text-3xl text-soft">
+    <div className="grid max-w-2xl content-start gap-1.5 py-4">
+      <p aria-hidden className="figures text-2xl leading-none text-soft">
         {mark}
       </p>
       <p className="text-lg font-bold">{title}</p>
