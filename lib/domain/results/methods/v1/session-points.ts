@@ -1,4 +1,4 @@
-import { energyMean } from "@/lib/science/acoustics/levels";
+import { backgroundCorrection, energyMean } from "@/lib/science/acoustics/levels";
 import { combineIndependent, welchSatterthwaite } from "@/lib/science/statistics/uncertainty";
 import type { MeasuredPoint } from "../../measured-point";
 import type { BudgetPartRecord, ReadingRecord, RunRecord, SessionRecord } from "../../session-record";
@@ -33,7 +33,8 @@ const subjectKey = (run: RunRecord): string => run.entryId ?? run.baselineUnitId
  * The points of every subject of a session, at the mean of the given microphone positions (energy mean of levels and
  * of backgrounds). Only runs that are done count; one that lacks a level, a rise or a power is left out and named.
  * ΔT is the log's, or sensor less ambient. Own parts: the budget's, and for ΔT from a log its own u and what the gate
- * leaves, a rectangular half-width (JCGM 100:2008, 4.3.7). Mount parts: see `mountPart`.
+ * leaves, a rectangular half-width (JCGM 100:2008, 4.3.7). Mount parts: see `mountPart`. Own and mount parts of a level
+ * are of the corrected one: see `correctionSensitivity`.
  */
 export function sessionPoints(
   session: SessionRecord,
@@ -59,7 +60,9 @@ export function sessionPoints(
       entryId: first?.entryId ?? null,
       specimenId: first?.specimenId ?? null,
       baselineUnitId: first?.baselineUnitId ?? null,
-      points: own.map((raw) => pointOf(raw, mounts.indexOf(mountKey(raw.run)) + 1, backgroundDba, parts)),
+      points: own.map((raw) =>
+        pointOf(raw, mounts.indexOf(mountKey(raw.run)) + 1, backgroundDba, parts, session.grade),
+      ),
       origins: own.map(({ run, readingIds }) => ({ runId: run.runId, readingIds })),
       speedsRpm: speedsOf(own),
     };
@@ -153,15 +156,36 @@ function mountMeans(raws: readonly Raw[], of: (raw: Raw) => number): MountMeans[
   }));
 }
 
-function pointOf(raw: Raw, mount: number, backgroundDba: number | null, parts: Parts): MeasuredPoint {
+/**
+ * ∂L/∂L' of a corrected level by the level as read: 1/(1 − 10^(−ΔL/10)), which is 10^(K₁/10), where the correction is
+ * made; 1 where it is not or is held. An offset moves the background too and passes unchanged.
+ */
+export function correctionSensitivity(
+  levelReadDba: number,
+  backgroundDba: number | null,
+  grade: SessionRecord["grade"],
+): number {
+  if (backgroundDba === null) return 1;
+  const { k1Db, upperBound } = backgroundCorrection({ measuredDb: levelReadDba, backgroundDb: backgroundDba, grade });
+  return upperBound ? 1 : 10 ** (k1Db / 10);
+}
+
+function pointOf(
+  raw: Raw,
+  mount: number,
+  backgroundDba: number | null,
+  parts: Parts,
+  grade: SessionRecord["grade"],
+): MeasuredPoint {
+  const corrected = correctionSensitivity(raw.levelDba, backgroundDba, grade);
   const finite = (dof: number): number | null => (Number.isFinite(dof) ? dof : null);
   return {
     setSpeedRpm: raw.run.setSpeed,
     mount,
     levelReadDba: raw.levelDba,
     backgroundDba,
-    uLevelOwnDb: parts.levelOwn.u,
-    uLevelMountDb: parts.levelMount.u,
+    uLevelOwnDb: corrected * parts.levelOwn.u,
+    uLevelMountDb: corrected * parts.levelMount.u,
     uLevelOffsetDb: parts.levelOffset.u,
     deltaTK: raw.deltaTK,
     uDeltaTOwnK: combineIndependent([parts.deltaTOwn.u, raw.uLogK]),
