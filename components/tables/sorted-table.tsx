@@ -3,8 +3,8 @@
 import { usePathname, useSearchParams } from "next/navigation";
 import { Fold } from "../ui/fold";
 import { Slot } from "../ui/slot";
-import { columnLabel } from "./bars-model";
-import { BarsTable, type BarsTableProps } from "./bars-table";
+import { columnLabel } from "../ui/bars/bars-model";
+import { BarsTable, type BarsTableProps } from "../ui/bars/bars-table";
 import { useSortedRows } from "./sorted-rows";
 
 export type SortedTableProps = BarsTableProps & {

@@ -1,4 +1,4 @@
-import { Missing } from "../ui/missing";
+import { Missing } from "../missing";
 import { figureText, tailLength, type BarsCell, type ColumnWidths } from "./bars-model";
 
 /** Room as wide as so many figures: there for the eye, not for a screen reader or the clipboard. */
