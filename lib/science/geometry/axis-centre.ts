@@ -1,0 +1,164 @@
+import { facesOf, type Faces } from "./faces";
+import type { Mesh } from "./mesh";
+
+/** A point of the plane across the axis, mm. */
+export type Point2 = readonly [number, number];
+
+const WALL_SLOPE_MAX = 0.05;
+const SURFACE_SLOPE_MAX = 0.9;
+const SECTORS = 24;
+const SECTORS_NEEDED = 15;
+
+/** Straight lines that ought to pass through the centre, by the faces that they stand on. */
+interface NormalLine {
+  readonly x: number;
+  readonly y: number;
+  readonly nx: number;
+  readonly ny: number;
+  readonly weight: number;
+}
+
+/**
+ * Where the rotation axis passes through x–y, for a mesh whose axis stands along z: the point that the normals of
+ * walls pass through, found robustly (Cauchy weights, narrowed step by step, from several starts), then the common
+ * centre of the circles on which their vertices lie, by least squares. So a heavy blade doesn't move it, as it would
+ * the centroid. Without any round wall it is the middle of the surface.
+ */
+export function axisCentre(mesh: Mesh): Point2 {
+  const faces = facesOf(mesh);
+  const size = extent(mesh);
+  const walls = normalLines(faces, WALL_SLOPE_MAX);
+  const surfaces = normalLines(faces, SURFACE_SLOPE_MAX);
+  const starts = [middle(surfaces), boxMiddle(mesh)];
+  const best = (lines: NormalLine[]): { centre: Point2; score: number } =>
+    starts
+      .map((start) => converge(lines, start, size))
+      .map((centre) => ({ centre, score: inlierArea(lines, centre, 0.004 * size) }))
+      .reduce((a, b) => (b.score > a.score ? b : a));
+  const byWalls = best(walls);
+  const bySurfaces = best(surfaces);
+  // Walls decide where they go around; otherwise every surface of revolution has a say.
+  const centre = byWalls.score > 0.02 * total(surfaces) ? byWalls.centre : bySurfaces.centre;
+  return commonCentre(mesh, faces, centre, size) ?? centre;
+}
+
+function normalLines(faces: Faces, slopeMax: number): NormalLine[] {
+  const out: NormalLine[] = [];
+  for (let t = 0; t < faces.areasMm2.length; t++) {
+    const nx = faces.normals[3 * t] ?? 0;
+    const ny = faces.normals[3 * t + 1] ?? 0;
+    const flat = Math.hypot(nx, ny);
+    if (Math.abs(faces.normals[3 * t + 2] ?? 0) > slopeMax || flat === 0) continue;
+    const [x, y] = [faces.middlesMm[3 * t] ?? 0, faces.middlesMm[3 * t + 1] ?? 0];
+    out.push({ x, y, nx: nx / flat, ny: ny / flat, weight: (faces.areasMm2[t] ?? 0) * flat });
+  }
+  return out;
+}
+
+function extent(mesh: Mesh): number {
+  let most = 0;
+  for (let i = 0; i < mesh.positions.length; i += 3) {
+    most = Math.max(
+      most,
+      Math.hypot(
+        (mesh.positions[i] ?? 0) - (mesh.positions[0] ?? 0),
+        (mesh.positions[i + 1] ?? 0) - (mesh.positions[1] ?? 0),
+      ),
+    );
+  }
+  return most;
+}
+
+const total = (lines: NormalLine[]): number => lines.reduce((sum, line) => sum + line.weight, 0);
+
+function middle(lines: NormalLine[]): Point2 {
+  const sum = total(lines) || 1;
+  return [lines.reduce((s, l) => s + l.weight * l.x, 0) / sum, lines.reduce((s, l) => s + l.weight * l.y, 0) / sum];
+}
+
+function boxMiddle(mesh: Mesh): Point2 {
+  let [x0, x1, y0, y1] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (let i = 0; i < mesh.positions.length; i += 3) {
+    const [x, y] = [mesh.positions[i] ?? 0, mesh.positions[i + 1] ?? 0];
+    [x0, x1, y0, y1] = [Math.min(x0, x), Math.max(x1, x), Math.min(y0, y), Math.max(y1, y)];
+  }
+  return [(x0 + x1) / 2, (y0 + y1) / 2];
+}
+
+/** Distance by which a normal's line misses the centre. */
+const miss = (line: NormalLine, c: Point2): number => (line.x - c[0]) * -line.ny + (line.y - c[1]) * line.nx;
+
+function inlierArea(lines: NormalLine[], centre: Point2, within: number): number {
+  return lines.reduce((sum, line) => (Math.abs(miss(line, centre)) <= within ? sum + line.weight : sum), 0);
+}
+
+function converge(lines: NormalLine[], start: Point2, size: number): Point2 {
+  let centre = start;
+  for (const scale of [0.2, 0.1, 0.05, 0.02, 0.02, 0.01, 0.01, 0.005, 0.005, 0.002, 0.002, 0.001, 0.001]) {
+    let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
+    for (const line of lines) {
+      const weight = line.weight / (1 + (miss(line, centre) / (scale * size)) ** 2);
+      const along = -line.ny * line.x + line.nx * line.y;
+      xx += weight * line.ny * line.ny;
+      xy -= weight * line.nx * line.ny;
+      yy += weight * line.nx * line.nx;
+      bx -= weight * line.ny * along;
+      by += weight * line.nx * along;
+    }
+    const det = xx * yy - xy * xy;
+    if (!(det > 1e-6 * (xx + yy) ** 2)) return centre;
+    centre = [(bx * yy - by * xy) / det, (by * xx - bx * xy) / det];
+  }
+  return centre;
+}
+
+/** Common centre of all circles of wall vertices that go around; undefined where there is none. */
+function commonCentre(mesh: Mesh, faces: Faces, start: Point2, size: number): Point2 | undefined {
+  let centre = start;
+  for (let round = 0; round < 4; round++) {
+    const circles = wallCircles(mesh, faces, centre, size);
+    if (circles.length === 0) return round === 0 ? undefined : centre;
+    let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
+    for (const points of circles) {
+      const n = points.length;
+      const mx = points.reduce((s, p) => s + p[0], 0) / n;
+      const my = points.reduce((s, p) => s + p[1], 0) / n;
+      const mq = points.reduce((s, p) => s + p[0] ** 2 + p[1] ** 2, 0) / n;
+      for (const [x, y] of points) {
+        const q = (x * x + y * y - mq) / 2;
+        xx += ((x - mx) * (x - mx)) / n;
+        xy += ((x - mx) * (y - my)) / n;
+        yy += ((y - my) * (y - my)) / n;
+        bx += ((x - mx) * q) / n;
+        by += ((y - my) * q) / n;
+      }
+    }
+    const det = xx * yy - xy * xy;
+    if (!(det > 0)) return centre;
+    centre = [(bx * yy - by * xy) / det, (by * xx - bx * xy) / det];
+  }
+  return Math.hypot(centre[0] - start[0], centre[1] - start[1]) < 0.02 * size ? centre : start;
+}
+
+/** Vertices of walls that face the centre, in groups of equal radius that go most of the way around. */
+function wallCircles(mesh: Mesh, faces: Faces, centre: Point2, size: number): Point2[][] {
+  const groups = new Map<number, { points: Map<number, Point2>; sectors: Set<number> }>();
+  for (let t = 0; t < faces.areasMm2.length; t++) {
+    const [nx, ny, nz] = [faces.normals[3 * t] ?? 0, faces.normals[3 * t + 1] ?? 0, faces.normals[3 * t + 2] ?? 0];
+    if (Math.abs(nz) > WALL_SLOPE_MAX || nx * nx + ny * ny === 0) continue;
+    const [mx, my] = [(faces.middlesMm[3 * t] ?? 0) - centre[0], (faces.middlesMm[3 * t + 1] ?? 0) - centre[1]];
+    if (Math.abs(mx * ny - my * nx) > 0.3 * Math.hypot(mx, my)) continue;
+    for (let corner = 0; corner < 3; corner++) {
+      const v = mesh.triangles[3 * t + corner] ?? 0;
+      const [x, y] = [mesh.positions[3 * v] ?? 0, mesh.positions[3 * v + 1] ?? 0];
+      const radius = Math.hypot(x - centre[0], y - centre[1]);
+      const key = Math.round(radius / (0.002 * size));
+      const group = groups.get(key) ?? { points: new Map<number, Point2>(), sectors: new Set<number>() };
+      groups.set(key, group);
+      group.points.set(v, [x, y]);
+      const turn = Math.atan2(y - centre[1], x - centre[0]) / (2 * Math.PI) + 1;
+      group.sectors.add(Math.floor(turn * SECTORS) % SECTORS);
+    }
+  }
+  return [...groups.values()].filter((g) => g.sectors.size >= SECTORS_NEEDED).map((g) => [...g.points.values()]);
+}

@@ -1,0 +1,88 @@
+import type { RowTable } from "./row-table";
+
+/** Heights, as row numbers of a table, over which blades stand, and the zone up to half-way to the next band. */
+export interface BladeBand {
+  readonly fromRow: number;
+  readonly toRow: number;
+  readonly zoneFromRow: number;
+  readonly zoneToRow: number;
+}
+
+/** Where hub, blades and ring begin and end along the radius, as radius numbers of a table. */
+export interface RadialProfile {
+  /** First radius of the hub: above 0 where it has a bore. */
+  readonly bore: number;
+  /** Last radius of the hub. */
+  readonly hub: number;
+  /** First radius of a ring at the blades' tips, if there is one. */
+  readonly ring: number | undefined;
+  /** Last radius with anything solid. */
+  readonly outer: number;
+}
+
+const FULL = 0.98;
+const BARE = 0.004;
+const BAND_SHARE = 0.12;
+const HUB_SHARE_MAX = 0.8;
+/** A closed ring may be broken this often before it counts as blades again (part-span rings, chamfers). */
+const RING_SHARE = 0.85;
+
+/** Bands of rows in which circles run through several solid pieces at many radii. */
+export function bladeBands(table: RowTable): BladeBand[] {
+  const rows = table.heightsMm.length;
+  const counts = Array.from({ length: rows }, (_, j) => {
+    let count = 0;
+    for (let i = 0; i < table.radiiMm.length; i++) {
+      const fill = table.fill[i * rows + j] ?? 0;
+      if (fill > BARE && fill < FULL && (table.runs[i * rows + j] ?? 0) >= 2) count++;
+    }
+    return count;
+  });
+  const needed = Math.max(2, BAND_SHARE * Math.max(...counts));
+  const bands: { fromRow: number; toRow: number }[] = [];
+  for (let j = 0; j < rows; j++) {
+    if ((counts[j] ?? 0) < needed) continue;
+    const last = bands[bands.length - 1];
+    if (last && last.toRow === j - 1) last.toRow = j;
+    else bands.push({ fromRow: j, toRow: j });
+  }
+  const kept = bands.filter((band) => band.toRow > band.fromRow);
+  return kept.map((band, i) => {
+    const [below, above] = [kept[i - 1], kept[i + 1]];
+    return {
+      ...band,
+      zoneFromRow: below ? Math.ceil((below.toRow + band.fromRow) / 2) : 0,
+      zoneToRow: above ? Math.floor((band.toRow + above.fromRow) / 2) : rows - 1,
+    };
+  });
+}
+
+/** Radial build of a band; undefined where it has no hub inside blades, so that it is no rotor. */
+export function radialProfile(table: RowTable, band: BladeBand): RadialProfile | undefined {
+  const { radiiMm, heightsMm, fill } = table;
+  const rows = heightsMm.length;
+  const most = (i: number, from: number, to: number): number => {
+    let high = 0;
+    for (let j = from; j <= to; j++) high = Math.max(high, fill[i * rows + j] ?? 0);
+    return high;
+  };
+  const full = Array.from(radiiMm, (_, i) => most(i, band.zoneFromRow, band.zoneToRow) >= FULL);
+  let outer = radiiMm.length - 1;
+  while (outer >= 0 && most(outer, band.fromRow, band.toRow) <= BARE) outer--;
+  const first = full.indexOf(true);
+  const outerRadius = radiiMm[outer] ?? 0;
+  if (outer < 0 || first < 0 || (radiiMm[first] ?? 0) > HUB_SHARE_MAX * outerRadius) return undefined;
+  let hub = first;
+  while (hub < outer && full[hub + 1]) hub++;
+  if (hub >= outer) return undefined;
+  // Nothing at all between blades and what stands around them: that isn't part of this rotor.
+  for (let i = hub + 1; i < outer; i++) if (most(i, band.fromRow, band.toRow) <= BARE) outer = i - 1;
+  if (hub >= outer) return undefined;
+  let ring: number | undefined;
+  for (let i = outer; i > hub; i--) {
+    const closed = full.slice(i, outer + 1).filter(Boolean).length;
+    if (full[i] && closed >= RING_SHARE * (outer + 1 - i)) ring = i;
+  }
+  if (ring !== undefined && ring <= hub + 1) return undefined;
+  return { bore: first, hub, ring, outer };
+}

@@ -1,0 +1,119 @@
+import { bladeBands, radialProfile } from "./blade-bands";
+import { bladeRow, type BladeRow, type TurningPart } from "./blade-row";
+import { castColumns, type Columns } from "./columns";
+import { solidStretches } from "./column-solids";
+import { facesOf } from "./faces";
+import type { Mesh } from "./mesh";
+import { shellOverlaps, type OverlapReport } from "./overlaps";
+import { rowTable } from "./row-table";
+import { splitParts, type PartSplit, type TurningGroup } from "./turning-parts";
+
+/** How finely a search samples. */
+export interface SearchGrid {
+  readonly radii: number;
+  readonly angles: number;
+  readonly rows: number;
+}
+
+export const coarseGrid: SearchGrid = { radii: 48, angles: 480, rows: 96 };
+export const fineGrid: SearchGrid = { radii: 80, angles: 1440, rows: 144 };
+
+/** A row of blades and the group of shells that it turns with. */
+export interface FoundRow {
+  readonly row: BladeRow;
+  readonly group: TurningGroup;
+}
+
+/** All that was found about one axis, which stands on z. */
+export interface RotorSearch {
+  /** Shell of each triangle that took part. */
+  readonly shellOf: Int32Array;
+  readonly rows: FoundRow[];
+  readonly split: PartSplit;
+  readonly overlaps: OverlapReport;
+  readonly columns: Columns;
+  /** Sum of the rows' confidences: how well this axis explains the file. */
+  readonly score: number;
+}
+
+/** Evenly spaced radii from the axis to the farthest vertex of the triangles kept. */
+export function radiiTo(outerMm: number, count: number): Float64Array {
+  return Float64Array.from({ length: count }, (_, i) => ((i + 0.5) / count) * outerMm);
+}
+
+function outerRadius(mesh: Mesh, shellOf: Int32Array): number {
+  let most = 0;
+  for (let i = 0; i < mesh.triangles.length; i++) {
+    if ((shellOf[(i / 3) | 0] ?? -1) < 0) continue;
+    const start = 3 * (mesh.triangles[i] ?? 0);
+    most = Math.max(most, Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0));
+  }
+  return most;
+}
+
+/**
+ * Looks for rows of blades about the z axis of a mesh. Rows come in order along z. `tinyMm` is the length below which
+ * solids touch rather than overlap. A file in which nothing but a frame is found is searched as a whole, in case rotor
+ * and frame touch; blades that reach the frame are struts then, not blades.
+ */
+export function searchRotors(
+  mesh: Mesh,
+  shellOf: Int32Array,
+  shells: number,
+  grid: SearchGrid,
+  tinyMm: number,
+): RotorSearch {
+  const outer = outerRadius(mesh, shellOf);
+  const columns = castColumns(mesh, shellOf, { radiiMm: radiiTo(outer, grid.radii), angles: grid.angles });
+  const overlaps = shellOverlaps(columns, shells, tinyMm);
+  const split = splitParts(mesh, shellOf, columns, overlaps.bodyOf, overlaps.bodyCount, tinyMm);
+  const faces = facesOf(mesh);
+  const rows = split.groups.flatMap((group) => {
+    const everything = split.groups.length === 1 && split.standing.size === 0;
+    return rowsOfGroup(mesh, shellOf, faces, group, grid, tinyMm, everything ? columns : undefined);
+  });
+  if (rows.length === 0 && split.standing.size > 0) {
+    const all = Array.from({ length: shells }, (_, shell) => shell);
+    const whole: TurningGroup = { shells: new Set(all), fromZMm: -Infinity, toZMm: Infinity };
+    const found = rowsOfGroup(mesh, shellOf, faces, whole, grid, tinyMm).filter(
+      ({ row }) => !row.shroud && row.sweptRadiusMm < 0.9 * outer,
+    );
+    rows.push(...found);
+  }
+  rows.sort((a, b) => a.row.fromZMm + a.row.toZMm - b.row.fromZMm - b.row.toZMm);
+  return { shellOf, rows, split, overlaps, columns, score: rows.reduce((sum, { row }) => sum + row.confidence, 0) };
+}
+
+function rowsOfGroup(
+  mesh: Mesh,
+  shellOf: Int32Array,
+  faces: TurningPart["faces"],
+  group: TurningGroup,
+  grid: SearchGrid,
+  tinyMm: number,
+  cast?: Columns,
+): FoundRow[] {
+  const own = shellOf.map((shell) => (group.shells.has(shell) ? shell : -1));
+  const columns =
+    cast ?? castColumns(mesh, own, { radiiMm: radiiTo(outerRadius(mesh, own), grid.radii), angles: grid.angles });
+  const include = (shell: number): boolean => group.shells.has(shell);
+  const solids = solidStretches(columns, include, tinyMm);
+  const [low, high] = solids.ends.reduce(([a, b], z) => [Math.min(a, z), Math.max(b, z)], [Infinity, -Infinity]);
+  if (!(high > low)) return [];
+  const table = rowTable(solids, low, high, grid.rows);
+  const part: TurningPart = { mesh, faces: facesWithin(mesh, faces, own), shellOf: own, include, tinyMm };
+  return bladeBands(table).flatMap((band) => {
+    const profile = radialProfile(table, band);
+    const row = profile && bladeRow(part, table, band, profile, grid.angles);
+    return row ? [{ row, group }] : [];
+  });
+}
+
+/** The faces with those of other parts taken out by giving them no area and no normal. */
+function facesWithin(mesh: Mesh, faces: TurningPart["faces"], own: Int32Array): TurningPart["faces"] {
+  return {
+    ...faces,
+    areasMm2: faces.areasMm2.map((area, t) => ((own[t] ?? -1) < 0 ? 0 : area)),
+    normals: faces.normals.map((value, i) => ((own[(i / 3) | 0] ?? -1) < 0 ? 0 : value)),
+  };
+}

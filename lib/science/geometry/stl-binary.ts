@@ -1,0 +1,76 @@
+import { Refusal } from "../refusal";
+import type { Mesh } from "./mesh";
+import type { ByteSource, MeshWarning, ReadingWatch } from "./reading";
+import { VertexWeld } from "./weld";
+
+/** Bytes before the first triangle: an 80-byte header and the count. */
+export const STL_HEADER_BYTES = 84;
+/** Bytes of one triangle: normal, three vertices, attribute. */
+export const STL_RECORD_BYTES = 50;
+const RECORDS_PER_CHUNK = 10_000;
+
+/** Length in bytes of a binary STL of so many triangles (Library of Congress FDD fdd000505). */
+export function binaryStlBytes(triangles: number): number {
+  return STL_HEADER_BYTES + STL_RECORD_BYTES * triangles;
+}
+
+/** What `readBinaryStl` hands back. Normals that point the other way than the winding are counted, never used. */
+export interface StlReading {
+  readonly mesh: Mesh;
+  readonly normalsAgainst: number;
+  readonly warnings: MeshWarning[];
+}
+
+/**
+ * Reads `triangles` records of a binary STL in chunks, welding as it goes; coordinates as in the file.
+ * Throws a Refusal for a record with NaN or infinite coordinates (`at` = triangle, from 1) and for a source that ends
+ * early. Layout: Library of Congress FDD fdd000505; records lie on even bytes only, so they are read as 16-bit words.
+ */
+export async function readBinaryStl(source: ByteSource, triangles: number, watch: ReadingWatch): Promise<StlReading> {
+  if (triangles > watch.limits.trianglesMax) watch.refuseTriangles(triangles);
+  const weld = new VertexWeld(0.55 * triangles);
+  const out = new Uint32Array(3 * triangles);
+  const words = new Uint32Array(12);
+  const floats = new Float32Array(words.buffer);
+  let against = 0;
+  for (let first = 0; first < triangles; first += RECORDS_PER_CHUNK) {
+    watch.step(first, triangles);
+    const count = Math.min(RECORDS_PER_CHUNK, triangles - first);
+    const length = count * STL_RECORD_BYTES;
+    const chunk = await source.read(STL_HEADER_BYTES + first * STL_RECORD_BYTES, length);
+    if (chunk.length < length) throw new Refusal("truncated", "The file ends inside its triangles.", first + 1);
+    const aligned = chunk.byteOffset % 2 === 0 ? chunk : chunk.slice();
+    const halves = new Uint16Array(aligned.buffer, aligned.byteOffset, length / 2);
+    for (let record = 0; record < count; record++) {
+      const start = 25 * record;
+      for (let i = 0; i < 12; i++) {
+        words[i] = (halves[start + 2 * i] ?? 0) | ((halves[start + 2 * i + 1] ?? 0) << 16);
+        if (i > 2 && ((words[i] ?? 0) & 0x7f800000) === 0x7f800000) {
+          throw new Refusal("not-finite", "A vertex is not a finite number.", first + record + 1);
+        }
+      }
+      const to = 3 * (first + record);
+      out[to] = weld.add(floats[3] ?? 0, floats[4] ?? 0, floats[5] ?? 0);
+      out[to + 1] = weld.add(floats[6] ?? 0, floats[7] ?? 0, floats[8] ?? 0);
+      out[to + 2] = weld.add(floats[9] ?? 0, floats[10] ?? 0, floats[11] ?? 0);
+      if (normalIsAgainst(floats)) against++;
+    }
+  }
+  watch.step(triangles, triangles);
+  return { mesh: { positions: weld.finish(), triangles: out }, normalsAgainst: against, warnings: [] };
+}
+
+/** True when the stored normal (floats 0–2) points against the winding of the vertices (floats 3–11). */
+function normalIsAgainst(f: Float32Array): boolean {
+  const x0 = f[3] ?? 0;
+  const y0 = f[4] ?? 0;
+  const z0 = f[5] ?? 0;
+  const ax = (f[6] ?? 0) - x0;
+  const ay = (f[7] ?? 0) - y0;
+  const az = (f[8] ?? 0) - z0;
+  const bx = (f[9] ?? 0) - x0;
+  const by = (f[10] ?? 0) - y0;
+  const bz = (f[11] ?? 0) - z0;
+  const dot = (ay * bz - az * by) * (f[0] ?? 0) + (az * bx - ax * bz) * (f[1] ?? 0) + (ax * by - ay * bx) * (f[2] ?? 0);
+  return dot < 0;
+}
