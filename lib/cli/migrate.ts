@@ -1,4 +1,3 @@
-import type { Knex } from "knex";
 import { migrateDown, migrateUp, pendingMigrations } from "@/db/client/migrator";
 import { roleNames } from "@/db/cluster/roles";
 import { ownerDb } from "@/db/client/handles";
@@ -12,7 +11,7 @@ import { installJobs } from "@/lib/services/jobs/install";
  * @returns the names of the migrations applied
  */
 export function migrateEverything(ownerUrl: string): Promise<string[]> {
-  return migrateUp(ownerUrl, async (owner: Knex) => {
+  return migrateUp(ownerUrl, async (owner) => {
     // So that a process that may not migrate can see that somebody has to.
     await owner.raw("grant select on schema_migration to ??", [roleNames.app]);
     await installJobs(ownerUrl, (sql) => Promise.resolve(owner.raw(sql)), roleNames.app);

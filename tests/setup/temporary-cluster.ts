@@ -1,15 +1,7 @@
-import { chmodSync, mkdtempSync, rmSync } from "node:fs";
-import os from "node:os";
-import path from "node:path";
+import { rmSync } from "node:fs";
 import { serverAccount } from "@/db/cluster/account";
 import { startCluster, throwAwayTuning, type Cluster } from "@/db/cluster/cluster";
-
-/** A folder under the system's temporary one that the database's user can pass through. */
-export function temporaryFolder(name: string): string {
-  const folder = mkdtempSync(path.join(os.tmpdir(), `fanfold-${name}-`));
-  chmodSync(folder, 0o711);
-  return folder;
-}
+import { temporaryFolder } from "./temporary-folder";
 
 /** Starts a database server that is thrown away: `stop()` ends it and deletes its folder. */
 export async function temporaryCluster(tuning: Record<string, string> = {}): Promise<Cluster> {

@@ -1,7 +1,7 @@
 import { existsSync } from "node:fs";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
-import type { Knex } from "knex";
+import type { Handle } from "@/db/client/connect";
 import { ownerDb } from "@/db/client/handles";
 import type { Cluster } from "@/db/cluster/cluster";
 import { dropDatabase, ensureDatabase } from "@/db/cluster/roles";
@@ -10,11 +10,11 @@ import type { Lifetime } from "./lifetime";
 
 /** What the demo's seed module gives: it fills a migrated, empty database as its owner. */
 interface SeedModule {
-  seedDemo(owner: Knex): Promise<void>;
+  seedDemo(owner: Handle): Promise<void>;
 }
 
 /** Whether the database holds the demo, whose accounts have a known password. */
-export async function holdsDemo(handle: Knex): Promise<boolean> {
+export async function holdsDemo(handle: Handle): Promise<boolean> {
   return (await handle("demo_seed").first("only_one")) !== undefined;
 }
 
@@ -48,7 +48,7 @@ export async function prepareDemoDatabase(
   });
 }
 
-async function ask<T>(url: string, question: (owner: Knex) => Promise<T>): Promise<T> {
+async function ask<T>(url: string, question: (owner: Handle) => Promise<T>): Promise<T> {
   const owner = ownerDb(url);
   try {
     return await question(owner);
