@@ -44,7 +44,7 @@ export function search(index: SearchIndex, params: SearchParams, options: Search
   return {
     hits,
     query: params.q ?? "",
-    processingTimeMs: Math.round(options.now() - start),
+    processingTimeMs: Math.floor(options.now() - start),
     ...paging,
     ...facets,
     requestUid: options.requestUid,
@@ -62,7 +62,7 @@ export function facetSearch(
   return {
     facetHits: searchFacet(index, params.facetName, params.facetQuery, candidates),
     facetQuery: params.facetQuery,
-    processingTimeMs: Math.round(options.now() - start),
+    processingTimeMs: Math.floor(options.now() - start),
   };
 }
 
