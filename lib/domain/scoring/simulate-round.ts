@@ -1,10 +1,10 @@
 import { createRandom } from "@/lib/science/statistics/random";
 import { simulateRanks } from "@/lib/science/statistics/ranking";
 import type { Effect } from "../results/effects";
-import { curveKnots, curveThrough, valueWithStraightEnds } from "../results/methods/v1/curve";
 import { sourceOf, type SetSpeedPoint } from "../results/methods/v1/set-speed-points";
+import { drawReader, type DrawReader } from "./draw-curve";
 import type { RoundInput } from "./round-input";
-import { pointScore, RULES, type ScoringRule } from "./rules";
+import { pointScore, RULES, type PointRuleKind, type ScoringRule } from "./rules";
 import { bridgeSource, type PreparedSession, type PreparedSubject, type ScoredEntry } from "./score-entry";
 
 /** Ranks in simulated rounds of one ranked entry; low and high are the 2.5 and 97.5 % points. */
@@ -67,13 +67,20 @@ export function simulateRound(
     bridge: entry.bridge,
     bridgeAt: entry.bridge ? (index.get(bridgeSource(entry.bridge)) ?? -1) : -1,
   }));
+  const read = drawReader(rule.levelsDba);
+  const below = sessions.map(() => new Float64Array(rule.levelsDba.length));
+  const above = new Float64Array(rule.levelsDba.length);
   return simulateRanks(ranked.length, input.draws, (values) => {
     for (let i = 0; i < z.length; i++) z[i] = random.normal();
-    const below = rule.kind === "equal-noise" ? baselines.map((points) => readLevels(points, z, rule.levelsDba)) : [];
+    if (rule.kind === "equal-noise")
+      below.forEach((out, i) => readMoved(read, baselines[i] ?? { list: [], xs: out, ys: out }, z, out));
     entries.forEach((entry, i) => {
       const bridge = entry.bridge ? entry.bridge.ratio + entry.bridge.u * (z[entry.bridgeAt] ?? 0) : 1;
-      const score = scoreOfDraw(rule, entry.points, below[entry.session] ?? [], z) * bridge;
-      values[i] = sign * score + entry.allowance;
+      const score =
+        rule.kind === "equal-noise"
+          ? meanRatio(readMoved(read, entry.points, z, above), below[entry.session])
+          : meanPointScore(rule.kind, rule, entry.points, z);
+      values[i] = sign * score * bridge + entry.allowance;
     });
   });
 }
@@ -81,18 +88,22 @@ export function simulateRound(
 type Shift = { readonly at: number; readonly size: number };
 type MovablePoint = SetSpeedPoint & { readonly levelShifts: readonly Shift[]; readonly deltaTShifts: readonly Shift[] };
 
-function movable(points: readonly SetSpeedPoint[], index: ReadonlyMap<string, number>): MovablePoint[] {
+/** Points with buffers for their moved coordinates. */
+type MovablePoints = { readonly list: readonly MovablePoint[]; readonly xs: Float64Array; readonly ys: Float64Array };
+
+function movable(points: readonly SetSpeedPoint[], index: ReadonlyMap<string, number>): MovablePoints {
   const shifts = (effects: readonly Effect[]) =>
     effects.flatMap(({ source, size }) => {
       const at = index.get(source);
       if (at === undefined) throw new RangeError(`a source of error isn't drawn: ${source}`);
       return size === 0 ? [] : [{ at, size }];
     });
-  return points.map((point) => ({
+  const list = points.map((point) => ({
     ...point,
     levelShifts: shifts(point.levelEffects),
     deltaTShifts: shifts(point.deltaTEffects),
   }));
+  return { list, xs: new Float64Array(list.length), ys: new Float64Array(list.length) };
 }
 
 function moved(value: number, shifts: readonly Shift[], z: Float64Array): number {
@@ -105,26 +116,21 @@ function movedDeltaT(point: MovablePoint, z: Float64Array): number {
   return Math.max(moved(point.deltaTK, point.deltaTShifts, z), 1e-6 * point.deltaTK);
 }
 
-function readLevels(points: readonly MovablePoint[], z: Float64Array, levelsDba: readonly number[]): number[] {
-  const xs = points.map((point) => moved(point.correctedDba, point.levelShifts, z));
-  const ys = points.map((point) => movedDeltaT(point, z) / point.powerW);
-  const knots = curveKnots(xs, ys);
-  const curve = curveThrough(knots);
-  return levelsDba.map((level) => (curve ? valueWithStraightEnds(curve, level) : (knots[0]?.y ?? Number.NaN)));
+function readMoved(read: DrawReader, points: MovablePoints, z: Float64Array, out: Float64Array): Float64Array {
+  points.list.forEach((point, i) => {
+    points.xs[i] = moved(point.correctedDba, point.levelShifts, z);
+    points.ys[i] = movedDeltaT(point, z) / point.powerW;
+  });
+  read(points.xs, points.ys, points.list.length, out);
+  return out;
 }
 
-function scoreOfDraw(
-  rule: ScoringRule,
-  points: readonly MovablePoint[],
-  below: readonly number[],
-  z: Float64Array,
-): number {
-  const { kind } = rule;
-  if (kind === "equal-noise") {
-    const above = readLevels(points, z, rule.levelsDba);
-    return above.reduce((sum, value, i) => sum + value / (below[i] ?? Number.NaN), 0) / above.length;
-  }
-  const scores = points.map((point) => {
+function meanRatio(above: Float64Array, below: Float64Array | undefined): number {
+  return above.reduce((sum, value, i) => sum + value / (below?.[i] ?? Number.NaN), 0) / above.length;
+}
+
+function meanPointScore(kind: PointRuleKind, rule: ScoringRule, points: MovablePoints, z: Float64Array): number {
+  const scores = points.list.map((point) => {
     const levelDba = moved(point.correctedDba, point.levelShifts, z);
     return pointScore(kind, { levelDba, deltaTK: movedDeltaT(point, z), powerW: point.powerW }, rule.m).score;
   });
