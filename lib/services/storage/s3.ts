@@ -25,11 +25,15 @@ export function s3Client({ region, endpoint, credentials }: S3Options): S3Client
     region,
     ...(endpoint !== undefined && { endpoint, forcePathStyle: true }),
     ...(credentials && { credentials }),
+    // Without one it writes to the console; what matters is thrown.
+    logger: { trace: nothing, debug: nothing, info: nothing, warn: nothing, error: nothing },
     // Compatible stores differ on the newer trailing checksums; the length is compared here and the hash by the caller.
     requestChecksumCalculation: "WHEN_REQUIRED",
     responseChecksumValidation: "WHEN_REQUIRED",
   });
 }
+
+function nothing(): void {}
 
 /** Keeps files in an S3-compatible store. */
 export function s3Storage(options: S3Options, client: S3Client = s3Client(options)): Storage {
@@ -48,8 +52,9 @@ export function s3Storage(options: S3Options, client: S3Client = s3Client(option
     async put(key, body, bytes) {
       checkKey(key);
       if (body instanceof Uint8Array && body.byteLength !== bytes) throw wrongLength(body.byteLength, bytes);
-      const Body = body instanceof Uint8Array ? body : Readable.from(exactly(body, bytes));
-      await client.send(new PutObjectCommand({ Bucket, Key: key, Body, ContentLength: bytes }));
+      const about = { Bucket, Key: key, ContentLength: bytes };
+      if (body instanceof Uint8Array) await client.send(new PutObjectCommand({ ...about, Body: body }));
+      else await putStream(client, about, Readable.from(exactly(body, bytes)));
     },
     async get(key, range) {
       const found = await head(key);
@@ -80,6 +85,27 @@ export function s3Storage(options: S3Options, client: S3Client = s3Client(option
       await client.send(new HeadBucketCommand({ Bucket }));
     },
   };
+}
+
+/** Sends a stream; one that fails breaks the request off, and its own error is what is thrown. */
+async function putStream(
+  client: S3Client,
+  about: { Bucket: string; Key: string; ContentLength: number },
+  body: Readable,
+): Promise<void> {
+  const breakOff = new AbortController();
+  let failure: unknown;
+  body.once("error", (error) => {
+    failure = error;
+    breakOff.abort();
+  });
+  try {
+    await client.send(new PutObjectCommand({ ...about, Body: body }), { abortSignal: breakOff.signal });
+  } catch (error) {
+    throw failure ?? error;
+  } finally {
+    body.destroy();
+  }
 }
 
 /** Passes a body through and breaks off when it isn't as long as announced, so that the request fails. */
