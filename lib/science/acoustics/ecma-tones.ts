@@ -66,7 +66,8 @@ export function toneToNoiseDb(input: {
 
 /**
  * Prominence ratio in dB from the powers of the middle, lower and upper band (mean squares in one unit).
- * Infinity where both neighbours are empty. Source: ECMA-418-1:2024 clause 12, Formulae (23) and (24).
+ * Infinity where both neighbours are empty. Below about 70 Hz, outside the standard's range, no lower band is left and the
+ * upper one stands alone. Source: ECMA-418-1:2024 clause 12, Formulae (23) and (24).
  */
 export function prominenceRatioDb(input: {
   toneHz: number;
@@ -80,7 +81,7 @@ export function prominenceRatioDb(input: {
   const bands = prominenceBands(toneHz);
   const lowerHz = input.lowerSummedHz ?? bands.middleFromHz - bands.lowerFromHz;
   const scaled = toneHz <= CUT_LOWER_BAND_HZ ? (100 / lowerHz) * lowerPower : lowerPower;
-  const neighbours = (scaled + upperPower) / 2;
+  const neighbours = lowerHz > 0 ? (scaled + upperPower) / 2 : upperPower;
   return neighbours > 0 ? 10 * Math.log10(middlePower / neighbours) : Infinity;
 }
 

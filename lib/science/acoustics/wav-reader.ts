@@ -19,7 +19,8 @@ export interface WavSink {
 type State = "riff" | "header" | "format" | "skip" | "data" | "done";
 
 /**
- * Reads a WAV file from pieces of any size, one channel of it, in bounded memory.
+ * Reads a WAV file from pieces of any size, one channel of it (from 1), in bounded memory. With `orMono` a file of one
+ * channel gives that one, whichever is wanted.
  *
  * Chunks are word-aligned and unknown ones skipped; a data size left open by a streaming writer means to the end of the
  * file. Refused with a code and the byte: not a WAV, no format, no samples, truncated, a last frame that is not whole.
@@ -34,11 +35,12 @@ export class WavReader {
   private streamed = false;
   private riffSize = 0;
   private wav: WavFormat | undefined;
+  private channel = 0;
   private block = new Float64Array(0);
   private frames = 0;
 
   constructor(
-    private readonly channel: number,
+    private readonly wanted: { channel: number; orMono?: boolean },
     private readonly what: string,
     private readonly sink: WavSink,
   ) {}
@@ -68,7 +70,11 @@ export class WavReader {
   }
 
   private refuse(code: string, reason: string): never {
-    throw new Refusal(code, `${this.what} ${reason}.`, `byte ${this.offset + this.held.length}`);
+    throw new Refusal(
+      code,
+      `${this.what} ${reason}.`,
+      `byte ${this.offset + (this.state === "data" ? 0 : this.held.length)}`,
+    );
   }
 
   /** Collects the few bytes that a header needs, then reads them. */
@@ -85,11 +91,12 @@ export class WavReader {
       else if (state === "header") this.header(joined);
       else {
         this.wav = parseWavFormat(joined, this.offset);
-        if (this.channel >= this.wav.channels) {
-          const { channels } = this.wav;
+        const { channels } = this.wav;
+        if (!(channels === 1 && this.wanted.orMono === true)) this.channel = this.wanted.channel - 1;
+        if (this.channel >= channels) {
           throw new Refusal(
             "channel-missing",
-            `${this.what} has ${channels} channels, no channel ${this.channel + 1}.`,
+            `${this.what} has ${channels} channels, no channel ${this.wanted.channel}.`,
           );
         }
         this.sink.format(this.wav);

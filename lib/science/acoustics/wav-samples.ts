@@ -49,6 +49,8 @@ export const CLIP_LEVEL = 0.999;
  */
 export class SampleGuard {
   private readonly lowest: number;
+  /** Nearest magnitude that can matter; 8-bit samples end below CLIP_LEVEL. */
+  private readonly near: number;
   private readonly highest: number;
   private high = 0;
   private limit = 0;
@@ -61,14 +63,15 @@ export class SampleGuard {
     const isInt = format.encoding === "int";
     this.lowest = isInt ? -1 : -Infinity;
     this.highest = isInt ? 1 - 2 ** (1 - format.bits) : Infinity;
+    this.near = Math.min(CLIP_LEVEL, this.highest);
   }
 
   check(samples: Float64Array, count: number): void {
-    const { lowest, highest } = this;
+    const { lowest, highest, near } = this;
     let { high, limit } = this;
     for (let i = 0; i < count; i += 1) {
       const sample = samples[i] ?? 0;
-      if (sample < CLIP_LEVEL && sample > -CLIP_LEVEL) {
+      if (sample < near && sample > -near) {
         high = 0;
         limit = 0;
         continue;
@@ -76,7 +79,7 @@ export class SampleGuard {
       if (!Number.isFinite(sample)) {
         throw new Refusal("wav-not-finite", `${this.what}: a sample is not a number.`, `sample ${this.seen + i + 1}`);
       }
-      high += 1;
+      high = Math.abs(sample) >= CLIP_LEVEL ? high + 1 : 0;
       limit = sample === lowest || sample === highest ? limit + 1 : 0;
       if (high >= 3 || limit >= 2) {
         throw new Refusal(

@@ -1,0 +1,45 @@
+import { RECORDING_BANDS } from "./bands";
+import { backgroundCorrection } from "./levels";
+import type { BackgroundReport, CorrectedBand, SoundGrade, Warning } from "./sound-report";
+import type { SpectrumLevels } from "./spectrum-levels";
+
+/**
+ * Background taken out of a recording, in total and band by band.
+ *
+ * In: levels of both in dB; the grade. A band that either file can't know (beyond half the sample rate, or silent in the
+ * recording) stays null. The total is corrected on the A-weighted levels, not summed from bands.
+ * Source: ISO 3744:2010 8.2.3, ISO 3746:2010 8.3.3.
+ */
+export function backgroundReport(
+  measured: SpectrumLevels,
+  background: SpectrumLevels,
+  grade: SoundGrade,
+): { report: BackgroundReport; correctedDba: number; bands: CorrectedBand[]; warnings: Warning[] } {
+  const total = backgroundCorrection({ measuredDb: measured.levelADba, backgroundDb: background.levelADba, grade });
+  const bands = RECORDING_BANDS.map(({ nominalHz, midHz }, i) => {
+    const measuredDb = measured.bandsDb[i];
+    const backgroundDb = background.bandsDb[i];
+    if (measuredDb === undefined || backgroundDb === undefined || measuredDb === -Infinity) {
+      return { nominalHz, midHz, levelDb: null, marginDb: null, correctionDb: null, upperBound: null };
+    }
+    const { correctedDb, marginDb, k1Db, upperBound } = backgroundCorrection({ measuredDb, backgroundDb, grade });
+    return { nominalHz, midHz, levelDb: correctedDb, marginDb, correctionDb: k1Db, upperBound };
+  });
+  const warnings: Warning[] = [];
+  if (total.upperBound) {
+    const margin = total.marginDb.toFixed(1);
+    const message = `The level is only ${margin} dB over the background: the corrected level is an upper bound.`;
+    warnings.push({ code: "background-near", message });
+  }
+  return {
+    report: {
+      levelADba: background.levelADba,
+      marginDb: total.marginDb,
+      correctionDb: total.k1Db,
+      upperBound: total.upperBound,
+    },
+    correctedDba: total.correctedDb,
+    bands,
+    warnings,
+  };
+}
