@@ -2,6 +2,7 @@
 const nextConfig = {
   poweredByHeader: false,
   reactStrictMode: true,
+  experimental: { authInterrupts: true },
   serverExternalPackages: ["knex", "pg", "pg-boss", "@node-rs/argon2", "sharp", "pino", "smtp-server", "nodemailer"],
 };
 

@@ -1,12 +1,17 @@
 import type { Metadata, Viewport } from "next";
 import { cookies } from "next/headers";
 import { Suspense, type ReactNode } from "react";
-import { AccountMenu } from "@/components/shell/account-menu";
+import { SignOutButton } from "@/components/accounts/sign-out-button";
+import { AccountMenu, type AccountLink } from "@/components/shell/account-menu";
 import { Foot } from "@/components/shell/foot";
 import { QueryProvider } from "@/components/shell/query-provider";
 import { SkipLink, Strip } from "@/components/shell/strip";
 import { themeCookie, themeFromCookie } from "@/components/shell/theme";
 import { Sheet } from "@/components/ui/sheet";
+import { actorFromPage } from "@/lib/auth/actor";
+import { isPerson } from "@/lib/domain/accounts/actor";
+import { may, type Permission } from "@/lib/domain/accounts/policy";
+import { isDemo } from "@/lib/server/demo-mail";
 import { fontClass } from "./fonts";
 import "./globals.css";
 
@@ -23,20 +28,40 @@ export const viewport: Viewport = {
   ],
 };
 
+const demoNote = "Demo: every design, person and figure is invented. Letters that it sends are kept at /demo/mail.";
+
+const accountLinks: readonly AccountLink[] = [
+  { href: "/my/designs", word: "My designs" },
+  { href: "/my/comparisons", word: "Kept comparisons" },
+  { href: "/my/account", word: "Account" },
+];
+
+/** Words of the strip that only some see; the pages behind them ask again. */
+const furtherWords: readonly { permission: Permission; href: string; word: string }[] = [
+  { permission: "bench.read", href: "/bench", word: "Bench" },
+  { permission: "season.manage", href: "/host", word: "Host" },
+];
+
 export default async function RootLayout({ children }: { children: ReactNode }) {
   const theme = themeFromCookie((await cookies()).get(themeCookie)?.value);
+  const actor = await actorFromPage();
+  const handle = isPerson(actor) ? actor.handle : undefined;
+  const moreWords = furtherWords.filter(({ permission }) => may(actor, permission));
   return (
     <html lang="en" className={fontClass} data-theme={theme === "system" ? undefined : theme}>
       <body>
         <QueryProvider>
           <SkipLink />
           <Sheet>
-            <Strip account={<AccountMenu />} />
+            <Strip
+              moreWords={moreWords}
+              account={<AccountMenu handle={handle} links={accountLinks} signOut={<SignOutButton />} />}
+            />
             <main id="main" tabIndex={-1} className="perforated outline-none">
               {children}
             </main>
             <Suspense>
-              <Foot theme={theme} />
+              <Foot theme={theme} note={isDemo() ? demoNote : undefined} />
             </Suspense>
           </Sheet>
         </QueryProvider>

@@ -1,10 +1,17 @@
 "use client";
 
-import { useChangeEmail, useChangeHandle, useChangePassword, useCloseAccount, useEraseAccount } from "@/lib/client/accounts";
+import {
+  useChangeEmail,
+  useChangeHandle,
+  useChangePassword,
+  useCloseAccount,
+  useEraseAccount,
+} from "@/lib/client/accounts";
+import { loadAnew } from "@/lib/client/session-paths";
 import { ActForm } from "./act-form";
 import { currentPasswordField, emailField, handleField, newPasswordField } from "./fields";
 
-const toSignIn = () => window.location.assign("/sign-in");
+const toSignIn = () => loadAnew("/sign-in");
 
 export function ChangePasswordForm() {
   return (
@@ -58,12 +65,15 @@ export function CloseForm() {
 export function EraseForm() {
   return (
     <ActForm
-      fields={[{ ...handleField, label: "Your handle, typed out", hint: undefined, autoComplete: "off" }, currentPasswordField]}
+      fields={[
+        { ...handleField, label: "Your handle, typed out", hint: undefined, autoComplete: "off" },
+        currentPasswordField,
+      ]}
       mutation={useEraseAccount()}
       kind="danger"
       words="Close the account and cut my name"
       busyWords="Cutting …"
-      onDone={() => window.location.assign("/")}
+      onDone={() => loadAnew("/")}
     />
   );
 }

@@ -1,7 +1,8 @@
 "use client";
 
 import { useState, type FormEvent, type InputHTMLAttributes, type ReactNode } from "react";
-import { Button, type ButtonKind } from "@/components/ui/button";
+import { Button } from "@/components/ui/button";
+import type { ButtonKind } from "@/components/ui/button-class";
 import { Field } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import type { FormMutation, Typed } from "@/lib/client/accounts";

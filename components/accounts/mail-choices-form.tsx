@@ -38,7 +38,13 @@ export function MailChoicesForm({ start }: { start: MailChoices }) {
         ))}
       </div>
       <StatusLine>
-        {mutation.isError ? mutation.error.detail : mutation.isPending ? "Keeping …" : mutation.isSuccess ? "Kept." : ""}
+        {mutation.isError
+          ? mutation.error.detail
+          : mutation.isPending
+            ? "Keeping …"
+            : mutation.isSuccess
+              ? "Kept."
+              : ""}
       </StatusLine>
     </fieldset>
   );

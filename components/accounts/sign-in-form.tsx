@@ -2,7 +2,7 @@
 
 import Link from "next/link";
 import { useSignIn } from "@/lib/client/accounts";
-import { pathAfterSignIn } from "@/lib/client/session-paths";
+import { loadAnew, pathAfterSignIn } from "@/lib/client/session-paths";
 import { ActForm } from "./act-form";
 import { emailField } from "./fields";
 
@@ -20,7 +20,7 @@ export function SignInForm({ to }: { to?: string }) {
       mutation={mutation}
       words="Sign in"
       busyWords="Signing in …"
-      onDone={() => window.location.assign(pathAfterSignIn(to))}
+      onDone={() => loadAnew(pathAfterSignIn(to))}
     >
       <p>
         <Link href="/reset">Forgotten it?</Link> · <Link href="/sign-up">Make an account</Link>

@@ -1,3 +1,4 @@
+import { cache } from "react";
 import { cookies } from "next/headers";
 import { decode } from "next-auth/jwt";
 import { appDb } from "@/db/client/handles";
@@ -11,10 +12,10 @@ export async function actorFromRequest(request: Request): Promise<Actor> {
   return actorFromToken(readCookie(request.headers.get("cookie"), sessionCookieName()));
 }
 
-/** Who looks at this page. Reading it makes the page rendered anew at every request. */
-export async function actorFromPage(): Promise<Actor> {
+/** Who looks at this page, looked up once a request. Reading it makes the page rendered anew at every request. */
+export const actorFromPage = cache(async (): Promise<Actor> => {
   return actorFromToken((await cookies()).get(sessionCookieName())?.value);
-}
+});
 
 /**
  * The actor that a session's token stands for. The token only names a person and the session version that it was made
