@@ -3,7 +3,7 @@ import path from "node:path";
 import type { ServerAccount } from "./account";
 import { adminRole, clusterMajor, initialiseCluster } from "./initialise";
 import { clusterPasswords, type Passwords } from "./passwords";
-import { anyFreePort, rememberedPort } from "./port";
+import { anyFreePort, portFor, rememberedPort, rememberPort } from "./port";
 import { ensureRoles, roleNames, withClient } from "./roles";
 import { clearLeftovers, spawnServer, stopServer, type StartedServer } from "./server";
 
@@ -50,11 +50,12 @@ export async function startCluster({ folder, account, tuning = {} }: ClusterOpti
   if (clusterMajor(pgdata) === undefined) initialiseCluster(pgdata, account, passwords.admin);
   await clearLeftovers(pgdata);
   for (let attempt = 1; ; attempt += 1) {
-    const port = attempt === 1 ? await rememberedPort(home) : await anyFreePort();
+    const port = attempt === 1 ? await portFor(home) : await anyFreePort();
     const server = spawnServer(pgdata, port, account, tuning);
     const adminUrl = address(adminRole, passwords.admin, port, "postgres");
     const problem = await answering(adminUrl, server);
     if (problem === undefined) {
+      rememberPort(home, port);
       try {
         await ensureRoles(adminUrl, passwords);
       } catch (error) {
@@ -69,6 +70,13 @@ export async function startCluster({ folder, account, tuning = {} }: ClusterOpti
       throw new Error(`The database server did not come up:\n${problem}`);
     }
   }
+}
+
+/** Addresses of the cluster that runs from a folder, for programs that didn't start it; undefined before its first start. */
+export function knownUrls(folder: string, database: string): DatabaseUrls | undefined {
+  const home = path.join(folder, "postgres");
+  const port = rememberedPort(home);
+  return port === undefined ? undefined : databaseUrls(port, clusterPasswords(home), database);
 }
 
 function running(server: StartedServer, port: number, adminUrl: string, passwords: Passwords): Cluster {

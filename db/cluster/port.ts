@@ -25,14 +25,21 @@ export function anyFreePort(): Promise<number> {
   });
 }
 
-/** The port that the folder's database used last if it is still free, else another, which is then remembered. */
-export async function rememberedPort(folder: string): Promise<number> {
-  const file = path.join(folder, "port");
-  const before = Number(readIfThere(file));
-  if (Number.isInteger(before) && before > 1023 && before < 65536 && (await isPortFree(before))) return before;
-  const port = await anyFreePort();
-  writeFileSync(file, `${port}\n`);
-  return port;
+/** The port that the folder's database used last; undefined before its first start. */
+export function rememberedPort(folder: string): number | undefined {
+  const port = Number(readIfThere(path.join(folder, "port")));
+  return Number.isInteger(port) && port > 1023 && port < 65536 ? port : undefined;
+}
+
+/** The remembered port if it is still free, else another one. */
+export async function portFor(folder: string): Promise<number> {
+  const before = rememberedPort(folder);
+  return before !== undefined && (await isPortFree(before)) ? before : anyFreePort();
+}
+
+/** Keeps the port for the next start, and for whoever looks for the database in this folder. */
+export function rememberPort(folder: string, port: number): void {
+  writeFileSync(path.join(folder, "port"), `${port}\n`);
 }
 
 function readIfThere(file: string): string | undefined {

@@ -68,8 +68,9 @@ async function readyServices(
   settings: Environment,
 ): Promise<{ environment: Record<string, string>; broken: Promise<string> }> {
   if (settings.DATABASE_URL === undefined) return startLocalServices({ root, dataFolder, life, ledger }, settings);
-  await readyGivenServices(settings, settings.DATABASE_URL);
-  return { environment: { DATA_DIR: dataFolder }, broken: new Promise<string>(() => undefined) };
+  const { demo } = await readyGivenServices(settings, settings.DATABASE_URL);
+  const environment = { DATA_DIR: dataFolder, ...(demo && { FANFOLD_DEMO: "1" }) };
+  return { environment, broken: new Promise<string>(() => undefined) };
 }
 
 function announce(address: string, folder: string, demo: boolean, tookMs: number): void {

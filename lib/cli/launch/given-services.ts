@@ -10,9 +10,10 @@ const needed = ["PUBLIC_DATABASE_URL", "MEILI_HOST", "SMTP_URL", "NEXTAUTH_SECRE
 /**
  * Readies the services that the settings name: with DATABASE_URL set nothing of ours is started and nothing is seeded.
  *
+ * @returns whether the database holds the demo, which then keeps to loopback
  * @throws when a setting is missing, the schema is old and may not be migrated, or the demo would be shown to a network
  */
-export async function readyGivenServices(settings: Environment, databaseUrl: string): Promise<void> {
+export async function readyGivenServices(settings: Environment, databaseUrl: string): Promise<{ demo: boolean }> {
   const missing = needed.filter((name) => settings[name] === undefined);
   if (missing.length > 0) {
     throw new Error(`DATABASE_URL is set, so no stand-in is started. Please set as well: ${missing.join(", ")}`);
@@ -30,11 +31,13 @@ export async function readyGivenServices(settings: Environment, databaseUrl: str
           "Set MIGRATE_DATABASE_URL to the owner's address, or run npm run migrate with it.",
       );
     }
-    if (!isLoopback(settings.HOST) && (await holdsDemo(handle))) {
+    const demo = await holdsDemo(handle);
+    if (demo && !isLoopback(settings.HOST)) {
       throw new Error(
         `This database holds the demo's accounts, whose password is public: HOST=${settings.HOST} is refused.`,
       );
     }
+    return { demo };
   } finally {
     await handle.destroy();
   }

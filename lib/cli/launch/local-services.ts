@@ -28,7 +28,8 @@ interface Place {
   ledger: LaunchLedger;
 }
 
-const database = "fanfold";
+/** The name of the demo's database in the local cluster. */
+export const demoDatabase = "fanfold";
 
 /** Starts the demo's database, migrated and seeded, and stand-ins for the services that aren't set. */
 export async function startLocalServices(place: Place, settings: Settings): Promise<LocalServices> {
@@ -39,9 +40,9 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   ledger.add(cluster.pid, "database");
   life.onStop(() => cluster.stop());
   life.check();
-  await prepareDemoDatabase(life, cluster, root, database);
+  await prepareDemoDatabase(life, cluster, root, demoDatabase);
   life.check();
-  const urls = cluster.urls(database);
+  const urls = cluster.urls(demoDatabase);
   const environment: Record<string, string> = {
     DATABASE_URL: urls.app,
     PUBLIC_DATABASE_URL: urls.public,
