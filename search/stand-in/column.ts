@@ -25,7 +25,7 @@ export class Column {
   private flags = new Uint8Array(1024);
   private readonly many: number[][] = [];
   private readonly freeMany: number[] = [];
-  private sortedCodes: Int32Array | undefined;
+  private sortedCodes = new Int32Array(0);
   private rankByCode: Int32Array | undefined;
 
   constructor(readonly path: string) {}
@@ -103,12 +103,29 @@ export class Column {
     return best;
   }
 
-  /** Codes in order of value: numbers ascending, then strings. */
+  /** Codes in order of value: numbers ascending, then strings. New values are merged into the order that was there. */
   inOrder(): Int32Array {
-    if (this.sortedCodes === undefined || this.sortedCodes.length !== this.size) {
-      this.sortedCodes = Int32Array.from(this.labels.keys()).sort((a, b) => this.compare(a, b));
+    const known = this.sortedCodes;
+    if (known.length === this.size) return known;
+    const added = Int32Array.from({ length: this.size - known.length }, (_, i) => known.length + i);
+    added.sort((a, b) => this.compare(a, b));
+    const merged = new Int32Array(this.size);
+    let left = 0;
+    let right = 0;
+    for (let i = 0; i < merged.length; i += 1) {
+      const takesKnown =
+        right === added.length ||
+        (left < known.length && this.compare(known[left] as number, added[right] as number) <= 0);
+      if (takesKnown) {
+        merged[i] = known[left] as number;
+        left += 1;
+      } else {
+        merged[i] = added[right] as number;
+        right += 1;
+      }
     }
-    return this.sortedCodes;
+    this.sortedCodes = merged;
+    return merged;
   }
 
   codeOfString(normal: string): number | undefined {

@@ -20,7 +20,9 @@ export const isSole = (place: number): boolean => (place & SOLE_BIT) !== 0;
 /** Words of the searchable attributes; one entry a word, document and attribute, at its first position. */
 export class Postings {
   private byWord = new Map<string, Posting>();
-  private vocabularyCache: Vocabulary | undefined;
+  private lastVocabulary = new Vocabulary([]);
+  private readonly newWords = new Set<string>();
+  private hasLostWords = false;
   private readonly attributeIds = new Map<string, number>();
   /** Paths by attribute number, in the order in which documents brought them. */
   readonly attributes: string[] = [];
@@ -31,7 +33,17 @@ export class Postings {
   ) {}
 
   get vocabulary(): Vocabulary {
-    return (this.vocabularyCache ??= new Vocabulary(this.byWord.keys()));
+    if (this.newWords.size === 0 && !this.hasLostWords) return this.lastVocabulary;
+    const { words } = this.lastVocabulary;
+    const kept = this.hasLostWords ? words.filter((word) => this.byWord.has(word) && !this.newWords.has(word)) : words;
+    // Two sorted runs one after the other: sorting them again is a merge.
+    this.lastVocabulary = new Vocabulary([
+      ...kept,
+      ...[...this.newWords].filter((word) => this.byWord.has(word)).sort(),
+    ]);
+    this.newWords.clear();
+    this.hasLostWords = false;
+    return this.lastVocabulary;
   }
 
   get(word: string): Posting | undefined {
@@ -61,7 +73,7 @@ export class Postings {
       posting.places.splice(from, to - from);
       if (posting.slots.length > 0) continue;
       this.byWord.delete(word);
-      this.vocabularyCache = undefined;
+      this.hasLostWords = true;
     }
   }
 
@@ -96,7 +108,7 @@ export class Postings {
     if (posting === undefined) {
       posting = { slots: [], places: [] };
       this.byWord.set(word, posting);
-      this.vocabularyCache = undefined;
+      this.newWords.add(word);
     }
     const { slots, places } = posting;
     const isLast = slots.length === 0 || (slots[slots.length - 1] as number) <= slot;

@@ -8,8 +8,8 @@ export type WordQuery = { word: string; maxTypos: 0 | 1 | 2; isPrefix: boolean }
  * and a whole subtree is passed over as soon as its row is out of reach.
  */
 export class Vocabulary {
-  private words: string[] = [];
-  private shared = new Uint16Array(0);
+  readonly words: readonly string[];
+  private readonly shared: Uint16Array;
 
   constructor(words: Iterable<string>) {
     this.words = [...words].sort();
