@@ -3,7 +3,9 @@ import { METHOD_V1 } from "../results/methods/v1/parameters";
 /** Reads at the levels, into `out`, the curve through the first `count` points of xs and ys, which it puts in order. */
 export type DrawReader = (xs: Float64Array, ys: Float64Array, count: number, out: Float64Array) => void;
 
-const at = (values: Float64Array, i: number): number => values[i] ?? Number.NaN;
+function at(values: Float64Array, i: number): number {
+  return values[i] ?? Number.NaN;
+}
 
 /**
  * The curve reading of `curveKnots`, `pchip` and `valueWithStraightEnds` in one pass over buffers that are used again:
@@ -66,18 +68,25 @@ function readAt(xs: Float64Array, ys: Float64Array, knots: number, level: number
   return at(ys, k) + s * width * (left + s * (3 * chord - 2 * left - right + s * (left + right - 2 * chord)));
 }
 
+// No closures from here on: some run times name each one anew at every call, which costs more than the sums.
+function widthAt(xs: Float64Array, k: number): number {
+  return at(xs, k + 1) - at(xs, k);
+}
+
+function chordAt(xs: Float64Array, ys: Float64Array, k: number): number {
+  return (at(ys, k + 1) - at(ys, k)) / widthAt(xs, k);
+}
+
 /** Slope of the curve at knot k (Fritsch and Butland 1984, three-point ends), as in `pchip`. */
 function slopeAt(xs: Float64Array, ys: Float64Array, knots: number, k: number): number {
-  const width = (i: number) => at(xs, i + 1) - at(xs, i);
-  const chord = (i: number) => (at(ys, i + 1) - at(ys, i)) / width(i);
-  if (knots === 2) return chord(0);
-  if (k === 0) return endSlope(width(0), width(1), chord(0), chord(1));
-  if (k === knots - 1) return endSlope(width(k - 1), width(k - 2), chord(k - 1), chord(k - 2));
-  const before = chord(k - 1);
-  const after = chord(k);
+  if (knots === 2) return chordAt(xs, ys, 0);
+  const before = chordAt(xs, ys, Math.max(0, k - 1));
+  if (k === 0) return endSlope(widthAt(xs, 0), widthAt(xs, 1), before, chordAt(xs, ys, 1));
+  if (k === knots - 1) return endSlope(widthAt(xs, k - 1), widthAt(xs, k - 2), before, chordAt(xs, ys, k - 2));
+  const after = chordAt(xs, ys, k);
   if (!(before * after > 0)) return 0;
-  const w1 = 2 * width(k) + width(k - 1);
-  const w2 = width(k) + 2 * width(k - 1);
+  const w1 = 2 * widthAt(xs, k) + widthAt(xs, k - 1);
+  const w2 = widthAt(xs, k) + 2 * widthAt(xs, k - 1);
   return (w1 + w2) / (w1 / before + w2 / after);
 }
 

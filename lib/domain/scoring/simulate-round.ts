@@ -85,19 +85,23 @@ export function simulateRound(
   });
 }
 
-type Shift = { readonly at: number; readonly size: number };
-type MovablePoint = SetSpeedPoint & { readonly levelShifts: readonly Shift[]; readonly deltaTShifts: readonly Shift[] };
+/** The draws that move a value, and by how much each. */
+type Shifts = { readonly at: Int32Array; readonly size: Float64Array };
+type MovablePoint = SetSpeedPoint & { readonly levelShifts: Shifts; readonly deltaTShifts: Shifts };
 
 /** Points with buffers for their moved coordinates. */
 type MovablePoints = { readonly list: readonly MovablePoint[]; readonly xs: Float64Array; readonly ys: Float64Array };
 
 function movable(points: readonly SetSpeedPoint[], index: ReadonlyMap<string, number>): MovablePoints {
-  const shifts = (effects: readonly Effect[]) =>
-    effects.flatMap(({ source, size }) => {
-      const at = index.get(source);
-      if (at === undefined) throw new RangeError(`a source of error isn't drawn: ${source}`);
-      return size === 0 ? [] : [{ at, size }];
+  const shifts = (effects: readonly Effect[]): Shifts => {
+    const moving = effects.filter(({ size }) => size !== 0);
+    const at = moving.map(({ source }) => {
+      const drawn = index.get(source);
+      if (drawn === undefined) throw new RangeError(`a source of error isn't drawn: ${source}`);
+      return drawn;
     });
+    return { at: Int32Array.from(at), size: Float64Array.from(moving, ({ size }) => size) };
+  };
   const list = points.map((point) => ({
     ...point,
     levelShifts: shifts(point.levelEffects),
@@ -106,9 +110,9 @@ function movable(points: readonly SetSpeedPoint[], index: ReadonlyMap<string, nu
   return { list, xs: new Float64Array(list.length), ys: new Float64Array(list.length) };
 }
 
-function moved(value: number, shifts: readonly Shift[], z: Float64Array): number {
+function moved(value: number, { at, size }: Shifts, z: Float64Array): number {
   let sum = value;
-  for (const { at, size } of shifts) sum += size * (z[at] ?? 0);
+  for (let i = 0; i < at.length; i++) sum += (size[i] ?? 0) * (z[at[i] ?? 0] ?? 0);
   return sum;
 }
 
