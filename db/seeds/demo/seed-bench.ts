@@ -5,7 +5,7 @@ export interface DemoBench {
   versions: { id: string; budgetId: string; positions: { id: string; name: string }[] }[];
   frames: Map<string, string>;
   protocolVersionIds: string[];
-  ruleVersionIds: { equalNoise: string; plainSum: string };
+  equalNoiseRuleId: string;
   baselineUnitIds: string[];
 }
 
@@ -14,15 +14,6 @@ async function one(db: Knex, table: string, row: Record<string, unknown>): Promi
   if (!made) throw new Error(`no row of ${table} came back`);
   return made.id;
 }
-
-/** Frame presets: hole spacings are common practice without a source, see the method page; bore is the house's. */
-const framePresets = [
-  { key: "80x25", class_mm: 80, outer_mm: 80, hole_spacing_mm: 71.5, bore_mm: 76.5, depth_mm: 25 },
-  { key: "92x25", class_mm: 92, outer_mm: 92, hole_spacing_mm: 82.5, bore_mm: 88, depth_mm: 25 },
-  { key: "120x25", class_mm: 120, outer_mm: 120, hole_spacing_mm: 105, bore_mm: 114, depth_mm: 25 },
-  { key: "120x38", class_mm: 120, outer_mm: 120, hole_spacing_mm: 105, bore_mm: 114, depth_mm: 38 },
-  { key: "140x25", class_mm: 140, outer_mm: 140, hole_spacing_mm: 124.5, bore_mm: 134, depth_mm: 25 },
-];
 
 /** The parts of the Alder Bench's uncertainty budget; invented, of a size that such a bench could have. */
 const budgetParts = [
@@ -92,7 +83,7 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
       temperature_sensors: "two matched thermistors: heater block and inlet plane",
       microphone: number === 1 ? "class 2 meter, on axis" : "class 1 measuring microphone, on axis and at 45°",
       calibrator: "94 dB at 1 kHz, class 1",
-      valid_from: number === 1 ? "2024-01-10T09:00:00Z" : "2025-01-15T09:00:00Z",
+      valid_from: number === 1 ? "2024-12-10T09:00:00Z" : "2025-12-10T09:00:00Z",
       change_reason: number === 1 ? "First bench." : "New cooler and a class 1 microphone with a second position.",
     });
     const names = number === 1 ? ["on axis"] : ["on axis", "at 45°"];
@@ -142,9 +133,7 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
     ]);
     versions.push({ id, budgetId, positions });
   }
-  const frameRows: { id: string; key: string }[] = await db("frame")
-    .insert(framePresets.map((frame) => ({ ...frame, hole_diameter_mm: 4.3, tolerance_mm: 0.5 })))
-    .returning(["id", "key"]);
+  const frameRows = await db("frame").select<{ id: string; key: string }[]>("id", "key");
   const protocolId = await one(db, "protocol", { slug: "alder-150-w", name: "Alder 150 W, four speeds" });
   const protocolVersionIds: string[] = [];
   for (const number of [1, 2])
@@ -160,19 +149,9 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
         background_grade: number === 1 ? "survey" : "engineering",
       }),
     );
-  const rule = async (key: string, name: string, kind: string, formula: string): Promise<string> => {
-    const ruleId = await one(db, "scoring_rule", { key, name });
-    return one(db, "scoring_rule_version", { rule_id: ruleId, number: 1, kind, formula });
-  };
-  const ruleVersionIds = {
-    equalNoise: await rule(
-      "equal-noise",
-      "Equal noise",
-      "equal-noise",
-      "mean over the declared levels of (ΔT/P) ÷ (ΔT/P of the session's baseline) at the same level; lower is better",
-    ),
-    plainSum: await rule("plain-sum", "Plain sum", "plain-sum", "mean over the set speeds of ΔT in K + level in dB(A)"),
-  };
+  const ruleRows = await db("scoring_rule_version").select<{ id: string; kind: string }[]>("id", "kind");
+  const equalNoiseRuleId = ruleRows.find((row) => row.kind === "equal-noise")?.id;
+  if (!equalNoiseRuleId) throw new Error("the default scoring rule is missing");
   const baselineId = await one(db, "baseline", {
     slug: "alder-reference-seven",
     name: "Alder reference seven",
@@ -183,14 +162,14 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
     await one(db, "baseline_unit", {
       baseline_id: baselineId,
       serial: "ARS-01",
-      in_service_from: "2024-01-12T09:00:00Z",
-      retired_at: "2025-07-01T09:00:00Z",
+      in_service_from: "2024-12-12T09:00:00Z",
+      retired_at: "2026-07-01T09:00:00Z",
       retired_reason: "Bearing noise after 1 900 hours.",
     }),
     await one(db, "baseline_unit", {
       baseline_id: baselineId,
       serial: "ARS-02",
-      in_service_from: "2025-06-20T09:00:00Z",
+      in_service_from: "2026-06-20T09:00:00Z",
     }),
   ];
   return {
@@ -198,7 +177,7 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
     versions,
     frames: new Map(frameRows.map((row) => [row.key, row.id])),
     protocolVersionIds,
-    ruleVersionIds,
+    equalNoiseRuleId,
     baselineUnitIds,
   };
 }

@@ -48,7 +48,7 @@ export async function seedDesigns(
   frames: Map<string, string>,
 ): Promise<Map<DemoRevision, string>> {
   const ids = new Map<DemoRevision, string>();
-  const createdAt = new Date("2024-01-20T12:00:00Z");
+  const createdAt = new Date("2024-12-20T12:00:00Z");
   for (let from = 0; from < designs.length; from += 500) {
     const chunk = designs.slice(from, from + 500);
     const made: { id: string; slug: string }[] = await db("design")

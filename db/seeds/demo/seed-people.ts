@@ -14,7 +14,7 @@ export const demoPassword = "alder-bench-demo";
 
 /** @returns ids by handle */
 export async function seedPeople(db: Knex, passwordHash: string): Promise<Map<string, string>> {
-  const verified = new Date("2024-01-05T10:00:00Z");
+  const verified = new Date("2024-12-05T10:00:00Z");
   const others = handles.filter((handle) => !demoAccounts.some((account) => account.handle === handle));
   const rows: { id: string; handle: string }[] = await db("person")
     .insert([

@@ -10,20 +10,20 @@ export interface DemoSeason {
   opensAt: Date;
 }
 
-const months = 5;
+const months = 6;
 
-/** Seasons follow each other every five months; the second bench version and later the second baseline unit come in between. */
+/** Seasons follow each other every six months; the second bench version and later the second baseline unit come in between. */
 export async function seedSeasons(db: Knex, bench: DemoBench, count: number): Promise<DemoSeason[]> {
   const seasons: DemoSeason[] = [];
   for (let number = 1; number <= count; number += 1) {
-    const opensAt = new Date(Date.UTC(2024, 1 + (number - 1) * months, 1, 9));
+    const opensAt = new Date(Date.UTC(2025, (number - 1) * months, 5, 9));
     const later = number > Math.ceil(count / 2);
     const benchIndex = later ? 1 : 0;
     const version = bench.versions[benchIndex];
     const baselineUnitId = bench.baselineUnitIds[number === count && count > 1 ? 1 : 0];
     const protocolVersionId = bench.protocolVersionIds[benchIndex];
     if (!version || !baselineUnitId || !protocolVersionId) throw new Error("the bench of the demo is incomplete");
-    const closesAt = new Date(Date.UTC(2024, 1 + number * months, 1, 9));
+    const closesAt = new Date(Date.UTC(2025, number * months, 1, 9));
     const [row]: { id: string }[] = await db("season")
       .insert({
         number,
@@ -33,7 +33,7 @@ export async function seedSeasons(db: Knex, bench: DemoBench, count: number): Pr
         rules:
           "One revision a design and season. It must fit the frame, clear the keep-out solids and pass the spin-up. The score is the mean ratio of ΔT/P to the session's baseline at the declared levels.",
         protocol_version_id: protocolVersionId,
-        scoring_rule_version_id: bench.ruleVersionIds.equalNoise,
+        scoring_rule_version_id: bench.equalNoiseRuleId,
         levels_dba: [45, 48, 51],
         headline_dba: 48,
         total_depth_max_mm: 90,

@@ -1,0 +1,64 @@
+import type { Knex } from "knex";
+
+/** SHA-256 of the golden result of method 1; a test holds it to the recorded file. */
+const goldenOfMethod1 = "0000000000000000000000000000000000000000000000000000000000000000";
+
+/**
+ * What every installation starts with: method 1, the scoring rules at their first version, and the frame presets.
+ * Hole spacings are common practice without a source; the bore is the house's; a host edits them.
+ */
+export async function up(knex: Knex): Promise<void> {
+  await knex("method_version").insert({ number: 1, note: "The first method.", golden_sha256: goldenOfMethod1 });
+  const rules = [
+    [
+      "equal-noise",
+      "Equal noise",
+      "mean over the declared levels L of (ΔT/P)(L) ÷ (ΔT/P of the session's baseline)(L)",
+      {},
+    ],
+    ["plain-sum", "Plain sum", "mean over the set speeds of ΔT + L", {}],
+    ["plain-product", "Plain product", "mean over the set speeds of ΔT · L", {}],
+    ["conductance-less-level", "Conductance less level", "mean over the set speeds of 10 lg(P/ΔT) − L", {}],
+    ["speed-neutral", "Speed neutral", "mean over the set speeds of 10 lg(P/ΔT) − (m/5) · L", { m: 0.6 }],
+  ] as const;
+  for (const [key, name, formula, parameters] of rules) {
+    const [rule]: { id: string }[] = await knex("scoring_rule").insert({ key, name }).returning("id");
+    await knex("scoring_rule_version").insert({
+      rule_id: rule?.id,
+      number: 1,
+      kind: key,
+      formula,
+      parameters: JSON.stringify(parameters),
+    });
+  }
+  const frames = [
+    ["80x25", 80, 80, 71.5, 76.5, 25],
+    ["92x25", 92, 92, 82.5, 88, 25],
+    ["120x25", 120, 120, 105, 114, 25],
+    ["120x38", 120, 120, 105, 114, 38],
+    ["140x25", 140, 140, 124.5, 134, 25],
+  ] as const;
+  await knex("frame").insert(
+    frames.map(([key, class_mm, outer_mm, hole_spacing_mm, bore_mm, depth_mm]) => ({
+      key,
+      class_mm,
+      outer_mm,
+      hole_spacing_mm,
+      bore_mm,
+      depth_mm,
+      hole_diameter_mm: 4.3,
+      tolerance_mm: 0.5,
+    })),
+  );
+}
+
+export async function down(knex: Knex): Promise<void> {
+  // The rows of these tables are insert only, so their triggers are lifted for as long as it takes.
+  for (const table of ["scoring_rule_version", "method_version"]) {
+    await knex.raw("alter table ?? disable trigger user", [table]);
+    await knex(table).delete();
+    await knex.raw("alter table ?? enable trigger user", [table]);
+  }
+  await knex("scoring_rule").delete();
+  await knex("frame").delete();
+}
