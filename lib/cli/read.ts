@@ -5,6 +5,7 @@ const READERS: Record<string, (args: string[]) => Promise<object>> = {
   sound: async (args) => (await import("./read/sound")).readSound(args),
   log: async (args) => (await import("./read/log")).readLog(args),
   round: async (args) => (await import("./read/round")).readRound(args),
+  mesh: async (args) => (await import("./read/mesh")).readMesh(args),
 };
 
 /** One JSON object on standard output; on bad input exit status 2 and one line of JSON on standard error. */

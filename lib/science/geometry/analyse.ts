@@ -168,12 +168,14 @@ function measureRow(finding: AxisFinding, found: FoundRow, context: MassContext)
   const angles = evenAngles(row.blades);
   const solids = solidStretches(castColumns(mesh, own, { radiiMm: radiiTo(outer, 256), angles }), () => true, 0);
   const [from, to] = [row.zoneFromZMm, row.zoneToZMm];
-  const reach = solids.ends.reduce(
-    ([a, b], z) => (z >= from && z <= to ? [Math.min(a, z), Math.max(b, z)] : [a, b]),
-    [row.fromZMm, row.toZMm],
-  );
+  let [reachFrom, reachTo] = [row.fromZMm, row.toZMm];
+  for (const z of solids.ends) {
+    if (z < from || z > to) continue;
+    reachFrom = Math.min(reachFrom, z);
+    reachTo = Math.max(reachTo, z);
+  }
   const solid = context.watertight ? zoneIntegrals(solids, outer, from, to) : undefined;
-  return { row, mass: solid && massProperties(solid, context.density), fromMm: reach[0] ?? from, toMm: reach[1] ?? to };
+  return { row, mass: solid && massProperties(solid, context.density), fromMm: reachFrom, toMm: reachTo };
 }
 
 /** The axis through the middle of all rotors, its direction with the largest component positive. */

@@ -60,7 +60,8 @@ function planarNormals(faces: Faces): Vec3[] {
     .filter((group) => group.area > 0.01 * total)
     .sort((a, b) => b.area - a.area)
     .slice(0, PLANAR_DIRECTIONS)
-    .flatMap((group) => unit(group.sum) ?? []);
+    .map((group) => unit(group.sum))
+    .filter((normal) => normal !== undefined);
 }
 
 /** Principal axes of the surface, the one that stands apart from the other two first. */

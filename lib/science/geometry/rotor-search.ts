@@ -98,7 +98,11 @@ function rowsOfGroup(
     cast ?? castColumns(mesh, own, { radiiMm: radiiTo(outerRadius(mesh, own), grid.radii), angles: grid.angles });
   const include = (shell: number): boolean => group.shells.has(shell);
   const solids = solidStretches(columns, include, tinyMm);
-  const [low, high] = solids.ends.reduce(([a, b], z) => [Math.min(a, z), Math.max(b, z)], [Infinity, -Infinity]);
+  let [low, high] = [Infinity, -Infinity];
+  for (const z of solids.ends) {
+    low = Math.min(low, z);
+    high = Math.max(high, z);
+  }
   if (!(high > low)) return [];
   const table = rowTable(solids, low, high, grid.rows);
   const part: TurningPart = { mesh, faces: facesWithin(mesh, faces, own), shellOf: own, include, tinyMm };
