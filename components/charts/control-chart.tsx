@@ -7,7 +7,7 @@ import { ChartFrame } from "./chart-frame";
 import { controlSummary, controlTable, outOfControl, type ControlPoint } from "./control-model";
 import { endLabels } from "./end-labels";
 import { usePalette, type Palette } from "./palette";
-import { axis, commonOptions, paperUnder } from "./paper";
+import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 
 export type ControlChartProps = {
@@ -83,8 +83,9 @@ function breaks(points: readonly ControlPoint[], palette: Palette) {
         label: {
           display: true,
           content: why,
+          // Over the chart, where no point can hide behind it.
           position: "end" as const,
-          yAdjust: (order % 2) * 18,
+          yAdjust: -20 - (order % 2) * 18,
           backgroundColor: palette.paper,
           color: palette.ink,
           padding: 2,
@@ -114,9 +115,10 @@ export function ControlChart({ points, quantity, unit, caption, summary, fileNam
           },
           ticks: { ...base.ticks, autoSkip: false, callback: (value) => points[Number(value)]?.at ?? "" },
         },
-        y: { ...axis(palette, `${quantity}, ${unit}`, true), grace: "12%" },
+        y: { ...figureAxis(palette, `${quantity}, ${unit}`, true), grace: "12%" },
       },
-      plugins: { annotation: { annotations: breaks(points, palette) } },
+      layout: { padding: { top: points.some((point) => point.breakBefore) ? 44 : 8 } },
+      plugins: { annotation: { clip: false, annotations: breaks(points, palette) } },
     };
   return (
     <ChartFrame

@@ -15,7 +15,7 @@ import {
 import { endLabels } from "./end-labels";
 import { errorBars, type BarredPoint } from "./error-bars";
 import { usePalette, type Palette } from "./palette";
-import { axis, commonOptions, paperUnder } from "./paper";
+import { commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 import { baselineStyle, seriesStyle, type SeriesStyle } from "./series-style";
 
@@ -68,11 +68,15 @@ function options(props: CoolingChartProps, palette: Palette, quantity: CoolingQu
     scales: {
       // Room at the end for the names of the series.
       x: {
-        ...axis(palette, `Level, ${levelUnit(props.distanceMm)}`, false),
+        ...figureAxis(palette, `Level, ${levelUnit(props.distanceMm)}`, false),
         suggestedMin: left,
         suggestedMax: right + (right - left) * 0.12,
       },
-      y: { ...axis(palette, `${quantity.head}, ${quantity.unit}`, true), suggestedMin: bottom, suggestedMax: top },
+      y: {
+        ...figureAxis(palette, `${quantity.head}, ${quantity.unit}`, true),
+        suggestedMin: bottom,
+        suggestedMax: top,
+      },
     },
     plugins: {
       annotation: {

@@ -7,7 +7,7 @@ import { formatNumber } from "@/lib/format/numbers";
 import { ChartFrame } from "./chart-frame";
 import { errorBars, type BarredPoint } from "./error-bars";
 import { usePalette, type Palette } from "./palette";
-import { axis, commonOptions, paperUnder } from "./paper";
+import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 
 export type DotInterval = {
@@ -99,7 +99,11 @@ export function DotIntervalChart(props: DotIntervalChartProps) {
     base && {
       ...commonOptions(palette),
       scales: {
-        x: { ...axis(palette, `${quantity}, ${unit}`, false), suggestedMin: -0.1, suggestedMax: 0.1 },
+        x: {
+          ...figureAxis(palette, `${quantity}, ${unit}`, false),
+          suggestedMin: Math.min(-0.1, ...rows.map(({ low }) => low ?? 0)),
+          suggestedMax: Math.max(0.1, ...rows.map(({ high }) => high ?? 0)),
+        },
         y: {
           ...base,
           reverse: true,

@@ -20,7 +20,7 @@ export function EqualNoiseSlider(props: EqualNoiseSliderProps) {
   const id = useId();
   const words = `${formatNumber(levelDba, { decimals: 1 })} ${levelUnit(distanceMm)}`;
   return (
-    <div className="grid gap-1">
+    <div className="grid content-start gap-1">
       <label htmlFor={id} className="flex flex-wrap items-baseline gap-x-3">
         <span className="sr-only">Equal noise at</span>
         <span className="figures text-2xl font-bold">{formatNumber(levelDba, { decimals: 1 })}</span>

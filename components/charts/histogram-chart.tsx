@@ -7,7 +7,7 @@ import { formatRange } from "@/lib/format/quantities";
 import type { HistogramBin } from "../ui/small-histogram";
 import { ChartFrame } from "./chart-frame";
 import { usePalette } from "./palette";
-import { axis, commonOptions, paperUnder } from "./paper";
+import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 
 export type HistogramChartProps = {
@@ -27,7 +27,7 @@ export function HistogramChart(props: HistogramChartProps) {
   const total = bins.reduce((sum, bin) => sum + bin.count, 0);
   const most = bins.toSorted((a, b) => b.count - a.count)[0];
   const range = (bin: HistogramBin) => formatRange(bin.from, bin.to, { decimals });
-  const base = palette && axis(palette, countOf, true);
+  const base = palette && figureAxis(palette, countOf, true);
   const options: ChartOptions<"bar"> | undefined = palette &&
     base && {
       ...commonOptions(palette),
@@ -64,7 +64,7 @@ export function HistogramChart(props: HistogramChartProps) {
               chart.current = made ?? null;
             }}
             data={{
-              labels: bins.map((bin) => String(bin.from)),
+              labels: bins.map(range),
               datasets: [
                 {
                   data: bins.map((bin) => bin.count),

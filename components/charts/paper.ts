@@ -1,4 +1,5 @@
 import type { ChartOptions, Plugin, ScaleOptionsByType } from "chart.js";
+import { formatNumber } from "@/lib/format/numbers";
 import type { Palette } from "./palette";
 
 /** Fills the canvas with paper, so that a picture of it stands by itself. */
@@ -13,6 +14,18 @@ export const paperUnder: Plugin = {
   },
 };
 
+/** Decimals that write every step of an axis, three at most. */
+function stepDecimals(ticks: readonly { value: number }[]): number {
+  const step = Math.abs((ticks[1]?.value ?? 1) - (ticks[0]?.value ?? 0));
+  const fits = [0, 1, 2].find((decimals) => Math.abs(step * 10 ** decimals - Math.round(step * 10 ** decimals)) < 1e-6);
+  return fits ?? 3;
+}
+
+/** Figures along a linear axis with a true minus. */
+function tickFigures(value: string | number, _index: number, ticks: readonly { value: number }[]): string {
+  return formatNumber(Number(value), { decimals: stepDecimals(ticks) });
+}
+
 /** One axis: quiet words, thin rules across, none down. */
 export function axis(palette: Palette, title: string, rules: boolean) {
   return {
@@ -21,6 +34,12 @@ export function axis(palette: Palette, title: string, rules: boolean) {
     grid: { display: rules, color: palette.rule, lineWidth: 0.6, drawTicks: false },
     border: { color: palette.soft, display: !rules },
   } satisfies Partial<Record<keyof ScaleOptionsByType<"linear">, unknown>>;
+}
+
+/** A linear axis of figures. */
+export function figureAxis(palette: Palette, title: string, rules: boolean) {
+  const base = axis(palette, title, rules);
+  return { ...base, ticks: { ...base.ticks, callback: tickFigures } };
 }
 
 /** What every chart shares: its paper and type, no legend, no motion where none is wanted. */

@@ -6,7 +6,7 @@ import { Bar } from "react-chartjs-2";
 import { ChartFrame } from "./chart-frame";
 import { placeLabels } from "./label-places";
 import { usePalette, type Palette } from "./palette";
-import { axis, commonOptions, paperUnder } from "./paper";
+import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 import {
   bandName,
@@ -46,36 +46,43 @@ function hatch(palette: Palette): CanvasPattern | string {
   return ctx.createPattern(tile, "repeat") ?? palette.soft;
 }
 
-/** Names over the bars that hold a predicted tone, clear of the bars and of each other. */
+/** Names over the bars that hold a predicted tone, tied to them, clear of the bars and of each other. */
 const toneNames: Plugin<"bar"> = {
   id: "toneNames",
   afterDatasetsDraw(chart) {
     const { ctx, chartArea } = chart;
-    const names: readonly string[][] =
-      chart.data.datasets[0] && "names" in chart.data.datasets[0] ? namesOf(chart.data.datasets[0]) : [];
+    const names = namesOf(chart.data.datasets[0]);
     const bars = chart.getDatasetMeta(0).data;
-    const wishes: { text: string; w: number; h: number; at: { x: number; y: number } }[] = [];
     ctx.save();
     ctx.font = `12px ${chart.options.font?.family ?? "monospace"}`;
     ctx.textBaseline = "middle";
-    bars.forEach((bar, index) => {
-      for (const text of names[index] ?? []) {
-        wishes.push({ text, w: ctx.measureText(text).width, h: 14, at: { x: bar.x, y: bar.y - 10 } });
-      }
-    });
+    const wishes = bars.flatMap((bar, index) =>
+      (names[index] ?? []).map((name) => {
+        // A narrow chart has room for the frequency; the name stands in the table.
+        const text = chart.width < 560 ? name.split(" Hz")[0] + " Hz" : name;
+        return { text, w: ctx.measureText(text).width, h: 14, at: { x: bar.x, y: bar.y - 8 } };
+      }),
+    );
     const half = chartArea.width / Math.max(1, bars.length) / 2;
-    const obstacles = bars.map(({ x, y }) => ({ x: x - half, y: y - 2, w: 2 * half, h: chartArea.bottom - y + 2 }));
-    const area = { x: chartArea.left, y: 0, w: chartArea.width, h: chartArea.bottom };
-    ctx.fillStyle = typeof chart.options.color === "string" ? chart.options.color : "#000";
+    const obstacles = bars.map(({ x, y }) => ({ x: x - half, y: y - 4, w: 2 * half, h: chartArea.bottom - y + 4 }));
+    const area = { x: chartArea.left, y: 4, w: chartArea.width, h: chartArea.bottom - 4 };
+    const ink = typeof chart.options.color === "string" ? chart.options.color : "#000";
+    [ctx.fillStyle, ctx.strokeStyle, ctx.lineWidth] = [ink, ink, 1];
     placeLabels(wishes, obstacles, area).forEach((place, order) => {
-      ctx.fillText(wishes[order]?.text ?? "", place.x, place.y + place.h / 2);
+      const wish = wishes[order];
+      if (!wish) return;
+      ctx.fillText(wish.text, place.x, place.y + place.h / 2);
+      ctx.beginPath();
+      ctx.moveTo(wish.at.x, wish.at.y + 6);
+      ctx.lineTo(Math.min(Math.max(wish.at.x, place.x), place.x + place.w), Math.min(wish.at.y + 6, place.y + place.h));
+      ctx.stroke();
     });
     ctx.restore();
   },
 };
 
-function namesOf(dataset: { names?: unknown }): string[][] {
-  return Array.isArray(dataset.names) ? dataset.names : [];
+function namesOf(dataset: object | undefined): string[][] {
+  return dataset && "names" in dataset && Array.isArray(dataset.names) ? dataset.names : [];
 }
 
 function spectrumData(
@@ -106,10 +113,10 @@ export function SpectrumChart({ bands, tones = [], unit, caption, summary, fileN
   const options: ChartOptions<"bar"> | undefined = palette && {
     ...commonOptions(palette),
     color: palette.ink,
-    layout: { padding: { top: tones.length > 0 ? 28 : 4 } },
+    layout: { padding: { top: tones.length > 0 ? 48 : 4 } },
     scales: {
       x: { ...axis(palette, "one-third-octave band, Hz", false) },
-      y: { ...axis(palette, unit, true), suggestedMin: lowest },
+      y: { ...figureAxis(palette, unit, true), suggestedMin: lowest },
     },
   };
   return (

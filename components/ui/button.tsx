@@ -5,8 +5,6 @@ import type { ButtonHTMLAttributes, ComponentProps, MouseEvent, ReactNode } from
 import { useFormStatus } from "react-dom";
 import { buttonClass, type ButtonKind } from "./button-class";
 
-export type { ButtonKind };
-
 export type ButtonProps = ButtonHTMLAttributes<HTMLButtonElement> & {
   kind?: ButtonKind;
   small?: boolean;
