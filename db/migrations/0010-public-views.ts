@@ -10,7 +10,9 @@ export async function up(knex: Knex): Promise<void> {
     create schema shown;
 
     create view shown.entry as
-      select p.*, d.number as design_number, d.slug as design_slug, d.name as design_name, r.letter as revision_letter,
+      select p.*, case when p.stages = 1 then 'single' when p.counter_rotating then 'counter' else 'co' end as rotation,
+        p.spacer_mm > 0 as spacer, 100 * p.equal_noise_ratio as equal_noise_percent, 100 * p.u_equal_noise_ratio as u_equal_noise_percent,
+        d.number as design_number, d.slug as design_slug, d.name as design_name, r.letter as revision_letter,
         s.number as season_number, s.slug as season_slug, s.title as season_title, n.number as round_number,
         (select array_agg(coalesce(h.handle, 'former member') order by o.from_at, o.id)
           from design_owner o join person h on h.id = o.person_id where o.design_id = p.design_id and o.until_at is null) as designers

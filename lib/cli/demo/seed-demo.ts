@@ -17,7 +17,7 @@ import { signRound } from "@/lib/server/review/sign-round";
 const worldSeed = 20_240;
 const benchSeed = 7_001;
 /** Fewer than a host's standing has, so that the demo is there in seconds; the standing says so. */
-const demoDraws = 1_000;
+const demoDraws = 400;
 const day = 86_400_000;
 
 export const demoSize: DemoSize = { seasons: 4, roundsPerSeason: 6, entriesPerRound: 16 };

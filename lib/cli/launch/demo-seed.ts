@@ -38,7 +38,7 @@ export async function prepareDemoDatabase(
     await ensureDatabase(cluster.adminUrl, database);
     await migrateEverything(url);
   }
-  const file = path.join(root, "db/seeds/demo/demo.ts");
+  const file = path.join(root, "lib/cli/demo/seed-demo.ts");
   if (!existsSync(file)) return;
   console.log("Seeding the demo …");
   const { seedDemo } = (await import(pathToFileURL(file).href)) as SeedModule;

@@ -26,15 +26,32 @@ export type Effect = {
 export function combineEffects(
   terms: readonly { readonly factor: number; readonly effects: readonly Effect[] }[],
 ): Effect[] {
-  const sums = new Map<string, Effect>();
+  const places = new Map<string, number>();
+  const firsts: Effect[] = [];
+  const sizes: number[] = [];
+  const dofs: number[] = [];
   for (const { factor, effects } of terms) {
     for (const effect of effects) {
-      const before = sums.get(effect.source);
-      const size = (before?.size ?? 0) + factor * effect.size;
-      sums.set(effect.source, { ...effect, size, dof: Math.min(before?.dof ?? Infinity, effect.dof) });
+      const at = places.get(effect.source);
+      if (at === undefined) {
+        places.set(effect.source, firsts.length);
+        firsts.push(effect);
+        sizes.push(factor * effect.size);
+        dofs.push(effect.dof);
+      } else {
+        sizes[at] = (sizes[at] ?? 0) + factor * effect.size;
+        dofs[at] = Math.min(dofs[at] ?? Infinity, effect.dof);
+      }
     }
   }
-  return [...sums.values()];
+  return firsts.map(({ source, kind, quantity, owner }, i) => ({
+    source,
+    kind,
+    quantity,
+    owner,
+    size: sizes[i] ?? 0,
+    dof: dofs[i] ?? Infinity,
+  }));
 }
 
 /** Combined standard uncertainty of a figure, in its unit; 0 for no effects (JCGM 100:2008, 5.1.2, eq. 10). */
