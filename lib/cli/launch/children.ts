@@ -32,7 +32,7 @@ export function startChild(life: Lifetime, ledger: LaunchLedger | undefined, opt
   const pid = child.pid;
   ledger?.add(pid, options.name);
   const stop = (): Promise<void> => stopGroup(child, pid);
-  life.onStop(stop);
+  life.onStop(stop, "together");
   return { pid, ended, stop };
 }
 

@@ -1,7 +1,7 @@
 /** What a launcher has started, to be stopped in the opposite order, once, whatever ends it. */
 export interface Lifetime {
-  /** Registers how to stop something; steps of one stage stop together, later stages first. */
-  onStop(stop: () => Promise<void>): void;
+  /** Registers how to stop something. Neighbours that are `together` stop at the same time. */
+  onStop(stop: () => Promise<void>, how?: "together"): void;
   /** Throws once stopping has begun: called between steps of a start. */
   check(): void;
   readonly stopping: boolean;
@@ -13,25 +13,25 @@ export class StoppedError extends Error {
 }
 
 export function lifetime(): Lifetime {
-  const stops: (() => Promise<void>)[] = [];
+  const stops: { stop: () => Promise<void>; how: "together" | undefined }[] = [];
   let stopping = false;
   return {
     get stopping() {
       return stopping;
     },
-    onStop(stop) {
-      stops.push(stop);
+    onStop(stop, how) {
+      stops.push({ stop, how });
     },
     check() {
       if (stopping) throw new StoppedError("Stopped.");
     },
     async stopAll() {
       stopping = true;
-      for (let stop = stops.pop(); stop; stop = stops.pop()) {
-        try {
-          await stop();
-        } catch (error) {
-          console.error("While stopping:", error instanceof Error ? error.message : error);
+      for (let last = stops.pop(); last; last = stops.pop()) {
+        const now = [last];
+        while (last.how === "together" && stops.at(-1)?.how === "together") now.push(...stops.splice(-1));
+        for (const each of await Promise.allSettled(now.map(({ stop }) => stop()))) {
+          if (each.status === "rejected") console.error("While stopping:", String(each.reason));
         }
       }
     },

@@ -1,0 +1,87 @@
+import { randomUUID } from "node:crypto";
+import { existsSync, rmSync } from "node:fs";
+import { createServer } from "node:net";
+import path from "node:path";
+import { afterEach, beforeEach, expect, test } from "vitest";
+import { anyFreePort } from "@/db/cluster/port";
+import { processesIn, until } from "@/db/cluster/processes";
+import { temporaryFolder } from "@/tests/setup/temporary-folder";
+import { launch, marked } from "./launcher";
+
+let folder: string;
+let mark: string;
+let port: number;
+const settings = (more: Record<string, string> = {}) => ({ PORT: String(port), DATA_DIR: folder, ...more });
+const database = () => processesIn(path.join(folder, "postgres/cluster"));
+
+beforeEach(async () => {
+  folder = temporaryFolder("start");
+  mark = randomUUID();
+  port = await anyFreePort();
+});
+afterEach(async () => {
+  await until(() => marked(mark).length + database().length === 0, 5_000);
+  expect([...marked(mark), ...database()], "no process is left").toEqual([]);
+  rmSync(folder, { recursive: true, force: true });
+});
+
+const healthy = async (): Promise<number> => (await fetch(`http://127.0.0.1:${port}/api/v1/health`)).status;
+
+test("a start answers, a second one beside it is refused, and SIGTERM ends all of it with exit code 0", async () => {
+  const first = launch(settings(), mark);
+  await first.ready;
+  expect(await healthy()).toBe(200);
+  const second = launch(settings({ PORT: String(await anyFreePort()) }), mark);
+  expect(await second.ended).toBe(1);
+  expect(second.said()).toContain(`already runs from ${folder}`);
+  expect(await healthy()).toBe(200);
+  first.signal("SIGTERM");
+  expect(await first.ended).toBe(0);
+});
+
+test("what a killed launcher left running is ended by the next start, which serves in its place", async () => {
+  const first = launch(settings(), mark);
+  await first.ready;
+  first.signal("SIGKILL");
+  expect(await first.ended).toBe("SIGKILL");
+  expect(database().length).toBeGreaterThan(0);
+  const second = launch(settings(), mark);
+  await second.ready;
+  expect(second.said(), "the demo is seeded once").not.toContain("Seeding");
+  expect(await healthy()).toBe(200);
+  second.signal("SIGINT");
+  expect(await second.ended).toBe(0);
+});
+
+test("a start that is stopped on its way leaves nothing, and says by its code that it was", async () => {
+  const early = launch(settings(), mark);
+  await until(() => database().length > 0, 60_000);
+  early.signal("SIGTERM");
+  expect(await early.ended).toBe(143);
+});
+
+test("a taken port is named, and nothing is left", async () => {
+  const other = createServer();
+  await new Promise<void>((resolve) => other.listen(port, "127.0.0.1", resolve));
+  try {
+    const start = launch(settings(), mark);
+    expect(await start.ended).toBe(1);
+    expect(start.said()).toContain(`Port ${port} of 127.0.0.1 is taken`);
+  } finally {
+    await new Promise((resolve) => other.close(resolve));
+  }
+});
+
+test("the demo is not shown beyond this machine", async () => {
+  const start = launch(settings({ HOST: "0.0.0.0" }), mark);
+  expect(await start.ended).toBe(1);
+  expect(start.said()).toContain("HOST=0.0.0.0");
+  expect(existsSync(path.join(folder, "postgres"))).toBe(false);
+});
+
+test("with DATABASE_URL set, nothing of ours is started and what is missing is named", async () => {
+  const start = launch(settings({ DATABASE_URL: "postgresql://a:b@127.0.0.1:1/none" }), mark);
+  expect(await start.ended).toBe(1);
+  expect(start.said()).toContain("PUBLIC_DATABASE_URL, MEILI_HOST, SMTP_URL, NEXTAUTH_SECRET, NEXTAUTH_URL");
+  expect(existsSync(path.join(folder, "postgres"))).toBe(false);
+});
