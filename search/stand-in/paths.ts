@@ -57,17 +57,37 @@ export function eachLeaf(value: Json, path: string, visit: (path: string, leaf: 
   }
 }
 
-/** Copy that holds only what the patterns cover; `["*"]` gives the document itself. */
+type Picker = { names: ReadonlySet<string>; wild: readonly string[]; below: ReadonlyMap<string, string[]> };
+
+/** Patterns sorted by kind, kept as long as their list is: settings hold one list for many searches. */
+const pickers = new WeakMap<readonly string[], Picker>();
+
+function pickerOf(patterns: readonly string[]): Picker {
+  let picker = pickers.get(patterns);
+  if (picker === undefined) {
+    const below = new Map<string, string[]>();
+    for (const pattern of patterns) {
+      for (let dot = pattern.indexOf("."); dot > 0; dot = pattern.indexOf(".", dot + 1)) {
+        const parent = pattern.slice(0, dot);
+        below.set(parent, [...(below.get(parent) ?? []), pattern.slice(dot + 1)]);
+      }
+    }
+    picker = { names: new Set(patterns), wild: patterns.filter((each) => each.includes("*")), below };
+    pickers.set(patterns, picker);
+  }
+  return picker;
+}
+
+/** Copy that holds only what the patterns cover; with `*` among them the document itself. */
 export function project(document: Document, patterns: readonly string[]): Document {
-  if (patterns.includes("*")) return document;
+  const { names, wild, below } = pickerOf(patterns);
+  if (names.has("*")) return document;
   const kept: Document = {};
   for (const [key, value] of Object.entries(document)) {
-    if (patterns.some((pattern) => matchesPattern(pattern, key))) {
-      kept[key] = value;
-      continue;
-    }
-    const below = patterns.filter((p) => p.startsWith(`${key}.`)).map((p) => p.slice(key.length + 1));
-    if (below.length > 0) kept[key] = projectBelow(value, below);
+    const inside = below.get(key);
+    if (names.has(key) || wild.some((pattern) => matchesPattern(pattern, key))) kept[key] = value;
+    else if (inside !== undefined) kept[key] = projectBelow(value, inside);
+    else if (key.includes(".") && patterns.some((pattern) => matchesPattern(pattern, key))) kept[key] = value;
   }
   return kept;
 }

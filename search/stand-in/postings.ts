@@ -1,6 +1,6 @@
 import type { Document } from "./paths";
 import { eachLeaf } from "./paths";
-import { scalarText, tokenise } from "./words";
+import { scalarText, wordsOf } from "./words";
 import { Vocabulary } from "./vocabulary";
 
 /** Where a word occurs: a document slot and a packed place, in order of slot. */
@@ -24,6 +24,7 @@ export class Postings {
   private readonly newWords = new Set<string>();
   private hasLostWords = false;
   private readonly attributeIds = new Map<string, number>();
+  private readonly searchedPaths = new Map<string, boolean>();
   /** Paths by attribute number, in the order in which documents brought them. */
   readonly attributes: string[] = [];
 
@@ -51,18 +52,17 @@ export class Postings {
   }
 
   add(slot: number, document: Document): void {
-    for (const [attribute, words] of this.read(document)) {
-      const sole = words.length === 1 ? SOLE_BIT : 0;
-      for (const { word, position } of words) {
-        const place = attribute * (1 << POSITION_BITS) + sole + Math.min(position, POSITION_MAX);
-        this.insert(word, slot, place);
+    for (const [attribute, { words, positions }] of this.read(document)) {
+      const base = attribute * (1 << POSITION_BITS) + (words.length === 1 ? SOLE_BIT : 0);
+      for (let i = 0; i < words.length; i += 1) {
+        this.insert(words[i] as string, slot, base + Math.min(positions[i] as number, POSITION_MAX));
       }
     }
   }
 
   remove(slot: number, document: Document): void {
     const gone = new Set<string>();
-    for (const words of this.read(document).values()) for (const { word } of words) gone.add(word);
+    for (const { words } of this.read(document).values()) for (const word of words) gone.add(word);
     for (const word of gone) {
       const posting = this.byWord.get(word);
       if (posting === undefined) continue;
@@ -77,21 +77,36 @@ export class Postings {
     }
   }
 
-  private read(document: Document): Map<number, { word: string; position: number }[]> {
-    const found = new Map<number, { word: string; position: number }[]>();
+  private read(document: Document): Map<number, { words: string[]; positions: number[] }> {
+    const found = new Map<number, { words: string[]; positions: number[] }>();
     eachLeaf(document, "", (path, leaf) => {
+      if (!this.isSearched(path)) return;
       const text = scalarText(leaf);
-      if (text === undefined || !this.isSearchable(path)) return;
+      if (text === undefined) return;
       const attribute = this.attributeId(path);
-      const words = found.get(attribute) ?? [];
-      const last = words[words.length - 1];
-      const start = last === undefined ? 0 : last.position + ITEM_GAP;
-      tokenise(text).forEach(({ word }, index) => {
-        if (!this.stopWords.has(word)) words.push({ word, position: start + index });
-      });
-      if (words.length > 0) found.set(attribute, words);
+      const { words, positions } = found.get(attribute) ?? { words: [], positions: [] };
+      const last = positions[positions.length - 1];
+      let position = last === undefined ? 0 : last + ITEM_GAP;
+      for (const word of wordsOf(text)) {
+        if (!this.stopWords.has(word)) {
+          words.push(word);
+          positions.push(position);
+        }
+        position += 1;
+      }
+      if (words.length > 0) found.set(attribute, { words, positions });
     });
     return found;
+  }
+
+  /** Asked once a path: the answer can't change, a change of the settings builds new postings. */
+  private isSearched(path: string): boolean {
+    let known = this.searchedPaths.get(path);
+    if (known === undefined) {
+      known = this.isSearchable(path);
+      this.searchedPaths.set(path, known);
+    }
+    return known;
   }
 
   private attributeId(path: string): number {

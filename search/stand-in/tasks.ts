@@ -39,6 +39,8 @@ export type Work = (task: Task) => void;
 
 /** A task waits at least this long, so that callers that forget to wait see the state before it. */
 const DELAY_MS = 4;
+/** Quiet time after the last task before `onIdle` is called, so that a run of tasks isn't slowed down by it. */
+const IDLE_MS = 150;
 
 /** Carries tasks out one after the other in the order in which they came; cancelations go first. */
 export class TaskQueue {
@@ -46,9 +48,10 @@ export class TaskQueue {
   private readonly waiting: { task: Task; work: Work; readyAtMs: number }[] = [];
   private nextUid = 0;
   private timer: NodeJS.Timeout | undefined;
+  private idleTimer: NodeJS.Timeout | undefined;
   private isClosed = false;
 
-  /** `onIdle` is called when the last waiting task is done. */
+  /** `onIdle` is called when nothing has been waiting for a while. */
   constructor(private readonly onIdle: () => void) {}
 
   enqueue(type: TaskType, indexUid: string | null, details: Record<string, unknown> | null, work: Work): EnqueuedTask {
@@ -127,12 +130,17 @@ export class TaskQueue {
   close(): void {
     this.isClosed = true;
     clearTimeout(this.timer);
+    clearTimeout(this.idleTimer);
   }
 
   private schedule(): void {
     const next = this.waiting[0];
     if (this.timer !== undefined || this.isClosed) return;
-    if (next === undefined) return this.onIdle();
+    clearTimeout(this.idleTimer);
+    if (next === undefined) {
+      this.idleTimer = setTimeout(this.onIdle, IDLE_MS).unref();
+      return;
+    }
     this.timer = setTimeout(
       () => {
         this.timer = undefined;

@@ -27,6 +27,16 @@ export function tokenise(text: string): Token[] {
   return tokens;
 }
 
+/** The words of a text in normal form and in order, without their places. */
+export function wordsOf(text: string): string[] {
+  const words: string[] = [];
+  for (const part of text.match(WORD) ?? []) {
+    const word = normaliseWord(part);
+    if (word !== "" && word.length <= WORD_LENGTH_MAX) words.push(word);
+  }
+  return words;
+}
+
 /** Form in which facet strings are compared: trimmed, lower case, compatibility-decomposed, accents kept. */
 export function normaliseFacet(value: string): string {
   return value.trim().normalize("NFKD").toLowerCase();
