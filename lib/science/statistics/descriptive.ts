@@ -30,9 +30,9 @@ export function mean(values: ArrayLike<number>): number | undefined {
 export function squaredDeviations(values: ArrayLike<number>): number | undefined {
   const centre = mean(values);
   if (centre === undefined) return undefined;
-  const squares = new Float64Array(values.length);
-  for (let i = 0; i < values.length; i++) squares[i] = (at(values, i) - centre) ** 2;
-  return sum(squares);
+  let squares = 0;
+  for (let i = 0; i < values.length; i++) squares += (at(values, i) - centre) ** 2;
+  return squares;
 }
 
 /** Experimental standard deviation with n − 1 (JCGM 100:2008, 4.2.2), unit of the values; undefined for fewer than two. */

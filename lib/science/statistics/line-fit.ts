@@ -1,4 +1,4 @@
-import { at, mean, sum } from "./descriptive";
+import { at, mean } from "./descriptive";
 
 /** Straight line y = intercept + slope·x by least squares, with what it leaves open. */
 export interface LineFit {
@@ -27,12 +27,16 @@ export function fitLine(x: ArrayLike<number>, y: ArrayLike<number>): LineFit | u
   const xMean = mean(x);
   const yMean = mean(y);
   if (xMean === undefined || yMean === undefined || n < 2) return undefined;
-  const products = (f: (dx: number, dy: number) => number) =>
-    sum(Float64Array.from({ length: n }, (_, i) => f(at(x, i) - xMean, at(y, i) - yMean)));
-  const sxx = products((dx) => dx * dx);
+  let [sxx, sxy] = [0, 0];
+  for (let i = 0; i < n; i++) {
+    const dx = at(x, i) - xMean;
+    sxx += dx * dx;
+    sxy += dx * (at(y, i) - yMean);
+  }
   if (!(sxx > 0)) return undefined;
-  const slope = products((dx, dy) => dx * dy) / sxx;
-  const rss = products((dx, dy) => (dy - slope * dx) ** 2);
+  const slope = sxy / sxx;
+  let rss = 0;
+  for (let i = 0; i < n; i++) rss += (at(y, i) - yMean - slope * (at(x, i) - xMean)) ** 2;
   const residualSd = n > 2 ? Math.sqrt(rss / (n - 2)) : Number.NaN;
   const share = Math.sqrt(1 / n + (xMean * xMean) / sxx);
   return {

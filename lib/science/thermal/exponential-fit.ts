@@ -44,14 +44,14 @@ export function fitExponential(times: ArrayLike<number>, values: ArrayLike<numbe
   return withErrors(times, values, start, tau, atEdge);
 }
 
-interface Projected {
+export interface Projected {
   final: number;
   amplitude: number;
   rss: number;
 }
 
-/** Best final value and amplitude for one τ, about the means of both. */
-function project(times: ArrayLike<number>, values: ArrayLike<number>, start: number, tau: number): Projected {
+/** Best final value and amplitude for one τ, with the residual sum of squares; times count from `start`. */
+export function project(times: ArrayLike<number>, values: ArrayLike<number>, start: number, tau: number): Projected {
   const n = times.length;
   let eMean = 0;
   let yMean = 0;

@@ -6,7 +6,9 @@ import { at } from "../statistics/descriptive";
  */
 export function deltaTSeries(sensorC: ArrayLike<number>, ambientC: ArrayLike<number>): Float64Array {
   if (sensorC.length !== ambientC.length) throw new RangeError("sensor and ambient differ in length");
-  return Float64Array.from({ length: sensorC.length }, (_, i) => at(sensorC, i) - at(ambientC, i));
+  const rise = new Float64Array(sensorC.length);
+  for (let i = 0; i < rise.length; i++) rise[i] = at(sensorC, i) - at(ambientC, i);
+  return rise;
 }
 
 /** Thermal resistance R = ΔT/P, K/W; undefined unless the power is above 0 W and the rise above 0 K. */

@@ -23,9 +23,9 @@ export function seriesCharacter(times: ArrayLike<number>, values: ArrayLike<numb
   const moving = moves(values);
   const quantised = n > 1 && moving.length < (1 - EQUAL_STEPS_MAX) * (n - 1);
   const fit = fitLine(times, values);
-  const rest =
-    fit && Float64Array.from({ length: n }, (_, i) => at(values, i) - fit.intercept - fit.slope * at(times, i));
-  const lagOne = (rest && lagOneCorrelation(rest)) ?? 0;
+  const rest = new Float64Array(n);
+  for (let i = 0; fit && i < n; i++) rest[i] = at(values, i) - fit.intercept - fit.slope * at(times, i);
+  const lagOne = lagOneCorrelation(rest) ?? 0;
   const autocorrelated = !quantised && lagOne > Math.max(LAG_ONE_MAX, 2 / Math.sqrt(n));
   return { quantised, autocorrelated, lagOne };
 }
@@ -34,9 +34,8 @@ export function seriesCharacter(times: ArrayLike<number>, values: ArrayLike<numb
 function moves(values: ArrayLike<number>): Float64Array {
   let scale = 0;
   for (let i = 0; i < values.length; i++) scale = Math.max(scale, Math.abs(at(values, i)));
-  const steps = Float64Array.from({ length: Math.max(0, values.length - 1) }, (_, i) =>
-    Math.abs(at(values, i + 1) - at(values, i)),
-  );
+  const steps = new Float64Array(Math.max(0, values.length - 1));
+  for (let i = 0; i < steps.length; i++) steps[i] = Math.abs(at(values, i + 1) - at(values, i));
   return steps.filter((step) => step > 1e-9 * scale);
 }
 

@@ -9,7 +9,7 @@ export interface SteadyMean {
   /** hypot(scatter, residual, resolution). */
   readonly uDeltaTK: number;
   readonly uScatterK: number;
-  /** Rest of the approach that the gate leaves: τ·|slope|. */
+  /** Rest of the approach that the gate leaves: τ·|slope|, or |mean − fitted final value| where that is more. */
   readonly residualK: number;
   readonly uResolutionK: number;
   readonly effectiveSamples: number;
@@ -17,15 +17,16 @@ export interface SteadyMean {
 }
 
 /**
- * Mean of a window with u² = s²/n_eff + (τ·slope)² + step²/12: n_eff from the lag-1 correlation, the residual of a
- * first-order approach (derived: τ·slope) and, where the series is quantised, its step (JCGM 100:2008, F.2.2.1).
- * Times s, rises K, τ s, step K or undefined. Undefined for fewer than three samples.
+ * Mean of a window with u² = s²/n_eff + rest² + step²/12: n_eff from the lag-1 correlation, the rest of a first-order
+ * approach (derived: τ·slope at the end; a window much longer than τ hides its start from the slope, not from the fit) and, where the series is quantised, its step (JCGM 100:2008, F.2.2.1).
+ * Times s, rises K, τ s, step and fitted final value K or undefined. Undefined for fewer than three samples.
  */
 export function steadyMean(
   timeS: Float64Array,
   deltaTK: Float64Array,
   tauS: number,
   stepK: number | undefined,
+  finalK?: number,
 ): SteadyMean | undefined {
   const centre = mean(deltaTK);
   const s = sampleSd(deltaTK);
@@ -33,7 +34,7 @@ export function steadyMean(
   if (centre === undefined || s === undefined || line === undefined || deltaTK.length < 3) return undefined;
   const effectiveSamples = effectiveSampleSize(deltaTK.length, lagOneCorrelation(deltaTK) ?? 0);
   const uScatterK = s / Math.sqrt(effectiveSamples);
-  const residualK = tauS * Math.abs(line.slope);
+  const residualK = Math.max(tauS * Math.abs(line.slope), finalK === undefined ? 0 : Math.abs(centre - finalK));
   const uResolutionK = stepK === undefined ? 0 : typeBResolution(stepK);
   return {
     deltaTK: centre,

@@ -60,7 +60,7 @@ export interface SteadyResult {
 export function findSteadyWindow(record: SteadyRecord, rule: SteadyRule = HOUSE_RULE): SteadyResult {
   const { timeS, deltaTK } = record;
   const n = timeS.length;
-  const transient = n >= 10 ? findTransient(timeS, deltaTK) : undefined;
+  const transient = findTransient(timeS, deltaTK);
   const tail = Math.max(0, n - Math.max(60, Math.ceil(n / 4)));
   const character = seriesCharacter(timeS.subarray(tail), deltaTK.subarray(tail));
   const few = n < 2 * rule.quietRun;

@@ -1,5 +1,5 @@
 import { at } from "../statistics/descriptive";
-import { fitExponential, type ExponentialFit } from "./exponential-fit";
+import { fitExponential, project, type ExponentialFit } from "./exponential-fit";
 
 /** The approach found in a record; fit times count from `startS`. */
 export interface Transient {
@@ -7,7 +7,8 @@ export interface Transient {
   readonly startS: number;
 }
 
-const POINTS_MAX = 3000;
+const POINTS_MAX = 1500;
+const SAMPLES_MIN = 10;
 const STARTS = 14;
 const SHARE_OF_START = 0.05;
 /** House rules, no source: how much of the noise may be left, and how far a swing must stand out of it. */
@@ -30,10 +31,26 @@ export function blockMeans(times: Float64Array, values: Float64Array, pointsMax 
 
 /**
  * Exponential approach of a ΔT record (s, K), or undefined when none stands out: no swing of five times the noise, or
- * τ at the edge of what the record can tell. The fit begins as early as its residual stays within 1.25 times the
- * smallest one reached by later starts, so a first stretch with the heat off or a quick first time constant is left out.
+ * τ beyond what the record can tell. Where the whole record is too long to show it, its first quarter, sixteenth … are
+ * tried, and the final value is then fitted to the whole record with that τ.
  */
 export function findTransient(times: Float64Array, values: Float64Array): Transient | undefined {
+  for (let n = times.length; n >= SAMPLES_MIN; n = Math.floor(n / 4)) {
+    const found = approachIn(times.subarray(0, n), values.subarray(0, n));
+    if (!found) continue;
+    if (n === times.length) return found;
+    const whole = blockMeans(times, values);
+    const { final } = project(whole.times, whole.values, found.startS, found.fit.tau);
+    return { fit: { ...found.fit, final }, startS: found.startS };
+  }
+  return undefined;
+}
+
+/**
+ * The fit begins as early as its residual stays within 1.25 times the smallest one reached by later starts, so a first
+ * stretch with the heat off or a quick first time constant is left out.
+ */
+function approachIn(times: Float64Array, values: Float64Array): Transient | undefined {
   const short = blockMeans(times, values);
   const n = short.times.length;
   const fits: { fit: ExponentialFit; from: number }[] = [];

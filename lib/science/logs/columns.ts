@@ -1,0 +1,146 @@
+import { cellNumber, looksGrouped, numberLook, splitRecord, type NumberMarks } from "./cells";
+import type { Layout, SampleLine } from "./layout";
+import { isRemark } from "./layout";
+import { isDifference, quantityOfName, roleOfName } from "./names";
+import { clockSeconds, dateOrder, timeKind, type DateOrder } from "./times";
+import { unitInName, unitOf, type Quantity, type Unit } from "./units";
+
+/** What a column holds and how its cells read. */
+export interface Column {
+  readonly index: number;
+  /** As written; "column 3" where there is none; repeated ones numbered. */
+  readonly name: string;
+  readonly kind: "number" | "clock" | "timestamp" | "date" | "text";
+  readonly quantity: Quantity | undefined;
+  readonly unit: Unit | undefined;
+  readonly role: "sensor" | "ambient" | undefined;
+  readonly marks: NumberMarks;
+  readonly minutesFirst: boolean;
+  readonly dateOrder: DateOrder;
+  /** Unit written in the cells themselves ("22.3 °C"). */
+  readonly unitInCells: RegExp | undefined;
+  /** Empty in a fifth or more of the sample: another clock's column, not a fault. */
+  readonly sparse: boolean;
+  /** Mean over the sample in the base unit; NaN where there is none. */
+  readonly sampleMean: number;
+  /** Whether the sample never falls. */
+  readonly rising: boolean;
+}
+
+const TRAILING_UNIT = /(?<=\d)\s*(°\s?[CF]|℃|℉|[CFK]|dB\s?\(?[ACZ]?\)?|ms|s|rpm|%)$/i;
+
+/** The columns of a layout, judged by name, row of units, and up to 300 rows of the sample. */
+export function describeColumns(lines: readonly SampleLine[], layout: Layout): Column[] {
+  const rows = sampleRows(lines, layout);
+  const cellsOf = (index: number) => rows.map((row) => row[index] ?? "");
+  const looks = Array.from({ length: layout.width }, (_, index) =>
+    cellsOf(index).map((cell) => numberLook(cell.replace(TRAILING_UNIT, ""))),
+  );
+  const count = (mark: string) => looks.flat().filter((look) => look === mark).length;
+  const common = count("comma") > count("point") ? "," : ".";
+  const names = uniqueNames(layout);
+  return names.map((name, index) => describe(name, index, cellsOf(index), common, layout));
+}
+
+function sampleRows(lines: readonly SampleLine[], layout: Layout): string[][] {
+  const rows: string[][] = [];
+  for (const { line, text } of lines) {
+    if (line < layout.firstRowLine || text.trim() === "" || isRemark(text, layout.delimiter)) continue;
+    const split =
+      layout.delimiter === ""
+        ? { cells: [text.trim().replace(/^"(.*)"$/, "$1")] }
+        : splitRecord(text, layout.delimiter);
+    if ("cells" in split && split.cells.length === layout.width) rows.push(split.cells);
+    if (rows.length >= 300) break;
+  }
+  return rows;
+}
+
+function uniqueNames(layout: Layout): string[] {
+  const seen = new Map<string, number>();
+  return Array.from({ length: layout.width }, (_, index) => {
+    const name = (layout.names?.[index] ?? "").replace(/\s+/g, " ").trim() || `column ${index + 1}`;
+    const times = (seen.get(name) ?? 0) + 1;
+    seen.set(name, times);
+    return times === 1 ? name : `${name} (${times})`;
+  });
+}
+
+function describe(name: string, index: number, cells: string[], common: "." | ",", layout: Layout): Column {
+  const filled = cells.filter((cell) => cell.trim() !== "");
+  const written = filled.find(
+    (cell) => TRAILING_UNIT.test(cell.trim()) && numberLook(cell.trim().replace(TRAILING_UNIT, "")) !== undefined,
+  );
+  const cellUnit = written && TRAILING_UNIT.exec(written.trim())?.[0];
+  const unitInCells =
+    cellUnit === undefined ? undefined : new RegExp(`\\s*${cellUnit.trim().replace(/[()]/g, "\\$&")}$`, "i");
+  const bare = filled.map((cell) => (unitInCells ? cell.trim().replace(unitInCells, "") : cell));
+  const kind = kindOf(bare);
+  const marks = marksOf(bare, common, quantityOfName(name) === "speed" || quantityOfName(name) === "power");
+  const named = unitOf(layout.unitRow?.[index]?.replace(/^[([]|[)\]]$/g, "") ?? "", true) ?? unitInName(name);
+  const unit = named ?? (cellUnit === undefined ? undefined : unitOf(cellUnit, true));
+  const minutesFirst = kind === "clock" && isMinutesFirst(name, bare);
+  const values = bare.map((cell) => (kind === "clock" ? clockSeconds(cell, minutesFirst) : cellNumber(cell, marks)));
+  const known = values.filter((value) => Number.isFinite(value));
+  const rising =
+    known.length > 1 &&
+    known.every((value, at) => at === 0 || value >= (known[at - 1] ?? value)) &&
+    known[0] !== known[known.length - 1];
+  const quantity = kind === "text" ? undefined : quantityOf(name, kind, unit, rising);
+  const fits =
+    unit && unit.quantity === (quantity === "temperature-difference" ? "temperature" : quantity) ? unit : undefined;
+  const mean = known.reduce((total, value) => total + value, 0) / known.length;
+  return {
+    index,
+    name,
+    kind,
+    quantity,
+    unit: fits,
+    role: quantity === "temperature" ? roleOfName(name) : undefined,
+    marks,
+    minutesFirst,
+    dateOrder: dateOrder(bare, common === "," || layout.delimiter === ";" ? "day-first" : "month-first"),
+    unitInCells,
+    sparse: filled.length < 0.8 * cells.length,
+    sampleMean: fits ? (mean + fits.offset) * fits.scale : mean,
+    rising,
+  };
+}
+
+function kindOf(cells: readonly string[]): Column["kind"] {
+  const counts = new Map<Column["kind"], number>();
+  for (const cell of cells) {
+    const kind = numberLook(cell) !== undefined || looksGrouped(cell) ? "number" : (timeKind(cell) ?? "text");
+    counts.set(kind, (counts.get(kind) ?? 0) + 1);
+  }
+  const [kind] = [...counts].reduce((a, b) => (b[1] > a[1] ? b : a), ["text", 0] as [Column["kind"], number]);
+  return kind;
+}
+
+/** Speeds of "1.850" in a log of decimal commas are whole thousands; else a column's own mark counts. */
+function marksOf(cells: readonly string[], common: "." | ",", mayGroup: boolean): NumberMarks {
+  const looks = cells.map(numberLook);
+  const points = looks.filter((look) => look === "point").length;
+  const commas = looks.filter((look) => look === "comma").length;
+  const own = points === commas ? common : commas > points ? "," : ".";
+  const grouped =
+    mayGroup &&
+    cells.length > 0 &&
+    cells.some(looksGrouped) &&
+    cells.every((cell) => looksGrouped(cell) || /^\d{1,3}$/.test(cell.trim()));
+  return own !== common && grouped ? { decimal: common, grouped: true } : { decimal: own, grouped: false };
+}
+
+function quantityOf(name: string, kind: Column["kind"], unit: Unit | undefined, rising: boolean): Quantity | undefined {
+  if (kind !== "number") return "time";
+  const byName = quantityOfName(name);
+  if (unit?.quantity === "temperature" && isDifference(name)) return "temperature-difference";
+  // "t" is the time when it only rises, else a temperature.
+  if (!unit && name.trim().toLowerCase() === "t") return rising ? "time" : "temperature";
+  return unit?.quantity ?? byName;
+}
+
+function isMinutesFirst(name: string, cells: readonly string[]): boolean {
+  if (!cells.every((cell) => /^\s*\d+:\d{2}(?:[.,]\d+)?\s*$/.test(cell))) return false;
+  return /mm:ss|m:ss|min:s/i.test(name) || cells.some((cell) => Number(cell.split(":")[0]) > 23);
+}
