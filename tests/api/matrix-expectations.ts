@@ -1,0 +1,93 @@
+import type { MatrixFacts } from "./support/matrix-facts";
+import type { MatrixRole } from "./support/matrix-roles";
+
+export type Statuses = Readonly<Record<MatrixRole, number>>;
+
+export interface MatrixRow {
+  /** The address asked, where the route has changing parts or needs a query. */
+  path?: (facts: MatrixFacts) => string;
+  /** What is sent. It changes nothing that another row counts on: the state as it is, or a fault after the right. */
+  body?: unknown | ((facts: MatrixFacts) => unknown);
+  expected: Statuses;
+}
+
+/** The same for everybody. */
+export const all = (status: number): Statuses => ({
+  signedOut: status,
+  member: status,
+  owner: status,
+  operator: status,
+  host: status,
+  borrower: status,
+  closed: status,
+});
+
+/** 401 for those signed out and closed accounts, `status` for the roles named, 403 for the rest. */
+export const only = (status: number, ...roles: MatrixRole[]): Statuses => {
+  const may = (role: MatrixRole) => (roles.includes(role) ? status : 403);
+  return {
+    signedOut: 401,
+    member: may("member"),
+    owner: may("owner"),
+    operator: may("operator"),
+    host: may("host"),
+    borrower: may("borrower"),
+    closed: 401,
+  };
+};
+
+export const signedIn = (status: number): Statuses => only(status, "member", "owner", "operator", "host", "borrower");
+export const staff = (status: number): Statuses => only(status, "operator", "host");
+export const hostOnly = (status: number): Statuses => only(status, "host");
+
+/** Pages send those signed out to sign in (307) instead of answering 401. */
+export const asPage = (statuses: Statuses): Statuses => ({ ...statuses, signedOut: 307, closed: 307 });
+
+const choices = { entry_state: false, questions: false, corrections: false, seasons: false, watched: false };
+const notThis = "this is not the password";
+
+/** Every route × every role. A route that isn't here, or is here and not in the tree, fails the test. */
+export const matrix: Readonly<Record<string, MatrixRow>> = {
+  "GET /api/auth/[...nextauth]": { path: () => "/api/auth/csrf", expected: all(200) },
+  "POST /api/auth/[...nextauth]": { path: () => "/api/auth/callback/credentials", body: {}, expected: all(415) },
+  "GET /api/v1/health": { expected: all(200) },
+  "GET /api/v1/account": { expected: signedIn(200) },
+  "POST /api/v1/account": { body: {}, expected: all(400) },
+  "PATCH /api/v1/account": { body: { handle: "-" }, expected: signedIn(400) },
+  "POST /api/v1/account/verify": { body: { token: "x".repeat(43) }, expected: all(410) },
+  "POST /api/v1/account/verification": { body: {}, expected: all(400) },
+  "POST /api/v1/account/reset": { body: {}, expected: all(400) },
+  "POST /api/v1/account/reset/confirm": {
+    body: { token: "x".repeat(43), password: "herons stand in shallow water" },
+    expected: all(410),
+  },
+  "POST /api/v1/account/password": {
+    body: { currentPassword: notThis, password: "herons stand in shallow water" },
+    expected: signedIn(400),
+  },
+  "POST /api/v1/account/email": {
+    body: { email: "new@people.example", currentPassword: notThis },
+    expected: signedIn(400),
+  },
+  "POST /api/v1/account/email/confirm": { body: { token: "x".repeat(43) }, expected: all(410) },
+  "PUT /api/v1/account/mail-choices": { body: choices, expected: signedIn(204) },
+  "POST /api/v1/account/close": { body: { currentPassword: notThis }, expected: signedIn(400) },
+  "POST /api/v1/account/erase": { body: { currentPassword: notThis, handle: "nobody" }, expected: signedIn(400) },
+  "GET /api/v1/people": { expected: hostOnly(200) },
+  "PUT /api/v1/people/[id]/role": {
+    path: ({ memberId }) => `/api/v1/people/${memberId}/role`,
+    body: { role: "member", was: "member" },
+    expected: hostOnly(200),
+  },
+  "GET /api/v1/audit": { expected: hostOnly(200) },
+
+  "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
+  "PAGE /sign-up": { expected: all(200) },
+  "PAGE /verify": { expected: all(200) },
+  "PAGE /verify/email": { path: () => "/verify/email?token=x", expected: all(200) },
+  "PAGE /reset": { expected: all(200) },
+  "PAGE /reset/new": { path: () => "/reset/new?token=x", expected: all(200) },
+  "PAGE /my/account": { expected: asPage(signedIn(200)) },
+  "PAGE /host/people": { expected: asPage(hostOnly(200)) },
+  "PAGE /demo/mail": { expected: all(200) },
+};

@@ -1,0 +1,54 @@
+import type { Knex } from "knex";
+
+/** Ids and addresses of the demo that paths of the matrix are made of. */
+export interface MatrixFacts {
+  memberId: string;
+  /** A design of the demo's designer. */
+  ownedDesignId: string;
+  ownedDesignSlug: string;
+  publishedDesignSlug: string;
+  publishedEntryId: string;
+  seasonSlug: string;
+  benchId: string;
+  roundInReviewId: string;
+  roundInWorkId: string;
+  /** The session of the round in review, and that of the round in work where there is one. */
+  sessionId: string;
+}
+
+const owned = `from design d join design_owner o on o.design_id = d.id join person p on p.id = o.person_id
+  where p.email = 'designer@alder.example' and o.until_at is null order by d.slug limit 1`;
+
+const questions: Record<keyof MatrixFacts, string> = {
+  memberId: `select id as value from person where email = 'member@alder.example'`,
+  ownedDesignId: `select d.id as value ${owned}`,
+  ownedDesignSlug: `select d.slug as value ${owned}`,
+  publishedDesignSlug: `select d.slug as value from published_entry e join design d on d.id = e.design_id order by d.slug limit 1`,
+  publishedEntryId: `select entry_id as value from published_entry order by entry_id limit 1`,
+  seasonSlug: `select slug as value from season order by slug limit 1`,
+  benchId: `select id as value from bench limit 1`,
+  roundInReviewId: `select id as value from round where state = 'in_review' limit 1`,
+  roundInWorkId: `select id as value from round where state = 'measuring' limit 1`,
+  sessionId: `select id as value from session order by began_at desc limit 1`,
+};
+
+/** Looks them up as the schema's owner. One that the demo lacks throws when a row of the matrix asks for it. */
+export async function matrixFacts(owner: Knex): Promise<MatrixFacts> {
+  const found = new Map<string, string>();
+  for (const [name, sql] of Object.entries(questions)) {
+    const result: { rows: { value: string }[] } = await owner.raw(sql);
+    const value = result.rows[0]?.value;
+    if (value !== undefined) found.set(name, value);
+  }
+  const facts = Object.fromEntries(Object.keys(questions).map((name) => [name, ""]));
+  for (const name of Object.keys(questions)) {
+    Object.defineProperty(facts, name, {
+      get: () => {
+        const value = found.get(name);
+        if (value === undefined) throw new Error(`The demo has no ${name}.`);
+        return value;
+      },
+    });
+  }
+  return facts as unknown as MatrixFacts;
+}
