@@ -51,9 +51,19 @@ function differenceOf(a: Compared, b: Compared): { difference: number; u: number
   return { difference, u, dof, p: pOfDifference(difference, u, dof) };
 }
 
-/** Letters by entry id: who shares a letter isn't told apart. @param idsByRank best first, so that "a" is the lead's */
+/** A display of more letters than this tells nobody anything; a long standing then goes without. */
+const LETTERS_MOST = 200;
+
+/**
+ * Letters by entry id: who shares a letter isn't told apart. Empty where it would take more than two hundred letters.
+ * @param idsByRank best first, so that "a" is the lead's
+ */
 export function lettersOf(idsByRank: readonly string[], pairs: readonly PairComparison[]): Map<string, string> {
   const apart = new Set(pairs.filter(({ tie }) => !tie).flatMap(({ a, b }) => [`${a}\n${b}`, `${b}\n${a}`]));
-  const letters = compactLetters(idsByRank.length, (i, j) => apart.has(`${idsByRank[i]}\n${idsByRank[j]}`));
-  return new Map(idsByRank.map((id, i) => [id, letters[i] ?? ""]));
+  const letters = compactLetters(
+    idsByRank.length,
+    (i, j) => apart.has(`${idsByRank[i]}\n${idsByRank[j]}`),
+    LETTERS_MOST,
+  );
+  return new Map(letters?.map((text, i) => [idsByRank[i] ?? "", text]));
 }

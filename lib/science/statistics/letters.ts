@@ -2,14 +2,26 @@
  * Compact letter display by insert-and-absorb (H.-P. Piepho, J. Comput. Graph. Stat. 13 (2004) 456): two entries share
  * a letter exactly when they are not told apart. "a" goes to the first entry's group, so hand them in by rank.
  * @param count entries @param differ whether i and j (i < j) are told apart, at the level and adjustment that the caller names
- * @returns one string an entry; letters a–z, A–Z, then a2, b2, …; none for no entries
+ * @param most more groups than this on the way are given up: their number can grow exponentially with the entries
+ * @returns one string an entry; letters a–z, A–Z, then a2, b2, …; none for no entries; undefined when given up
  */
-export function compactLetters(count: number, differ: (i: number, j: number) => boolean): string[] {
+export function compactLetters(count: number, differ: (i: number, j: number) => boolean): string[];
+export function compactLetters(
+  count: number,
+  differ: (i: number, j: number) => boolean,
+  most: number,
+): string[] | undefined;
+export function compactLetters(
+  count: number,
+  differ: (i: number, j: number) => boolean,
+  most = Infinity,
+): string[] | undefined {
   if (count === 0) return [];
   let groups: Uint8Array[] = [new Uint8Array(count).fill(1)];
   for (let i = 0; i < count; i++) {
     for (let j = i + 1; j < count; j++) {
       if (differ(i, j)) groups = split(groups, i, j);
+      if (groups.length > most) return undefined;
     }
   }
   groups.sort(byFirstMember);
