@@ -107,17 +107,17 @@ export function ControlChart({ points, quantity, unit, caption, summary, fileNam
         x: {
           ...base,
           min: -0.5,
-          // Room at the end for the names of the lines.
-          max: points.length - 0.5 + Math.max(1.5, points.length * 0.2),
+          max: points.length - 0.5,
           afterBuildTicks: (scale) => {
             const every = Math.max(1, Math.ceil(points.length / Math.max(2, Math.floor(scale.width / 110))));
             scale.ticks = points.flatMap((_, value) => (value % every === 0 ? [{ value }] : []));
           },
           ticks: { ...base.ticks, autoSkip: false, callback: (value) => points[Number(value)]?.at ?? "" },
         },
-        y: { ...figureAxis(palette, `${quantity}, ${unit}`, true), grace: "12%" },
+        y: { ...figureAxis(palette, unit, true), grace: "12%" },
       },
-      layout: { padding: { top: points.some((point) => point.breakBefore) ? 44 : 8 } },
+      // Room over the chart for breaks, and at its end for the names of the lines.
+      layout: { padding: { right: 112, top: points.some((point) => point.breakBefore) ? 44 : 8 } },
       plugins: { annotation: { clip: false, annotations: breaks(points, palette) } },
     };
   return (

@@ -39,7 +39,8 @@ export function storeClips(clips: readonly Clip[]): void {
   const address = new URL(window.location.href);
   if (clips.length > 0) address.searchParams.set("clip", clips.map(({ id }) => id).join(","));
   else address.searchParams.delete("clip");
-  window.history.replaceState(window.history.state, "", address.toString().replaceAll("%2C", ","));
+  // No state of ours: the router adds its own, and takes the new address for true only then.
+  window.history.replaceState(null, "", address.toString().replaceAll("%2C", ","));
   window.dispatchEvent(new Event(changed));
 }
 

@@ -1,6 +1,7 @@
 "use client";
 
 import { usePathname, useSearchParams } from "next/navigation";
+import { useState } from "react";
 import { Fold } from "../ui/fold";
 import { Slot } from "../ui/slot";
 import { columnLabel } from "../ui/bars/bars-model";
@@ -30,7 +31,12 @@ export function SortedTable({
   // A shared address may name columns that are gone since.
   const known = (key: string) => columns.some((column) => column.key === key);
   const sort = known(asked.replace(/^-/, "")) ? asked : "";
-  const hidden = (search.get(withoutName) ?? "").split(",").filter((key) => known(key) && key !== nameColumn);
+  const fromAddress = search.get(withoutName) ?? "";
+  // What was just pressed shows at once; the address follows.
+  const [draft, setDraft] = useState<{ over: string; without: string }>();
+  const hidden = (draft?.over === fromAddress ? draft.without : fromAddress)
+    .split(",")
+    .filter((key) => known(key) && key !== nameColumn);
   const sorted = useSortedRows(columns, rows, { sort, without: hidden.join(",") });
 
   const address = (name: string, value: string) => {
@@ -49,7 +55,9 @@ export function SortedTable({
     });
   const flip = (key: string) => {
     const next = hidden.includes(key) ? hidden.filter((each) => each !== key) : [...hidden, key];
-    window.history.replaceState(window.history.state, "", address(withoutName, next.join(",")));
+    const without = next.join(",");
+    setDraft({ over: fromAddress, without });
+    window.history.replaceState(null, "", address(withoutName, without));
   };
 
   return (

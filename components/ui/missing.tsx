@@ -11,10 +11,9 @@ export function Missing({ why }: { why: string }) {
   const hide = () => {
     if (note.current?.matches(":popover-open")) note.current.hidePopover();
   };
-  const show = () => {
+  const place = () => {
     const [from, tip] = [mark.current, note.current];
-    if (!from || !tip?.showPopover || tip.matches(":popover-open")) return;
-    tip.showPopover();
+    if (!from || !tip?.matches(":popover-open")) return;
     // In the top layer, so that no scrolling table cuts it off.
     const at = from.getBoundingClientRect();
     const left = Math.min(Math.max(8, at.left), document.documentElement.clientWidth - tip.offsetWidth - 8);
@@ -22,16 +21,20 @@ export function Missing({ why }: { why: string }) {
     tip.style.left = `${left}px`;
     tip.style.top = `${below ? at.bottom + 2 : at.top - 2 - tip.offsetHeight}px`;
   };
+  const show = () => {
+    if (note.current?.showPopover && !note.current.matches(":popover-open")) note.current.showPopover();
+    place();
+  };
 
   useEffect(() => {
     const escape = (event: KeyboardEvent) => {
       if (event.key === "Escape") hide();
     };
     document.addEventListener("keydown", escape);
-    document.addEventListener("scroll", hide, true);
+    document.addEventListener("scroll", place, true);
     return () => {
       document.removeEventListener("keydown", escape);
-      document.removeEventListener("scroll", hide, true);
+      document.removeEventListener("scroll", place, true);
     };
   }, []);
 

@@ -52,7 +52,8 @@ export function Sentence(props: SentenceProps) {
   useEffect(() => {
     if (!byHand || open === undefined) return;
     const panel = form.current?.querySelector<HTMLElement>(".sentence-panel");
-    (panel?.querySelector<HTMLElement>("input:checked, input:not(:disabled), a") ?? panel)?.focus();
+    const first = (selector: string) => panel?.querySelector<HTMLElement>(selector);
+    (first("input:checked") ?? first("input:not(:disabled), a") ?? panel)?.focus();
   }, [byHand, open]);
 
   const toggle = (key: string) => (event: MouseEvent<HTMLButtonElement>) => {
