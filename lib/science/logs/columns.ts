@@ -27,6 +27,7 @@ export interface Column {
   readonly rising: boolean;
 }
 
+const READABLE_SHARE = 0.05;
 const TRAILING_UNIT = /(?<=\d)\s*(°\s?[CF]|℃|℉|[CFK]|dB\s?\(?[ACZ]?\)?|ms|s|rpm|%)$/i;
 
 /** The columns of a layout, judged by name, row of units, and up to 300 rows of the sample. */
@@ -113,8 +114,9 @@ function kindOf(cells: readonly string[]): Column["kind"] {
     const kind = numberLook(cell) !== undefined || looksGrouped(cell) ? "number" : (timeKind(cell) ?? "text");
     counts.set(kind, (counts.get(kind) ?? 0) + 1);
   }
-  const [kind] = [...counts].reduce((a, b) => (b[1] > a[1] ? b : a), ["text", 0] as [Column["kind"], number]);
-  return kind;
+  // Words among numbers are faults of their rows; a column is one of words when next to nothing else stands in it.
+  const readable = [...counts].filter(([kind, count]) => kind !== "text" && count >= READABLE_SHARE * cells.length);
+  return readable.sort((x, y) => y[1] - x[1])[0]?.[0] ?? "text";
 }
 
 /** Speeds of "1.850" in a log of decimal commas are whole thousands; else a column's own mark counts. */
