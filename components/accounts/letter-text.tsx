@@ -2,7 +2,7 @@
 export function LetterText({ text }: { text: string }) {
   const parts = text.split(/(https?:\/\/[^\s<>"]+)/);
   return (
-    <p className="mt-2 max-w-2xl break-words whitespace-pre-wrap">
+    <p className="mt-2 max-w-2xl wrap-anywhere whitespace-pre-wrap">
       {parts.map((part, index) =>
         index % 2 === 1 ? (
           <a key={index} href={part} rel="noreferrer">

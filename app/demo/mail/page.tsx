@@ -17,7 +17,7 @@ export default async function DemoMailPage({ searchParams }: { searchParams: Pro
         {letters.map((letter) => (
           <li key={letter.id}>
             <h2>{letter.subject}</h2>
-            <p className="docket">
+            <p className="docket wrap-anywhere">
               to {letter.to.join(", ")}
               {letter.sentAt ? ` · ${letter.sentAt}` : ""}
             </p>

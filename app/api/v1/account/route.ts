@@ -9,7 +9,7 @@ export const GET = route({ access: "signed_in" }, async ({ actor }) => account.p
 
 /** Signs up. The answer is the same for a known and an unknown address. */
 export const POST = route(
-  { access: "public", body: signUpBody, limits: [{ name: "sign_up", max: 20, windowS: 3600, by: "address" }] },
+  { access: "public", body: signUpBody, limits: [{ name: "sign_up", max: 60, windowS: 3600, by: "address" }] },
   async ({ body }) => {
     await signUp(body);
     return reply({}, { status: 202 });

@@ -5,7 +5,7 @@ import { askForReset } from "@/lib/server/accounts/password";
 
 /** Asks for a link to set a new password, the same answer whether or not there is such an account. */
 export const POST = route(
-  { access: "public", body: emailBody, limits: [{ name: "letters", max: 20, windowS: 3600, by: "address" }] },
+  { access: "public", body: emailBody, limits: [{ name: "letters", max: 60, windowS: 3600, by: "address" }] },
   async ({ body }) => {
     await askForReset(body);
     return reply({}, { status: 202 });

@@ -5,7 +5,7 @@ import { sendVerificationAgain } from "@/lib/server/accounts/sign-up";
 
 /** Sends the confirming letter anew, where an account waits for it. */
 export const POST = route(
-  { access: "public", body: emailBody, limits: [{ name: "letters", max: 20, windowS: 3600, by: "address" }] },
+  { access: "public", body: emailBody, limits: [{ name: "letters", max: 60, windowS: 3600, by: "address" }] },
   async ({ body }) => {
     await sendVerificationAgain(body);
     return reply({}, { status: 202 });
