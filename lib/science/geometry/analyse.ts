@@ -1,4 +1,4 @@
-import { castColumns } from "./columns";
+import { castColumns, TooManyCrossings } from "./columns";
 import { solidStretches } from "./column-solids";
 import type { AnalysisOptions, MeshAnalysis } from "./analysis-types";
 import { analysisWarnings } from "./analysis-warnings";
@@ -7,7 +7,7 @@ import { withPositiveLead } from "./axis-directions";
 import { pointInFile } from "./axis-frame";
 import { fitInFrame } from "./frame-fit";
 import { massProperties, shellIntegrals, addIntegrals, type SolidIntegrals } from "./mass-properties";
-import { diagonalMm, meshBounds, type Bounds, type Mesh, type Vec3 } from "./mesh";
+import { diagonalMm, meshBounds, middleOf, type Mesh, type Vec3 } from "./mesh";
 import { shellOverlaps } from "./overlaps";
 import { radiiTo, type FoundRow } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
@@ -29,6 +29,16 @@ const FILE_AXES: Readonly<Record<"x" | "y" | "z", Vec3>> = { x: [1, 0, 0], y: [0
  * "no-extent") for a mesh without triangles or without size.
  */
 export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAnalysis {
+  try {
+    return analyse(meshIn, options, true);
+  } catch (error) {
+    // Triangles by the thousand that reach right across: only what edges and areas tell is told.
+    if (error instanceof TooManyCrossings) return analyse(meshIn, options, false);
+    throw error;
+  }
+}
+
+function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): MeshAnalysis {
   const bounds = meshBounds(meshIn);
   if (!bounds) throw new Refusal("empty", "The file holds no triangles.");
   const diagonal = diagonalMm(bounds);
@@ -36,9 +46,9 @@ export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAn
   const middle = middleOf(bounds);
   const tiny = TINY_SHARE * diagonal;
   const first = shellReport(meshIn, middle);
-  const { report, turned } = turnedOutward(first, middle, tiny);
+  const soup = !closely || first.edges.shellCount > SHELLS_MAX;
+  const { report, turned } = soup ? { report: first, turned: 0 } : turnedOutward(first, middle, tiny);
   const { mesh, edges } = report;
-  const soup = edges.shellCount > SHELLS_MAX;
   // Copies take no part in anything but the counts: the union has each place once.
   const shellOf = edges.shellOf.map((shell) =>
     soup ? Math.min(shell, 0) : report.copyOf[shell] === undefined ? shell : -1,
@@ -47,9 +57,8 @@ export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAn
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
   const finding = soup ? undefined : findAxis(mesh, shellOf, shells, tiny, options.axis && FILE_AXES[options.axis]);
   const upright = finding ?? boxUpright(mesh, middle);
-  const overlapLines = finding
-    ? finding.search.overlaps.overlapLines
-    : probe(upright.mesh, shellOf, shells, tiny).overlapLines;
+  const overlapLines =
+    finding?.search.overlaps.overlapLines ?? (soup ? 0 : probe(upright.mesh, shellOf, shells, tiny).overlapLines);
   const copied = report.copyOf.some((copy) => copy !== undefined);
   const overlap = copied || overlapLines > 0;
   const density = options.densityGCm3 ?? DENSITY_DEFAULT_GCM3;
@@ -57,9 +66,10 @@ export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAn
   const blades = finding?.search.rows[0]?.row.blades ?? 1;
   const excess = (own: Int32Array): SolidIntegrals =>
     excessIntegrals(upright.mesh, own, radiusOf(upright.mesh, own), evenAngles(blades));
-  const whole = watertight
-    ? lessExcess(sumIntegrals(integrals), overlapLines > 0 ? excess(shellOf) : undefined)
-    : undefined;
+  const whole =
+    watertight && !soup
+      ? lessExcess(sumIntegrals(integrals), overlapLines > 0 ? excess(shellOf) : undefined)
+      : undefined;
   const mass = whole && massProperties(whole, density);
   const measured = finding
     ? finding.search.rows.map((found) =>
@@ -81,7 +91,7 @@ export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAn
     rotors,
     rows: measured.map((m) => m.row),
     finding,
-    mended: mass === undefined && watertight,
+    hollow: mass === undefined && watertight && !soup,
   });
   return {
     triangles: meshIn.triangles.length / 3,
@@ -108,8 +118,6 @@ export function analyseMesh(meshIn: Mesh, options: AnalysisOptions = {}): MeshAn
   };
 }
 
-const middleOf = ({ min, max }: Bounds): Vec3 => [(min[0] + max[0]) / 2, (min[1] + max[1]) / 2, (min[2] + max[2]) / 2];
-
 const lessExcess = (sum: SolidIntegrals, excess: SolidIntegrals | undefined): SolidIntegrals =>
   excess ? addIntegrals(sum, excess, -1) : sum;
 
@@ -131,8 +139,7 @@ function probe(mesh: Mesh, shellOf: Int32Array, shells: number, tiny: number): R
 /** Turns shells that face inwards with nothing around them; hollows of other shells stay as they are. */
 function turnedOutward(report: ShellReport, middle: Vec3, tiny: number): { report: ShellReport; turned: number } {
   const { mesh, edges } = report;
-  if (edges.shellCount > SHELLS_MAX || !report.integrals.some((shell) => shell.volumeMm3 < 0))
-    return { report, turned: 0 };
+  if (!report.integrals.some((shell) => shell.volumeMm3 < 0)) return { report, turned: 0 };
   const upright = boxUpright(mesh, middle);
   const { invertedMm, insideMm } = probe(upright.mesh, edges.shellOf, edges.shellCount, tiny);
   const inverted = (shell: number): boolean =>

@@ -16,7 +16,7 @@ export interface WarningFacts {
   readonly rows: readonly BladeRow[];
   readonly finding: AxisFinding | undefined;
   /** Closed, yet without a volume above zero. */
-  readonly mended: boolean;
+  readonly hollow: boolean;
 }
 
 const SURE = 0.75;
@@ -27,7 +27,7 @@ export function analysisWarnings(facts: WarningFacts): MeshWarning[] {
   return [...meshWarnings(facts), ...rotorWarnings(facts)];
 }
 
-function meshWarnings({ report, turned, overlap, soup, watertight, mended }: WarningFacts): MeshWarning[] {
+function meshWarnings({ report, turned, overlap, soup, watertight, hollow }: WarningFacts): MeshWarning[] {
   const { edges, duplicateTriangles, copyOf } = report;
   const out: MeshWarning[] = [];
   const add = (code: string, message: string): void => void out.push({ code, message });
@@ -37,7 +37,12 @@ function meshWarnings({ report, turned, overlap, soup, watertight, mended }: War
       `${edges.openEdges} open and ${edges.misorientedEdges} misoriented edges: volume and mass can't be known.`,
     );
   }
-  if (soup) add("triangle-soup", `The ${edges.shellCount} shells hardly hang together; no rotor was looked for.`);
+  if (soup) {
+    add(
+      "too-scattered",
+      `${edges.shellCount} shells, or triangles too large and many: neither rotors nor overlaps were looked for, so there is no volume.`,
+    );
+  }
   if (edges.nonManifoldEdges > 0)
     add("non-manifold-edges", `${edges.nonManifoldEdges} edges belong to more than two triangles.`);
   if (edges.degenerateTriangles > 0)
@@ -56,7 +61,7 @@ function meshWarnings({ report, turned, overlap, soup, watertight, mended }: War
       "Shells overlap: volume and mass are of their union, sampled to some tenths of a percent of what they share.",
     );
   }
-  if (mended) add("no-volume", "The mesh is closed but encloses no volume.");
+  if (hollow) add("no-volume", "The mesh is closed but encloses no volume.");
   return out;
 }
 

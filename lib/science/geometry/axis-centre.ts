@@ -1,3 +1,4 @@
+import { median } from "./blade-count";
 import { facesOf, type Faces } from "./faces";
 import type { Mesh } from "./mesh";
 
@@ -8,6 +9,14 @@ const WALL_SLOPE_MAX = 0.05;
 const SURFACE_SLOPE_MAX = 0.9;
 const SECTORS = 24;
 const SECTORS_NEEDED = 15;
+/** Width of a group of radii and scale of the weights, both as shares of the size, step by step. */
+const REFINEMENTS = [
+  [0.012, 0.004],
+  [0.006, 0.001],
+  [0.003, 0.0003],
+  [0.003, 0.00005],
+  [0.003, 0.00001],
+] as const;
 
 /** Straight lines that ought to pass through the centre, by the faces that they stand on. */
 interface NormalLine {
@@ -115,33 +124,54 @@ function converge(lines: NormalLine[], start: Point2, size: number): Point2 {
 /** Common centre of all circles of wall vertices that go around; undefined where there is none. */
 function commonCentre(mesh: Mesh, faces: Faces, start: Point2, size: number): Point2 | undefined {
   let centre = start;
-  for (let round = 0; round < 4; round++) {
-    const circles = wallCircles(mesh, faces, centre, size);
-    if (circles.length === 0) return round === 0 ? undefined : centre;
-    let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
-    for (const points of circles) {
-      const n = points.length;
-      const mx = points.reduce((s, p) => s + p[0], 0) / n;
-      const my = points.reduce((s, p) => s + p[1], 0) / n;
-      const mq = points.reduce((s, p) => s + p[0] ** 2 + p[1] ** 2, 0) / n;
-      for (const [x, y] of points) {
-        const q = (x * x + y * y - mq) / 2;
-        xx += ((x - mx) * (x - mx)) / n;
-        xy += ((x - mx) * (y - my)) / n;
-        yy += ((y - my) * (y - my)) / n;
-        bx += ((x - mx) * q) / n;
-        by += ((y - my) * q) / n;
-      }
-    }
-    const det = xx * yy - xy * xy;
-    if (!(det > 0)) return centre;
-    centre = [(bx * yy - by * xy) / det, (by * xx - bx * xy) / det];
+  for (const [width, scale] of REFINEMENTS) {
+    const circles = wallCircles(mesh, faces, centre, width * size);
+    if (circles.length === 0) continue;
+    for (let round = 0; round < 4; round++) centre = sharpened(circles, centre, scale * size);
   }
-  return Math.hypot(centre[0] - start[0], centre[1] - start[1]) < 0.02 * size ? centre : start;
+  if (wallCircles(mesh, faces, centre, 0.002 * size).length === 0) return undefined;
+  return Math.hypot(centre[0] - start[0], centre[1] - start[1]) < 0.03 * size ? centre : start;
 }
 
-/** Vertices of walls that face the centre, in groups of equal radius that go most of the way around. */
-function wallCircles(mesh: Mesh, faces: Faces, centre: Point2, size: number): Point2[][] {
+/**
+ * One Gauss–Newton step towards the common centre of circles with radii of their own. Points off their circle by more
+ * than `scale` hardly count: where blades cut a facet, vertices lie inside the circle of its corners.
+ */
+function sharpened(circles: readonly Point2[][], centre: Point2, scale: number): Point2 {
+  let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
+  for (const points of circles) {
+    const polar = points.map(([x, y]) => ({
+      d: Math.hypot(x - centre[0], y - centre[1]),
+      x: x - centre[0],
+      y: y - centre[1],
+    }));
+    const typical = median(polar.map((p) => p.d)) ?? 0;
+    let [sum, mx, my, md] = [0, 0, 0, 0];
+    const weighted = polar.map((p) => {
+      const weight = 1 / (1 + ((p.d - typical) / scale) ** 2);
+      const [ux, uy] = p.d > 0 ? [p.x / p.d, p.y / p.d] : [0, 0];
+      sum += weight;
+      mx += weight * ux;
+      my += weight * uy;
+      md += weight * p.d;
+      return { weight, ux, uy, d: p.d };
+    });
+    for (const { weight, ux, uy, d } of weighted) {
+      const [cx, cy, cd] = [ux - mx / sum, uy - my / sum, d - md / sum];
+      xx += (weight * cx * cx) / sum;
+      xy += (weight * cx * cy) / sum;
+      yy += (weight * cy * cy) / sum;
+      bx += (weight * cx * cd) / sum;
+      by += (weight * cy * cd) / sum;
+    }
+  }
+  const det = xx * yy - xy * xy;
+  if (!(det > 0)) return centre;
+  return [centre[0] + (bx * yy - by * xy) / det, centre[1] + (by * xx - bx * xy) / det];
+}
+
+/** Vertices of walls that face the centre, in groups of nearly equal radius that go most of the way around. */
+function wallCircles(mesh: Mesh, faces: Faces, centre: Point2, width: number): Point2[][] {
   const groups = new Map<number, { points: Map<number, Point2>; sectors: Set<number> }>();
   for (let t = 0; t < faces.areasMm2.length; t++) {
     const [nx, ny, nz] = [faces.normals[3 * t] ?? 0, faces.normals[3 * t + 1] ?? 0, faces.normals[3 * t + 2] ?? 0];
@@ -152,12 +182,14 @@ function wallCircles(mesh: Mesh, faces: Faces, centre: Point2, size: number): Po
       const v = mesh.triangles[3 * t + corner] ?? 0;
       const [x, y] = [mesh.positions[3 * v] ?? 0, mesh.positions[3 * v + 1] ?? 0];
       const radius = Math.hypot(x - centre[0], y - centre[1]);
-      const key = Math.round(radius / (0.002 * size));
-      const group = groups.get(key) ?? { points: new Map<number, Point2>(), sectors: new Set<number>() };
-      groups.set(key, group);
-      group.points.set(v, [x, y]);
       const turn = Math.atan2(y - centre[1], x - centre[0]) / (2 * Math.PI) + 1;
-      group.sectors.add(Math.floor(turn * SECTORS) % SECTORS);
+      // Two rows of bins, half a width apart, so that no circle is cut in two by a bin's edge.
+      for (const key of [2 * Math.round(radius / width), 2 * Math.floor(radius / width) + 1]) {
+        const group = groups.get(key) ?? { points: new Map<number, Point2>(), sectors: new Set<number>() };
+        groups.set(key, group);
+        group.points.set(v, [x, y]);
+        group.sectors.add(Math.floor(turn * SECTORS) % SECTORS);
+      }
     }
   }
   return [...groups.values()].filter((g) => g.sectors.size >= SECTORS_NEEDED).map((g) => [...g.points.values()]);

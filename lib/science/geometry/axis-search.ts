@@ -2,7 +2,7 @@ import { axisCentre } from "./axis-centre";
 import { axisDirections } from "./axis-directions";
 import { frameAlong, meshInFrame, pointInFile, type AxisFrame } from "./axis-frame";
 import { facesOf } from "./faces";
-import type { Mesh, Vec3 } from "./mesh";
+import { meshBounds, middleOf, type Mesh, type Vec3 } from "./mesh";
 import { coarseGrid, fineGrid, searchRotors, type RotorSearch } from "./rotor-search";
 
 /** An axis, the mesh stood on it, and what turns about it. */
@@ -64,8 +64,11 @@ interface Upright {
 /** The mesh turned so that a direction is z, with the axis through x = y = 0. */
 function standUp(mesh: Mesh, sample: Mesh, direction: Vec3): Upright {
   const frame = frameAlong(direction);
-  const [x, y] = axisCentre(meshInFrame(sample, frame, [0, 0, 0]));
-  const originMm = pointInFile(frame, [0, 0, 0], [x, y, 0]);
+  const bounds = meshBounds(sample);
+  // From the middle of the box, so that a file far from its origin loses no digits.
+  const middle = bounds ? middleOf(bounds) : ([0, 0, 0] as const);
+  const [x, y] = axisCentre(meshInFrame(sample, frame, middle));
+  const originMm = pointInFile(frame, middle, [x, y, 0]);
   return { frame, originMm, mesh: meshInFrame(mesh, frame, originMm) };
 }
 

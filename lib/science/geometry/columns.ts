@@ -19,6 +19,13 @@ export interface Columns {
   readonly marks: Int32Array;
 }
 
+/** Thrown when the triangles are so large and many that crossing them would take too long; the caller says so. */
+export class TooManyCrossings extends Error {}
+
+/** Points tried in one cast: a fan of a million triangles needs some ten million. */
+const WORK_MAX = 200_000_000;
+const CROSSINGS_MAX = 12_000_000;
+
 /** Irrational, so that lines don't go through vertices of models with round angles. */
 export const PHASE = 0.3710678118654752;
 
@@ -30,6 +37,7 @@ class Crossings {
 
   push(line: number, height: number, mark: number): void {
     if (this.count === this.lines.length) this.grow();
+    if (this.count > CROSSINGS_MAX) throw new TooManyCrossings();
     this.lines[this.count] = line;
     this.heights[this.count] = height;
     this.marks[this.count] = mark;
@@ -99,6 +107,7 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
   const radius = new Float64Array(vertices);
   for (let v = 0; v < vertices; v++) radius[v] = Math.sqrt((p[3 * v] ?? 0) ** 2 + (p[3 * v + 1] ?? 0) ** 2);
   const sides = new EdgeSides();
+  let work = 0;
   const innermost = radiiMm[0] ?? Infinity;
   for (let t = 0; t < triangles.length / 3; t++) {
     const shell = shellOf[t] ?? -1;
@@ -138,9 +147,11 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
     }
     // Seen along +z the line enters through a triangle that faces down, whose projection runs clockwise.
     const mark = 2 * shell + (area < 0 ? 0 : 1);
+    if (work > WORK_MAX) throw new TooManyCrossings();
     for (; from < radiiMm.length; from++) {
       const r = radiiMm[from] ?? Infinity;
       if (r > outer) break;
+      work += kTo - kFrom + 1;
       for (let kk = kFrom; kk <= kTo; kk++) {
         const k = kk < 0 ? kk + angles : kk >= angles ? kk - angles : kk;
         const x = r * (cos[k] ?? 0);

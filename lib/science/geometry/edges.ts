@@ -1,3 +1,4 @@
+import { pairAroundEdge, type EdgeUse } from "./crowded-edges";
 import type { Mesh, Vec3 } from "./mesh";
 import { vertexAt } from "./mesh";
 
@@ -28,6 +29,10 @@ export interface EdgeReport {
 }
 
 const PLACES_MAX = 200;
+/** An edge of more triangles belongs to no solid. */
+const CROWD_MAX = 64;
+/** Half-edges looked through for pairing: bounds the time that a hub of a hundred thousand crowded edges takes. */
+const PAIRING_WORK_MAX = 50_000_000;
 
 function find(parents: Int32Array, triangle: number): number {
   let t = triangle;
@@ -40,7 +45,22 @@ function find(parents: Int32Array, triangle: number): number {
   }
 }
 
-/** Solids that merely touch along an edge stay apart: only an edge of exactly two triangles joins them. */
+/** The triangles at the edge between `v` and `other`, from the run of half-edges of the lower one, `v`. */
+function usesOf(triangles: Uint32Array, parents: Int32Array, run: Int32Array, v: number, other: number): EdgeUse[] {
+  const out: EdgeUse[] = [];
+  for (const h of run) {
+    const triangle = (h / 3) | 0;
+    const corner = h % 3;
+    const tail = triangles[h] ?? 0;
+    const head = triangles[3 * triangle + ((corner + 1) % 3)] ?? 0;
+    if (parents[triangle] === -1 || Math.max(tail, head) !== other) continue;
+    out.push({ triangle, forward: tail === v, opposite: triangles[3 * triangle + ((corner + 2) % 3)] ?? 0 });
+    if (out.length > CROWD_MAX) break;
+  }
+  return out;
+}
+
+/** Joins the shells of two triangles. */
 function join(parents: Int32Array, s: number, t: number): void {
   const a = find(parents, s);
   const b = find(parents, t);
@@ -92,6 +112,7 @@ export function edgeReport(mesh: Mesh): EdgeReport {
   const firstTriangle = new Int32Array(vertices);
   const lastTriangle = new Int32Array(vertices);
   const places: FaultPlace[] = [];
+  let pairingWork = 0;
   let [edges, openEdges, misorientedEdges, nonManifoldEdges] = [0, 0, 0, 0];
   const note = (kind: FaultPlace["kind"], v: number, w: number) => {
     if (places.length >= PLACES_MAX) return;
@@ -142,6 +163,10 @@ export function edgeReport(mesh: Mesh): EdgeReport {
       if (f + b > 2) {
         nonManifoldEdges++;
         note("non-manifold", v, other);
+        pairingWork += to - from;
+        if (pairingWork > PAIRING_WORK_MAX) continue;
+        const uses = usesOf(triangles, parents, halfEdges.subarray(from, to), v, other);
+        if (uses.length <= CROWD_MAX) for (const [a, b] of pairAroundEdge(mesh, v, other, uses)) join(parents, a, b);
       }
     }
   }

@@ -65,6 +65,11 @@ export function diagonalMm(bounds: Bounds): number {
   return Math.hypot(bounds.max[0] - bounds.min[0], bounds.max[1] - bounds.min[1], bounds.max[2] - bounds.min[2]);
 }
 
+/** Middle of a box, mm. */
+export function middleOf({ min, max }: Bounds): Vec3 {
+  return [(min[0] + max[0]) / 2, (min[1] + max[1]) / 2, (min[2] + max[2]) / 2];
+}
+
 /** The same mesh with every position multiplied by `scale` (for example 25.4 for inches). */
 export function scaledMesh(mesh: Mesh, scale: number): Mesh {
   return { positions: mesh.positions.map((value) => value * scale), triangles: mesh.triangles };

@@ -39,11 +39,15 @@ export async function sniffModel(source: ByteSource): Promise<Sniffed> {
     const claimed = new DataView(head.buffer, head.byteOffset).getUint32(80, true);
     if (source.size === binaryStlBytes(claimed)) return { format: "stl-binary", triangles: claimed, warnings: [] };
     if (ascii && /\bfacet\b/i.test(text)) return { format: "stl-ascii", triangles: 0, warnings: [] };
+    // Control characters are what a binary header's count and numbers are full of; a text has none.
+    if (!ascii && !/[\u0000-\u0008\u000e-\u001f\u007f-\u009f]/.test(text)) throw unknown();
     return sniffUnevenBinary(claimed, source.size, ascii);
   }
   if (ascii) return { format: "stl-ascii", triangles: 0, warnings: [] };
-  throw new Refusal("unknown-format", "The file is neither STL nor 3MF nor STEP.");
+  throw unknown();
 }
+
+const unknown = (): Refusal => new Refusal("unknown-format", "The file is neither STL nor 3MF nor STEP.");
 
 function sniffUnevenBinary(claimed: number, size: number, ascii: boolean): Sniffed {
   const held = Math.floor((size - STL_HEADER_BYTES) / STL_RECORD_BYTES);

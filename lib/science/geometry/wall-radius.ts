@@ -47,13 +47,15 @@ export function wallRadius(mesh: Mesh, faces: Faces, search: WallSearch): number
     }
   }
   let best: number | undefined;
-  let most = SECTORS_NEEDED - 1;
+  let most = { around: SECTORS_NEEDED - 1, count: 0 };
   for (let bin = 0; bin + 1 < BINS; bin++) {
     // Two neighbouring bins, so that rounding at a bin's edge doesn't split a circle.
     const around = bits((sectors[bin] ?? 0) | (sectors[bin + 1] ?? 0));
     const count = (counts[bin] ?? 0) + (counts[bin + 1] ?? 0);
-    if (around <= most || count === 0) continue;
-    most = around;
+    // Where blades cut the facets there are vertices nearer to the axis; the rim's own are more.
+    if (around < most.around || (around === most.around && count <= most.count) || count === 0) continue;
+    if (around < SECTORS_NEEDED) continue;
+    most = { around, count };
     best = ((sums[bin] ?? 0) + (sums[bin + 1] ?? 0)) / count;
   }
   return best;
