@@ -40,7 +40,7 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   ledger.add(cluster.pid, "database");
   life.onStop(() => cluster.stop());
   life.check();
-  await prepareDemoDatabase(life, cluster, root, demoDatabase);
+  await prepareDemoDatabase(life, cluster, demoDatabase);
   life.check();
   const urls = cluster.urls(demoDatabase);
   const environment: Record<string, string> = {
