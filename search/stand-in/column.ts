@@ -16,8 +16,13 @@ export class Column {
   readonly numbers: number[] = [];
   /** Normal forms of the dictionary's strings; empty where the entry is a number. */
   readonly strings: string[] = [];
-  /** Text shown for an entry: the first spelling met. */
+  /** Text shown for an entry: the first spelling met among the documents that hold it. */
   readonly labels: string[] = [];
+  /** Documents that hold each entry. */
+  private readonly uses: number[] = [];
+  private unusedCount = 0;
+  /** Documents that have the attribute at all, with a value or without. */
+  holders = 0;
   private readonly codeByNumber = new Map<number, number>();
   private readonly codeByString = new Map<string, number>();
   /** A code, -1 for none, or -(2 + position in `many`). */
@@ -34,23 +39,38 @@ export class Column {
     return this.labels.length;
   }
 
+  /** Whether more than half of a large dictionary is no longer held by any document, so that it had better be built anew. */
+  get isWasteful(): boolean {
+    return this.unusedCount > 1000 && this.unusedCount * 2 > this.size;
+  }
+
   set(slot: number, document: Document): void {
     this.clear(slot);
     if (slot >= this.codes.length) this.grow(slot + 1);
     const values = valuesAt(document, this.path);
     if (values.length === 0) return;
+    this.holders += 1;
     let flag = FLAG_EXISTS;
     if (values.some((value) => value === null)) flag |= FLAG_NULL;
     if (values.some(isEmpty)) flag |= FLAG_EMPTY;
     this.flags[slot] = flag;
     const codes: number[] = [];
     for (const value of values) this.collect(value, codes);
+    for (const code of codes) {
+      if (this.uses[code] === 0) this.unusedCount -= 1;
+      this.uses[code] = (this.uses[code] as number) + 1;
+    }
     if (codes.length === 1) this.codes[slot] = codes[0] ?? NONE;
     else if (codes.length > 1) this.codes[slot] = -2 - this.store(codes);
   }
 
   clear(slot: number): void {
     if (slot >= this.codes.length) return;
+    if (this.flags[slot] !== 0) this.holders -= 1;
+    for (const each of this.codesOf(slot)) {
+      this.uses[each] = (this.uses[each] as number) - 1;
+      if (this.uses[each] === 0) this.unusedCount += 1;
+    }
     const code = this.codes[slot] ?? NONE;
     if (code <= -2) this.freeMany.push(-2 - code);
     this.codes[slot] = NONE;
@@ -177,7 +197,11 @@ export class Column {
   private stringCode(value: string): number {
     const normal = normaliseFacet(value);
     const known = this.codeByString.get(normal);
-    if (known !== undefined) return known;
+    if (known !== undefined) {
+      // The spelling of documents that are gone must not show.
+      if (this.uses[known] === 0) this.labels[known] = value;
+      return known;
+    }
     this.codeByString.set(normal, this.size);
     return this.add(NaN, normal, value);
   }
@@ -185,6 +209,8 @@ export class Column {
   private add(number: number, normal: string, label: string): number {
     this.numbers.push(number);
     this.strings.push(normal);
+    this.uses.push(0);
+    this.unusedCount += 1;
     return this.labels.push(label) - 1;
   }
 

@@ -16,7 +16,7 @@ export function countFacets(index: SearchIndex, slots: Int32Array, names: readon
   const { maxValuesPerFacet } = index.settings.faceting;
   for (const path of facetPaths(index, names)) {
     const column = index.column(path);
-    if (column.size === 0) continue;
+    if (column.holders === 0) continue;
     const counts = new Uint32Array(column.size);
     column.count(slots, counts);
     const codes = chooseCodes(column, counts, maxValuesPerFacet, orderOf(index, path));

@@ -135,6 +135,7 @@ export class SearchIndex {
   /** Builds everything that the settings promise, so that the first search doesn't wait for it. */
   prepare(): void {
     void this.words().vocabulary;
+    for (const [path, column] of this.columns) if (column.isWasteful) this.columns.delete(path);
     for (const path of [...this.settings.filterableAttributes, ...this.settings.sortableAttributes]) {
       if (typeof path === "string" && !path.includes("*") && this.fieldDistribution.has(path))
         this.column(path).inOrder();
