@@ -1,10 +1,14 @@
-import { existsSync, mkdtempSync, readFileSync, rmSync } from "node:fs";
+import { chmodSync, existsSync, mkdtempSync, readFileSync, rmSync } from "node:fs";
 import os from "node:os";
 import path from "node:path";
+import { serverAccount } from "@/db/cluster/account";
+import { startCluster, throwAwayTuning } from "@/db/cluster/cluster";
 import { childEnvironment } from "@/lib/env/env";
 import { buildIfStale, nextProgram } from "./launch/build";
 import { runChild, startChild } from "./launch/children";
 import { ensurePostgres, installPackages, mayInstall } from "./launch/debian";
+import { prepareDemoDatabase, seedInChild } from "./launch/demo-seed";
+import { demoDatabase } from "./launch/local-services";
 import { lifetime, type Lifetime } from "./launch/lifetime";
 import { runSteps, summary, type Step, type Tally } from "./launch/steps";
 import { tallyOf } from "./launch/vitest-tally";
@@ -38,21 +42,23 @@ export async function main(_order: string, chosen: string[]): Promise<void> {
     });
   }
   const folder = mkdtempSync(path.join(os.tmpdir(), "fanfold-report-"));
-  const steps = allSteps(life, folder).filter((step) => chosen.length === 0 || chosen.includes(step.name));
+  const seeded = mkdtempSync(path.join(os.tmpdir(), "fanfold-seeded-"));
+  const remove = (): void => [folder, seeded].forEach((each) => rmSync(each, { recursive: true, force: true }));
+  process.once("exit", remove);
+  const steps = allSteps(life, folder, seeded).filter((step) => chosen.length === 0 || chosen.includes(step.name));
   const results = await runSteps(
     steps,
     () => signalled,
     (line) => console.log(line),
     () => Date.now(),
   );
-  rmSync(folder, { recursive: true, force: true });
   if (signalled) return;
   await life.stopAll();
   console.log(`\n${summary(results)}`);
   process.exit(results.length > 0 && results.every((each) => each.failed === 0) ? 0 : 1);
 }
 
-function allSteps(life: Lifetime, folder: string): Step[] {
+function allSteps(life: Lifetime, folder: string, seeded: string): Step[] {
   const programs = path.join(root, "node_modules");
   const node = (name: string, ...calls: string[][]): Step => ({
     name,
@@ -63,7 +69,7 @@ function allSteps(life: Lifetime, folder: string): Step[] {
   });
   const vitest = (name: string, ...projects: string[]): Step => ({
     name,
-    run: () => runVitest(life, path.join(folder, `${name}.json`), projects.length === 0 ? [name] : projects),
+    run: () => runVitest(life, path.join(folder, `${name}.json`), projects.length === 0 ? [name] : projects, seeded),
   });
   return [
     { name: "packages", run: () => ensurePackages(life) },
@@ -87,34 +93,54 @@ function allSteps(life: Lifetime, folder: string): Step[] {
         return one;
       },
     },
+    { name: "demo", run: () => seedOnce(life, seeded) },
     vitest("api"),
     vitest("faults"),
     vitest("browser"),
   ];
 }
 
-function nodeChild(args: string[]) {
+function nodeChild(args: string[], more: Record<string, string> = {}) {
   const cleared = Object.fromEntries(notInherited.map((name) => [name, undefined]));
-  const env = childEnvironment({ ...cleared, CI: "true", NEXT_TELEMETRY_DISABLED: "1" });
+  const env = childEnvironment({ ...cleared, CI: "true", NEXT_TELEMETRY_DISABLED: "1", ...more });
   return { command: process.execPath, args, cwd: root, env };
 }
 
-async function runVitest(life: Lifetime, reportFile: string, projects: string[]): Promise<Tally> {
+async function runVitest(life: Lifetime, reportFile: string, projects: string[], seeded: string): Promise<Tally> {
   const child = startChild(life, undefined, {
     name: `vitest ${projects.join(" ")}`,
-    ...nodeChild([
-      path.join(root, "node_modules/vitest/vitest.mjs"),
-      "run",
-      "--config",
-      "tests/setup/vitest.config.ts",
-      ...projects.flatMap((project) => ["--project", project]),
-      "--reporter=default",
-      "--reporter=json",
-      `--outputFile.json=${reportFile}`,
-    ]),
+    ...nodeChild(
+      [
+        path.join(root, "node_modules/vitest/vitest.mjs"),
+        "run",
+        "--config",
+        "tests/setup/vitest.config.ts",
+        ...projects.flatMap((project) => ["--project", project]),
+        "--reporter=default",
+        "--reporter=json",
+        `--outputFile.json=${reportFile}`,
+      ],
+      existsSync(path.join(seeded, "postgres")) ? { FANFOLD_SEEDED_FOLDER: seeded } : {},
+    ),
   });
   const code = await child.ended;
   return tallyOf(existsSync(reportFile) ? JSON.parse(readFileSync(reportFile, "utf8")) : undefined, code);
+}
+
+/** Makes one data folder with the demo in it, of which every served test takes a copy instead of seeding anew. */
+async function seedOnce(life: Lifetime, folder: string): Promise<Tally> {
+  chmodSync(folder, 0o711);
+  const cluster = await startCluster({ folder, account: serverAccount(), tuning: throwAwayTuning });
+  try {
+    life.onStop(() => cluster.stop());
+    await prepareDemoDatabase(cluster, demoDatabase, seedInChild(life, undefined, root, folder));
+  } catch (error) {
+    await cluster.stop();
+    rmSync(path.join(folder, "postgres"), { recursive: true, force: true });
+    throw error;
+  }
+  await cluster.stop();
+  return one;
 }
 
 /** Debian's packages that the tests call, by the program that shows they are there. The last two are reference tools. */

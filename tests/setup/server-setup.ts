@@ -7,7 +7,7 @@ import { anyFreePort } from "@/db/cluster/port";
 import { demoDatabase } from "@/lib/cli/launch/local-services";
 import { childEnvironment } from "@/lib/env/env";
 import { onInterrupt } from "./interrupt";
-import { temporaryFolder } from "./temporary-folder";
+import { dataFolderOfOnesOwn } from "./seeded-folder";
 
 declare module "vitest" {
   interface ProvidedContext {
@@ -19,7 +19,7 @@ const root = path.resolve(import.meta.dirname, "../..");
 
 /** Starts the product as `npm start` does, demo and all, with a data folder and a port of its own; one a project. */
 export default async function setup(project: TestProject): Promise<() => Promise<void>> {
-  const dataFolder = temporaryFolder("served");
+  const dataFolder = dataFolderOfOnesOwn("served");
   const logFile = path.join(dataFolder, "start.log");
   const port = await anyFreePort();
   const child = spawn(process.execPath, ["lib/cli/launch.mjs", "start"], {

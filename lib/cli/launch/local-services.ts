@@ -8,7 +8,7 @@ import { childEnvironment, type env } from "@/lib/env/env";
 import { startMailStandIn } from "@/lib/services/mail/stand-in";
 import { startChild } from "./children";
 import { ensurePostgres } from "./debian";
-import { prepareDemoDatabase } from "./demo-seed";
+import { prepareDemoDatabase, seedInChild } from "./demo-seed";
 import type { LaunchLedger } from "./ledger";
 import type { Lifetime } from "./lifetime";
 
@@ -40,7 +40,7 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   ledger.add(cluster.pid, "database");
   life.onStop(() => cluster.stop());
   life.check();
-  await prepareDemoDatabase(life, cluster, demoDatabase);
+  await prepareDemoDatabase(cluster, demoDatabase, seedInChild(life, ledger, root, dataFolder));
   life.check();
   const urls = cluster.urls(demoDatabase);
   const environment: Record<string, string> = {

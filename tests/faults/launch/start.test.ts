@@ -5,7 +5,7 @@ import path from "node:path";
 import { afterEach, beforeEach, expect, test } from "vitest";
 import { anyFreePort } from "@/db/cluster/port";
 import { processesIn, until } from "@/db/cluster/processes";
-import { temporaryFolder } from "@/tests/setup/temporary-folder";
+import { dataFolderOfOnesOwn } from "@/tests/setup/seeded-folder";
 import { launch, marked } from "./launcher";
 
 let folder: string;
@@ -15,7 +15,7 @@ const settings = (more: Record<string, string> = {}) => ({ PORT: String(port), D
 const database = () => processesIn(path.join(folder, "postgres/cluster"));
 
 beforeEach(async () => {
-  folder = temporaryFolder("start");
+  folder = dataFolderOfOnesOwn("start");
   mark = randomUUID();
   port = await anyFreePort();
 });
@@ -76,12 +76,12 @@ test("the demo is not shown beyond this machine", async () => {
   const start = launch(settings({ HOST: "0.0.0.0" }), mark);
   expect(await start.ended).toBe(1);
   expect(start.said()).toContain("HOST=0.0.0.0");
-  expect(existsSync(path.join(folder, "postgres"))).toBe(false);
+  expect(existsSync(path.join(folder, "launcher.json"))).toBe(false);
 });
 
 test("with DATABASE_URL set, nothing of ours is started and what is missing is named", async () => {
   const start = launch(settings({ DATABASE_URL: "postgresql://a:b@127.0.0.1:1/none" }), mark);
   expect(await start.ended).toBe(1);
   expect(start.said()).toContain("PUBLIC_DATABASE_URL, MEILI_HOST, SMTP_URL, NEXTAUTH_SECRET, NEXTAUTH_URL");
-  expect(existsSync(path.join(folder, "postgres"))).toBe(false);
+  expect(existsSync(path.join(folder, "launcher.json"))).toBe(false);
 });
