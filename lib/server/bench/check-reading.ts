@@ -1,0 +1,69 @@
+import type { BenchVersionRow, ProtocolRow } from "@/db/queries/bench-sessions";
+import type { ReadingInput } from "@/lib/contracts/bench";
+import { ExpectedError, type FieldProblem } from "@/lib/domain/expected-error";
+
+const spans = {
+  level_dba: [0, 140, "dB(A)"],
+  power_w: [0.1, 2000, "W"],
+  speed_rpm: [1, 60_000, "rpm"],
+} as const;
+
+/**
+ * Refuses what can't be: a temperature outside the sensor's range, ΔT at or under zero with the heat on, a level or
+ * speed that no instrument here reads. What is merely bad is kept and shown as such.
+ * @throws ExpectedError impossible (422) naming every field
+ */
+export function checkReadings(readings: readonly ReadingInput[], bench: BenchVersionRow): void {
+  const fields = readings.flatMap((reading, i): FieldProblem[] => {
+    const message = whyImpossible(reading, bench);
+    return message ? [{ path: `readings[${i}].value`, message }] : [];
+  });
+  const sensor = readings.find((each) => each.quantity === "sensor_c");
+  const ambient = readings.find((each) => each.quantity === "ambient_c");
+  if (sensor && ambient && !(sensor.value > ambient.value)) {
+    const i = readings.indexOf(sensor);
+    fields.push({
+      path: `readings[${i}].value`,
+      message: "is not above the ambient: with the heat on ΔT is above 0 K",
+    });
+  }
+  if (fields.length > 0)
+    throw new ExpectedError(
+      "impossible",
+      "Some figures can't be. Nothing was kept; your typing is still here.",
+      fields,
+    );
+}
+
+function whyImpossible({ quantity, value }: ReadingInput, bench: BenchVersionRow): string | undefined {
+  if (!Number.isFinite(value)) return "is no number";
+  if (quantity === "delta_t_k") return value > 0 ? undefined : "is not above 0 K: with the heat on ΔT is above 0 K";
+  if (quantity === "sensor_c" || quantity === "ambient_c") {
+    const { temperatureMinC: low, temperatureMaxC: high } = bench;
+    return value >= low && value <= high ? undefined : `lies outside the sensor's range, ${low} to ${high} °C`;
+  }
+  const [low, high, unit] = spans[quantity];
+  return value >= low && value <= high ? undefined : `lies outside what is read here, ${low} to ${high} ${unit}`;
+}
+
+/** @throws ExpectedError malformed for a set speed that the protocol doesn't have */
+export function checkSetSpeed(setSpeed: number, protocol: ProtocolRow): void {
+  if (protocol.setSpeeds.includes(setSpeed)) return;
+  throw new ExpectedError("malformed", "The protocol has no such set speed.", [
+    { path: "setSpeed", message: `is none of ${protocol.setSpeeds.join(", ")}` },
+  ]);
+}
+
+/** Levels need a position, speeds a rotor; positions must be of the bench. @throws ExpectedError malformed */
+export function checkPlaces(readings: readonly ReadingInput[], positionIds: readonly string[]): void {
+  const fields = readings.flatMap((reading, i): FieldProblem[] => {
+    if (reading.quantity === "level_dba" && !positionIds.includes(reading.positionId ?? "")) {
+      return [{ path: `readings[${i}].positionId`, message: "is no microphone position of this bench" }];
+    }
+    if (reading.quantity === "speed_rpm" && !reading.rotorPosition) {
+      return [{ path: `readings[${i}].rotorPosition`, message: "is missing: which rotor?" }];
+    }
+    return [];
+  });
+  if (fields.length > 0) throw new ExpectedError("malformed", "Some readings don't say where they were taken.", fields);
+}

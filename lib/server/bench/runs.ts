@@ -1,0 +1,136 @@
+import type { z } from "zod";
+import { appDb } from "@/db/client/handles";
+import type { Handle } from "@/db/client/connect";
+import { benchEntries, changeRun, insertReadings, insertRun, runById, type RunRow } from "@/db/queries/bench-runs";
+import { benchVersionOf, positionsOf, protocolOf, type SessionHead } from "@/db/queries/bench-sessions";
+import { runQuantities, type NewRun, type ReadingInput, type runReadings, type runState } from "@/lib/contracts/bench";
+import type { Person } from "@/lib/domain/accounts/actor";
+import { ExpectedError } from "@/lib/domain/expected-error";
+import { note, type Asked } from "../audit/audit";
+import { demandBench, demandNotOwner } from "./bench-access";
+import { checkPlaces, checkReadings, checkSetSpeed } from "./check-reading";
+
+/** Readings as they are stored: a speed goes to the run's rotor, ambient and power to the run. */
+async function storeReadings(
+  tx: Handle,
+  {
+    session,
+    runId,
+    person,
+    readings,
+  }: { session: SessionHead; runId: string; person: Person; readings: readonly ReadingInput[] },
+): Promise<string[]> {
+  const [bench, positions] = await Promise.all([
+    benchVersionOf(tx, { benchVersionId: session.benchVersionId }),
+    positionsOf(tx, { benchVersionId: session.benchVersionId }),
+  ]);
+  checkPlaces(
+    readings,
+    positions.map((each) => each.id),
+  );
+  checkReadings(readings, bench);
+  return insertReadings(
+    tx,
+    readings.map((each) => ({
+      sessionId: session.id,
+      runId,
+      quantity: each.quantity,
+      value: each.value,
+      unit: runQuantities[each.quantity],
+      source: each.source,
+      positionId: each.quantity === "level_dba" ? (each.positionId ?? null) : null,
+      rotorPosition: each.quantity === "speed_rpm" ? (each.rotorPosition ?? null) : null,
+      takenBy: person.personId,
+    })),
+  );
+}
+
+/**
+ * Adds a run to an open session, with what was read so far. The baseline's when no entry is named; else of the entry's
+ * newest specimen that passed spin-up.
+ * @throws ExpectedError moved_on, already_there (that mount at that set speed exists), impossible, malformed, forbidden
+ */
+export async function addRun(
+  asked: Asked,
+  { sessionId, ...input }: { sessionId: string } & NewRun,
+): Promise<{ runId: string; version: number; readingIds: string[] }> {
+  return appDb().transaction(async (tx) => {
+    const { person, session } = await demandBench(tx, asked, { sessionId, lock: true, open: true });
+    await demandNotOwner(tx, person, input.entryId);
+    checkSetSpeed(input.setSpeed, await protocolOf(tx, { protocolVersionId: session.protocolVersionId }));
+    const entry = input.entryId
+      ? (await benchEntries(tx, { roundId: session.roundId ?? "" })).find((each) => each.entryId === input.entryId)
+      : undefined;
+    if (input.entryId && !entry) throw new ExpectedError("malformed", "The entry is not of this session's round.");
+    if (entry && entry.state !== "on_the_bench") {
+      throw new ExpectedError("moved_on", `The entry is ${entry.state.replaceAll("_", " ")}, not on the bench.`);
+    }
+    if (entry && !entry.specimenId)
+      throw new ExpectedError("moved_on", "No specimen of this entry has passed its spin-up.");
+    const runId = await insertRun(tx, {
+      sessionId,
+      entryId: entry?.entryId ?? null,
+      specimenId: entry?.specimenId ?? null,
+      baselineUnitId: entry ? null : session.baselineUnitId,
+      setSpeed: input.setSpeed,
+      mountNumber: input.mountNumber,
+      repeatNumber: input.repeatNumber,
+      byPerson: person.personId,
+    });
+    const readingIds = await storeReadings(tx, { session, runId, person, readings: input.readings });
+    return { runId, version: 1, readingIds };
+  });
+}
+
+async function demandRun(
+  tx: Handle,
+  asked: Asked,
+  runId: string,
+): Promise<{ run: RunRow; session: SessionHead; person: Person }> {
+  const run = await runById(tx, { runId });
+  if (!run) throw new ExpectedError("not_found", "There is no such run.");
+  const { session, person } = await demandBench(tx, asked, { sessionId: run.sessionId, open: true });
+  await demandNotOwner(tx, person, run.entryId);
+  return { run, session, person };
+}
+
+const movedOn = "Somebody else changed this run in between. Look at it again; your typing is kept.";
+
+/** Adds readings to a run of an open session, if nobody changed the run in between. */
+export async function addRunReadings(
+  asked: Asked,
+  { runId, version, readings }: { runId: string } & z.output<typeof runReadings>,
+): Promise<{ version: number; readingIds: string[] }> {
+  return appDb().transaction(async (tx) => {
+    const { session, person } = await demandRun(tx, asked, runId);
+    if (!(await changeRun(tx, { runId, version }))) throw new ExpectedError("moved_on", movedOn);
+    return { version: version + 1, readingIds: await storeReadings(tx, { session, runId, person, readings }) };
+  });
+}
+
+/** Says that a run is done, held, discarded (each but done with a reason) or open again. */
+export async function setRunState(
+  asked: Asked,
+  { runId, version, state, reason }: { runId: string } & z.output<typeof runState>,
+): Promise<{ version: number }> {
+  if ((state === "held" || state === "discarded") && !reason) {
+    throw new ExpectedError("malformed", `A run is ${state} with a reason.`, [
+      { path: "reason", message: "is missing" },
+    ]);
+  }
+  return appDb().transaction(async (tx) => {
+    const { run } = await demandRun(tx, asked, runId);
+    if (!(await changeRun(tx, { runId, version, state, reason: reason ?? null })))
+      throw new ExpectedError("moved_on", movedOn);
+    if (state === "held" || state === "discarded") {
+      await note(tx, asked, {
+        action: `run.${state}`,
+        subjectKind: "run",
+        subjectId: runId,
+        before: run.state,
+        after: { state, reason },
+      });
+    }
+    return { version: version + 1 };
+  });
+}

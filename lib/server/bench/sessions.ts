@@ -1,0 +1,111 @@
+import { appDb } from "@/db/client/handles";
+import { changeSession, endSessionRow, insertSession, setupOf } from "@/db/queries/bench-sessions";
+import { insertHolds } from "@/db/queries/holds";
+import { moveRound } from "@/db/queries/moves";
+import { roundContext } from "@/db/queries/round-context";
+import type { z } from "zod";
+import type { sessionChange, startSession as startSchema } from "@/lib/contracts/bench";
+import { ExpectedError } from "@/lib/domain/expected-error";
+import { sessionGates } from "@/lib/domain/bench/session-gates";
+import { note, type Asked } from "../audit/audit";
+import { demand } from "../permission";
+import { computeSession } from "../results/compute-session";
+import { demandBench, demandRoundWork } from "./bench-access";
+import { gateInput } from "./gate-input";
+
+/** What must be ticked before a session starts: the cautions stand where the act is. */
+export const checklistItems = {
+  guard: "Guard in place between the rotor and everybody; nobody stands in the rotor's plane",
+  eyes: "Eye protection on, for spin-up and for every run",
+  cut_out: "Independent thermal cut-out fitted and tried; the heater is never left unattended",
+  hot: "Cooler and heater are hot enough to burn skin: let them cool before a remount",
+  hearing: "Hearing protection at hand: notice from 80 dB(A), protection and time limits near 85 dB(A)",
+  mains: "Mains wiring was done by somebody licensed for it, to the local code",
+} as const;
+
+/**
+ * Starts a session of a round on a bench; the round is being measured from then on. One session is open on a bench.
+ * @throws ExpectedError malformed while a caution is not ticked or the season doesn't use that bench or baseline
+ */
+export async function startSession(
+  asked: Asked,
+  input: z.output<typeof startSchema>,
+  at: Date,
+): Promise<{ sessionId: string }> {
+  const { actor } = asked;
+  demand(actor, "bench.read");
+  const missing = Object.keys(checklistItems).filter((item) => input.checklist[item] !== true);
+  if (missing.length > 0) {
+    throw new ExpectedError(
+      "malformed",
+      "Every caution is ticked before a session starts.",
+      missing.map((item) => ({ path: `checklist.${item}`, message: "is not ticked" })),
+    );
+  }
+  return appDb().transaction(async (tx) => {
+    await demandRoundWork(tx, asked, input.roundId);
+    const round = await roundContext(tx, { roundId: input.roundId, lock: true });
+    if (round.state !== "planned" && round.state !== "measuring") {
+      throw new ExpectedError(
+        "moved_on",
+        `The round is ${round.state.replace("_", " ")}: nothing is measured for it now.`,
+      );
+    }
+    const setup = await setupOf(tx, input);
+    if (!setup) {
+      throw new ExpectedError(
+        "malformed",
+        "The round's season doesn't use this bench version with this baseline unit.",
+        [{ path: "benchVersionId", message: "is not of the season, or the baseline unit is not" }],
+      );
+    }
+    const sessionId = await insertSession(tx, {
+      ...setup,
+      benchVersionId: input.benchVersionId,
+      baselineUnitId: input.baselineUnitId,
+      roundId: input.roundId,
+      operatorId: actor.personId,
+      checklist: input.checklist,
+      at,
+    });
+    if (round.state === "planned") {
+      await moveRound(tx, { roundId: round.roundId, from: "planned", to: "measuring", byPerson: actor.personId, at });
+    }
+    await note(tx, asked, { action: "session.start", subjectKind: "session", subjectId: sessionId });
+    return { sessionId };
+  });
+}
+
+/** Changes the note or the checklist of an open session, if nobody else did in between. */
+export async function editSession(
+  asked: Asked,
+  { sessionId, ...input }: { sessionId: string } & z.output<typeof sessionChange>,
+): Promise<{ version: number }> {
+  const db = appDb();
+  await demandBench(db, asked, { sessionId, open: true });
+  const { version, checklist, note: text } = input;
+  if (!(await changeSession(db, { sessionId, version, change: { checklist, note: text } }))) {
+    throw new ExpectedError(
+      "moved_on",
+      "Somebody else changed this session in between. Look at it again; your typing is kept.",
+    );
+  }
+  return { version: version + 1 };
+}
+
+/**
+ * Closes a session: its gates are tried, each finding holds it, and its figures are computed. A closed session takes
+ * only readings that supersede others for a review or a correction.
+ * @returns what was found; empty when nothing holds it
+ */
+export async function endSession(asked: Asked, { sessionId, at }: { sessionId: string; at: Date }) {
+  return appDb().transaction(async (tx) => {
+    await demandBench(tx, asked, { sessionId, lock: true, open: true });
+    const findings = sessionGates(await gateInput(tx, { sessionId }));
+    await endSessionRow(tx, { sessionId, at });
+    await insertHolds(tx, { sessionId, findings, raisedBy: null, at });
+    await computeSession(tx, sessionId);
+    await note(tx, asked, { action: "session.end", subjectKind: "session", subjectId: sessionId, after: { findings } });
+    return { findings };
+  });
+}
