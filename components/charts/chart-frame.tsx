@@ -2,9 +2,9 @@
 
 import type { Chart } from "chart.js";
 import { useRef, type ReactNode, type RefObject } from "react";
-import { BarsTable, type BarsTableProps } from "../ui/bars/bars-table";
-import { Button } from "../ui/button";
-import { Fold } from "../ui/fold";
+import { BarsTable, type BarsTableProps } from "@/components/ui/bars/bars-table";
+import { Button } from "@/components/ui/button";
+import { Fold } from "@/components/ui/fold";
 
 export type ChartFrameProps = {
   /** One sentence that says what the chart shows; heard in its place. */

@@ -1,5 +1,5 @@
 import { formatNumber } from "@/lib/format/numbers";
-import type { BarsColumn, BarsRow } from "../ui/bars/bars-model";
+import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 
 export type ControlPoint = {
   key: string;

@@ -1,6 +1,6 @@
 import { formatNumber } from "@/lib/format/numbers";
 import { levelUnit } from "@/lib/format/quantities";
-import type { BarsColumn, BarsRow } from "../ui/bars/bars-model";
+import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 
 export type CoolingPoint = {
   /** A-weighted level in dB at the chart's distance, with its 95 % half-width. */

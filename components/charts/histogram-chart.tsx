@@ -4,7 +4,7 @@ import type { ChartOptions } from "chart.js";
 import type { ReactNode } from "react";
 import { Bar } from "react-chartjs-2";
 import { formatRange } from "@/lib/format/quantities";
-import type { HistogramBin } from "../ui/small-histogram";
+import type { HistogramBin } from "@/components/ui/small-histogram";
 import { ChartFrame } from "./chart-frame";
 import { usePalette } from "./palette";
 import { axis, commonOptions, figureAxis, paperUnder } from "./paper";

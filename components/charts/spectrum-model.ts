@@ -1,6 +1,6 @@
 import { formatNumber } from "@/lib/format/numbers";
 import { listWords } from "@/lib/format/words";
-import type { BarsColumn, BarsRow } from "../ui/bars/bars-model";
+import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 
 export type SpectrumBand = {
   /** Nominal mid-band frequency in Hz, as the band is called. */

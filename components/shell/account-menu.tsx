@@ -2,7 +2,7 @@
 
 import Link from "next/link";
 import { useEffect, useRef, type ReactNode } from "react";
-import { moveByArrows } from "../ui/arrow-keys";
+import { moveByArrows } from "@/components/ui/arrow-keys";
 
 export type AccountLink = { href: string; word: string };
 

@@ -2,7 +2,7 @@
 
 import { useEffect } from "react";
 import { numberWord } from "@/lib/format/words";
-import { Button, LinkButton } from "../ui/button";
+import { Button, LinkButton } from "@/components/ui/button";
 import { adoptAddress, clipLimit, useClips } from "./clips";
 
 export type ClipBarProps = {

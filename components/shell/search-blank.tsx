@@ -1,7 +1,7 @@
 "use client";
 
 import { useEffect, useRef } from "react";
-import { Kbd } from "../ui/kbd";
+import { Kbd } from "@/components/ui/kbd";
 
 export type SearchBlankProps = { action?: string; name?: string; label?: string };
 

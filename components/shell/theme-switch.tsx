@@ -1,7 +1,7 @@
 "use client";
 
 import { useState } from "react";
-import { Slot } from "../ui/slot";
+import { Slot } from "@/components/ui/slot";
 import { themeCookie, type ThemeChoice } from "./theme";
 
 const choices: readonly { value: ThemeChoice; label: string }[] = [

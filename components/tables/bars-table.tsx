@@ -1,2 +1,2 @@
-export { BarsTable, type BarsTableProps } from "../ui/bars/bars-table";
-export type { BarsCell, BarsColumn, BarsRow, Figure } from "../ui/bars/bars-model";
+export { BarsTable, type BarsTableProps } from "@/components/ui/bars/bars-table";
+export type { BarsCell, BarsColumn, BarsRow, Figure } from "@/components/ui/bars/bars-model";

@@ -11,7 +11,7 @@ import {
   type ColumnDef,
 } from "@tanstack/react-table";
 import { useMemo } from "react";
-import { cellSortValue, isFigureColumn, type BarsColumn, type BarsRow } from "../ui/bars/bars-model";
+import { cellSortValue, isFigureColumn, type BarsColumn, type BarsRow } from "@/components/ui/bars/bars-model";
 
 const features = tableFeatures({
   columnVisibilityFeature,

@@ -2,10 +2,10 @@
 
 import { usePathname, useSearchParams } from "next/navigation";
 import { useState } from "react";
-import { Fold } from "../ui/fold";
-import { Slot } from "../ui/slot";
-import { columnLabel } from "../ui/bars/bars-model";
-import { BarsTable, type BarsTableProps } from "../ui/bars/bars-table";
+import { Fold } from "@/components/ui/fold";
+import { Slot } from "@/components/ui/slot";
+import { columnLabel } from "@/components/ui/bars/bars-model";
+import { BarsTable, type BarsTableProps } from "@/components/ui/bars/bars-table";
 import { useSortedRows } from "./sorted-rows";
 
 export type SortedTableProps = BarsTableProps & {

@@ -1,4 +1,4 @@
-import { Missing } from "../missing";
+import { Missing } from "@/components/ui/missing";
 import { figureText, tailLength, type BarsCell, type ColumnWidths } from "./bars-model";
 
 /** Room as wide as so many figures: there for the eye, not for a screen reader or the clipboard. */

@@ -1,5 +1,5 @@
-import { moveByArrows } from "../arrow-keys";
-import { Slot } from "../slot";
+import { moveByArrows } from "@/components/ui/arrow-keys";
+import { Slot } from "@/components/ui/slot";
 import type { SentenceChoices } from "./pieces";
 
 export type ChoicesStripProps = {

@@ -1,4 +1,4 @@
-import type { HistogramBin } from "../small-histogram";
+import type { HistogramBin } from "@/components/ui/small-histogram";
 
 export type SentenceText = { kind: "text"; text: string };
 

@@ -2,8 +2,8 @@
 
 import { useState } from "react";
 import { parseTypedNumber } from "@/lib/format/typed-number";
-import { Field } from "../field";
-import { SmallHistogram } from "../small-histogram";
+import { Field } from "@/components/ui/field";
+import { SmallHistogram } from "@/components/ui/small-histogram";
 import type { SentenceRange } from "./pieces";
 
 export type RangeEnds = { from?: number; to?: number };

@@ -1,7 +1,7 @@
 "use client";
 
 import Link from "next/link";
-import { Button } from "../button";
+import { Button } from "@/components/ui/button";
 import { ChoicesStrip } from "./choices-strip";
 import type { SentencePart } from "./pieces";
 import { RangeStrip } from "./range-strip";
