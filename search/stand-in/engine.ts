@@ -167,6 +167,10 @@ export class Engine {
   }
 }
 
+/** Up to so many documents an index is made ready within its task; a larger one once no task is waiting. */
+const READY_AT_ONCE_MAX = 2000;
+
 function touch(index: SearchIndex): void {
   index.updatedAt = new Date().toISOString();
+  if (index.count <= READY_AT_ONCE_MAX) index.prepare();
 }

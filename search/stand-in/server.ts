@@ -10,6 +10,7 @@ import { indexRoutes } from "./routes-indexes";
 import { searchRoutes } from "./routes-search";
 import { refusedRoutes, serverRoutes } from "./routes-server";
 import { settingsRoutes } from "./routes-settings";
+import { warmUp } from "./warm-up";
 
 const LOOPBACK = "127.0.0.1";
 
@@ -32,6 +33,7 @@ export async function startSearchStandIn(options: StandInOptions): Promise<Stand
     throw new Error("The search stand-in is for development and tests: set MEILI_HOST to a search service instead.");
   }
   if (options.masterKey === "") throw new Error("The search stand-in needs a master key.");
+  warmUp();
   const engine = new Engine(options.masterKey);
   const routes = [
     ...serverRoutes(engine),
