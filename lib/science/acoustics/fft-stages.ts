@@ -1,3 +1,4 @@
+import { radix8 } from "./fft-radix8";
 /** exp(−2πik/period) for k = 0 … count − 1, real and imaginary part side by side. */
 export function unitCircle(count: number, period: number): Float64Array {
   const values = new Float64Array(2 * count);
@@ -69,10 +70,12 @@ export function transformPart(values: Float64Array, scratch: Float64Array, twidd
   let source = values;
   let target = scratch;
   while (length >= 2) {
-    if (length >= 4) radix4(source, target, twiddle, length, stride);
+    const radix = length >= 8 ? 8 : length;
+    if (radix === 8) radix8(source, target, twiddle, length, stride);
+    else if (radix === 4) radix4(source, target, twiddle, length, stride);
     else radix2(source, target, stride);
-    length = length >= 4 ? length / 4 : 1;
-    stride *= 4;
+    length /= radix;
+    stride *= radix;
     const done = target;
     target = source;
     source = done;

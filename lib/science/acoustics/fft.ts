@@ -1,7 +1,7 @@
 import { firstStage, transformPart, unitCircle } from "./fft-stages";
 
 /**
- * Power spectrum of real blocks by a radix-4 transform of half the length.
+ * Power spectrum of real blocks by a mixed radix-8 and radix-4 transform of half the length.
  *
  * Length: a power of two, 8 or more. Work arrays hold real and imaginary parts side by side, which is how a real block
  * lies in memory already. The first stage splits it into four parts that are transformed one after the other, so that
