@@ -16,6 +16,7 @@ export const budgetLineSchema = z.strictObject({
   u: z.number().min(0),
   share: z.number().min(0).max(1),
   dof: z.number().positive().nullable(),
+  cancels: z.enum(["fully", "partly", "no"]),
   parts: z.array(
     z.strictObject({ name: z.string(), evaluation: z.enum(["A", "B"]), u: z.number(), source: z.string() }),
   ),

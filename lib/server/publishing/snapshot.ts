@@ -7,10 +7,10 @@ import {
   type SnapshotPoint,
 } from "@/lib/contracts/publication";
 import type { RoundContext, RoundEntryRow } from "@/db/queries/round-context";
-import { groupBy } from "@/lib/domain/group-by";
+import { budgetLines } from "@/lib/domain/results/budget";
 import { effectiveDof, standardUncertainty, type Effect } from "@/lib/domain/results/effects";
 import { equalCooling, equalNoise, reached } from "@/lib/domain/results/methods/v1/equal-noise";
-import { risesWithLevel } from "@/lib/domain/results/methods/v1/cooling-curve";
+import { readDeltaT, risesWithLevel } from "@/lib/domain/results/methods/v1/cooling-curve";
 import { METHOD_V1 } from "@/lib/domain/results/methods/v1/parameters";
 import { dofOrNull, roundResult } from "@/lib/domain/results/rounding";
 import {
@@ -114,7 +114,13 @@ export function buildSnapshot(
     equalCooling: cooling
       ? { levelDba: round.headlineDba, differenceDb: figureOf(cooling.differenceDb, cooling.effects) }
       : null,
-    budget: reached(headline) ? budgetOf(record, headline.differenceEffects) : [],
+    budget: reached(headline)
+      ? budgetOf(
+          record,
+          headline.differenceEffects,
+          (own.curve && readDeltaT(own.curve, round.headlineDba)?.effects) ?? [],
+        )
+      : [],
     notes: notesOf(own, record),
     leftOutRuns: figures.leftOut.filter(({ runId }) =>
       record.runs.some((run) => run.runId === runId && run.entryId === entry.entryId),
@@ -150,31 +156,24 @@ function pointsOf(session: ComputedSession, figures: SubjectFigures): SnapshotPo
   });
 }
 
-/** The parts of the headline difference, by what they are and whose; shares are of the variance and sum to 1. */
-function budgetOf(record: SessionRecord, effects: readonly Effect[]): BudgetLine[] {
-  const total = standardUncertainty(effects) ** 2;
-  const owner = (effect: Effect): BudgetLine["of"] =>
-    effect.owner.startsWith("baseline ") ? "baseline" : effect.owner.startsWith("entry ") ? "entry" : "session";
-  const groups = groupBy(effects, (effect) => `${effect.quantity} ${effect.kind} ${owner(effect)}`);
-  return [...groups.values()].flatMap((group): BudgetLine[] => {
-    const [first] = group;
-    if (!first) return [];
-    const u = standardUncertainty(group);
-    const quantity = first.quantity === "level" ? "level_dba" : "delta_t_k";
-    return [
-      {
-        quantity: first.quantity,
-        kind: first.kind,
-        of: owner(first),
-        u: roundResult(u),
-        share: total > 0 ? roundResult(u ** 2 / total) : 0,
-        dof: dofOrNull(effectiveDof(group)),
-        parts: record.budget
-          .filter((part) => part.quantity === quantity && part.kind === first.kind)
-          .map(({ name, evaluation, u: size, source }) => ({ name, evaluation, u: size, source })),
-      },
-    ];
-  });
+/** The lines of the headline difference's budget, largest first, with the bench's own parts behind each. */
+function budgetOf(record: SessionRecord, effects: readonly Effect[], alone: readonly Effect[]): BudgetLine[] {
+  const ownerOf = (owner: string): BudgetLine["of"] =>
+    owner.startsWith("baseline ") ? "baseline" : owner.startsWith("entry ") ? "entry" : "session";
+  return budgetLines(effects, alone).map((line) => ({
+    quantity: line.quantity,
+    kind: line.kind,
+    of: ownerOf(line.owner),
+    u: roundResult(line.u),
+    share: roundResult(line.share),
+    dof: dofOrNull(line.dof),
+    cancels: line.cancels,
+    parts: record.budget
+      .filter(
+        (part) => part.quantity === (line.quantity === "level" ? "level_dba" : "delta_t_k") && part.kind === line.kind,
+      )
+      .map(({ name, evaluation, u, source }) => ({ name, evaluation, u, source })),
+  }));
 }
 
 function notesOf(own: SubjectFigures, record: SessionRecord): Snapshot["notes"] {
