@@ -25,6 +25,9 @@ export type GateInput = {
     readonly levelsDba: readonly number[];
     readonly deltaTK: readonly number[];
   }[];
+  /** Whether the first and the last run that is done was the baseline's. */
+  readonly baselineFirst: boolean;
+  readonly baselineLast: boolean;
   /** Standard deviation between two baseline mounts that the bench's budget expects, dB and K. */
   readonly repeatabilityDb: number;
   readonly repeatabilityK: number;
@@ -105,14 +108,17 @@ function backgroundFindings(input: GateInput): GateFinding[] {
 }
 
 function ambientFindings(input: GateInput): GateFinding[] {
-  const outside = input.ambientC.filter((value) => value < input.ambientMinC || value > input.ambientMaxC);
+  const whatToDo = "Bring the room into its limits, let everything soak, and measure the affected runs again.";
+  if (input.ambientC.length === 0) return [{ code: "ambient", reason: "No ambient temperature was read.", whatToDo }];
+  const outside = input.ambientC.filter((value) => !(value >= input.ambientMinC && value <= input.ambientMaxC));
   if (outside.length === 0) return [];
-  const worst = outside.reduce((a, b) => (Math.abs(b - 23) > Math.abs(a - 23) ? b : a));
+  const middle = (input.ambientMinC + input.ambientMaxC) / 2;
+  const worst = outside.reduce((a, b) => (Math.abs(b - middle) > Math.abs(a - middle) ? b : a));
   return [
     {
       code: "ambient",
       reason: `The ambient was ${one(worst)} °C; the protocol takes ${one(input.ambientMinC)} to ${one(input.ambientMaxC)} °C.`,
-      whatToDo: "Bring the room into its limits, let everything soak, and measure the affected runs again.",
+      whatToDo,
     },
   ];
 }
@@ -120,13 +126,19 @@ function ambientFindings(input: GateInput): GateFinding[] {
 function baselineFindings(input: GateInput): GateFinding[] {
   const whatToDo =
     "Look for what changed (paste, mounting, cable, bearing), remount the baseline and run it again before the session counts.";
-  return input.baseline.flatMap(({ setSpeed, levelsDba, deltaTK }): GateFinding[] => {
+  const order = [...(input.baselineFirst ? [] : ["first"]), ...(input.baselineLast ? [] : ["last"])];
+  const turns = order.map((turn): GateFinding => ({
+    code: "baseline",
+    reason: `The baseline did not run ${turn}.`,
+    whatToDo,
+  }));
+  const moved = input.baseline.flatMap(({ setSpeed, levelsDba, deltaTK }): GateFinding[] => {
     const spread = (values: readonly number[]) => Math.abs((values.at(-1) ?? 0) - (values[0] ?? 0));
     if (levelsDba.length < 2) {
       return [{ code: "baseline", reason: `The baseline was not run first and last at ${setSpeed}.`, whatToDo }];
     }
-    const level = spread(levelsDba);
-    const deltaT = spread(deltaTK);
+    const level = spread(levelsDba) - 1e-9;
+    const deltaT = spread(deltaTK) - 1e-9;
     const findings: GateFinding[] = [];
     if (level > 2.8 * input.repeatabilityDb) {
       findings.push({
@@ -144,4 +156,5 @@ function baselineFindings(input: GateInput): GateFinding[] {
     }
     return findings;
   });
+  return [...turns, ...moved];
 }

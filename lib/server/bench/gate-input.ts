@@ -21,6 +21,8 @@ export async function gateInput(db: Handle, { sessionId }: { sessionId: string }
   const nameOf = (positionId: string | null) => record.positions.find((each) => each.id === positionId)?.name ?? "";
   const { subjects } = sessionPoints(record, protocolPositionIds(record));
   const baseline = subjects.find((subject) => subject.baselineUnitId === session.baselineUnitId);
+  const done = record.runs.filter((run) => run.state === "done");
+  const isBaseline = (run: (typeof done)[number] | undefined) => run?.baselineUnitId === session.baselineUnitId;
   const part = (quantity: "level_dba" | "delta_t_k") =>
     combineIndependent(
       record.budget
@@ -56,6 +58,8 @@ export async function gateInput(db: Handle, { sessionId }: { sessionId: string }
         deltaTK: points.map((point) => point.deltaTK),
       };
     }),
+    baselineFirst: isBaseline(done[0]),
+    baselineLast: isBaseline(done.at(-1)),
     repeatabilityDb: part("level_dba"),
     repeatabilityK: part("delta_t_k"),
   };
