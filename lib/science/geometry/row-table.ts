@@ -1,5 +1,4 @@
 import { eachStretch, type Solids } from "./column-solids";
-import { at } from "./mesh";
 
 /** Circles around the axis, by radius and height: how much of each is solid, and in how many runs. */
 export interface RowTable {
@@ -18,38 +17,25 @@ export function rowTable(solids: Solids, fromMm: number, toMm: number, rows: num
   const heightsMm = Float64Array.from({ length: rows }, (_, j) => fromMm + (j + 0.5) * step);
   const fill = new Float64Array(radiiMm.length * rows);
   const runs = new Int32Array(radiiMm.length * rows);
+  // The latest line on which each row was solid: a run begins where that isn't the line before.
+  const latest = new Int32Array(rows);
   for (let i = 0; i < radiiMm.length; i++) {
-    const last = solidRows(solids, i * angles + angles - 1, fromMm, step, rows, new Uint8Array(rows));
-    let before: Uint8Array = last;
-    let [now, spare] = [new Uint8Array(rows), new Uint8Array(rows)];
+    latest.fill(-2);
+    const each = (line: number, visit: (row: number) => void) =>
+      eachStretch(solids, line, (low, high) => {
+        const first = Math.max(0, Math.ceil((low - fromMm) / step - 0.5));
+        const last = Math.min(rows - 1, Math.floor((high - fromMm) / step - 0.5));
+        for (let j = first; j <= last; j++) visit(j);
+      });
+    each(i * angles + angles - 1, (j) => (latest[j] = -1));
     for (let k = 0; k < angles; k++) {
-      solidRows(solids, i * angles + k, fromMm, step, rows, now);
-      for (let j = 0; j < rows; j++) {
-        if (now[j] !== 1) continue;
+      each(i * angles + k, (j) => {
         const cell = i * rows + j;
-        fill[cell] = at(fill, cell) + 1 / angles;
-        if (before[j] === 0) runs[cell] = at(runs, cell) + 1;
-      }
-      before = now;
-      [now, spare] = [spare, now];
+        fill[cell] = (fill[cell] ?? 0) + 1;
+        if (latest[j] !== k - 1 && latest[j] !== k) runs[cell] = (runs[cell] ?? 0) + 1;
+        latest[j] = k;
+      });
     }
   }
-  return { radiiMm, heightsMm, fill, runs };
-}
-
-function solidRows(
-  solids: Solids,
-  line: number,
-  from: number,
-  step: number,
-  rows: number,
-  out: Uint8Array,
-): Uint8Array {
-  out.fill(0);
-  eachStretch(solids, line, (low, high) => {
-    const first = Math.max(0, Math.ceil((low - from) / step - 0.5));
-    const last = Math.min(rows - 1, Math.floor((high - from) / step - 0.5));
-    for (let j = first; j <= last; j++) out[j] = 1;
-  });
-  return out;
+  return { radiiMm, heightsMm, fill: fill.map((count) => count / angles), runs };
 }
