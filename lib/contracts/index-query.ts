@@ -85,15 +85,32 @@ export type IndexQuery = z.infer<typeof indexQuerySchema>;
 
 export const indexPageSize = 20;
 
-function boundsOf(text: string): { low: number | null; high: number | null } | undefined {
-  const found = /^(-?\d+(?:\.\d+)?)?~(-?\d+(?:\.\d+)?)?$/.exec(text);
-  if (!found) return undefined;
-  const number = (part: string | undefined) => (part === undefined ? null : Number(part));
-  return { low: number(found[1]), high: number(found[2]) };
+/** Figures that stand side by side only within one bench version, protocol and baseline unit. */
+export const absoluteRanges: readonly RangeKey[] = ["equal", "loudness"];
+const absoluteSorts: readonly SortKey[] = [...absoluteRanges, "leveldba", "deltat"];
+
+/** The question without what can't be asked over several benches, protocols or baselines: absolute bounds go, a sort by
+ * an absolute figure becomes one by the ratio. Asked over one of each, it stays as it is. */
+export function settledQuery(query: IndexQuery, comparableOnly: boolean): IndexQuery {
+  if (comparableOnly) return query;
+  const kept = Object.entries(query.ranges).filter(([range]) => !absoluteRanges.some((each) => each === range));
+  return {
+    ...query,
+    ranges: Object.fromEntries(kept),
+    sort: absoluteSorts.includes(query.sort) ? "ratio" : query.sort,
+  };
+}
+
+/** The parameters of a range's two ends: `gap-from`, `gap-to`, as a plain form sends them. */
+export const endNames = (range: RangeKey) => ({ from: `${range}-from`, to: `${range}-to` });
+
+/** A bound as an address writes it; what is no plain number bounds nothing. */
+function boundOf(text: string | null): number | null {
+  return text !== null && /^-?\d{1,7}(?:\.\d{1,6})?$/.test(text) ? Number(text) : null;
 }
 
 /**
- * Reads the address: `?blades1=7&blades1=9&gap=0.5~1&sort=-level&page=2`. A part that says nothing readable is left
+ * Reads the address: `?blades1=7&blades1=9&gap-from=0.5&gap-to=1&sort=-level&page=2`. A part that says nothing readable is left
  * out, since an address may be old or typed by hand; it never changes what another part means.
  */
 export function parseIndexQuery(params: URLSearchParams): IndexQuery {
@@ -111,8 +128,9 @@ export function parseIndexQuery(params: URLSearchParams): IndexQuery {
   );
   const bounded = Object.fromEntries(
     rangeKeys.flatMap((range) => {
-      const parsed = boundsOf(params.get(range) ?? "");
-      return parsed && (parsed.low !== null || parsed.high !== null) ? [[range, parsed]] : [];
+      const { from, to } = endNames(range);
+      const parsed = { low: boundOf(params.get(from)), high: boundOf(params.get(to)) };
+      return parsed.low !== null || parsed.high !== null ? [[range, parsed]] : [];
     }),
   );
   return indexQuerySchema.parse({
@@ -123,8 +141,7 @@ export function parseIndexQuery(params: URLSearchParams): IndexQuery {
     descending: sortText.startsWith("-"),
     page: Number.isInteger(page) && page >= 1 && page <= 10_000 ? page : 1,
     view: params.get("view") === "drawings" ? "drawings" : "table",
-    columns: (params.get("columns") ?? "")
-      .split(",")
+    columns: [...new Set(params.getAll("columns").flatMap((list) => list.split(",")))]
       .filter((name) => name !== "" && name.length <= 40)
       .slice(0, 30),
   });
@@ -138,7 +155,9 @@ export function indexAddress(query: IndexQuery): string {
     for (const value of [...(query.facets[facet] ?? [])].sort()) params.append(facet, value);
   for (const range of rangeKeys) {
     const bounded = query.ranges[range];
-    if (bounded) params.set(range, `${bounded.low ?? ""}~${bounded.high ?? ""}`);
+    const { from, to } = endNames(range);
+    if (bounded && bounded.low !== null) params.set(from, String(bounded.low));
+    if (bounded && bounded.high !== null) params.set(to, String(bounded.high));
   }
   if (query.sort !== "equal" || query.descending) params.set("sort", `${query.descending ? "-" : ""}${query.sort}`);
   if (query.view !== "table") params.set("view", query.view);
@@ -187,11 +206,11 @@ export const indexItemSchema = z.strictObject({
   levelDifferenceDb: z.number(),
   uLevelDifferenceDb: z.number(),
   loudnessSone: z.number().nullable(),
-  levelFullDba: z.number(),
-  uLevelFullDb: z.number(),
+  levelFullDba: z.number().nullable(),
+  uLevelFullDb: z.number().nullable(),
   levelFullBound: z.boolean(),
-  deltaTFullK: z.number(),
-  uDeltaTFullK: z.number(),
+  deltaTFullK: z.number().nullable(),
+  uDeltaTFullK: z.number().nullable(),
   fullSetSpeed: z.number(),
   roundRank: z.number().int().nullable(),
   roundRankLow: z.number().int().nullable(),
@@ -203,7 +222,10 @@ export const indexItemSchema = z.strictObject({
 });
 export type IndexItem = z.infer<typeof indexItemSchema>;
 
-/** The index's answer. `comparableOnly` says that all matches share bench version, protocol and baseline unit. */
+/**
+ * The index's answer. `comparableOnly` says that all matches share bench version, protocol and baseline unit; where they
+ * don't, the question was settled first (see `settledQuery`) and the absolute figures of the items are null.
+ */
 export const indexAnswerSchema = z.strictObject({
   items: z.array(indexItemSchema),
   total: z.number().int(),

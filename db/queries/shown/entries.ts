@@ -102,7 +102,7 @@ function addFacet(query: Knex.QueryBuilder, facet: FacetKey, values: readonly st
 }
 
 /** Everything that the question asks but the facet or range that is being counted. */
-function asked(db: Handle, question: IndexQuery, without?: string): Knex.QueryBuilder {
+export function asked(db: Handle, question: IndexQuery, without?: string): Knex.QueryBuilder {
   const query = db("shown.entry");
   addWords(query, question.q);
   for (const facet of facetKeys) {
@@ -154,34 +154,4 @@ export async function countEntries(
     db("shown.entry").count<{ count: number }[]>("* as count"),
   ]);
   return { total: matches?.total ?? 0, comparables: matches?.comparables ?? 0, ofAll: Number(all[0]?.count ?? 0) };
-}
-
-/** Counts of a facet's values under everything asked but the facet's own choice. */
-export async function countFacet(
-  db: Handle,
-  { question, facet }: { question: IndexQuery; facet: FacetKey },
-): Promise<{ value: string; count: number }[]> {
-  const { column } = facets[facet];
-  const value = facet === "designer" ? db.raw("unnest(designers)") : db.raw("??::text", [column]);
-  const inner = asked(db, question, facet).select(db.raw("? as value", [value]));
-  return db
-    .from(inner.as("v"))
-    .whereNotNull("value")
-    .groupBy("value")
-    .select("value", db.raw("count(*)::int as count"))
-    .orderBy([{ column: "count", order: "desc" }, "value"])
-    .limit(300);
-}
-
-/** Bins of a range's values under everything asked but the range's own bounds: lower edge and count. */
-export async function countBins(
-  db: Handle,
-  { question, range }: { question: IndexQuery; range: keyof typeof ranges },
-): Promise<{ from: number; count: number }[]> {
-  const { column, step } = ranges[range];
-  return asked(db, question, range)
-    .whereNotNull(column)
-    .select(db.raw('floor(?? / ?) * ? as "from", count(*)::int as count', [column, step, step]))
-    .groupByRaw("1")
-    .orderByRaw("1");
 }

@@ -1,10 +1,11 @@
 import { publicDb } from "@/db/client/handles";
-import { countBins, countEntries, countFacet, listEntries, type ListedRow } from "@/db/queries/shown/entries";
+import { countFacets, countHistograms } from "@/db/queries/shown/entry-counts";
+import { countEntries, listEntries, type ListedRow } from "@/db/queries/shown/entries";
 import {
-  facetKeys,
+  absoluteRanges,
   indexItemSchema,
   indexPageSize,
-  rangeKeys,
+  settledQuery,
   type IndexAnswer,
   type IndexItem,
   type IndexQuery,
@@ -31,28 +32,49 @@ export function indexItem(row: ListedRow): IndexItem {
   });
 }
 
+/** The item as a list over several benches shows it: without the figures that would pass for one scale there. */
+export function withoutAbsolutes(item: IndexItem): IndexItem {
+  return {
+    ...item,
+    equalNoiseK: null,
+    uEqualNoiseK: null,
+    loudnessSone: null,
+    levelFullDba: null,
+    uLevelFullDb: null,
+    deltaTFullK: null,
+    uDeltaTFullK: null,
+  };
+}
+
 /**
  * Answers the index's question from the database: matches, counts of every facet without its own choice, and
  * histograms. The search service answers the same question faster and forgives errors of typing; this one needs nothing
  * but the public views.
  */
-export async function listDesigns(query: IndexQuery): Promise<IndexAnswer> {
+export async function listDesigns(asked: IndexQuery): Promise<IndexAnswer> {
   const db = publicDb();
+  // Whether figures stand on one scale is decided without the bounds that need it.
+  const { comparables } = await countEntries(db, settledQuery(asked, false));
+  const comparableOnly = comparables === 1;
+  const query = settledQuery(asked, comparableOnly);
   const [rows, counted, facetCounts, bins] = await Promise.all([
     listEntries(db, query),
     countEntries(db, query),
-    Promise.all(facetKeys.map(async (facet) => [facet, await countFacet(db, { question: query, facet })] as const)),
-    Promise.all(rangeKeys.map(async (range) => [range, await countBins(db, { question: query, range })] as const)),
+    countFacets(db, { question: query }),
+    countHistograms(db, { question: query }),
   ]);
+  const items = rows.map(indexItem);
   return {
-    items: rows.map(indexItem),
+    items: comparableOnly ? items : items.map(withoutAbsolutes),
     total: counted.total,
     ofAll: counted.ofAll,
     page: query.page,
     pages: Math.max(1, Math.ceil(counted.total / indexPageSize)),
-    comparableOnly: counted.comparables === 1,
-    facets: Object.fromEntries(facetCounts),
-    histograms: Object.fromEntries(bins),
+    comparableOnly,
+    facets: facetCounts,
+    histograms: comparableOnly
+      ? bins
+      : Object.fromEntries(Object.entries(bins).filter(([range]) => !absoluteRanges.some((each) => each === range))),
     from: "database",
   };
 }
