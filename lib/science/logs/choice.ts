@@ -101,10 +101,9 @@ function pickTemperatures(
   ambient: Column | undefined,
   warnings: LogWarning[],
 ) {
-  const open = columns.filter(
-    (column) =>
-      column.quantity === "temperature" && column.kind === "number" && column !== sensor && column !== ambient,
-  );
+  const free = columns.filter((column) => column.kind === "number" && column !== sensor && column !== ambient);
+  const known = free.filter((column) => column.quantity === "temperature");
+  const open = known.length > 0 || sensor || ambient ? known : pairOfUnknown(free);
   const hotFirst = [...open].sort((a, b) => b.sampleMean - a.sampleMean);
   const air =
     ambient ??
@@ -121,6 +120,20 @@ function pickTemperatures(
     });
   }
   return { sensor: hot, ambient: air };
+}
+
+const COUNTER = /^\W*(no|nr|num|index|id|sample|row|count|record|seq|line)\b/i;
+
+/** Two columns of unknown name that could be temperatures by their values, when there are just two. */
+function pairOfUnknown(free: readonly Column[]): readonly Column[] {
+  const could = free.filter(
+    (column) =>
+      column.quantity === undefined &&
+      !column.unit &&
+      !COUNTER.test(column.name) &&
+      Math.abs(column.sampleMean - 75) < 75,
+  );
+  return could.length === 2 && could[0]?.sampleMean !== could[1]?.sampleMean ? could : [];
 }
 
 function coldest(hotFirst: readonly Column[], sensor: Column | undefined): Column | undefined {

@@ -144,5 +144,8 @@ function quantityOf(name: string, kind: Column["kind"], unit: Unit | undefined, 
 
 function isMinutesFirst(name: string, cells: readonly string[]): boolean {
   if (!cells.every((cell) => /^\s*\d+:\d{2}(?:[.,]\d+)?\s*$/.test(cell))) return false;
-  return /mm:ss|m:ss|min:s/i.test(name) || cells.some((cell) => Number(cell.split(":")[0]) > 23);
+  // A count that starts at nothing, or is called one, runs in minutes; a clock of hours has no seconds to show.
+  const counts =
+    /mm:ss|m:ss|min:s|elapsed|duration|dauer|laufzeit|runtime|durée/i.test(name) || /^\s*0+:00/.test(cells[0] ?? "");
+  return counts || cells.some((cell) => Number(cell.split(":")[0]) > 23);
 }

@@ -42,7 +42,7 @@ export interface SteadyResult {
   /** Clauses broken by the shortest window that may be; empty when one was found. */
   readonly broken: readonly Clause[];
   readonly transient: Transient | undefined;
-  /** τ of the fit, or where no approach shows, twice the window (the longest that the window rule lets pass), s. */
+  /** τ of the fit, or where no approach shows, the window itself, so that its whole drift counts, s. */
   readonly tauS: number;
   /** Why the variance ratio was left out; undefined when it was used. */
   readonly withoutRatio: "quantised" | "autocorrelated" | "few-samples" | undefined;
@@ -81,7 +81,7 @@ export function findSteadyWindow(record: SteadyRecord, rule: SteadyRule = HOUSE_
     for (const line of slopes) line?.add(s);
     const [own, ambient, speed] = slopes;
     const spanS = at(timeS, n - 1) - at(timeS, s);
-    const tauS = transient?.fit.tau ?? 2 * spanS;
+    const tauS = transient?.fit.tau ?? spanS;
     if (!own || !ambient || n - s < 4 || spanS < rule.windowMinS || (transient && spanS < tauS / 2)) continue;
     const failed: Clause[] = [];
     if (!(Math.abs(own.slope) + 2 * widen * own.seSlope <= rule.epsilonK / tauS)) failed.push("slope");
@@ -94,7 +94,7 @@ export function findSteadyWindow(record: SteadyRecord, rule: SteadyRule = HOUSE_
     if (!shortestSeen) [broken, shortestSeen] = [failed, true];
   }
   const window = from === undefined ? 0 : at(timeS, n - 1) - at(timeS, from);
-  const tauS = transient?.fit.tau ?? 2 * window;
+  const tauS = transient?.fit.tau ?? window;
   const step = character.quantised ? smallestStep(deltaTK) : undefined;
   return { from, broken: from === undefined ? broken : [], transient, tauS, withoutRatio, step };
 }

@@ -84,3 +84,16 @@ describe("a log's layout", () => {
     }
   });
 });
+
+describe("what is taken as understood", () => {
+  it("reads a count from 0:00 as minutes and seconds, and short names as temperatures", () => {
+    const log = readText("Elapsed,Ts,Ta\n0:00,40,20\n0:05,41,20\n0:10,42,20\n");
+    expect(list(log.timeS)).toEqual([0, 5, 10]);
+    expect([log.chosen.sensor?.name, log.chosen.ambient?.name]).toEqual(["Ts", "Ta"]);
+  });
+  it("guesses two columns of unknown name, and says so", () => {
+    const log = readText("No.,Uhr,Kanal 1,Kanal 2\n1,10:00:00,20.5,50.5\n2,10:00:05,20.5,51\n3,10:00:10,20.5,50\n");
+    expect(list(log.sensorC)).toEqual([50.5, 51, 50]);
+    expect(log.warnings.map(({ code }) => code)).toEqual(expect.arrayContaining(["columns-assumed", "unit-assumed"]));
+  });
+});
