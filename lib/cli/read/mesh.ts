@@ -100,8 +100,8 @@ async function openFile(path: string): Promise<FileHandle> {
   throw new ReadError("file-unreadable", "The file isn't there or can't be read.", path);
 }
 
-/** One buffer serves all readings, so that a large file doesn't pile up garbage. */
-function fileSource(handle: FileHandle, size: number): ByteSource {
+/** An open file as a source. One buffer serves all readings, so that a large file doesn't pile up garbage. */
+export function fileSource(handle: FileHandle, size: number): ByteSource {
   let buffer = new Uint8Array(0);
   return {
     size,

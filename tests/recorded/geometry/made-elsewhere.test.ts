@@ -17,7 +17,7 @@ const folder = mkdtempSync(join(tmpdir(), "fanfold-mesh-"));
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
 const installed = (program: string) => spawnSync(program, ["--version"], { stdio: "ignore" }).error === undefined;
-const notRun = (what: string) => process.stdout.write(`not run: ${what} is not installed\n`);
+const notRun = (what: string): void => void process.stdout.write(`not run: ${what} is not installed\n`);
 
 /** Bytes of a rotor: made now by OpenSCAD, or as OpenSCAD made it when it was recorded. */
 function meshBytes(name: string, program: string): Uint8Array {
