@@ -31,3 +31,13 @@ export async function insertBackground(
     reading_id: check.readingId,
   });
 }
+
+export async function backgroundsOfSession(
+  db: Handle,
+  { sessionId }: { sessionId: string },
+): Promise<{ readingId: string; heated: boolean; durationS: number | null }[]> {
+  return db("background_level")
+    .where({ session_id: sessionId })
+    .orderBy(["at", "id"])
+    .select({ readingId: "reading_id", heated: "heated", durationS: "duration_s" });
+}

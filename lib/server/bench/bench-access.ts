@@ -1,5 +1,5 @@
 import type { Handle } from "@/db/client/connect";
-import { ownsEntry } from "@/db/queries/bench-runs";
+import { ownsEntry } from "@/db/queries/bench-entries";
 import { sessionHead, type SessionHead } from "@/db/queries/bench-sessions";
 import { signingFacts } from "@/db/queries/review";
 import type { Person } from "@/lib/domain/accounts/actor";

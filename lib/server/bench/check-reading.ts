@@ -11,20 +11,27 @@ const spans = {
 /**
  * Refuses what can't be: a temperature outside the sensor's range, ΔT at or under zero with the heat on, a level or
  * speed that no instrument here reads. What is merely bad is kept and shown as such.
+ * @param standing what the run has already, for ΔT
  * @throws ExpectedError impossible (422) naming every field
  */
-export function checkReadings(readings: readonly ReadingInput[], bench: BenchVersionRow): void {
+export function checkReadings(
+  readings: readonly ReadingInput[],
+  bench: BenchVersionRow,
+  standing: readonly { quantity: string; value: number }[] = [],
+): void {
   const fields = readings.flatMap((reading, i): FieldProblem[] => {
     const message = whyImpossible(reading, bench);
     return message ? [{ path: `readings[${i}].value`, message }] : [];
   });
-  const sensor = readings.find((each) => each.quantity === "sensor_c");
-  const ambient = readings.find((each) => each.quantity === "ambient_c");
-  if (sensor && ambient && !(sensor.value > ambient.value)) {
-    const i = readings.indexOf(sensor);
+  const given = (quantity: string) => readings.findIndex((each) => each.quantity === quantity);
+  const of = (quantity: string) =>
+    (readings[given(quantity)] ?? standing.find((each) => each.quantity === quantity))?.value;
+  const [sensor, ambient] = [of("sensor_c"), of("ambient_c")];
+  const at = given("sensor_c") >= 0 ? given("sensor_c") : given("ambient_c");
+  if (at >= 0 && sensor !== undefined && ambient !== undefined && !(sensor > ambient)) {
     fields.push({
-      path: `readings[${i}].value`,
-      message: "is not above the ambient: with the heat on ΔT is above 0 K",
+      path: `readings[${at}].value`,
+      message: "leaves the sensor no warmer than the ambient: with the heat on ΔT is above 0 K",
     });
   }
   if (fields.length > 0)
@@ -33,6 +40,24 @@ export function checkReadings(readings: readonly ReadingInput[], bench: BenchVer
       "Some figures can't be. Nothing was kept; your typing is still here.",
       fields,
     );
+}
+
+/** The same for one value by itself: the field is `value`. */
+export function checkValue(
+  reading: ReadingInput,
+  bench: BenchVersionRow,
+  standing: readonly { quantity: string; value: number }[],
+): void {
+  try {
+    checkReadings([reading], bench, standing);
+  } catch (error) {
+    if (!(error instanceof ExpectedError)) throw error;
+    throw new ExpectedError(
+      error.code,
+      error.detail,
+      error.fields.map(({ message }) => ({ path: "value", message })),
+    );
+  }
 }
 
 function whyImpossible({ quantity, value }: ReadingInput, bench: BenchVersionRow): string | undefined {
@@ -66,4 +91,26 @@ export function checkPlaces(readings: readonly ReadingInput[], positionIds: read
     return [];
   });
   if (fields.length > 0) throw new ExpectedError("malformed", "Some readings don't say where they were taken.", fields);
+}
+
+type Place = { quantity: string; positionId?: string | null; rotorPosition?: number | null };
+const placeOf = ({ quantity, positionId, rotorPosition }: Place): string =>
+  `${quantity} ${quantity === "level_dba" ? positionId : ""} ${quantity === "speed_rpm" ? rotorPosition : ""}`;
+
+/** A run has one standing reading of a kind and place: the next one supersedes it. @throws ExpectedError already_there */
+export function checkTwice(readings: readonly ReadingInput[], standing: readonly Place[]): void {
+  const seen = new Set(standing.map(placeOf));
+  const fields = readings.flatMap((reading, i): FieldProblem[] => {
+    const place = placeOf(reading);
+    if (seen.has(place)) return [{ path: `readings[${i}].value`, message: "is there already: supersede it instead" }];
+    seen.add(place);
+    return [];
+  });
+  if (fields.length > 0) {
+    throw new ExpectedError(
+      "already_there",
+      "The run has such a reading already. Supersede it, with a reason.",
+      fields,
+    );
+  }
 }

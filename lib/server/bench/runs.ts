@@ -1,14 +1,29 @@
 import type { z } from "zod";
 import { appDb } from "@/db/client/handles";
 import type { Handle } from "@/db/client/connect";
-import { benchEntries, changeRun, insertReadings, insertRun, runById, type RunRow } from "@/db/queries/bench-runs";
+import { benchEntries } from "@/db/queries/bench-entries";
+import {
+  changeRun,
+  insertReadings,
+  insertRun,
+  readingsOfSession,
+  runById,
+  runsOfSession,
+  type RunRow,
+} from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf, protocolOf, type SessionHead } from "@/db/queries/bench-sessions";
 import { runQuantities, type NewRun, type ReadingInput, type runReadings, type runState } from "@/lib/contracts/bench";
+import { runLacks } from "@/lib/domain/bench/run-lacks";
 import type { Person } from "@/lib/domain/accounts/actor";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
 import { demandBench, demandNotOwner } from "./bench-access";
-import { checkPlaces, checkReadings, checkSetSpeed } from "./check-reading";
+import { checkPlaces, checkReadings, checkSetSpeed, checkTwice } from "./check-reading";
+
+async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
+  const readings = await readingsOfSession(tx, { sessionId });
+  return readings.filter((each) => each.runId === runId && each.supersededBy === null);
+}
 
 /** Readings as they are stored: a speed goes to the run's rotor, ambient and power to the run. */
 async function storeReadings(
@@ -28,7 +43,9 @@ async function storeReadings(
     readings,
     positions.map((each) => each.id),
   );
-  checkReadings(readings, bench);
+  const standing = await standingOfRun(tx, session.id, runId);
+  checkTwice(readings, standing);
+  checkReadings(readings, bench, standing);
   return insertReadings(
     tx,
     readings.map((each) => ({
@@ -67,6 +84,20 @@ export async function addRun(
     }
     if (entry && !entry.specimenId)
       throw new ExpectedError("moved_on", "No specimen of this entry has passed its spin-up.");
+    const subjectId = entry ? entry.specimenId : session.baselineUnitId;
+    const there = (await runsOfSession(tx, { sessionId })).find(
+      (run) =>
+        (run.specimenId ?? run.baselineUnitId) === subjectId &&
+        run.state !== "discarded" &&
+        run.setSpeed === input.setSpeed &&
+        run.mountNumber === input.mountNumber &&
+        run.repeatNumber === input.repeatNumber,
+    );
+    if (there) {
+      throw new ExpectedError("already_there", `Run ${there.ordinal} is that mount at that set speed already.`, [
+        { path: "mountNumber", message: `is run ${there.ordinal}'s` },
+      ]);
+    }
     const runId = await insertRun(tx, {
       sessionId,
       entryId: entry?.entryId ?? null,
@@ -108,6 +139,23 @@ export async function addRunReadings(
   });
 }
 
+/** @throws ExpectedError malformed while a run lacks a reading that its figures need */
+async function demandWhole(tx: Handle, session: SessionHead, runId: string): Promise<void> {
+  const [protocol, positions, standing] = await Promise.all([
+    protocolOf(tx, { protocolVersionId: session.protocolVersionId }),
+    positionsOf(tx, { benchVersionId: session.benchVersionId }),
+    standingOfRun(tx, session.id, runId),
+  ]);
+  const lacks = runLacks(
+    standing,
+    positions.filter(({ name }) => protocol.positions.includes(name)),
+  );
+  if (lacks.length === 0) return;
+  throw new ExpectedError("malformed", `The run isn't done: it lacks ${lacks.join(", ")}.`, [
+    { path: "state", message: `lacks ${lacks.join(", ")}` },
+  ]);
+}
+
 /** Says that a run is done, held, discarded (each but done with a reason) or open again. */
 export async function setRunState(
   asked: Asked,
@@ -119,7 +167,8 @@ export async function setRunState(
     ]);
   }
   return appDb().transaction(async (tx) => {
-    const { run } = await demandRun(tx, asked, runId);
+    const { run, session } = await demandRun(tx, asked, runId);
+    if (state === "done") await demandWhole(tx, session, runId);
     if (!(await changeRun(tx, { runId, version, state, reason: reason ?? null })))
       throw new ExpectedError("moved_on", movedOn);
     if (state === "held" || state === "discarded") {

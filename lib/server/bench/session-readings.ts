@@ -1,6 +1,6 @@
 import type { z } from "zod";
 import { appDb } from "@/db/client/handles";
-import { insertReadings, readingById } from "@/db/queries/bench-runs";
+import { insertReadings, readingById, readingsOfSession } from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf } from "@/db/queries/bench-sessions";
 import { insertBackground, insertCalibration } from "@/db/queries/bench-checks";
 import { insertHolds, liftHoldRow, holdsOfSession } from "@/db/queries/holds";
@@ -10,7 +10,7 @@ import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
 import { computeSession } from "../results/compute-session";
 import { demandBench, demandNotOwner } from "./bench-access";
-import { checkReadings } from "./check-reading";
+import { checkValue } from "./check-reading";
 
 const units = { calibrator_db: "dB", background_dba: "dB(A)", pressure_pa: "Pa", humidity_percent: "%" } as const;
 const spans = {
@@ -95,7 +95,10 @@ export async function supersedeReading(
     if (cause) await demandNotOwner(tx, person, cause.entryId);
     const bench = await benchVersionOf(tx, { benchVersionId: session.benchVersionId });
     if (old.quantity in { level_dba: 1, sensor_c: 1, ambient_c: 1, delta_t_k: 1, power_w: 1, speed_rpm: 1 }) {
-      checkReadings([{ quantity: old.quantity as "level_dba", value, source: "typed" }], bench);
+      const others = (await readingsOfSession(tx, { sessionId: old.sessionId })).filter(
+        (each) => each.runId === old.runId && each.supersededBy === null && each.id !== readingId,
+      );
+      checkValue({ quantity: old.quantity as "level_dba", value, source: "typed" }, bench, others);
     }
     const [made = ""] = await insertReadings(tx, [
       {

@@ -11,17 +11,8 @@ import { note, type Asked } from "../audit/audit";
 import { demand } from "../permission";
 import { computeSession } from "../results/compute-session";
 import { demandBench, demandRoundWork } from "./bench-access";
+import { checklistItems } from "./cautions";
 import { gateInput } from "./gate-input";
-
-/** What must be ticked before a session starts: the cautions stand where the act is. */
-export const checklistItems = {
-  guard: "Guard in place between the rotor and everybody; nobody stands in the rotor's plane",
-  eyes: "Eye protection on, for spin-up and for every run",
-  cut_out: "Independent thermal cut-out fitted and tried; the heater is never left unattended",
-  hot: "Cooler and heater are hot enough to burn skin: let them cool before a remount",
-  hearing: "Hearing protection at hand: notice from 80 dB(A), protection and time limits near 85 dB(A)",
-  mains: "Mains wiring was done by somebody licensed for it, to the local code",
-} as const;
 
 /**
  * Starts a session of a round on a bench; the round is being measured from then on. One session is open on a bench.

@@ -1,0 +1,80 @@
+import type { Handle } from "@/db/client/connect";
+import { queueRows } from "@/db/queries/bench-queue";
+import { benchEntries, ownedEntries, type BenchEntry } from "@/db/queries/bench-entries";
+import type { RunRow } from "@/db/queries/bench-runs";
+import type { ProtocolRow, SessionHead } from "@/db/queries/bench-sessions";
+import type { BenchSubject } from "@/lib/contracts/bench-session";
+import type { Person } from "@/lib/domain/accounts/actor";
+import { missingRuns } from "@/lib/domain/bench/missing-runs";
+
+/**
+ * What is run in a session: the baseline, then its round's entries that are on the bench or have a run here, each with
+ * the runs that the protocol still asks for. The baseline's two turns are one run at each set speed, first and last.
+ */
+export async function sessionSubjects(
+  db: Handle,
+  {
+    actor,
+    session,
+    protocol,
+    baseline,
+    runs,
+  }: {
+    actor: Person;
+    session: SessionHead;
+    protocol: ProtocolRow;
+    baseline: { name: string; serial: string };
+    runs: readonly RunRow[];
+  },
+): Promise<BenchSubject[]> {
+  const doneOf = (match: (run: RunRow) => boolean) =>
+    runs
+      .filter((run) => run.state === "done" && match(run))
+      .map((run) => ({ setSpeed: run.setSpeed, mount: run.mountNumber }));
+  const first: BenchSubject = {
+    entryId: null,
+    name: `Baseline ${baseline.name} ${baseline.serial}`,
+    state: null,
+    rotors: 1,
+    specimenNumber: null,
+    closed: null,
+    sentBack: null,
+    missing: missingRuns(
+      { ...protocol, mounts: 2, runsPerMount: 1 },
+      doneOf((run) => run.baselineUnitId === session.baselineUnitId),
+    ),
+  };
+  if (!session.roundId) return [first];
+  const [entries, rows, owned] = await Promise.all([
+    benchEntries(db, { roundId: session.roundId }),
+    queueRows(db, { states: ["on_the_bench", "in_review"] }),
+    ownedEntries(db, { roundId: session.roundId, personId: actor.personId }),
+  ]);
+  const here = entries.filter(
+    (entry) => entry.state === "on_the_bench" || runs.some((run) => run.entryId === entry.entryId),
+  );
+  return [
+    first,
+    ...here.map((entry): BenchSubject => ({
+      entryId: entry.entryId,
+      name: `${entry.designName} ${entry.letter}`,
+      state: entry.state,
+      rotors: entry.stages,
+      specimenNumber: entry.specimenNumber,
+      closed: whyClosed(session, entry, owned.includes(entry.entryId)),
+      sentBack: rows.find((row) => row.entryId === entry.entryId)?.sentBack ?? null,
+      missing: missingRuns(
+        protocol,
+        doneOf((run) => run.entryId === entry.entryId && run.specimenId === entry.specimenId),
+      ),
+    })),
+  ];
+}
+
+function whyClosed(session: SessionHead, entry: BenchEntry, owned: boolean): string | null {
+  if (session.endedAt) return "The session is closed.";
+  if (owned) return "You own this entry: another person works its runs.";
+  if (entry.state !== "on_the_bench") return `The entry is ${entry.state.replaceAll("_", " ")}, not on the bench.`;
+  if (!entry.specimenId) return "No printed copy of it has passed its spin-up.";
+  return null;
+}
