@@ -13,3 +13,6 @@ export function keysOf<R extends string>(resource: R) {
 
 export const accountKeys = keysOf("account");
 export const peopleKeys = keysOf("people");
+export const reviewKeys = keysOf("review");
+export const hostKeys = keysOf("host");
+export const myDesignKeys = keysOf("my-designs");

@@ -44,6 +44,8 @@ export const hostOnly = (status: number): Statuses => only(status, "host");
 export const asPage = (statuses: Statuses): Statuses => ({ ...statuses, signedOut: 307, closed: 307 });
 
 const choices = { entry_state: false, questions: false, corrections: false, seasons: false, watched: false };
+/** The id of nothing. */
+const nowhere = "00000000-0000-7000-8000-000000000000";
 const notThis = "this is not the password";
 
 /** Every route × every role. A route that isn't here, or is here and not in the tree, fails the test. */
@@ -81,6 +83,28 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   },
   "GET /api/v1/audit": { expected: hostOnly(200) },
 
+  "GET /api/v1/review/rounds": { expected: signedIn(200) },
+  "GET /api/v1/review/rounds/[id]": {
+    path: ({ roundInReviewId }) => `/api/v1/review/rounds/${roundInReviewId}`,
+    expected: only(200, "operator", "host", "borrower"),
+  },
+  "GET /api/v1/review/rounds/[id]/entries/[entryId]": {
+    path: ({ roundInReviewId, entryInReviewId }) =>
+      `/api/v1/review/rounds/${roundInReviewId}/entries/${entryInReviewId}`,
+    expected: only(200, "operator", "host", "borrower"),
+  },
+  // The operator took the readings; for those who may sign, the digest is not that of what stands.
+  "POST /api/v1/review/rounds/[id]/sign": {
+    path: ({ roundInReviewId }) => `/api/v1/review/rounds/${roundInReviewId}/sign`,
+    body: { expectedSha256: "0".repeat(64) },
+    expected: only(409, "host", "borrower"),
+  },
+  "POST /api/v1/review/rounds/[id]/send-back": {
+    path: ({ roundInReviewId }) => `/api/v1/review/rounds/${roundInReviewId}/send-back`,
+    body: { note: "Look again.", entries: [{ entryId: nowhere, reason: "The background is missing." }] },
+    expected: only(400, "host", "borrower"),
+  },
+
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },
@@ -88,6 +112,15 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "PAGE /reset": { expected: all(200) },
   "PAGE /reset/new": { path: () => "/reset/new?token=x", expected: all(200) },
   "PAGE /my/account": { expected: asPage(signedIn(200)) },
+  "PAGE /review": { expected: asPage(signedIn(200)) },
+  "PAGE /review/[roundId]": {
+    path: ({ roundInReviewId }) => `/review/${roundInReviewId}`,
+    expected: asPage(only(200, "operator", "host", "borrower")),
+  },
+  "PAGE /review/[roundId]/[entryId]": {
+    path: ({ roundInReviewId, entryInReviewId }) => `/review/${roundInReviewId}/${entryInReviewId}`,
+    expected: asPage(only(200, "operator", "host", "borrower")),
+  },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
   "PAGE /demo/mail": { expected: all(200) },
 };

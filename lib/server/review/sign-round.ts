@@ -1,26 +1,19 @@
 import { appDb } from "@/db/client/handles";
 import { moveEntries, moveRound } from "@/db/queries/moves";
-import { insertReview, openHolds, openSessions, signingFacts } from "@/db/queries/review";
+import { insertReview } from "@/db/queries/review";
 import { roundContext } from "@/db/queries/round-context";
 import type { Handle } from "@/db/client/connect";
 import { isPerson, type Person } from "@/lib/domain/accounts/actor";
-import { whyNotSign, type SigningRefusal } from "@/lib/domain/accounts/signing";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
+import { personObstacle, roundObstacles, signingRefusals } from "./obstacles";
 import { roundDigest } from "./round-digest";
-
-const refusals: Record<SigningRefusal, string> = {
-  signed_out: "Sign in first, then try again.",
-  not_lent: "This round was not lent to you for review.",
-  took_a_reading: "You took or typed a reading of this round: another person signs it.",
-  owned_an_entry: "You own or owned an entry of this round: another person signs it.",
-};
 
 /** @throws ExpectedError when the actor may not sign this round, with the reason in words */
 export async function demandSigner(db: Handle, { actor }: Asked, roundId: string): Promise<Person> {
-  if (!isPerson(actor)) throw new ExpectedError("not_signed_in", refusals.signed_out);
-  const refusal = whyNotSign(actor, await signingFacts(db, { roundId, personId: actor.personId }));
-  if (refusal) throw new ExpectedError("forbidden", refusals[refusal]);
+  if (!isPerson(actor)) throw new ExpectedError("not_signed_in", signingRefusals.signed_out);
+  const refusal = await personObstacle(db, actor, roundId);
+  if (refusal) throw new ExpectedError("forbidden", refusal);
   return actor;
 }
 
@@ -38,16 +31,8 @@ export async function signRound(
   return db.transaction(async (tx) => {
     const round = await roundContext(tx, { roundId, lock: true });
     const reviewer = await demandSigner(tx, asked, roundId);
-    if (round.state !== "in_review") throw new ExpectedError("moved_on", `The round is ${round.state}, not in review.`);
-    const [held] = await openHolds(tx, { roundId });
-    if (held)
-      throw new ExpectedError(
-        "moved_on",
-        `A session of this round is held: ${held.reason}. Another person lifts it first.`,
-      );
-    if ((await openSessions(tx, { roundId })).length > 0) {
-      throw new ExpectedError("moved_on", "A session of this round is still open at the bench.");
-    }
+    const [obstacle] = await roundObstacles(tx, round);
+    if (obstacle) throw new ExpectedError("moved_on", obstacle);
     const sha256 = await roundDigest(tx, round);
     if (expectedSha256 !== undefined && expectedSha256 !== sha256) {
       throw new ExpectedError("moved_on", "Something in the round changed since you opened it. Look at it again.");

@@ -11,6 +11,7 @@ export interface MatrixFacts {
   seasonSlug: string;
   benchId: string;
   roundInReviewId: string;
+  entryInReviewId: string;
   roundInWorkId: string;
   /** The session of the round in review, and that of the round in work where there is one. */
   sessionId: string;
@@ -28,6 +29,8 @@ const questions: Record<keyof MatrixFacts, string> = {
   seasonSlug: `select slug as value from season order by slug limit 1`,
   benchId: `select id as value from bench limit 1`,
   roundInReviewId: `select id as value from round where state = 'in_review' limit 1`,
+  entryInReviewId: `select re.entry_id as value from round_entry re join round n on n.id = re.round_id
+    where n.state = 'in_review' and re.taken_out_at is null order by re.entry_id limit 1`,
   roundInWorkId: `select id as value from round where state = 'measuring' limit 1`,
   sessionId: `select id as value from session order by began_at desc limit 1`,
 };
