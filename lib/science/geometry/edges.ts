@@ -46,16 +46,16 @@ function find(parents: Int32Array, triangle: number): number {
 }
 
 /** The triangles at the edge between `v` and `other`, from the run of half-edges of the lower one, `v`. */
-function usesOf(triangles: Uint32Array, parents: Int32Array, run: Int32Array, v: number, other: number): EdgeUse[] {
+function usesOf(triangles: Uint32Array, sorted: SortedHalfEdges, from: number, to: number, other: number): EdgeUse[] {
   const out: EdgeUse[] = [];
-  for (const h of run) {
-    const triangle = (h / 3) | 0;
-    const corner = h % 3;
-    const tail = triangles[h] ?? 0;
-    const head = triangles[3 * triangle + ((corner + 1) % 3)] ?? 0;
-    if (parents[triangle] === -1 || Math.max(tail, head) !== other) continue;
-    out.push({ triangle, forward: tail === v, opposite: triangles[3 * triangle + ((corner + 2) % 3)] ?? 0 });
-    if (out.length > CROWD_MAX) break;
+  for (let e = from; e < to && out.length <= CROWD_MAX; e++) {
+    const code = sorted.codes[e] ?? 0;
+    if (code >> 1 !== other) continue;
+    const triangle = sorted.owners[e] ?? 0;
+    const forward = (code & 1) === 1;
+    const corner = [0, 1, 2].find((c) => triangles[3 * triangle + c] === other) ?? 0;
+    // Along the triangle the third corner follows the edge's head.
+    out.push({ triangle, forward, opposite: triangles[3 * triangle + ((corner + (forward ? 1 : 2)) % 3)] ?? 0 });
   }
   return out;
 }
@@ -67,23 +67,47 @@ function join(parents: Int32Array, s: number, t: number): void {
   if (a !== b) parents[Math.max(a, b)] = Math.min(a, b);
 }
 
-/** Half-edges sorted by their lower vertex: where each vertex's run starts, and the half-edges (3 × triangle + corner). */
-function sortHalfEdges(triangles: Uint32Array, vertices: number): { starts: Int32Array; halfEdges: Int32Array } {
+/** Half-edges sorted by their lower vertex: where each vertex's run starts, and what each half-edge is. */
+interface SortedHalfEdges {
+  readonly starts: Int32Array;
+  /** 2 × higher vertex, and 1 more when the half-edge runs from the lower vertex to it. */
+  readonly codes: Int32Array;
+  readonly owners: Int32Array;
+}
+
+function sortHalfEdges(triangles: Uint32Array, parents: Int32Array, vertices: number): SortedHalfEdges {
   const starts = new Int32Array(vertices + 2);
-  const lower = (h: number): number => {
-    const next = h % 3 === 2 ? h - 2 : h + 1;
-    return Math.min(triangles[h] ?? 0, triangles[next] ?? 0);
-  };
-  for (let h = 0; h < triangles.length; h++) starts[lower(h) + 2] = (starts[lower(h) + 2] ?? 0) + 1;
-  for (let v = 2; v < starts.length; v++) starts[v] = (starts[v] ?? 0) + (starts[v - 1] ?? 0);
-  const halfEdges = new Int32Array(triangles.length);
-  for (let h = 0; h < triangles.length; h++) {
-    const slot = lower(h) + 1;
-    const position = starts[slot] ?? 0;
-    halfEdges[position] = h;
-    starts[slot] = position + 1;
+  let used = 0;
+  for (let t = 0; t < parents.length; t++) {
+    if (parents[t] === -1) continue;
+    const a = triangles[3 * t] ?? 0;
+    const b = triangles[3 * t + 1] ?? 0;
+    const c = triangles[3 * t + 2] ?? 0;
+    const ab = (a < b ? a : b) + 2;
+    const bc = (b < c ? b : c) + 2;
+    const ca = (c < a ? c : a) + 2;
+    starts[ab] = (starts[ab] ?? 0) + 1;
+    starts[bc] = (starts[bc] ?? 0) + 1;
+    starts[ca] = (starts[ca] ?? 0) + 1;
+    used += 3;
   }
-  return { starts, halfEdges };
+  for (let v = 2; v < starts.length; v++) starts[v] = (starts[v] ?? 0) + (starts[v - 1] ?? 0);
+  const codes = new Int32Array(used);
+  const owners = new Int32Array(used);
+  for (let t = 0; t < parents.length; t++) {
+    if (parents[t] === -1) continue;
+    let tail = triangles[3 * t + 2] ?? 0;
+    for (let corner = 0; corner < 3; corner++) {
+      const head = triangles[3 * t + corner] ?? 0;
+      const slot = (tail < head ? tail : head) + 1;
+      const position = starts[slot] ?? 0;
+      codes[position] = tail < head ? 2 * head + 1 : 2 * tail;
+      owners[position] = t;
+      starts[slot] = position + 1;
+      tail = head;
+    }
+  }
+  return { starts, codes, owners };
 }
 
 /**
@@ -94,7 +118,6 @@ function sortHalfEdges(triangles: Uint32Array, vertices: number): { starts: Int3
 export function edgeReport(mesh: Mesh): EdgeReport {
   const { triangles } = mesh;
   const vertices = mesh.positions.length / 3;
-  const { starts, halfEdges } = sortHalfEdges(triangles, vertices);
   const count = triangles.length / 3;
   const parents = new Int32Array(count);
   let degenerateTriangles = 0;
@@ -106,15 +129,15 @@ export function edgeReport(mesh: Mesh): EdgeReport {
     parents[t] = degenerate ? -1 : t;
     if (degenerate) degenerateTriangles++;
   }
-  const stamp = new Int32Array(vertices).fill(-1);
-  const forward = new Int32Array(vertices);
-  const backward = new Int32Array(vertices);
-  const firstTriangle = new Int32Array(vertices);
-  const lastTriangle = new Int32Array(vertices);
+  const sorted = sortHalfEdges(triangles, parents, vertices);
+  const { starts, codes, owners } = sorted;
+  // For the higher vertex of each edge of a run: lower vertex + 1, uses forward, uses backward, first and last owner.
+  const tally = new Int32Array(5 * vertices);
+  const ends: number[] = [];
   const places: FaultPlace[] = [];
   let pairingWork = 0;
   let [edges, openEdges, misorientedEdges, nonManifoldEdges] = [0, 0, 0, 0];
-  const note = (kind: FaultPlace["kind"], v: number, w: number) => {
+  const note = (kind: FaultPlace["kind"], v: number, w: number): void => {
     if (places.length >= PLACES_MAX) return;
     const [p, q] = [vertexAt(mesh, v), vertexAt(mesh, w)];
     places.push({ kind, pointMm: [(p[0] + q[0]) / 2, (p[1] + q[1]) / 2, (p[2] + q[2]) / 2] });
@@ -122,34 +145,27 @@ export function edgeReport(mesh: Mesh): EdgeReport {
   for (let v = 0; v < vertices; v++) {
     const from = starts[v] ?? 0;
     const to = starts[v + 1] ?? 0;
+    ends.length = 0;
     for (let e = from; e < to; e++) {
-      const h = halfEdges[e] ?? 0;
-      const t = (h / 3) | 0;
-      if (parents[t] === -1) continue;
-      const tail = triangles[h] ?? 0;
-      const head = triangles[h % 3 === 2 ? h - 2 : h + 1] ?? 0;
-      const other = tail === v ? head : tail;
-      if (stamp[other] !== v) {
-        stamp[other] = v;
-        forward[other] = 0;
-        backward[other] = 0;
-        firstTriangle[other] = t;
-        edges++;
+      const code = codes[e] ?? 0;
+      const record = 5 * (code >> 1);
+      if (tally[record] !== v + 1) {
+        tally[record] = v + 1;
+        tally[record + 1] = 0;
+        tally[record + 2] = 0;
+        tally[record + 3] = owners[e] ?? 0;
+        ends.push(code >> 1);
       }
-      const side = tail === v ? forward : backward;
-      side[other] = (side[other] ?? 0) + 1;
-      lastTriangle[other] = t;
+      const side = record + 2 - (code & 1);
+      tally[side] = (tally[side] ?? 0) + 1;
+      tally[record + 4] = owners[e] ?? 0;
     }
-    for (let e = from; e < to; e++) {
-      const h = halfEdges[e] ?? 0;
-      if (parents[(h / 3) | 0] === -1) continue;
-      const tail = triangles[h] ?? 0;
-      const other = tail === v ? (triangles[h % 3 === 2 ? h - 2 : h + 1] ?? 0) : tail;
-      if (stamp[other] !== v) continue;
-      stamp[other] = -1;
-      const f = forward[other] ?? 0;
-      const b = backward[other] ?? 0;
-      if (f + b === 2) join(parents, firstTriangle[other] ?? 0, lastTriangle[other] ?? 0);
+    edges += ends.length;
+    for (const other of ends) {
+      const record = 5 * other;
+      const f = tally[record + 1] ?? 0;
+      const b = tally[record + 2] ?? 0;
+      if (f + b === 2) join(parents, tally[record + 3] ?? 0, tally[record + 4] ?? 0);
       if (f === 1 && b === 1) continue;
       const rest = Math.abs(f - b);
       if (rest % 2 === 1) {
@@ -165,8 +181,8 @@ export function edgeReport(mesh: Mesh): EdgeReport {
         note("non-manifold", v, other);
         pairingWork += to - from;
         if (pairingWork > PAIRING_WORK_MAX) continue;
-        const uses = usesOf(triangles, parents, halfEdges.subarray(from, to), v, other);
-        if (uses.length <= CROWD_MAX) for (const [a, b] of pairAroundEdge(mesh, v, other, uses)) join(parents, a, b);
+        const uses = usesOf(triangles, sorted, from, to, other);
+        if (uses.length <= CROWD_MAX) for (const [a, c] of pairAroundEdge(mesh, v, other, uses)) join(parents, a, c);
       }
     }
   }

@@ -7,8 +7,8 @@ const INITIAL_CAPACITY = 1024;
  */
 export class VertexWeld {
   private positions: Float64Array;
-  private table = new Int32Array(2 * INITIAL_CAPACITY);
-  private mask = 2 * INITIAL_CAPACITY - 1;
+  private table: Int32Array;
+  private mask: number;
   private count = 0;
   private readonly bits = new Int32Array(3);
   private readonly floats = new Float32Array(this.bits.buffer);
@@ -16,6 +16,10 @@ export class VertexWeld {
   /** @param expectedVertices first guess of the number of vertices; the store grows when it is passed */
   constructor(expectedVertices = INITIAL_CAPACITY) {
     this.positions = new Float64Array(3 * Math.max(16, Math.ceil(expectedVertices)));
+    let slots = 2 * INITIAL_CAPACITY;
+    while (slots < 2 * expectedVertices) slots *= 2;
+    this.table = new Int32Array(slots);
+    this.mask = slots - 1;
   }
 
   /** Number of the vertex at x, y, z; a new one where none was there. */
