@@ -12,11 +12,9 @@ export async function gateInput(db: Handle, { sessionId }: { sessionId: string }
   const session = await sessionHead(db, { sessionId });
   const [record] = await sessionRecords(db, { sessionIds: [sessionId] });
   if (!session || !record) throw new Error(`no session ${sessionId}`);
-  const [protocol, bench, readings] = await Promise.all([
-    protocolOf(db, { protocolVersionId: session.protocolVersionId }),
-    benchVersionOf(db, { benchVersionId: session.benchVersionId }),
-    readingsOfSession(db, { sessionId }),
-  ]);
+  const protocol = await protocolOf(db, { protocolVersionId: session.protocolVersionId });
+  const bench = await benchVersionOf(db, { benchVersionId: session.benchVersionId });
+  const readings = await readingsOfSession(db, { sessionId });
   const standing = readings.filter((reading) => reading.supersededBy === null);
   const nameOf = (positionId: string | null) => record.positions.find((each) => each.id === positionId)?.name ?? "";
   const { subjects } = sessionPoints(record, protocolPositionIds(record));

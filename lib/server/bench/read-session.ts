@@ -49,7 +49,7 @@ export async function readSession(actor: Actor, { sessionId }: { sessionId: stri
   ]);
   const people = await peopleOf(db, session, runs, readings, holds);
   const used = positions.filter(({ name }) => protocol.positions.includes(name));
-  const { id: _protocolId, ...protocolShown } = protocol;
+  const { id: _protocol, positions: _names, ...protocolShown } = protocol;
   return {
     id: session.id,
     number: session.number,

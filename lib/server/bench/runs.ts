@@ -35,10 +35,8 @@ async function storeReadings(
     readings,
   }: { session: SessionHead; runId: string; person: Person; readings: readonly ReadingInput[] },
 ): Promise<string[]> {
-  const [bench, positions] = await Promise.all([
-    benchVersionOf(tx, { benchVersionId: session.benchVersionId }),
-    positionsOf(tx, { benchVersionId: session.benchVersionId }),
-  ]);
+  const bench = await benchVersionOf(tx, { benchVersionId: session.benchVersionId });
+  const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
   checkPlaces(
     readings,
     positions.map((each) => each.id),
@@ -141,11 +139,9 @@ export async function addRunReadings(
 
 /** @throws ExpectedError malformed while a run lacks a reading that its figures need */
 async function demandWhole(tx: Handle, session: SessionHead, runId: string): Promise<void> {
-  const [protocol, positions, standing] = await Promise.all([
-    protocolOf(tx, { protocolVersionId: session.protocolVersionId }),
-    positionsOf(tx, { benchVersionId: session.benchVersionId }),
-    standingOfRun(tx, session.id, runId),
-  ]);
+  const protocol = await protocolOf(tx, { protocolVersionId: session.protocolVersionId });
+  const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
+  const standing = await standingOfRun(tx, session.id, runId);
   const lacks = runLacks(
     standing,
     positions.filter(({ name }) => protocol.positions.includes(name)),

@@ -1,5 +1,6 @@
 import type { z } from "zod";
 import { appDb } from "@/db/client/handles";
+import type { Handle } from "@/db/client/connect";
 import { insertReadings, readingById, readingsOfSession } from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf } from "@/db/queries/bench-sessions";
 import { insertBackground, insertCalibration } from "@/db/queries/bench-checks";
@@ -9,6 +10,7 @@ import type { SessionReading, supersede as supersedeSchema } from "@/lib/contrac
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
 import { computeSession } from "../results/compute-session";
+import { returnSignedRound } from "../review/return-to-review";
 import { demandBench, demandNotOwner } from "./bench-access";
 import { checkValue } from "./check-reading";
 
@@ -100,6 +102,7 @@ export async function supersedeReading(
       );
       checkValue({ quantity: old.quantity as "level_dba", value, source: "typed" }, bench, others);
     }
+    await changeWhatWasSigned(tx, session.roundId, reason);
     const [made = ""] = await insertReadings(tx, [
       {
         sessionId: old.sessionId,
@@ -127,6 +130,15 @@ export async function supersedeReading(
     });
     return { readingId: made };
   });
+}
+
+/** A signed or scheduled round goes back to review before its readings change. @throws ExpectedError once published */
+async function changeWhatWasSigned(tx: Handle, roundId: string | null, reason: string): Promise<void> {
+  if (roundId === null) return;
+  const state = await returnSignedRound(tx, { roundId, reason: `A reading changed: ${reason}`, at: new Date() });
+  if (state === "published") {
+    throw new ExpectedError("moved_on", "The round is published: a reading of it changes by a correction.");
+  }
 }
 
 /** Holds a session by hand, with a reason. */

@@ -1,5 +1,5 @@
 import { appDb } from "@/db/client/handles";
-import { changeSession, endSessionRow, insertSession, setupOf } from "@/db/queries/bench-sessions";
+import { changeSession, endSessionRow, insertSession, listSessions, setupOf } from "@/db/queries/bench-sessions";
 import { insertHolds } from "@/db/queries/holds";
 import { moveRound } from "@/db/queries/moves";
 import { roundContext } from "@/db/queries/round-context";
@@ -50,6 +50,8 @@ export async function startSession(
         [{ path: "benchVersionId", message: "is not of the season, or the baseline unit is not" }],
       );
     }
+    const there = (await listSessions(tx, { open: true })).find((each) => each.benchId === setup.benchId);
+    if (there) throw new ExpectedError("moved_on", `Session ${there.number} is open on this bench: end it first.`);
     const sessionId = await insertSession(tx, {
       ...setup,
       benchVersionId: input.benchVersionId,

@@ -18,12 +18,10 @@ export async function whyNotReview(db: Handle, row: QueueRow): Promise<string[]>
   const session = await sessionHead(db, { sessionId: row.sessionId });
   const [record] = await sessionRecords(db, { sessionIds: [row.sessionId] });
   if (!session || !record) return ["Its session is not there."];
-  const [protocol, runs, holds, entries] = await Promise.all([
-    protocolOf(db, { protocolVersionId: session.protocolVersionId }),
-    runsOfSession(db, { sessionId: session.id }),
-    holdsOfSession(db, { sessionId: session.id }),
-    benchEntries(db, { roundId: row.roundId }),
-  ]);
+  const protocol = await protocolOf(db, { protocolVersionId: session.protocolVersionId });
+  const runs = await runsOfSession(db, { sessionId: session.id });
+  const holds = await holdsOfSession(db, { sessionId: session.id });
+  const entries = await benchEntries(db, { roundId: row.roundId });
   const specimenId = entries.find((each) => each.entryId === row.entryId)?.specimenId;
   const why: string[] = [];
   if (!session.endedAt) why.push(`Session ${session.number} is still open: end it first.`);
