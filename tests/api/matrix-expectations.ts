@@ -105,6 +105,27 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     expected: only(400, "host", "borrower"),
   },
 
+  "GET /api/v1/sheets/[slug]": {
+    path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}`,
+    expected: all(200),
+  },
+  "GET /api/v1/sheets/[slug]/readings": {
+    path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings`,
+    expected: all(200),
+  },
+  "GET /api/v1/sheets/[slug]/readings.csv": {
+    path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings.csv`,
+    expected: all(200),
+  },
+  "PAGE /designs/[slug]": {
+    path: ({ publishedDesignSlug }) => `/designs/${publishedDesignSlug}`,
+    expected: all(200),
+  },
+  "PAGE /designs/[slug]/[letter]": {
+    path: ({ publishedDesignSlug }) => `/designs/${publishedDesignSlug}/a`,
+    expected: all(200),
+  },
+
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },

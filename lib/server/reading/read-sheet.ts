@@ -44,6 +44,7 @@ export async function readSheet({ slug, entryId }: { slug: string; entryId?: str
       .map(({ number, sha256, publishedAt }) => ({ number, sha256, publishedAt })),
     snapshot: snapshotSchema.parse(publication.snapshot),
     baselineUnit: units.find((unit) => unit.unitId === current.baselineUnitId) ?? null,
+    units,
     revisions,
     history,
     corrections,

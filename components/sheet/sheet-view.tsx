@@ -1,0 +1,35 @@
+import { ClipBar } from "@/components/shell/clip-bar";
+import type { Sheet } from "@/lib/contracts/sheet";
+import { BudgetSection } from "./budget-section";
+import { CoolingSection } from "./cooling-section";
+import { FourFigures } from "./four-figures";
+import { HistorySection } from "./history-section";
+import { OffAxis } from "./off-axis";
+import { PrintSection } from "./print-section";
+import { QuestionsSection } from "./questions-section";
+import { ReadingsSection } from "./readings-section";
+import { SheetHead } from "./sheet-head";
+import { sheetNumber } from "./sheet-words";
+import { TakeOut } from "./take-out";
+
+/** A design's sheet, piece by piece; a piece without data (off axis, budget) is absent. */
+export function SheetView({ sheet }: { sheet: Sheet }) {
+  return (
+    <article aria-labelledby="sheet-title">
+      <SheetHead sheet={sheet} />
+      <FourFigures sheet={sheet} />
+      <CoolingSection sheet={sheet} />
+      <ReadingsSection sheet={sheet} />
+      <OffAxis sheet={sheet} />
+      <BudgetSection sheet={sheet} />
+      <HistorySection sheet={sheet} />
+      <PrintSection sheet={sheet} />
+      <QuestionsSection sheet={sheet} />
+      <TakeOut sheet={sheet} />
+      <p className="print-only docket">
+        {sheetNumber(sheet.number)} · method {sheet.methodVersion} · publication {sheet.publication.number}
+      </p>
+      <ClipBar names={{ [sheet.entryId]: `${sheet.name} ${sheet.letter}` }} />
+    </article>
+  );
+}

@@ -1,0 +1,145 @@
+import type { Handle } from "../../client/connect";
+
+export interface WithdrawalRow {
+  entryId: string;
+  reason: string;
+  at: Date;
+  name: string;
+  letter: string;
+}
+
+/** Stubs of a design's withdrawn entries, the newest first; empty for none. */
+export async function shownWithdrawals(db: Handle, { slug }: { slug: string }): Promise<WithdrawalRow[]> {
+  return db("shown.withdrawal")
+    .where({ design_slug: slug })
+    .orderBy("at", "desc")
+    .select({ entryId: "entry_id", reason: "reason", at: "at", name: "design_name", letter: "revision_letter" });
+}
+
+export interface ShownProtocolRow {
+  name: string;
+  version: number;
+  heatLoadW: number;
+  setting: string;
+  setSpeeds: number[];
+  positions: string[];
+  mounts: number;
+  runsPerMount: number;
+  backgroundGrade: "engineering" | "survey";
+  epsilonK: number;
+  ambientMinC: number;
+  ambientMaxC: number;
+  ambientDriftMaxK: number;
+  calibratorDriftMaxDb: number;
+  levelAverageS: number;
+}
+
+/** A protocol version that a season uses, by id. */
+export async function shownProtocol(
+  db: Handle,
+  { protocolVersionId }: { protocolVersionId: string },
+): Promise<ShownProtocolRow | undefined> {
+  return db("shown.protocol_version").where({ id: protocolVersionId }).first({
+    name: "protocol_name",
+    version: "number",
+    heatLoadW: "heat_load_w",
+    setting: "setting",
+    setSpeeds: "set_speeds",
+    positions: "positions",
+    mounts: "mounts",
+    runsPerMount: "runs_per_mount",
+    backgroundGrade: "background_grade",
+    epsilonK: "epsilon_k",
+    ambientMinC: "ambient_min_c",
+    ambientMaxC: "ambient_max_c",
+    ambientDriftMaxK: "ambient_drift_max_k",
+    calibratorDriftMaxDb: "calibrator_drift_max_db",
+    levelAverageS: "level_average_s",
+  });
+}
+
+export interface EntryRankRow {
+  roundId: string | null;
+  number: number;
+  asOf: Date;
+  rank: number | null;
+  low: number | null;
+  high: number | null;
+  whyNotRanked: string | null;
+  of: number;
+}
+
+/** An entry's places in all standings of its season under one rule, the oldest first; `of` counts those ranked. */
+export async function shownRanksOfEntry(
+  db: Handle,
+  { entryId, seasonId, ruleVersionId }: { entryId: string; seasonId: string; ruleVersionId: string },
+): Promise<EntryRankRow[]> {
+  return db("shown.standing_row as r")
+    .join("shown.standing as t", "t.id", "r.standing_id")
+    .where({ "r.entry_id": entryId, "t.season_id": seasonId, "t.rule_version_id": ruleVersionId })
+    .orderBy("t.number")
+    .select({
+      roundId: "t.round_id",
+      number: "t.number",
+      asOf: "t.as_of",
+      rank: "r.rank",
+      low: "r.rank_low",
+      high: "r.rank_high",
+      whyNotRanked: "r.why_not_ranked",
+      of: db.raw(
+        "(select count(*)::int from shown.standing_row o where o.standing_id = r.standing_id and o.rank is not null)",
+      ),
+    });
+}
+
+export interface SpecimenRow {
+  number: number;
+  material: string;
+  layerHeightMm: number | null;
+  nozzleMm: number | null;
+  infillPercent: number | null;
+  walls: number | null;
+  note: string;
+}
+
+/** Printed copies that were measured, by id. */
+export async function shownSpecimens(
+  db: Handle,
+  { specimenIds }: { specimenIds: readonly string[] },
+): Promise<SpecimenRow[]> {
+  return db("shown.specimen")
+    .whereIn("id", [...specimenIds])
+    .orderBy("number")
+    .select({
+      number: "number",
+      material: "material",
+      layerHeightMm: "layer_height_mm",
+      nozzleMm: "nozzle_mm",
+      infillPercent: "infill_percent",
+      walls: "walls",
+      note: "note",
+    });
+}
+
+export interface AttachmentRow {
+  fileId: string;
+  name: string;
+  role: string;
+  bytes: number;
+  sha256: string;
+  takenDownAt: Date | null;
+  reason: string | null;
+}
+
+/** Files of a public revision in their order; those taken down keep name, hash, date and reason. */
+export async function shownAttachments(db: Handle, { revisionId }: { revisionId: string }): Promise<AttachmentRow[]> {
+  return db("shown.attachment").where({ revision_id: revisionId }).orderBy(["ordinal", "id"]).select({
+    fileId: "file_id",
+    name: "name",
+    role: "role",
+    bytes: "bytes",
+    sha256: "sha256",
+    takenDownAt: "taken_down_at",
+    reason: "reason",
+  });
+}
