@@ -107,7 +107,6 @@ export const packageHomes: Record<string, string[]> = {
   "smtp-server": ["lib/services/mail/"],
   "@aws-sdk/client-s3": ["lib/services/storage/"],
   meilisearch: ["search/"],
-  minisearch: ["search/stand-in/"],
   "next-auth": ["lib/auth/", "app/api/auth/", "lib/client/"],
   "chart.js": ["components/charts/"],
   "react-chartjs-2": ["components/charts/"],
