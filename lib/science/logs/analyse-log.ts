@@ -2,7 +2,13 @@ import { lagOneCorrelation } from "../statistics/autocorrelation";
 import { at, mean, median, sampleSd } from "../statistics/descriptive";
 import { deltaTSeries } from "../thermal/resistance";
 import { driftOver, steadyMean } from "../thermal/steady-mean";
-import { findSteadyWindow, HOUSE_RULE, type Clause, type SteadyResult } from "../thermal/steady-window";
+import {
+  findSteadyWindow,
+  HOUSE_RULE,
+  type Clause,
+  type SteadyResult,
+  type SteadyRule,
+} from "../thermal/steady-window";
 import type { LogWarning } from "./choice";
 import type { ReadLog } from "./log-reader";
 import type { RefusedRow } from "./refused-rows";
@@ -35,11 +41,16 @@ export interface TemperatureReport {
  * ambient; its u holds scatter over n_eff, the rest of the approach and a display's step. Ambient and drift are those of the window,
  * of the whole record where none was found. The level is the energy mean of its rows.
  * @param log rows in base units @param epsilonK largest rest of the approach that may be left (house value 0.1 K)
+ * @param ambientDriftMaxK largest change of the ambient within the window (house value 0.2 K); both are a protocol's
  */
-export function analyseLog(log: ReadLog, epsilonK: number = HOUSE_RULE.epsilonK): LogReport {
+export function analyseLog(
+  log: ReadLog,
+  epsilonK: number = HOUSE_RULE.epsilonK,
+  ambientDriftMaxK: number = HOUSE_RULE.ambientDriftMaxK,
+): LogReport {
   const warnings = [...log.warnings];
   const intervalS = intervalOf(log.timeS, warnings);
-  const temperature = temperatureOf(log, epsilonK, warnings);
+  const temperature = temperatureOf(log, { ...HOUSE_RULE, epsilonK, ambientDriftMaxK }, warnings);
   return {
     kind: "log",
     rows: log.rows,
@@ -94,7 +105,7 @@ function levelOf(log: ReadLog, warnings: LogWarning[]): LogReport["level"] {
   };
 }
 
-function temperatureOf(log: ReadLog, epsilonK: number, warnings: LogWarning[]): TemperatureReport | null {
+function temperatureOf(log: ReadLog, rule: SteadyRule, warnings: LogWarning[]): TemperatureReport | null {
   const { sensor, ambient } = log.chosen;
   if (!sensor || !log.sensorC) return null;
   if (!ambient || !log.ambientC) {
@@ -116,7 +127,7 @@ function temperatureOf(log: ReadLog, epsilonK: number, warnings: LogWarning[]): 
   const rise = deltaTSeries(pick(sensorC), air);
   const speeds = speedRpm && pick(speedRpm);
   const usable = speeds?.every((value) => value > 0) ? { speedRpm: speeds } : {};
-  const found = findSteadyWindow({ timeS: time, deltaTK: rise, ambientC: air, ...usable }, { ...HOUSE_RULE, epsilonK });
+  const found = findSteadyWindow({ timeS: time, deltaTK: rise, ambientC: air, ...usable }, rule);
   const fit = found.transient ? { finalK: found.transient.fit.final, tauS: found.transient.fit.tau } : null;
   if (found.from === undefined) {
     const steady = { found: false, fromS: null, toS: null, how: howNot(found) };

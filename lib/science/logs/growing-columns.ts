@@ -22,6 +22,11 @@ export class GrowingColumns {
     }
   }
 
+  /** Takes the last row back. */
+  dropLast(): void {
+    this.rows = Math.max(0, this.rows - 1);
+  }
+
   /** The columns as far as they are filled; no copy. */
   columns(): Float64Array[] {
     return this.data.map((column) => column.subarray(0, this.rows));

@@ -132,7 +132,8 @@ function collect(
     warnings.push({ code: "remarks", message: `${machine.remarks} rows of remarks were passed over` });
   if (machine.missing > 0)
     warnings.push({ code: "empty-cells", message: `${machine.missing} empty cells were left out` });
-  const { kept, count } = machine.refused;
+  const { count } = machine.refused;
+  const kept = [...machine.refused.kept].sort((a, b) => a.line - b.line);
   return {
     columns,
     chosen,

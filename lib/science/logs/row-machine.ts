@@ -34,6 +34,8 @@ export class RowMachine {
   private line = 0;
   private skipping = false;
   private lastTime = -Infinity;
+  private timeBefore = -Infinity;
+  private lastLine = 0;
   private dayS = 0;
   missing = 0;
   remarks = 0;
@@ -245,6 +247,13 @@ export class RowMachine {
 
   /** Checks the row as a whole and keeps it. */
   private commit(line: number): void {
+    for (let slot = 0; slot < this.reads.length; slot++) {
+      const value = this.row[slot] ?? Number.NaN;
+      if (value < -273.15 && this.reads[slot]?.column.quantity === "temperature") {
+        this.refused.add(line, `${this.reads[slot]?.column.name}: below absolute zero`);
+        return;
+      }
+    }
     if (this.timed) {
       const clock = this.reads[0]?.column.kind === "clock";
       let time = (this.row[0] ?? Number.NaN) + this.dayS;
@@ -253,21 +262,20 @@ export class RowMachine {
         this.dayS += 86_400;
         time += 86_400;
       }
-      if (time < this.lastTime) {
+      if (time < this.timeBefore || (time < this.lastTime && this.table.rows < 2)) {
         this.refused.add(line, "the time goes back");
         return;
       }
+      // In order with the row before the last, but not with the last: that one had jumped ahead.
+      if (time < this.lastTime) {
+        this.table.dropLast();
+        this.refused.add(this.lastLine, "the time jumps ahead of the rows after it");
+      } else this.timeBefore = this.lastTime;
       this.lastTime = time;
+      this.lastLine = line;
       this.row[0] = time;
     }
-    for (let slot = 0; slot < this.reads.length; slot++) {
-      const value = this.row[slot] ?? Number.NaN;
-      if (Number.isNaN(value)) this.missing += 1;
-      else if (value < -273.15 && this.reads[slot]?.column.quantity === "temperature") {
-        this.refused.add(line, `${this.reads[slot]?.column.name}: below absolute zero`);
-        return;
-      }
-    }
+    for (const value of this.row) if (Number.isNaN(value)) this.missing += 1;
     this.table.add(this.row);
   }
 

@@ -45,6 +45,16 @@ describe("refused rows", () => {
     expect(log.refused).toEqual([{ line: 7, reason: 'sensor_c: "x" is not a number' }]);
     expect(list(log.sensorC)).toEqual([50, 51]);
   });
+  it("refuses the one row whose time jumps ahead, not all that follow", () => {
+    const log = readText(`${head}${good(0, 5)}99999,50.5,20.5\n${good(5, 9)}`);
+    expect(log.refused).toEqual([{ line: 7, reason: "the time jumps ahead of the rows after it" }]);
+    expect(list(log.timeS)).toEqual([0, 1, 2, 3, 4, 5, 6, 7, 8]);
+  });
+  it("lets no refused row speak for the order of time", () => {
+    const log = readText(`${head}${good(0, 5)}99,-400,20.5\n${good(5, 9)}`);
+    expect(log.refused).toEqual([{ line: 7, reason: "sensor_c: below absolute zero" }]);
+    expect(log.rows).toBe(9);
+  });
   it("keeps the first thousand and counts all", () => {
     const log = readText(`${head}${good(0, 20)}${"bad,row,here\n".repeat(2500)}`);
     expect(log.refusedCount).toBe(2500);
