@@ -106,7 +106,8 @@ export const endNames = (range: RangeKey) => ({ from: `${range}-from`, to: `${ra
 
 /** A bound as an address writes it; what is no plain number bounds nothing. */
 function boundOf(text: string | null): number | null {
-  return text !== null && /^-?\d{1,7}(?:\.\d{1,6})?$/.test(text) ? Number(text) : null;
+  const plain = text?.trim().replace(",", ".") ?? "";
+  return /^-?\d{1,7}(?:\.\d{1,6})?$/.test(plain) ? Number(plain) : null;
 }
 
 /**
@@ -222,8 +223,12 @@ export const indexItemSchema = z.strictObject({
 });
 export type IndexItem = z.infer<typeof indexItemSchema>;
 
+/** A searched text in pieces; `hit` where it answers what was typed. Pages escape pieces before they mark them up. */
+const piecesSchema = z.array(z.strictObject({ text: z.string(), hit: z.boolean() }));
+
 /**
- * The index's answer. `comparableOnly` says that all matches share bench version, protocol and baseline unit; where they
+ * The index's answer. `highlights`, by entry and field (name, designer, letter, seasonTitle, traitWords), stand only
+ * where the search service found typed words. `comparableOnly` says that all matches share bench version, protocol and baseline unit; where they
  * don't, the question was settled first (see `settledQuery`) and the absolute figures of the items are null.
  */
 export const indexAnswerSchema = z.strictObject({
@@ -236,5 +241,6 @@ export const indexAnswerSchema = z.strictObject({
   facets: z.record(z.string(), z.array(z.strictObject({ value: z.string(), count: z.number().int() }))),
   histograms: z.record(z.string(), z.array(z.strictObject({ from: z.number(), count: z.number().int() }))),
   from: z.enum(["search", "database"]),
+  highlights: z.record(z.string(), z.record(z.string(), piecesSchema)).optional(),
 });
 export type IndexAnswer = z.infer<typeof indexAnswerSchema>;

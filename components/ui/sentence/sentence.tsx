@@ -44,6 +44,15 @@ export function Sentence(props: SentenceProps) {
   );
   const [open, setOpen] = useState(props.open);
   const [byHand, setByHand] = useState(false);
+  const [asked, setAsked] = useState(props.open);
+  // An added part comes by an address that opens it; an address that opens nothing closes nothing.
+  if (asked !== props.open) {
+    setAsked(props.open);
+    if (props.open !== undefined) {
+      setOpen(props.open);
+      setByHand(true);
+    }
+  }
   const { shown, change, pending } = useSentenceAddress(action, pieces, kept);
   const part = shown.find((piece) => piece.kind !== "text" && partKey(piece) === open);
   const opened = part && part.kind !== "text" ? part : undefined;

@@ -73,7 +73,7 @@ const listed = {
 
 const sortColumns: Record<Exclude<SortKey, keyof typeof ranges>, string> = {
   published: "published_at",
-  name: "design_name",
+  name: "lower(design_name)",
   rank: "round_rank",
   leveldba: "level_full_dba",
   deltat: "delta_t_full_k",
@@ -125,7 +125,7 @@ export async function listEntries(db: Handle, question: IndexQuery): Promise<Lis
   const direction = question.descending ? "desc" : "asc";
   return asked(db, question)
     .select(listed)
-    .orderByRaw(`?? ${direction} nulls last, entry_id`, [sortColumn(question.sort)])
+    .orderByRaw(`${sortColumn(question.sort)} ${direction} nulls last, entry_id`)
     .limit(indexPageSize)
     .offset((question.page - 1) * indexPageSize);
 }

@@ -89,7 +89,8 @@ export async function countHistograms(db: Handle, { question }: { question: Inde
       const expressions = rangesOf.map((range) => binOf(range));
       for (const row of await groupedCounts(db, { question, without, expressions })) {
         const range = rangesOf[row.key];
-        if (range) counted[range]?.push({ from: Number((Number(row.value) * ranges[range].step).toFixed(6)), count: row.count });
+        if (range)
+          counted[range]?.push({ from: Number((Number(row.value) * ranges[range].step).toFixed(6)), count: row.count });
       }
     }),
   );

@@ -1,0 +1,60 @@
+"use client";
+
+import Link from "next/link";
+import { useRouter } from "next/navigation";
+import { useTransition, type FormEvent } from "react";
+import { Button } from "@/components/ui/button";
+
+export type WordsFormProps = {
+  q: string;
+  /** The rest of the address, to be kept. */
+  kept: readonly (readonly [string, string])[];
+  withoutHref: string;
+};
+
+/** Words to look for among what the sentence leaves. A plain form; where scripts run the list is changed in place. */
+export function WordsForm({ q, kept, withoutHref }: WordsFormProps) {
+  const router = useRouter();
+  const [pending, start] = useTransition();
+
+  const ask = (event: FormEvent<HTMLFormElement>) => {
+    event.preventDefault();
+    const typed = new FormData(event.currentTarget).get("q");
+    const words = typeof typed === "string" ? typed.trim() : "";
+    const pairs = [...kept.map(([name, value]) => [name, value]), ...(words ? [["q", words]] : [])];
+    const query = new URLSearchParams(pairs).toString();
+    start(() => router.push(query ? `/designs?${query}` : "/designs", { scroll: false }));
+  };
+
+  return (
+    <form
+      role="search"
+      aria-label="Words in name, designer or material"
+      action="/designs"
+      method="get"
+      className="screen-only flex flex-wrap items-end gap-x-4 gap-y-2"
+      aria-busy={pending}
+      onSubmit={ask}
+    >
+      {kept.map(([name, value]) => (
+        <input key={`${name} ${value}`} type="hidden" name={name} value={value} />
+      ))}
+      <div className="field w-full max-w-sm">
+        <label className="field-label" htmlFor="index-words">
+          Words in name, designer or material
+        </label>
+        <span className="blank">
+          <input key={q} id="index-words" name="q" type="search" defaultValue={q} maxLength={200} autoComplete="off" />
+        </span>
+      </div>
+      <Button type="submit" small busy={pending}>
+        Find
+      </Button>
+      {q ? (
+        <Link href={withoutHref} scroll={false}>
+          Without these words
+        </Link>
+      ) : null}
+    </form>
+  );
+}
