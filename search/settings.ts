@@ -1,92 +1,46 @@
 import type { Settings } from "meilisearch";
+import { facetKeys, rangeKeys, ranges, type RangeKey } from "@/lib/contracts/index-query";
 
 /** Index that readers search; a rebuild fills another one under a name of its own and exchanges the two. */
 export const DESIGNS_INDEX = "designs";
 export const DOCUMENT_KEY = "id";
 
 /** Searched fields, most important first. Never `*`: what isn't named here can't be found by its words. */
-export const SEARCHED_FIELDS = [
-  "designName",
-  "designerHandles",
-  "revision",
-  "seasonName",
-  "traitWords",
-  "printNotes",
-] as const;
+export const SEARCHED_FIELDS = ["name", "designer", "letter", "seasonTitle", "traitWords"] as const;
+export type SearchedField = (typeof SEARCHED_FIELDS)[number];
 
-/** Fields that are chosen by value, in the order in which the index page shows them. */
-export const FACET_FIELDS = [
-  "stages",
-  "counterRotating",
-  "bladesFirst",
-  "bladesSecond",
-  "hand",
-  "inletStack",
-  "spacer",
-  "struts",
-  "shroud",
-  "frame",
-  "material",
-  "season",
-  "designerHandles",
-  "licence",
-  "prominentTone",
-] as const;
-export type FacetField = (typeof FACET_FIELDS)[number];
+/** Fields that are chosen by value: the facets of the index's question, under their own names. */
+export const FACET_FIELDS = facetKeys;
 
 /**
- * Numbers chosen by range. Each has a companion field `…Bin` that holds the lower edge of its bin of that width, so
- * that a histogram is one facet count. Widths are house choices for readable histograms, in the field's unit.
+ * Numbers chosen by range, under the question's own names. Each has a companion field `…Bin` that holds the lower edge
+ * of its bin of that width, so that a histogram is one facet count.
  */
-export const RANGE_FIELDS = [
-  { field: "levelDifferenceDb", binWidth: 1 },
-  { field: "coolingRatioPercent", binWidth: 2 },
-  { field: "equalNoiseDifferenceK", binWidth: 0.5 },
-  { field: "loudnessSone", binWidth: 0.25 },
-  { field: "tipGapMm", binWidth: 0.25 },
-  { field: "solidity", binWidth: 0.05 },
-  { field: "pitchDeg", binWidth: 2 },
-  { field: "massG", binWidth: 10 },
-  { field: "printTimeHours", binWidth: 1 },
-] as const;
-export type RangeField = (typeof RANGE_FIELDS)[number]["field"];
-export type BinField = `${RangeField}Bin`;
+export const RANGE_FIELDS = rangeKeys.map((field) => ({ field, binWidth: ranges[field].step }));
+
+/** The field that holds the lower edge of a range's bin. */
+export function binField(field: RangeKey): `${RangeKey}Bin` {
+  return `${field}Bin`;
+}
 
 /** Figures that stand in one column only within one scale: one bench version, protocol and baseline unit. */
-export const SCALED_FIELDS = ["levelDba", "deltaTK"] as const;
-/** Names the scale of a document's absolute figures; a filter on it must accompany a sort or range by one of them. */
+export const SCALED_FIELDS = ["leveldba", "deltat"] as const;
+/** Names the scale of a document's absolute figures; how many scales the matches have is one facet count. */
 export const SCALE_FIELD = "scale";
 
-export const SORT_FIELDS = [
-  ...RANGE_FIELDS.map((range) => range.field),
-  ...SCALED_FIELDS,
-  "rank",
-  "publishedAtMs",
-  "designName",
-] as const;
+/** The document's key sorts last, so that ties stand in the same order as in the database. */
+export const SORT_FIELDS = [...rangeKeys, ...SCALED_FIELDS, "rank", "published", "name", DOCUMENT_KEY] as const;
 
-/** Fields that an answer may show; all of them are public. */
-export const SHOWN_FIELDS = [
-  DOCUMENT_KEY,
-  "rev",
-  "slug",
-  ...SEARCHED_FIELDS,
-  ...FACET_FIELDS,
-  ...RANGE_FIELDS.map((range) => range.field),
-  ...RANGE_FIELDS.map((range) => `${range.field}U95` as const),
-  ...SCALED_FIELDS,
-  ...SCALED_FIELDS.map((field) => `${field}U95` as const),
-  SCALE_FIELD,
-  "rank",
-  "rankLow",
-  "rankHigh",
-  "publishedAtMs",
-] as const;
+/** Fields that an answer may show. Rows are read again from the database: these serve highlights and comparisons. */
+export const SHOWN_FIELDS = [DOCUMENT_KEY, "rev", ...SEARCHED_FIELDS] as const;
 
 /** Lower edge of the bin that a value falls in, in the value's unit; a value on an edge opens the bin above it. */
 export function binStart(value: number, binWidth: number): number {
   return Number((Math.floor(value / binWidth + 1e-9) * binWidth).toFixed(6));
 }
+
+/** Most values of a facet that are counted. */
+export const FACET_VALUES_MAX = 300;
 
 /**
  * Settings of the index. Sort stands before words, so that a chosen order is strict; counts of facet values are
@@ -96,18 +50,15 @@ export function binStart(value: number, binWidth: number): number {
 export const INDEX_SETTINGS = {
   searchableAttributes: [...SEARCHED_FIELDS],
   filterableAttributes: [
-    DOCUMENT_KEY,
-    "slug",
     SCALE_FIELD,
-    "publishedAtMs",
     ...FACET_FIELDS,
+    ...RANGE_FIELDS.flatMap(({ field }) => [field, binField(field)]),
     ...SCALED_FIELDS,
-    ...RANGE_FIELDS.flatMap((range) => [range.field, `${range.field}Bin`]),
   ],
   sortableAttributes: [...SORT_FIELDS],
-  displayedAttributes: [...new Set(SHOWN_FIELDS)],
+  displayedAttributes: [...SHOWN_FIELDS],
   rankingRules: ["sort", "words", "typo", "proximity", "attributeRank", "wordPosition", "exactness"],
-  faceting: { maxValuesPerFacet: 300, sortFacetValuesBy: { "*": "count" } },
+  faceting: { maxValuesPerFacet: FACET_VALUES_MAX, sortFacetValuesBy: { "*": "count" } },
   pagination: { maxTotalHits: 200_000 },
-  typoTolerance: { disableOnAttributes: ["revision", "designerHandles"] },
+  typoTolerance: { disableOnAttributes: ["letter", "designer"] },
 } as const satisfies Settings;

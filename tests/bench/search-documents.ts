@@ -42,10 +42,10 @@ export function inventedWord(random: () => number, vocabulary = 30_000): string 
 }
 
 const CARDINALITY: Readonly<Record<string, number>> = {
-  designerHandles: 2000,
+  designer: 2000,
   season: 12,
-  bladesFirst: 14,
-  bladesSecond: 14,
+  blades1: 14,
+  blades2: 14,
 };
 
 /** One invented index document of the product's shape. */
@@ -61,14 +61,12 @@ export function inventedDocument(id: number, random: () => number): Record<strin
   });
   return {
     id,
-    slug: `design-${id}`,
-    designName: words(2),
-    revision: "ABCDEF"[id % 6],
-    seasonName: `Season ${1 + (id % 12)}`,
-    traitWords: words(12),
-    printNotes: words(30),
+    name: words(2),
+    letter: "ABCDEF"[id % 6],
+    seasonTitle: `Season ${1 + (id % 12)}`,
+    traitWords: words(30),
     rank: 1 + (id % 100),
-    publishedAtMs: 1_700_000_000_000 + id * 60_000,
+    published: 1_700_000_000_000 + id * 60_000,
     scale: `scale-${id % 5}`,
     ...Object.fromEntries([...facets, ...ranges]),
   };

@@ -1,4 +1,4 @@
-import { DESIGNS_INDEX, DOCUMENT_KEY, FACET_FIELDS, INDEX_SETTINGS, RANGE_FIELDS } from "@/search/settings";
+import { DESIGNS_INDEX, DOCUMENT_KEY, FACET_FIELDS, INDEX_SETTINGS, RANGE_FIELDS, binField } from "@/search/settings";
 import { openSearchService } from "../setup/search-service";
 import { inventedDocument, inventedWord, seeded } from "./search-documents";
 
@@ -53,11 +53,11 @@ async function benchSize(size: number): Promise<void> {
   const indexMs = performance.now() - start;
   const indexCpu = process.cpuUsage(cpuBefore);
   const facets = [...FACET_FIELDS.slice(0, 12)];
-  const histograms = RANGE_FIELDS.map((range) => `${range.field}Bin`);
-  const common = { sort: ["levelDifferenceDb:asc"], page: 1, hitsPerPage: 20, matchingStrategy: "all" as const };
+  const histograms = RANGE_FIELDS.map(({ field }) => binField(field));
+  const common = { sort: ["level:asc"], page: 1, hitsPerPage: 20, matchingStrategy: "all" as const };
   const filter = (): string[] => [
     `stages = "stages-${Math.floor(random() * 6)}"`,
-    `tipGapMm >= ${(random() * 3).toFixed(2)}`,
+    `gap >= ${(random() * 3).toFixed(2)}`,
   ];
   const words = (): string => Array.from({ length: 1 + Math.floor(random() * 2) }, () => typed(random)).join(" ");
   const rows: Record<string, Quantiles> = {

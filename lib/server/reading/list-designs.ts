@@ -46,6 +46,11 @@ export function withoutAbsolutes(item: IndexItem): IndexItem {
   };
 }
 
+/** Histograms over several benches, without those of figures that would pass for one scale. */
+export function withoutAbsoluteRanges(bins: IndexAnswer["histograms"]): IndexAnswer["histograms"] {
+  return Object.fromEntries(Object.entries(bins).filter(([range]) => !absoluteRanges.some((each) => each === range)));
+}
+
 /**
  * Answers the index's question from the database: matches, counts of every facet without its own choice, and
  * histograms. The search service answers the same question faster and forgives errors of typing; this one needs nothing
@@ -72,9 +77,7 @@ export async function listDesigns(asked: IndexQuery): Promise<IndexAnswer> {
     pages: Math.max(1, Math.ceil(counted.total / indexPageSize)),
     comparableOnly,
     facets: facetCounts,
-    histograms: comparableOnly
-      ? bins
-      : Object.fromEntries(Object.entries(bins).filter(([range]) => !absoluteRanges.some((each) => each === range))),
+    histograms: comparableOnly ? bins : withoutAbsoluteRanges(bins),
     from: "database",
   };
 }
