@@ -78,15 +78,3 @@ export const supersede = z.strictObject({ value: finite, reason: z.string().trim
 
 export const holdInput = z.strictObject({ reason: z.string().trim().min(1).max(1000) });
 export const liftInput = z.strictObject({ note: z.string().trim().min(1).max(1000) });
-
-/** A log that is put to a run, with its columns as the person confirmed them (from 1); temperature in °C or °F. */
-export const logQuery = z.strictObject({
-  runId: id,
-  kind: z.enum(["temperature", "level"]),
-  name: z.string().max(255).default("log.csv"),
-  sensor: z.string().max(120).optional(),
-  ambient: z.string().max(120).optional(),
-  level: z.string().max(120).optional(),
-  positionId: id.optional(),
-  commit: z.enum(["no", "yes"]).default("no"),
-});

@@ -9,6 +9,7 @@ import {
   readingsOfSession,
   runById,
   runsOfSession,
+  type BenchReading,
   type RunRow,
 } from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf, protocolOf, type SessionHead } from "@/db/queries/bench-sessions";
@@ -20,7 +21,8 @@ import { note, type Asked } from "../audit/audit";
 import { demandBench, demandNotOwner } from "./bench-access";
 import { checkPlaces, checkReadings, checkSetSpeed, checkTwice } from "./check-reading";
 
-async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
+/** Readings of a run that no other supersedes. */
+export async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
   const readings = await readingsOfSession(tx, { sessionId });
   return readings.filter((each) => each.runId === runId && each.supersededBy === null);
 }
@@ -111,7 +113,8 @@ export async function addRun(
   });
 }
 
-async function demandRun(
+/** The run, if the person may work it and its session is open. @throws ExpectedError not_found, forbidden, moved_on */
+export async function demandRun(
   tx: Handle,
   asked: Asked,
   runId: string,
@@ -123,7 +126,13 @@ async function demandRun(
   return { run, session, person };
 }
 
-const movedOn = "Somebody else changed this run in between. Look at it again; your typing is kept.";
+export const movedOn = "Somebody else changed this run in between. Look at it again; your typing is kept.";
+
+/** @throws ExpectedError moved_on for a run that was discarded */
+export function demandKept(run: RunRow): void {
+  if (run.state !== "discarded") return;
+  throw new ExpectedError("moved_on", "This run was discarded: it takes no more readings. Add the run again.");
+}
 
 /** Adds readings to a run of an open session, if nobody changed the run in between. */
 export async function addRunReadings(
@@ -131,7 +140,8 @@ export async function addRunReadings(
   { runId, version, readings }: { runId: string } & z.output<typeof runReadings>,
 ): Promise<{ version: number; readingIds: string[] }> {
   return appDb().transaction(async (tx) => {
-    const { session, person } = await demandRun(tx, asked, runId);
+    const { session, person, run } = await demandRun(tx, asked, runId);
+    demandKept(run);
     if (!(await changeRun(tx, { runId, version }))) throw new ExpectedError("moved_on", movedOn);
     return { version: version + 1, readingIds: await storeReadings(tx, { session, runId, person, readings }) };
   });

@@ -1,0 +1,137 @@
+import { appDb } from "@/db/client/handles";
+import { insertLogFile, insertLogRefusals, keepFile } from "@/db/queries/bench-logs";
+import { changeRun, insertReadings } from "@/db/queries/bench-runs";
+import { benchVersionOf, positionsOf, protocolOf } from "@/db/queries/bench-sessions";
+import type { LogAnswer, LogQuery } from "@/lib/contracts/bench-logs";
+import { ExpectedError } from "@/lib/domain/expected-error";
+import { analyseLog, type LogReport } from "@/lib/science/logs/analyse-log";
+import type { ReadLog } from "@/lib/science/logs/log-reader";
+import { storage } from "@/lib/services/storage/from-env";
+import { note, type Asked } from "../audit/audit";
+import { checkPlaces, checkReadings, checkTwice } from "./check-reading";
+import { logReading, type LogReading } from "./log-verdict";
+import { demandKept, demandRun, movedOn, standingOfRun } from "./runs";
+import { spoolLog, type SpooledLog } from "./spool-log";
+
+/**
+ * Takes a log in for a run of an open session. Without `commit` it only says what it reads; with it the file is kept as
+ * received, with each refused row, and where it is steady its reading is added. A record that isn't steady is kept and
+ * gives no reading: the answer says which clause failed.
+ * @throws ExpectedError malformed, too_large, moved_on, impossible, already_there, forbidden
+ */
+export async function takeLog(
+  asked: Asked,
+  { sessionId, query, body }: { sessionId: string; query: LogQuery; body: ReadableStream<Uint8Array> | null },
+): Promise<LogAnswer> {
+  const { run, session } = await demandRun(appDb(), asked, query.runId);
+  if (run.sessionId !== sessionId) throw new ExpectedError("not_found", "There is no such run in this session.");
+  demandKept(run);
+  const confirmed = query.commit === "yes";
+  if (confirmed) demandConfirmed(query);
+  const protocol = await protocolOf(appDb(), { protocolVersionId: session.protocolVersionId });
+  const { sensor, ambient, level } = query;
+  const named =
+    query.kind === "level" ? { ...(level && { level }) } : { ...(sensor && { sensor }), ...(ambient && { ambient }) };
+  return spoolLog(body, named, async (spooled) => {
+    const report = analyseLog(spooled.log, protocol.epsilonK, protocol.ambientDriftMaxK);
+    const found = logReading(report, query.kind, protocol);
+    const kept = confirmed ? await keep(asked, query, spooled, report, found) : undefined;
+    return {
+      ...answerOf(spooled, report),
+      unusable: "why" in found ? found.why : null,
+      logFileId: kept?.logFileId ?? null,
+      readingIds: kept?.readingIds ?? [],
+      version: kept?.version ?? null,
+    };
+  });
+}
+
+function demandConfirmed(query: LogQuery): void {
+  const needed = query.kind === "level" ? (["level", "positionId"] as const) : (["sensor", "ambient"] as const);
+  const fields = [...needed, "version" as const]
+    .filter((name) => query[name] === undefined)
+    .map((path) => ({ path, message: "is not confirmed" }));
+  if (fields.length > 0) throw new ExpectedError("malformed", "Confirm the columns before the log is kept.", fields);
+}
+
+async function keep(
+  asked: Asked,
+  query: LogQuery,
+  { sha256, bytes, stream }: SpooledLog,
+  report: LogReport,
+  found: LogReading | { why: string },
+): Promise<{ logFileId: string; readingIds: string[]; version: number }> {
+  const storageKey = `files/${sha256.slice(0, 2)}/${sha256}`;
+  if (!(await storage().head(storageKey))) await storage().put(storageKey, stream(), bytes);
+  return appDb().transaction(async (tx) => {
+    const { run, session, person } = await demandRun(tx, asked, query.runId);
+    demandKept(run);
+    const version = query.version ?? run.version;
+    if (!(await changeRun(tx, { runId: run.id, version }))) throw new ExpectedError("moved_on", movedOn);
+    const fileId = await keepFile(tx, { sha256, bytes, storageKey, receivedFrom: person.personId });
+    const { sensor, ambient, level, positionId } = query;
+    const logFileId = await insertLogFile(tx, {
+      ...{ fileId, sessionId: session.id, runId: run.id, kind: query.kind, name: query.name },
+      columnsRecognised: report.columns,
+      columnsConfirmed: { sensor, ambient, level, positionId },
+      rowsRead: report.rows,
+      refusedCount: report.refusedCount,
+      analysis: { temperature: report.temperature, level: report.level, warnings: report.warnings },
+      byPerson: person.personId,
+    });
+    await insertLogRefusals(tx, { logFileId, refused: report.refused });
+    await note(tx, asked, { action: "log.keep", subjectKind: "run", subjectId: run.id, after: { logFileId, sha256 } });
+    if ("why" in found) return { logFileId, readingIds: [], version: version + 1 };
+    const place = { positionId: found.quantity === "level_dba" ? positionId : null };
+    const given = { quantity: found.quantity, value: found.value, source: "typed" as const, ...place };
+    const standing = await standingOfRun(tx, session.id, run.id);
+    const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
+    checkPlaces(
+      [given],
+      positions.map((each) => each.id),
+    );
+    checkTwice([given], standing);
+    checkReadings([given], await benchVersionOf(tx, { benchVersionId: session.benchVersionId }), standing);
+    const readingIds = await insertReadings(tx, [
+      {
+        ...{ sessionId: session.id, runId: run.id, ...found, positionId: place.positionId ?? null },
+        source: "log",
+        logFileId,
+        takenBy: person.personId,
+      },
+    ]);
+    return { logFileId, readingIds, version: version + 1 };
+  });
+}
+
+function answerOf({ sha256, bytes, log }: SpooledLog, report: LogReport) {
+  const { time, sensor, ambient, level } = log.chosen;
+  return {
+    ...{ sha256, bytes, rows: report.rows, intervalS: report.intervalS, columns: [...report.columns] },
+    chosen: {
+      time: time?.name ?? null,
+      sensor: sensor?.name ?? null,
+      ambient: ambient?.name ?? null,
+      level: level?.name ?? null,
+    },
+    preview: previewOf(log),
+    refused: [...report.refused],
+    refusedCount: report.refusedCount,
+    warnings: [...report.warnings],
+    temperature: report.temperature,
+    level: report.level,
+  };
+}
+
+function previewOf(log: ReadLog): LogAnswer["preview"] {
+  const at = (values: Float64Array | undefined, i: number): number | null => {
+    const value = values?.[i];
+    return value === undefined || Number.isNaN(value) ? null : value;
+  };
+  return Array.from({ length: Math.min(8, log.rows) }, (_, i) => ({
+    timeS: at(log.timeS, i),
+    sensorC: at(log.sensorC, i),
+    ambientC: at(log.ambientC, i),
+    levelDba: at(log.levelDb, i),
+  }));
+}
