@@ -23,6 +23,8 @@ export interface RadialProfile {
 const FULL = 0.98;
 const BARE = 0.004;
 const BAND_SHARE = 0.12;
+/** A height at which no more radii than this show blades is bare. */
+const BARE_RADII = 1;
 const HUB_SHARE_MAX = 0.8;
 /** A closed ring may be broken this often before it counts as blades again (part-span rings, chamfers). */
 const RING_SHARE = 0.85;
@@ -40,11 +42,16 @@ export function bladeBands(table: RowTable): BladeBand[] {
   });
   const needed = Math.max(2, BAND_SHARE * Math.max(...counts));
   const bands: { fromRow: number; toRow: number }[] = [];
+  let bareSince = true;
   for (let j = 0; j < rows; j++) {
-    if ((counts[j] ?? 0) < needed) continue;
+    const count = counts[j] ?? 0;
+    if (count <= BARE_RADII) bareSince = true;
+    if (count < needed) continue;
     const last = bands[bands.length - 1];
-    if (last && last.toRow === j - 1) last.toRow = j;
+    // Blades that thin out and thicken again, as past the end of a short hub, are one row; only a bare height parts two.
+    if (last && !bareSince) last.toRow = j;
     else bands.push({ fromRow: j, toRow: j });
+    bareSince = false;
   }
   const kept = bands.filter((band) => band.toRow > band.fromRow);
   return kept.map((band, i) => {

@@ -27,6 +27,8 @@ export interface RotorSpec {
   readonly middleZMm?: number;
   /** Corners of the hub and of half the ring. 96 where left out. */
   readonly facets?: number;
+  /** Steps of a blade's grid along the span and along the chord. 16 and 12 where left out. */
+  readonly bladeSteps?: { readonly span: number; readonly chord: number };
 }
 
 const SPAN_STEPS = 16;
@@ -135,17 +137,18 @@ function addRotor(builder: ShellBuilder, spec: RotorSpec): void {
 }
 
 function addBlade(builder: ShellBuilder, spec: RotorSpec, angle: number, middle: number): void {
+  const { span: spanSteps, chord: chordSteps } = spec.bladeSteps ?? { span: SPAN_STEPS, chord: CHORD_STEPS };
   const chi = spec.hand === "right" ? 1 : -1;
   const rootRadius = Math.max(spec.hubRadiusMm - ROOT_BITE_MM, (spec.boreRadiusMm ?? 0) + 0.2);
   const first = builder.positions.length / 3;
-  const id = (a: number, b: number, s: number): number => first + (a * (CHORD_STEPS + 1) + b) * 2 + s;
-  for (let a = 0; a <= SPAN_STEPS; a++) {
-    const span = a / SPAN_STEPS;
+  const id = (a: number, b: number, s: number): number => first + (a * (chordSteps + 1) + b) * 2 + s;
+  for (let a = 0; a <= spanSteps; a++) {
+    const span = a / spanSteps;
     const r = rootRadius + (spec.tipRadiusMm - rootRadius) * span;
     const beta = Math.atan(spec.helixPitchMm / (2 * Math.PI * r));
     const chord = spec.chordMm + ((spec.chordTipMm ?? spec.chordMm) - spec.chordMm) * span;
-    for (let b = 0; b <= CHORD_STEPS; b++) {
-      const u = (b / CHORD_STEPS - 0.5) * chord;
+    for (let b = 0; b <= chordSteps; b++) {
+      const u = (b / chordSteps - 0.5) * chord;
       const bow = (spec.camber ?? 0) * chord * (1 - ((2 * u) / chord) ** 2);
       for (let s = 0; s < 2; s++) {
         const w = (s - 0.5) * spec.thicknessMm + bow;
@@ -159,16 +162,16 @@ function addBlade(builder: ShellBuilder, spec: RotorSpec, angle: number, middle:
       }
     }
   }
-  for (let a = 0; a < SPAN_STEPS; a++) {
-    for (let b = 0; b < CHORD_STEPS; b++) {
+  for (let a = 0; a < spanSteps; a++) {
+    for (let b = 0; b < chordSteps; b++) {
       builder.quad(id(a, b, 1), id(a + 1, b, 1), id(a + 1, b + 1, 1), id(a, b + 1, 1));
       builder.quad(id(a, b, 0), id(a, b + 1, 0), id(a + 1, b + 1, 0), id(a + 1, b, 0));
     }
     builder.quad(id(a, 0, 0), id(a + 1, 0, 0), id(a + 1, 0, 1), id(a, 0, 1));
-    builder.quad(id(a, CHORD_STEPS, 0), id(a, CHORD_STEPS, 1), id(a + 1, CHORD_STEPS, 1), id(a + 1, CHORD_STEPS, 0));
+    builder.quad(id(a, chordSteps, 0), id(a, chordSteps, 1), id(a + 1, chordSteps, 1), id(a + 1, chordSteps, 0));
   }
-  for (let b = 0; b < CHORD_STEPS; b++) {
+  for (let b = 0; b < chordSteps; b++) {
     builder.quad(id(0, b, 0), id(0, b, 1), id(0, b + 1, 1), id(0, b + 1, 0));
-    builder.quad(id(SPAN_STEPS, b, 0), id(SPAN_STEPS, b + 1, 0), id(SPAN_STEPS, b + 1, 1), id(SPAN_STEPS, b, 1));
+    builder.quad(id(spanSteps, b, 0), id(spanSteps, b + 1, 0), id(spanSteps, b + 1, 1), id(spanSteps, b, 1));
   }
 }

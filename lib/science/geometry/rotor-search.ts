@@ -18,6 +18,9 @@ export interface SearchGrid {
 export const coarseGrid: SearchGrid = { radii: 48, angles: 480, rows: 96 };
 export const fineGrid: SearchGrid = { radii: 80, angles: 1440, rows: 144 };
 
+/** A row that reaches less far than this share of the widest one beside it is a stub. */
+const STUB_SHARE = 0.55;
+
 /** A row of blades and the group of shells that it turns with. */
 export interface FoundRow {
   readonly row: BladeRow;
@@ -106,11 +109,14 @@ function rowsOfGroup(
   if (!(high > low)) return [];
   const table = rowTable(solids, low, high, grid.rows);
   const part: TurningPart = { mesh, faces: facesWithin(mesh, faces, own), shellOf: own, include, tinyMm };
-  return bladeBands(table).flatMap((band) => {
+  const found = bladeBands(table).flatMap((band) => {
     const profile = radialProfile(table, band);
     const row = profile && bladeRow(part, table, band, profile, grid.angles);
     return row ? [{ row, group }] : [];
   });
+  // Stubs on the same shaft (blade roots past the hub's end, set screws, spokes) are no rotor of their own.
+  const widest = Math.max(0, ...found.map(({ row }) => row.tipRadiusMm));
+  return found.filter(({ row }) => row.tipRadiusMm > STUB_SHARE * widest);
 }
 
 /** The faces with those of other parts taken out by giving them no area and no normal. */

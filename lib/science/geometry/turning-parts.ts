@@ -24,6 +24,7 @@ interface Body {
   fromZ: number;
   toZ: number;
   outer: number;
+  inner: number;
   kind: "standing" | "carrier" | "ring" | "loose";
   innerRing: number;
 }
@@ -56,7 +57,9 @@ export function splitParts(
     const { fill } = rowTable(solids, body.fromZ, body.toZ, ROWS);
     const radii = columns.grid.radiiMm;
     const full = radii.findIndex((_, i) => fill.subarray(i * ROWS, (i + 1) * ROWS).some((f) => f >= 0.98));
-    body.innerRing = full < 0 ? Infinity : (radii[full] ?? Infinity);
+    // The grid knows a ring's inside to one step; its vertices know it better, unless struts reach further in.
+    const sampled = full < 0 ? Infinity : (radii[full] ?? Infinity);
+    body.innerRing = Math.max(body.inner, sampled - (radii[0] ?? 0) * 2);
     body.kind = full < 0 ? "loose" : body.innerRing > 0.8 * body.outer ? "ring" : "carrier";
   });
   return group(bodies);
@@ -68,6 +71,7 @@ function measureBodies(mesh: Mesh, shellOf: Int32Array, bodyOf: Int32Array, body
     fromZ: Infinity,
     toZ: -Infinity,
     outer: 0,
+    inner: Infinity,
     kind: "loose",
     innerRing: Infinity,
   }));
@@ -79,7 +83,9 @@ function measureBodies(mesh: Mesh, shellOf: Int32Array, bodyOf: Int32Array, body
     const z = mesh.positions[start + 2] ?? 0;
     body.fromZ = Math.min(body.fromZ, z);
     body.toZ = Math.max(body.toZ, z);
-    body.outer = Math.max(body.outer, Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0));
+    const radius = Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0);
+    body.outer = Math.max(body.outer, radius);
+    body.inner = Math.min(body.inner, radius);
   }
   return bodies;
 }
@@ -99,7 +105,6 @@ function group(bodies: Body[]): PartSplit {
     for (const all of members.values()) {
       const reach = Math.max(...all.map((body) => (body.kind === "ring" ? 0 : body.outer)));
       const beside = all.some((body) => shared(body, ring) > 0);
-      // The inner radius is known to one step of the grid only, hence the wide side inwards.
       if (!beside || ring.innerRing - reach > SHROUD_GAP * reach || reach < 0.9 * ring.innerRing) continue;
       all.push(ring);
       break;
