@@ -46,6 +46,8 @@ export const asPage = (statuses: Statuses): Statuses => ({ ...statuses, signedOu
 const choices = { entry_state: false, questions: false, corrections: false, seasons: false, watched: false };
 /** The id of nothing. */
 const nowhere = "00000000-0000-7000-8000-000000000000";
+const noId = "00000000-0000-0000-0000-000000000000";
+const power = { quantity: "power_w", value: 150 };
 const notThis = "this is not the password";
 
 /** Every route × every role. A route that isn't here, or is here and not in the tree, fails the test. */
@@ -126,6 +128,89 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     expected: all(200),
   },
 
+  "GET /api/v1/bench/queue": { expected: staff(200) },
+  "GET /api/v1/bench/prints": { expected: staff(200) },
+  "GET /api/v1/bench/sessions": { expected: staff(200) },
+  "POST /api/v1/bench/sessions": {
+    body: { roundId: noId, benchVersionId: noId, baselineUnitId: noId, checklist: {} },
+    expected: staff(400),
+  },
+  "GET /api/v1/bench/sessions/[id]": {
+    path: ({ openSessionId }) => `/api/v1/bench/sessions/${openSessionId}`,
+    expected: staff(200),
+  },
+  "PATCH /api/v1/bench/sessions/[id]": {
+    path: ({ openSessionId }) => `/api/v1/bench/sessions/${openSessionId}`,
+    body: { version: 0, note: "" },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/sessions/[id]/end": {
+    path: ({ closedSessionId }) => `/api/v1/bench/sessions/${closedSessionId}/end`,
+    body: {},
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/sessions/[id]/readings": {
+    path: ({ closedSessionId }) => `/api/v1/bench/sessions/${closedSessionId}/readings`,
+    body: { quantity: "humidity_percent", value: 40 },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/sessions/[id]/runs": {
+    path: ({ closedSessionId }) => `/api/v1/bench/sessions/${closedSessionId}/runs`,
+    body: { entryId: null, setSpeed: 1100, mountNumber: 1 },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/sessions/[id]/logs": {
+    path: ({ openSessionId, openRunId }) =>
+      `/api/v1/bench/sessions/${openSessionId}/logs?runId=${openRunId}&kind=temperature`,
+    body: {},
+    expected: staff(415),
+  },
+  "POST /api/v1/bench/sessions/[id]/holds": {
+    path: () => `/api/v1/bench/sessions/${noId}/holds`,
+    body: { reason: "a door was open" },
+    expected: staff(404),
+  },
+  "POST /api/v1/bench/sessions/[id]/holds/[holdId]/lift": {
+    path: ({ closedSessionId }) => `/api/v1/bench/sessions/${closedSessionId}/holds/${noId}/lift`,
+    body: { note: "measured again" },
+    expected: staff(404),
+  },
+  "POST /api/v1/bench/runs/[id]/readings": {
+    path: ({ openRunId }) => `/api/v1/bench/runs/${openRunId}/readings`,
+    body: { version: 0, readings: [power] },
+    expected: staff(409),
+  },
+  "PUT /api/v1/bench/runs/[id]/state": {
+    path: ({ openRunId }) => `/api/v1/bench/runs/${openRunId}/state`,
+    body: { version: 0, state: "held", reason: "belt slipped" },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/readings/[id]/supersede": {
+    path: ({ closedReadingId }) => `/api/v1/bench/readings/${closedReadingId}/supersede`,
+    body: { value: 50, reason: "typing error" },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/entries/[id]/moves": {
+    path: ({ entryOnBenchId }) => `/api/v1/bench/entries/${entryOnBenchId}/moves`,
+    body: { from: "accepted", to: "printing" },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/specimens": {
+    body: ({ entryOnBenchId }: MatrixFacts) => ({ entryId: entryOnBenchId, material: "PETG" }),
+    expected: staff(409),
+  },
+  "PUT /api/v1/bench/specimens/[id]/parts/[position]": {
+    path: ({ specimenOnBenchId }) => `/api/v1/bench/specimens/${specimenOnBenchId}/parts/1`,
+    body: { state: "printed" },
+    expected: staff(409),
+  },
+  "POST /api/v1/bench/rounds/[id]/to-review": {
+    path: ({ roundInWorkId }) => `/api/v1/bench/rounds/${roundInWorkId}/to-review`,
+    body: {},
+    expected: staff(409),
+  },
+
+  "PAGE /fit": { expected: all(200) },
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },
@@ -143,5 +228,11 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     expected: asPage(only(200, "operator", "host", "borrower")),
   },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
+  "PAGE /bench": { expected: asPage(staff(200)) },
+  "PAGE /bench/prints": { expected: asPage(staff(200)) },
+  "PAGE /bench/sessions/[id]": {
+    path: ({ openSessionId }) => `/bench/sessions/${openSessionId}`,
+    expected: asPage(staff(200)),
+  },
   "PAGE /demo/mail": { expected: all(200) },
 };

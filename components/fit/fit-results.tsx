@@ -1,0 +1,39 @@
+import type { FitLimits } from "@/lib/contracts/fit-limits";
+import type { ModelState } from "@/lib/client/fit/use-model-reading";
+import { BalanceSection } from "./balance-section";
+import type { CompareWith } from "./compare-fields";
+import { CrossingsSection } from "./crossings-section";
+import { FrameSection } from "./frame-section";
+import { TraitsSection } from "./traits-section";
+import { ValiditySection } from "./validity-section";
+
+export type FitResultsProps = {
+  state: Extract<ModelState, { step: "measured" }>;
+  limits: FitLimits;
+  chosen: CompareWith;
+};
+
+/** Everything read off a model, piece by piece. */
+export function FitResults({ state, limits, chosen }: FitResultsProps) {
+  const { model, measured } = state;
+  const frame = limits.frames.find((each) => each.key === chosen.frameKey);
+  const season = limits.seasons.find((each) => each.slug === chosen.seasonSlug);
+  const { rotors } = measured;
+  const [first, second] = rotors;
+  return (
+    <>
+      <TraitsSection measured={measured} />
+      {frame ? <FrameSection measured={measured} frame={frame} season={season} /> : null}
+      {first && second ? (
+        <CrossingsSection
+          key={`${first.blades}-${second.blades}-${first.hand}-${second.hand}`}
+          first={first}
+          second={second}
+          speedRpm={chosen.speedRpm}
+        />
+      ) : null}
+      <BalanceSection rotors={rotors} densityGCm3={chosen.densityGCm3} speedRpm={chosen.speedRpm} />
+      <ValiditySection model={model} measured={measured} />
+    </>
+  );
+}

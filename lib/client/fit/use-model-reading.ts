@@ -1,0 +1,110 @@
+"use client";
+
+import { useCallback, useEffect, useRef, useState } from "react";
+import type { ModelFile, ModelMeasured, WorkerAnswer, WorkerRequest } from "./messages";
+
+/** Where the reading of a model stands. */
+export type ModelState =
+  | { readonly step: "none" }
+  | { readonly step: "reading"; readonly name: string; readonly read: number; readonly expected: number | undefined }
+  /** Read, and its unit is for a person to say. */
+  | { readonly step: "unit"; readonly model: ModelFile }
+  | { readonly step: "measuring"; readonly model: ModelFile; readonly mmPerUnit: number }
+  | {
+      readonly step: "measured";
+      readonly model: ModelFile;
+      readonly mmPerUnit: number;
+      readonly measured: ModelMeasured;
+    }
+  | { readonly step: "refused"; readonly name: string; readonly code: string; readonly message: string };
+
+export interface ModelReadingActs {
+  readonly state: ModelState;
+  /** Reads a file and, where its unit is beyond doubt, measures it. Another file takes the place of the first. */
+  choose(file: File): void;
+  /** Measures the model in a unit, mm per file unit. */
+  measureIn(mmPerUnit: number): void;
+  cancel(): void;
+}
+
+const makeWorker = (): Worker => new Worker(new URL("../workers/mesh-reader.worker.ts", import.meta.url));
+
+/** Reads model files in a web worker of this page. It is started with the page, so that later nothing is fetched. */
+export function useModelReading(): ModelReadingActs {
+  const [state, setState] = useState<ModelState>({ step: "none" });
+  const worker = useRef<Worker | undefined>(undefined);
+  const job = useRef(0);
+  const now = useRef(state);
+  const go = useCallback((next: ModelState) => {
+    now.current = next;
+    setState(next);
+  }, []);
+  const send = useCallback((request: WorkerRequest) => worker.current?.postMessage(request), []);
+
+  const measureIn = useCallback(
+    (mmPerUnit: number) => {
+      const at = now.current;
+      if (!("model" in at)) return;
+      go({ step: "measuring", model: at.model, mmPerUnit });
+      send({ kind: "measure", job: job.current, mmPerUnit });
+    },
+    [go, send],
+  );
+
+  const hear = useCallback(
+    (message: WorkerAnswer) => {
+      const at = now.current;
+      if (message.job !== job.current) return;
+      if (message.kind === "progress" && at.step === "reading") {
+        go({ ...at, read: message.read, expected: message.expected });
+      }
+      if (message.kind === "read") {
+        const { model } = message;
+        go({ step: "unit", model });
+        // A unit that the file names counts; without one, millimetres that look like a fan's are taken.
+        if (model.guess === "mm") measureIn(model.mmPerUnit ?? 1);
+      }
+      if (message.kind === "measured" && at.step === "measuring") {
+        go({ step: "measured", model: at.model, mmPerUnit: at.mmPerUnit, measured: message.measured });
+      }
+      if (message.kind === "refused") {
+        const name = "model" in at ? at.model.name : "name" in at ? at.name : "";
+        go({ step: "refused", name, code: message.code, message: message.message });
+      }
+    },
+    [go, measureIn],
+  );
+
+  const start = useCallback(() => {
+    worker.current?.terminate();
+    worker.current = makeWorker();
+    worker.current.addEventListener("message", ({ data }: MessageEvent<WorkerAnswer>) => hear(data));
+    worker.current.addEventListener("error", (event) => {
+      hear({ kind: "refused", job: job.current, code: "failed", message: event.message || "The reader didn’t start." });
+    });
+  }, [hear]);
+
+  useEffect(() => {
+    start();
+    return () => worker.current?.terminate();
+  }, [start]);
+
+  const choose = useCallback(
+    (file: File) => {
+      // What still runs for another file is stopped, not waited for.
+      if (["reading", "measuring"].includes(now.current.step)) start();
+      job.current += 1;
+      go({ step: "reading", name: file.name, read: 0, expected: undefined });
+      send({ kind: "read", job: job.current, file });
+    },
+    [go, send, start],
+  );
+
+  const cancel = useCallback(() => {
+    job.current += 1;
+    start();
+    go({ step: "none" });
+  }, [go, start]);
+
+  return { state, choose, measureIn, cancel };
+}

@@ -1,0 +1,71 @@
+import { MEASURED_AT, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
+import { analyseMesh } from "@/lib/science/geometry/analyse";
+import { meshBounds, scaledMesh, type Mesh } from "@/lib/science/geometry/mesh";
+import { readModelFile } from "@/lib/science/geometry/model-file";
+import type { ByteSource } from "@/lib/science/geometry/reading";
+import { guessUnit } from "@/lib/science/geometry/units";
+import { Refusal } from "@/lib/science/refusal";
+
+/** Reads, measures and draws a model beside the page; the file never leaves the browser. */
+const PROGRESS_EVERY_MS = 80;
+let kept: { job: number; mesh: Mesh } | undefined;
+
+const answer = (message: WorkerAnswer): void => self.postMessage(message);
+
+const blobSource = (file: Blob): ByteSource => ({
+  size: file.size,
+  read: async (offset, length) => new Uint8Array(await file.slice(offset, offset + length).arrayBuffer()),
+});
+
+async function read(job: number, file: File): Promise<void> {
+  const began = performance.now();
+  let told = began;
+  const reading = await readModelFile(blobSource(file), {
+    elapsedMs: () => performance.now() - began,
+    onProgress: (trianglesRead, expected) => {
+      if (performance.now() - told < PROGRESS_EVERY_MS) return;
+      told = performance.now();
+      answer({ kind: "progress", job, read: trianglesRead, expected });
+    },
+  });
+  const bounds = meshBounds(reading.mesh);
+  if (!bounds) throw new Refusal("empty", "The file holds no triangles.");
+  const extent = Math.max(...bounds.max.map((value, axis) => value - (bounds.min[axis] ?? 0)));
+  kept = { job, mesh: reading.mesh };
+  answer({
+    kind: "read",
+    job,
+    model: {
+      name: file.name,
+      bytes: file.size,
+      format: reading.format,
+      triangles: reading.mesh.triangles.length / 3,
+      extent,
+      mmPerUnit: reading.mmPerUnit,
+      guess: guessUnit(extent * (reading.mmPerUnit ?? 1)),
+      warnings: reading.warnings,
+    },
+  });
+}
+
+function measure(job: number, mmPerUnit: number): void {
+  if (kept?.job !== job) throw new Refusal("not-read", "The file is no longer there; choose it again.");
+  const inMm = mmPerUnit === 1 ? kept.mesh : scaledMesh(kept.mesh, mmPerUnit);
+  const { mesh: _judged, ...measured } = analyseMesh(inMm, MEASURED_AT);
+  answer({ kind: "measured", job, measured });
+}
+
+function refuse(job: number, error: unknown): void {
+  if (error instanceof Refusal) {
+    const place = error.at === undefined ? "" : ` (at ${error.at})`;
+    answer({ kind: "refused", job, code: error.code, message: error.message + place });
+    return;
+  }
+  const message = error instanceof Error ? error.message : String(error);
+  answer({ kind: "refused", job, code: "failed", message: `The reader stopped: ${message}` });
+}
+
+self.addEventListener("message", ({ data }: MessageEvent<WorkerRequest>) => {
+  const work = data.kind === "read" ? read(data.job, data.file) : (async () => measure(data.job, data.mmPerUnit))();
+  work.catch((error: unknown) => refuse(data.job, error));
+});
