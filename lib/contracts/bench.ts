@@ -77,4 +77,5 @@ export const runState = z.strictObject({
 export const supersede = z.strictObject({ value: finite, reason: z.string().trim().min(1).max(1000) });
 
 export const holdInput = z.strictObject({ reason: z.string().trim().min(1).max(1000) });
+export const liftParams = z.strictObject({ id, holdId: id });
 export const liftInput = z.strictObject({ note: z.string().trim().min(1).max(1000) });

@@ -8,7 +8,7 @@ import { addRun, addRunReadings, setRunState } from "@/lib/server/bench/runs";
 import { takeLog } from "@/lib/server/bench/logs";
 import { storage } from "@/lib/services/storage/from-env";
 import { adoptEnvironment } from "@/lib/env/env";
-import { bytesOf, levelCsv, riseCsv } from "../factories/bench-csv";
+import { csvRequest, levelCsv, riseCsv } from "../factories/bench-csv";
 import { benchRoom, speedsRpm, type BenchRoom } from "../factories/bench-room";
 import { asked, openSession, toTheBench } from "../factories/bench-steps";
 import { setUpDatabase } from "../setup/database";
@@ -147,7 +147,7 @@ describe("a level log", () => {
     const query = { runId, kind: "level" };
     await expect(take(levelCsv(45, 46, 60), query, room.designer)).rejects.toMatchObject({ code: "forbidden" });
     await expect(
-      takeLog(asked(room.operator), { sessionId: runId, query: logQuery.parse(query), body: null }),
+      takeLog(asked(room.operator), { sessionId: runId, query: logQuery.parse(query), request: csvRequest("") }),
     ).rejects.toMatchObject({ code: "not_found" });
     await setRunState(asked(room.operator), { runId, version: 1, state: "discarded", reason: "belt slipped" });
     await expect(take(levelCsv(45, 46, 60), query)).rejects.toMatchObject({ code: "moved_on" });

@@ -49,4 +49,5 @@ export function levelCsv(low: number, high: number, rows: number): string {
   return `time (s)\tLAeq (dB(A))\n${lines.join("\n")}\n`;
 }
 
-export const bytesOf = (text: string): ReadableStream<Uint8Array<ArrayBuffer>> => new Blob([text]).stream();
+export const csvRequest = (csv: string): Request =>
+  new Request("http://bench.example/", { method: "POST", body: csv, headers: { "content-type": "text/csv" } });

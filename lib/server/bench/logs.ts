@@ -2,7 +2,7 @@ import { appDb } from "@/db/client/handles";
 import { insertLogFile, insertLogRefusals, keepFile } from "@/db/queries/bench-logs";
 import { changeRun, insertReadings } from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf, protocolOf } from "@/db/queries/bench-sessions";
-import type { LogAnswer, LogQuery } from "@/lib/contracts/bench-logs";
+import { logBytesMax, type LogAnswer, type LogQuery } from "@/lib/contracts/bench-logs";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { analyseLog, type LogReport } from "@/lib/science/logs/analyse-log";
 import type { ReadLog } from "@/lib/science/logs/log-reader";
@@ -11,7 +11,7 @@ import { note, type Asked } from "../audit/audit";
 import { checkPlaces, checkReadings, checkTwice } from "./check-reading";
 import { logReading, type LogReading } from "./log-verdict";
 import { demandKept, demandRun, movedOn, standingOfRun } from "./runs";
-import { spoolLog, type SpooledLog } from "./spool-log";
+import { spoolLog, tooLarge, type SpooledLog } from "./spool-log";
 
 /**
  * Takes a log in for a run of an open session. Without `commit` it only says what it reads; with it the file is kept as
@@ -21,18 +21,19 @@ import { spoolLog, type SpooledLog } from "./spool-log";
  */
 export async function takeLog(
   asked: Asked,
-  { sessionId, query, body }: { sessionId: string; query: LogQuery; body: ReadableStream<Uint8Array> | null },
+  { sessionId, query, request }: { sessionId: string; query: LogQuery; request: Request },
 ): Promise<LogAnswer> {
   const { run, session } = await demandRun(appDb(), asked, query.runId);
   if (run.sessionId !== sessionId) throw new ExpectedError("not_found", "There is no such run in this session.");
   demandKept(run);
+  demandCsv(request);
   const confirmed = query.commit === "yes";
   if (confirmed) demandConfirmed(query);
   const protocol = await protocolOf(appDb(), { protocolVersionId: session.protocolVersionId });
   const { sensor, ambient, level } = query;
   const named =
     query.kind === "level" ? { ...(level && { level }) } : { ...(sensor && { sensor }), ...(ambient && { ambient }) };
-  return spoolLog(body, named, async (spooled) => {
+  return spoolLog(request.body, named, async (spooled) => {
     const report = analyseLog(spooled.log, protocol.epsilonK, protocol.ambientDriftMaxK);
     const found = logReading(report, query.kind, protocol);
     const kept = confirmed ? await keep(asked, query, spooled, report, found) : undefined;
@@ -44,6 +45,13 @@ export async function takeLog(
       version: kept?.version ?? null,
     };
   });
+}
+
+/** @throws ExpectedError wrong_kind, too_large, before anything is taken in */
+function demandCsv({ headers }: Request): void {
+  const kind = headers.get("content-type")?.split(";")[0]?.trim().toLowerCase();
+  if (kind !== "text/csv") throw new ExpectedError("wrong_kind", "Send the log as text/csv.");
+  if (Number(headers.get("content-length") ?? 0) > logBytesMax) throw tooLarge();
 }
 
 function demandConfirmed(query: LogQuery): void {

@@ -19,6 +19,8 @@ export interface SpooledLog {
   stream(): Readable;
 }
 
+export const tooLarge = () => new ExpectedError("too_large", "A log may have 64 MB. Cut it to the record of this run.");
+
 /** Pieces this long are read at once; between them other requests have their turn. */
 const pieceBytes = 1 << 16;
 
@@ -61,9 +63,7 @@ async function takeIn(
   try {
     for await (const chunk of chunksOf(body)) {
       bytes += chunk.byteLength;
-      if (bytes > logBytesMax) {
-        throw new ExpectedError("too_large", "A log may have 64 MB. Cut it to the record of this run.");
-      }
+      if (bytes > logBytesMax) throw tooLarge();
       hash.update(chunk);
       await handle.writeFile(chunk);
       for (let from = 0; from < chunk.byteLength; from += pieceBytes) {

@@ -15,6 +15,14 @@ export interface MatrixFacts {
   roundInWorkId: string;
   /** The session of the round in review, and that of the round in work where there is one. */
   sessionId: string;
+  closedSessionId: string;
+  /** Of the session that is open. */
+  openRunId: string;
+  openSessionId: string;
+  /** Of a closed session whose round is published. */
+  closedReadingId: string;
+  entryOnBenchId: string;
+  specimenOnBenchId: string;
 }
 
 const owned = `from design d join design_owner o on o.design_id = d.id join person p on p.id = o.person_id
@@ -33,6 +41,14 @@ const questions: Record<keyof MatrixFacts, string> = {
     where n.state = 'in_review' and re.taken_out_at is null order by re.entry_id limit 1`,
   roundInWorkId: `select id as value from round where state = 'measuring' limit 1`,
   sessionId: `select id as value from session order by began_at desc limit 1`,
+  closedSessionId: `select id as value from session where ended_at is not null order by began_at limit 1`,
+  openRunId: `select r.id as value from run r join session s on s.id = r.session_id where s.ended_at is null order by r.id limit 1`,
+  openSessionId: `select id as value from session where ended_at is null limit 1`,
+  closedReadingId: `select r.id as value from reading r join session s on s.id = r.session_id join round n on n.id = s.round_id
+    where n.state = 'published' and r.run_id is not null order by r.id limit 1`,
+  entryOnBenchId: `select id as value from entry where state = 'on_the_bench' order by id limit 1`,
+  specimenOnBenchId: `select r.specimen_id as value from run r join entry e on e.id = r.entry_id
+    where e.state = 'on_the_bench' order by r.id limit 1`,
 };
 
 /** Looks them up as the schema's owner. One that the demo lacks throws when a row of the matrix asks for it. */
