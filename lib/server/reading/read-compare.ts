@@ -1,81 +1,133 @@
 import { appDb, publicDb } from "@/db/client/handles";
 import { sessionRecords } from "@/db/queries/session-record";
+import { shownBaselineTraits, shownRanks } from "@/db/queries/shown/compare";
 import { entriesByIds } from "@/db/queries/shown/entries";
 import { shownBaselineUnits, shownEntriesByIds, shownPublications, shownRevisions } from "@/db/queries/shown/sheet";
-import { snapshotSchema } from "@/lib/contracts/publication";
+import { compareMost, type ComparedHead, type ComparedTrait } from "@/lib/contracts/compare";
+import { snapshotSchema, type Snapshot } from "@/lib/contracts/publication";
+import { entryToken } from "@/lib/domain/designs/entry-token";
 import { ExpectedError } from "@/lib/domain/expected-error";
+import { groupBy } from "@/lib/domain/group-by";
+import { comparabilityOf, type Comparability } from "@/lib/domain/results/compare-levels";
+import type { LayOverInput } from "@/lib/domain/results/lay-over";
 import type { MeasuredPoint } from "@/lib/domain/results/measured-point";
 import { sessionPoints } from "@/lib/domain/results/methods/v1/session-points";
 import { protocolPositionIds } from "@/lib/domain/results/session-figures";
+import { comparedTraits } from "./compare-traits";
 import { indexItem } from "./list-designs";
 
-/** Most that can be laid over a baseline at once: more lines than that nobody tells apart. */
-export const compareMost = 4;
-
-/** How far figures of several entries may stand side by side; see "Comparable or not". */
-export type Comparability = "same-axis" | "ratios" | "not-comparable";
+/** Public entries side by side, with the measured points that laying them over their baselines takes. */
+export type CompareSheet = {
+  comparability: Comparability;
+  missing: number;
+  entries: ComparedHead[];
+  traits: ComparedTrait[];
+  /** Entries by id, in the order of `entries`. */
+  laid: LayOverInput;
+};
 
 /**
- * Two to four public entries with all that laying them over their baselines takes: the measured points themselves, so
+ * One to four public entries with all that laying them over their baselines takes: the measured points themselves, so
  * that the page reads any level with the very functions that made the published figures.
  *
- * @param entryIds one to four; those that are not public now are left out and counted
+ * @param entryIds those that are not public now are left out and counted
  * @throws ExpectedError not_found when none is public
  */
-export async function readCompare({ entryIds }: { entryIds: readonly string[] }) {
+export async function readCompare({ entryIds }: { entryIds: readonly string[] }): Promise<CompareSheet> {
   const db = publicDb();
   const ids = [...new Set(entryIds)].slice(0, compareMost);
   const found = await shownEntriesByIds(db, { entryIds: ids });
   const entries = ids.flatMap((id) => found.find((entry) => entry.entryId === id) ?? []);
   if (entries.length === 0) throw new ExpectedError("not_found", "None of these entries is public.");
-  const publications = (await shownPublications(db, { entryIds: entries.map((entry) => entry.entryId) })).filter(
-    (publication) => publication.current,
+  const publicIds = entries.map((entry) => entry.entryId);
+  const unitIds = [...new Set(entries.map((entry) => entry.baselineUnitId))];
+  const [publications, listed, ranks, revisions, units, baselines] = await Promise.all([
+    shownPublications(db, { entryIds: publicIds }),
+    entriesByIds(db, { entryIds: publicIds }),
+    shownRanks(db, { entryIds: publicIds }),
+    shownRevisions(db, { revisionIds: entries.map((entry) => entry.revisionId) }),
+    shownBaselineUnits(db, { unitIds }),
+    shownBaselineTraits(db, { unitIds }),
+  ]);
+  const snapshots = new Map(
+    publications.filter(({ current }) => current).map((row) => [row.entryId, snapshotSchema.parse(row.snapshot)]),
   );
-  const snapshots = new Map(publications.map((row) => [row.entryId, snapshotSchema.parse(row.snapshot)]));
-  const listed = await entriesByIds(db, { entryIds: entries.map((entry) => entry.entryId) });
   const items = new Map(listed.map(indexItem).map((item) => [item.entryId, item]));
-  const sessionIds = [...new Set([...snapshots.values()].map((snapshot) => snapshot.sessionId))];
+  const ranksOf = groupBy(ranks, (row) => row.entryId);
+  const complete = entries.map((entry) => {
+    const [snapshot, item] = [snapshots.get(entry.entryId), items.get(entry.entryId)];
+    const revision = revisions.revisions.find((each) => each.id === entry.revisionId);
+    const trait = revisions.traits.find((each) => each.revision_id === entry.revisionId);
+    const unit = units.find((each) => each.unitId === entry.baselineUnitId);
+    if (!snapshot || !item || !revision || !trait || !unit)
+      throw new Error(`the entry ${entry.entryId} is public without its publication, revision, traits or baseline`);
+    const rotors = revisions.rotors.filter((rotor) => rotor.revision_id === entry.revisionId);
+    return { entry, snapshot, item, revision, trait, rotors, unit };
+  });
+  return {
+    comparability: comparabilityOf(entries),
+    missing: ids.length - entries.length,
+    entries: complete.map(({ entry, snapshot, item, revision, unit }): ComparedHead => ({
+      token: entryToken({ slug: item.slug, letter: item.letter, seasonSlug: item.seasonSlug }),
+      entryId: item.entryId,
+      slug: item.slug,
+      name: item.name,
+      letter: item.letter,
+      designers: item.designers,
+      seasonSlug: item.seasonSlug,
+      seasonTitle: item.seasonTitle,
+      roundNumber: item.roundNumber,
+      headlineDba: snapshot.headlineDba,
+      levelsDba: snapshot.levelsDba,
+      bench: `${entry.benchName}, version ${entry.benchNumber}`,
+      distanceMm: snapshot.microphoneDistanceMm,
+      sessionId: snapshot.sessionId,
+      baselineUnit: `${unit.name}, unit ${unit.serial}`,
+      methodVersion: snapshot.methodVersion,
+      corrections: item.corrections,
+      printNotes: revision.print_notes,
+      licence: revision.licence,
+      ranks: (ranksOf.get(item.entryId) ?? []).map((row) => ({
+        rule: row.ruleName,
+        of: row.roundId === null ? "season" : "round",
+        rank: row.rank,
+        rankLow: row.rankLow,
+        rankHigh: row.rankHigh,
+        ranked: row.of,
+        whyNotRanked: row.whyNotRanked,
+      })),
+    })),
+    traits: comparedTraits(
+      complete.map(({ trait, rotors, item }) => ({
+        trait,
+        rotors,
+        licence: item.licence,
+        designers: item.designers,
+      })),
+      baselines.map((each) => each.blades),
+    ),
+    laid: await measuredPoints(complete.map(({ snapshot }) => snapshot)),
+  };
+}
+
+/** The points of these entries alone and of their sessions' baselines; what else a session ran stays inside. */
+async function measuredPoints(snapshots: readonly Snapshot[]): Promise<LayOverInput> {
+  const sessionIds = [...new Set(snapshots.map((snapshot) => snapshot.sessionId))];
   const records = await sessionRecords(appDb(), { sessionIds });
   const points = new Map<string, readonly MeasuredPoint[]>();
   const sessions = records.map((record) => {
     const { subjects } = sessionPoints(record, protocolPositionIds(record));
     for (const subject of subjects)
       if (subject.entryId) points.set(`${record.sessionId} ${subject.entryId}`, subject.points);
-    return {
-      id: record.sessionId,
-      grade: record.grade,
-      baselineUnitId: record.baselineUnitId,
-      baselinePoints: subjects.find((subject) => subject.baselineUnitId === record.baselineUnitId)?.points ?? [],
-    };
+    const baseline = subjects.find((subject) => subject.baselineUnitId === record.baselineUnitId);
+    return { id: record.sessionId, grade: record.grade, baselinePoints: baseline?.points ?? [] };
   });
-  const [revisions, units] = await Promise.all([
-    shownRevisions(db, { revisionIds: entries.map((entry) => entry.revisionId) }),
-    shownBaselineUnits(db, { unitIds: entries.map((entry) => entry.baselineUnitId) }),
-  ]);
   return {
-    missing: ids.length - entries.length,
-    comparability: comparabilityOf(entries),
     sessions,
-    units,
-    revisions,
-    entries: entries.flatMap((entry) => {
-      const snapshot = snapshots.get(entry.entryId);
-      const item = items.get(entry.entryId);
-      if (!snapshot || !item) return [];
-      const own = points.get(`${snapshot.sessionId} ${entry.entryId}`) ?? [];
-      return [{ ...entry, snapshot, item, sessionId: snapshot.sessionId, points: own }];
-    }),
+    entries: snapshots.map(({ entryId, sessionId }) => ({
+      id: entryId,
+      sessionId,
+      points: points.get(`${sessionId} ${entryId}`) ?? [],
+    })),
   };
-}
-export type CompareAnswer = Awaited<ReturnType<typeof readCompare>>;
-
-/** One axis within one bench version, protocol and baseline unit; ratios within one unit; else only through a bridge. */
-export function comparabilityOf(
-  entries: readonly { benchVersionId: string; protocolVersionId: string; baselineUnitId: string }[],
-): Comparability {
-  const count = (of: (entry: (typeof entries)[number]) => string) => new Set(entries.map(of)).size;
-  if (count((entry) => entry.baselineUnitId) > 1) return "not-comparable";
-  return count((entry) => entry.benchVersionId) > 1 || count((entry) => entry.protocolVersionId) > 1
-    ? "ratios"
-    : "same-axis";
 }

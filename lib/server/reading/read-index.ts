@@ -3,7 +3,7 @@ import { shownDistances } from "@/db/queries/shown/benches";
 import { shownSeasons } from "@/db/queries/shown/seasons";
 import type { IndexQuery } from "@/lib/contracts/index-query";
 import { findEntries } from "./find-entries";
-import { listDesigns } from "./list-designs";
+import { findDesigns } from "./find-designs";
 
 /**
  * The index page: the answer to its question, with what heads and labels need beside it.
@@ -12,7 +12,7 @@ import { listDesigns } from "./list-designs";
  */
 export async function readIndex({ query, clips }: { query: IndexQuery; clips: readonly string[] }) {
   const [answer, seasons, clipped] = await Promise.all([
-    listDesigns(query),
+    findDesigns(query),
     shownSeasons(publicDb()),
     findEntries({ named: clips }),
   ]);
@@ -22,6 +22,6 @@ export async function readIndex({ query, clips }: { query: IndexQuery; clips: re
     answer,
     seasonTitles: Object.fromEntries(seasons.map((season) => [season.slug, season.title])),
     distanceMm: bench ? distances.get(bench) : undefined,
-    clipNames: Object.fromEntries(clipped.map((entry) => [entry.token, `${entry.name} ${entry.letter}`])),
+    clipNames: Object.fromEntries(clipped.entries.map((entry) => [entry.token, `${entry.name} ${entry.letter}`])),
   };
 }

@@ -1,0 +1,127 @@
+"use client";
+
+import { useEffect, useMemo, useState } from "react";
+import { CoolingChart } from "@/components/charts/cooling-chart";
+import { EqualNoiseSlider } from "@/components/charts/equal-noise-slider";
+import { Button } from "@/components/ui/button";
+import type { ComparedHead } from "@/lib/contracts/compare";
+import { formatLevel } from "@/lib/format/quantities";
+import { compareFigures } from "@/lib/domain/results/compare-figures";
+import { sliderEnds } from "@/lib/domain/results/compare-levels";
+import { layOver, type LayOverInput } from "@/lib/domain/results/lay-over";
+import { seriesOf } from "./chart-series";
+import { equalCoolingWords, equalNoiseWords } from "./compare-words";
+import { EqualCoolingTable, EqualNoiseTable } from "./level-tables";
+import { nameOf } from "./names";
+
+export type LayOverViewProps = {
+  heads: readonly ComparedHead[];
+  input: LayOverInput;
+  levelDba: number;
+};
+
+/** Waits until the slider rests: browsers refuse too many changes of an address. */
+const addressAfterMs = 250;
+
+function useLevelInAddress(levelDba: number, moved: boolean) {
+  useEffect(() => {
+    if (!moved) return;
+    const wait = setTimeout(() => {
+      const address = new URL(window.location.href);
+      address.searchParams.set("level", String(levelDba));
+      window.history.replaceState(null, "", address.toString().replaceAll("%2C", ","));
+    }, addressAfterMs);
+    return () => clearTimeout(wait);
+  }, [levelDba, moved]);
+}
+
+/** Curves over the baseline with a slider of the common level; every figure is read anew where the slider stands. */
+export function LayOverView({ heads, input, levelDba }: LayOverViewProps) {
+  const [moved, setMoved] = useState<number>();
+  const level = moved ?? levelDba;
+  const laid = useMemo(() => layOver(input), [input]);
+  const ends = useMemo(() => sliderEnds(laid), [laid]);
+  const figures = useMemo(() => compareFigures(laid, () => level), [laid, level]);
+  useLevelInAddress(level, moved !== undefined);
+
+  const name = (id: string) => {
+    const head = heads.find((each) => each.entryId === id);
+    return head ? nameOf(head, heads) : id;
+  };
+  const sessions = [...new Map(laid.map((entry) => [entry.sessionId, entry])).values()];
+  const baselines = sessions.map((entry) => ({
+    key: entry.sessionId,
+    name: sessions.length === 1 ? "Baseline" : `Baseline beside ${name(entry.id)}`,
+    deltaTK: figures.entries.find(({ id }) => id === entry.id)?.baselineDeltaTK,
+  }));
+  const distanceMm = heads[0]?.distanceMm ?? Number.NaN;
+  const headline = heads[0]?.headlineDba ?? Number.NaN;
+  const first = laid[0];
+  return (
+    <div className="grid gap-x-10 gap-y-6 lg:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
+      <CoolingChart
+        series={laid.map((entry) => seriesOf(entry.id, name(entry.id), entry))}
+        baseline={first && seriesOf("baseline", "Baseline", first.baseline)}
+        distanceMm={distanceMm}
+        equalNoiseDba={level}
+        fileName={`compare-${heads.map((head) => head.token).join("-")}`}
+        caption={
+          <>
+            Lower and further left is better. Error bars: 95 % coverage both ways, for the one printed copy measured;
+            remounts are in, copy-to-copy spread is not.
+            {sessions.length > 1
+              ? ` The baseline drawn is the one run beside ${name(sessions[0]?.id ?? "")}; each entry’s figures use the baseline of its own session.`
+              : null}
+          </>
+        }
+      />
+      <div className="grid content-start gap-4">
+        <h2>At equal noise</h2>
+        {ends ? (
+          <>
+            <EqualNoiseSlider
+              levelDba={level}
+              fromDba={ends.low}
+              toDba={ends.high}
+              distanceMm={distanceMm}
+              onLevel={setMoved}
+            />
+            {level === headline ? (
+              <p className="small-print">This is the season’s headline level.</p>
+            ) : headline >= ends.low && headline <= ends.high ? (
+              <p className="screen-only">
+                <Button kind="quiet" small onClick={() => setMoved(headline)}>
+                  To the headline level, {formatLevel(headline, distanceMm, { decimals: 0 })}
+                </Button>
+              </p>
+            ) : null}
+          </>
+        ) : (
+          <p>No entry shares a level with its baseline, so nothing can be read off at equal noise.</p>
+        )}
+        <EqualNoiseTable entries={figures.entries} name={name} baselines={baselines} />
+        <Words said={equalNoiseWords(figures.pairs, name, true)} pairs={figures.pairs.length} />
+        <h2 className="mt-2">At equal ΔT</h2>
+        <p className="small-print">
+          Each entry’s level where it cools as its baseline does at {formatLevel(level, distanceMm)}, less that level.
+        </p>
+        <EqualCoolingTable entries={figures.entries} name={name} />
+        <Words said={equalCoolingWords(figures.pairs, name)} pairs={figures.pairs.length} />
+      </div>
+    </div>
+  );
+}
+
+function Words({ said, pairs }: { said: readonly string[]; pairs: number }) {
+  if (said.length === 0) return null;
+  return (
+    <div aria-live="polite" className="grid gap-1">
+      {said.map((sentence) => (
+        <p key={sentence}>{sentence}</p>
+      ))}
+      {pairs > 1 ? (
+        <p className="small-print">Each interval holds for its own pair, not for all {pairs} pairs at once.</p>
+      ) : null}
+    </div>
+  );
+}

@@ -1,0 +1,118 @@
+import { z } from "zod";
+
+/** Most that can be laid over a baseline at once: more lines than that nobody tells apart. */
+export const compareMost = 4;
+
+const plainNumber = z
+  .string()
+  .regex(/^-?\d{1,3}(\.\d{1,6})?$/, "is no plain number")
+  .transform(Number);
+
+/** `?entries=heronwing.b.season-4,slow-mill.a.season-4&level=46`; ids are taken as well as names. */
+export const compareQuery = z.strictObject({
+  entries: z
+    .union([z.string(), z.array(z.string())], { error: "names one to four entries, with commas between" })
+    .transform((given) => (Array.isArray(given) ? given : [given]).flatMap((list) => list.split(",")))
+    .transform((list) => [...new Set(list.map((each) => each.trim()).filter(Boolean))])
+    .refine((list) => list.length >= 1, { error: "names no entry" })
+    .refine((list) => list.length <= compareMost, { error: `names more than ${compareMost} entries` })
+    .refine((list) => list.every((each) => each.length <= 200), { error: "has a name that is too long" }),
+  level: plainNumber.optional(),
+});
+export type CompareQuery = z.infer<typeof compareQuery>;
+
+/** A value with the half-width of its 95 % coverage interval. */
+const estimate = z.strictObject({ value: z.number(), half95: z.number() });
+const contrast = estimate.extend({ tie: z.boolean() });
+
+export const comparedPointSchema = z.strictObject({
+  setSpeedRpm: z.number(),
+  levelDba: estimate.extend({ upperBound: z.boolean() }),
+  deltaTK: estimate,
+  powerW: z.number(),
+  resistanceKPerW: estimate,
+  mounts: z.int(),
+});
+
+export const comparedTraitSchema = z.strictObject({
+  key: z.string(),
+  label: z.string(),
+  unit: z.string().nullable(),
+  /** In the order of the entries; null where it was not declared. */
+  values: z.array(z.string().nullable()),
+  baseline: z.string().nullable(),
+  differs: z.boolean(),
+});
+export type ComparedTrait = z.infer<typeof comparedTraitSchema>;
+
+export const comparedRankSchema = z.strictObject({
+  rule: z.string(),
+  /** "round" or "season". */
+  of: z.enum(["round", "season"]),
+  rank: z.int().nullable(),
+  rankLow: z.int().nullable(),
+  rankHigh: z.int().nullable(),
+  ranked: z.int(),
+  whyNotRanked: z.string().nullable(),
+});
+export type ComparedRank = z.infer<typeof comparedRankSchema>;
+
+export const comparedHeadSchema = z.strictObject({
+  token: z.string(),
+  entryId: z.uuid(),
+  slug: z.string(),
+  name: z.string(),
+  letter: z.string(),
+  designers: z.array(z.string()),
+  seasonSlug: z.string(),
+  seasonTitle: z.string(),
+  roundNumber: z.int(),
+  headlineDba: z.number(),
+  levelsDba: z.array(z.number()),
+  bench: z.string(),
+  distanceMm: z.number(),
+  sessionId: z.uuid(),
+  baselineUnit: z.string(),
+  methodVersion: z.int(),
+  corrections: z.int(),
+  printNotes: z.string(),
+  licence: z.string(),
+  ranks: z.array(comparedRankSchema),
+});
+export type ComparedHead = z.infer<typeof comparedHeadSchema>;
+
+export const comparabilitySchema = z.enum(["same-axis", "ratios", "not-comparable"]);
+
+/** `GET /api/v1/compare`. What may not stand side by side is absent: see `comparability`. */
+export const compareAnswerSchema = z.strictObject({
+  comparability: comparabilitySchema,
+  /** How many of the entries asked for are not public or not there. */
+  missing: z.int(),
+  entries: z.array(
+    comparedHeadSchema.extend({
+      points: z.array(comparedPointSchema),
+      baselinePoints: z.array(comparedPointSchema),
+      atLevel: z.strictObject({
+        levelDba: z.number(),
+        why: z.string().optional(),
+        ratioPercent: contrast.optional(),
+        deltaTK: estimate.optional(),
+        differenceK: contrast.optional(),
+        upperBound: z.boolean().optional(),
+        coolingDb: contrast.optional(),
+        baselineDeltaTK: estimate.optional(),
+      }),
+    }),
+  ),
+  pairs: z.array(
+    z.strictObject({
+      a: z.string(),
+      b: z.string(),
+      percent: contrast.optional(),
+      deltaTK: contrast.optional(),
+      coolingDb: contrast.optional(),
+    }),
+  ),
+  traits: z.array(comparedTraitSchema),
+});
+export type CompareAnswer = z.infer<typeof compareAnswerSchema>;
