@@ -13,7 +13,7 @@ import { radiiTo, type FoundRow } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
 import { SHELLS_MAX, shellReport, withShellsTurned, type ShellReport } from "./shells";
 import { countStruts } from "./struts";
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import { evenAngles, excessIntegrals, sumIntegrals, zoneIntegrals } from "./union";
 
 /** PLA, the usual print; a person names another density. */

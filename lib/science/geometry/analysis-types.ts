@@ -4,7 +4,7 @@ import type { FrameFit } from "./frame-fit";
 import type { FrameSpec } from "./frames";
 import type { Bounds, Mesh, Vec3 } from "./mesh";
 import type { MeshWarning } from "./reading";
-import type { Correction } from "../mechanics/balance";
+import type { Correction } from "@/lib/science/mechanics/balance";
 
 /** What a person may say about a file before it is analysed. */
 export interface AnalysisOptions {

@@ -1,4 +1,4 @@
-import { median } from "./blade-count";
+import { median } from "@/lib/science/statistics/descriptive";
 import { facesOf, type Faces } from "./faces";
 import type { Mesh } from "./mesh";
 

@@ -1,3 +1,4 @@
+import { median } from "@/lib/science/statistics/descriptive";
 import { cylinderSections, type BladeSection } from "./blade-sections";
 import type { Solids } from "./column-solids";
 import type { RowTable } from "./row-table";
@@ -58,12 +59,4 @@ export function leader(votes: ReadonlyMap<number, number>): { value: number; sha
     if (!best || count > best.votes || (count === best.votes && value > best.value)) best = { value, votes: count };
   }
   return best && { value: best.value, share: best.votes / total };
-}
-
-/** Middle value (mean of the two middle ones); undefined for an empty list. */
-export function median(values: readonly number[]): number | undefined {
-  const sorted = [...values].sort((a, b) => a - b);
-  const half = sorted.length >> 1;
-  const [low, high] = [sorted[half - 1], sorted[half]];
-  return sorted.length % 2 === 1 || low === undefined || high === undefined ? high : (low + high) / 2;
 }

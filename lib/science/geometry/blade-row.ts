@@ -1,5 +1,6 @@
 import type { BladeBand, RadialProfile } from "./blade-bands";
-import { cylinderFindings, leader, median, type CylinderFindings } from "./blade-count";
+import { median } from "@/lib/science/statistics/descriptive";
+import { cylinderFindings, leader, type CylinderFindings } from "./blade-count";
 import { castColumns } from "./columns";
 import { solidStretches } from "./column-solids";
 import type { Faces } from "./faces";

@@ -1,4 +1,4 @@
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import type { Mesh } from "./mesh";
 import { ReadingWatch, type ByteSource, type MeshWarning, type ReadingControl } from "./reading";
 import { readAsciiStl } from "./stl-ascii";

@@ -1,4 +1,4 @@
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 
 /** Bytes that can be read in pieces: a file in a browser, an open file on a server, or a buffer in memory. */
 export interface ByteSource {

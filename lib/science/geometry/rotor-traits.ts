@@ -1,6 +1,12 @@
-import { annulusStress, bladeRootMpa, ringBladeLoadMpa, thinRingHoopMpa, tipSpeedMs } from "../mechanics/burst";
-import { indicativeGrade, rotorUnbalance, staticCorrection } from "../mechanics/balance";
-import { POISSON_PRINTED } from "../mechanics/materials";
+import {
+  annulusStress,
+  bladeRootMpa,
+  ringBladeLoadMpa,
+  thinRingHoopMpa,
+  tipSpeedMs,
+} from "@/lib/science/mechanics/burst";
+import { indicativeGrade, rotorUnbalance, staticCorrection } from "@/lib/science/mechanics/balance";
+import { POISSON_PRINTED } from "@/lib/science/mechanics/materials";
 import type { RotorTraits } from "./analysis-types";
 import type { BladeRow } from "./blade-row";
 import type { MassProperties } from "./mass-properties";

@@ -1,4 +1,4 @@
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import type { StlReading } from "./stl-binary";
 import type { ByteSource, ReadingWatch } from "./reading";
 import { VertexWeld } from "./weld";

@@ -1,5 +1,5 @@
 import { SaxesParser, type SaxesTagPlain } from "saxes";
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import { GrowingFloats } from "./growing";
 import { parseTransform, type Transform } from "./transform";
 

@@ -1,4 +1,4 @@
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import { GrowingFloats } from "./growing";
 import type { Mesh } from "./mesh";
 import type { ByteSource, MeshWarning, ReadingWatch } from "./reading";

@@ -1,4 +1,4 @@
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 
 /** A 3MF transform: the twelve numbers m00 m01 m02 m10 … m32 of a row-vector matrix, in file order. */
 export type Transform = readonly number[];

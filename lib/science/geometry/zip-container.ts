@@ -1,5 +1,5 @@
 import { Inflate } from "fflate";
-import { Refusal } from "../refusal";
+import { Refusal } from "@/lib/science/refusal";
 import type { ByteSource, ReadingWatch } from "./reading";
 
 /** One file inside a zip, as its central directory names it. */
