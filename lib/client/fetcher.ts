@@ -24,22 +24,29 @@ export class ApiError extends Error {
 export interface SendOptions {
   method?: "GET" | "POST" | "PUT" | "PATCH" | "DELETE";
   body?: unknown;
+  /** Sent as it is instead of a JSON body. */
+  file?: { content: Blob; type: string };
   signal?: AbortSignal;
   /** A second press with the same key gets the first one's answer and does nothing. */
   onceKey?: string;
 }
 
 /** Asks the API and gives the answer's JSON as it is; undefined where it has none. @throws ApiError */
-export async function sendRaw(path: string, { method = "GET", body, signal, onceKey }: SendOptions): Promise<unknown> {
+export async function sendRaw(
+  path: string,
+  { method = "GET", body, file, signal, onceKey }: SendOptions,
+): Promise<unknown> {
   const response = await fetch(path, {
     method,
     credentials: "same-origin",
     headers: {
       accept: "application/json",
       ...(body !== undefined && { "content-type": "application/json" }),
+      ...(file && { "content-type": file.type }),
       ...(onceKey !== undefined && { "idempotency-key": onceKey }),
     },
     ...(body !== undefined && { body: JSON.stringify(body) }),
+    ...(file && { body: file.content }),
     ...(signal && { signal }),
   }).catch((error: unknown) => {
     if (signal?.aborted) throw error;

@@ -16,3 +16,4 @@ export const peopleKeys = keysOf("people");
 export const reviewKeys = keysOf("review");
 export const hostKeys = keysOf("host");
 export const myDesignKeys = keysOf("my-designs");
+export const benchKeys = keysOf("bench");
