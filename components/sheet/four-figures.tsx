@@ -34,14 +34,17 @@ function place({ rank, low, high, of }: SheetRank): string {
     : `${formatRank(rank)}, ${formatRankRange(low, high, of)}`;
 }
 
-function rankFigure({ ranks, season, round }: Sheet): BigFigure {
+function rankFigure({ ranks, season, round, bench }: Sheet): BigFigure {
   const { then, now } = ranks;
   const roundHref = `/seasons/${season.slug}/rounds/${round}`;
   const seasonHref = `/seasons/${season.slug}`;
   const label = `Rank in round ${round}, 95 % range`;
   const inSeason = ranks.season ? <a href={seasonHref}>now in the season {place(ranks.season)}</a> : null;
   if (!then || then.rank === null || then.low === null || then.high === null) {
-    const why = then?.whyNotRanked ?? "no standing has this entry";
+    const why = (then?.whyNotRanked ?? "no standing has this entry").replace(
+      "dB(A)",
+      levelUnit(bench.microphoneDistanceMm),
+    );
     return {
       label,
       value: <Missing why={`not ranked: ${why}`} />,
@@ -79,8 +82,8 @@ export function FourFigures({ sheet }: { sheet: Sheet }) {
   const headline = sheet.equalNoise.find((reading) => reading.levelDba === sheet.headlineDba);
   const distance = sheet.bench.microphoneDistanceMm;
   const at = `${sheet.headlineDba} ${levelUnit(distance)}`;
-  const noiseLabel = `ΔT against the baseline, at equal noise`;
-  const coolingLabel = "Level against the baseline, at equal ΔT";
+  const noiseLabel = "ΔT against baseline, equal noise";
+  const coolingLabel = "Level against baseline, equal ΔT";
   const equalNoise: BigFigure = headline?.reached
     ? measured(
         noiseLabel,

@@ -43,12 +43,16 @@ export function HistorySection({ sheet }: { sheet: Sheet }) {
             level: { figure: { value: each.levelDifferenceDb, decimals: 1, signed: true } },
             resistance: { figure: { value: each.resistancePercent, decimals: 1 } },
             equalNoise: {
-              figure: { value: each.equalNoisePercent, decimals: 1, why: `not reached at ${each.headlineDba} dB(A)` },
+              figure: {
+                value: each.equalNoisePercent,
+                decimals: 1,
+                why: `not reached at the season’s headline level, ${each.headlineDba}`,
+              },
             },
             rank: {
               words:
                 each.roundRank === null || each.roundOf === null
-                  ? `not ranked: ${each.whyNotRanked ?? "no figures"}`
+                  ? `not ranked: ${(each.whyNotRanked ?? "no figures").replace(" dB(A)", "")}`
                   : `${formatRank(each.roundRank)} of ${each.roundOf}`,
             },
           },

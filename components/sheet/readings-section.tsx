@@ -41,7 +41,7 @@ function row(sheet: Sheet, point: SheetPoint): BarsRow {
       measured:
         point.speedsRpm.length === 1
           ? { figure: { value: point.speedsRpm[0], decimals: 0 } }
-          : { words: <span className="figures">{speeds || "–"}</span> },
+          : { words: <span className="figures whitespace-nowrap">{speeds || "–"}</span> },
       read: { figure: { value: point.levelReadDba, decimals: 1 } },
       background: { figure: { value: point.backgroundDba, decimals: 1, why: "no background was read" } },
       corrected: {

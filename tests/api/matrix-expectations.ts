@@ -119,6 +119,19 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings.csv`,
     expected: all(200),
   },
+  "GET /api/v1/seasons": { expected: all(200) },
+  "GET /api/v1/seasons/[slug]": { path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}`, expected: all(200) },
+  "GET /api/v1/seasons/[slug]/rounds/[number]": {
+    path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}/rounds/1?rule=plain-sum`,
+    expected: all(200),
+  },
+  "GET /api/v1/rounds": { expected: all(200) },
+  "PAGE /seasons": { expected: all(200) },
+  "PAGE /seasons/[slug]": { path: ({ seasonSlug }) => `/seasons/${seasonSlug}`, expected: all(200) },
+  "PAGE /seasons/[slug]/rounds/[number]": {
+    path: ({ seasonSlug }) => `/seasons/${seasonSlug}/rounds/1`,
+    expected: all(200),
+  },
   "PAGE /designs/[slug]": {
     path: ({ publishedDesignSlug }) => `/designs/${publishedDesignSlug}`,
     expected: all(200),

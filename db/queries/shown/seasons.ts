@@ -17,6 +17,8 @@ export interface SeasonRow {
   opensAt: Date | null;
   closesAt: Date | null;
   closedAt: Date | null;
+  /** Null where bench versions of different distances count. */
+  microphoneDistanceMm: number | null;
   entries: number;
   rounds: number;
 }
@@ -46,6 +48,11 @@ export async function shownSeasons(db: Handle, { slug }: { slug?: string } = {})
     .orderBy("s.number", "desc")
     .select(
       seasonColumns,
+      db.raw(
+        `(select case when count(distinct v.microphone_distance_mm) = 1 then min(v.microphone_distance_mm) end
+          from shown.season_bench sb join shown.bench_version v on v.id = sb.bench_version_id
+          where sb.season_id = s.id) as "microphoneDistanceMm"`,
+      ),
       db.raw("(select count(*)::int from shown.entry e where e.season_id = s.id) as entries"),
       db.raw("(select count(*)::int from shown.round r where r.season_id = s.id) as rounds"),
     );
