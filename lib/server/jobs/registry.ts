@@ -1,4 +1,13 @@
 import type { JobData, JobHandler, QueueName } from "@/lib/services/jobs/jobs";
+import { log } from "../log";
+import { appDb } from "@/db/client/handles";
+import { askForRebuild } from "@/db/queries/search-build";
+import { sweepThrottle } from "@/db/queries/throttle";
+import { deliveryLoop } from "../deliveries/deliver";
+import { publishDueRounds } from "../publishing/schedule";
+import { compareIndex } from "../search/compare";
+import { runSearchSender } from "../search/sender";
+import { readQuarantinedFile, sweepUploads } from "../uploads/read-file";
 
 /** Work that goes on as long as the worker runs, the outbox's sender say; it ends soon after the signal. */
 export interface Loop {
@@ -14,9 +23,28 @@ interface Schedule<N extends QueueName> {
 }
 
 /** What the worker does with each queue. A queue without a handler is left to another worker. */
-export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {};
+export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
+  "file-read": ({ uploadId }) => readQuarantinedFile(uploadId, new Date()),
+  "search-rebuild": () => askForRebuild(appDb()),
+  "search-compare": async () => void (await compareIndex()),
+  sweep: async () => {
+    await sweepThrottle(appDb());
+    await sweepUploads(new Date());
+  },
+  "publish-due": async () => {
+    const { published, refused } = await publishDueRounds(new Date());
+    if (published.length > 0 || refused.length > 0) log().info({ published, refused }, "rounds whose hour has come");
+  },
+};
 
 /** What is sent by the clock, however many workers run. */
-export const jobSchedules: Schedule<QueueName>[] = [];
+export const jobSchedules: Schedule<QueueName>[] = [
+  { queue: "publish-due", cron: "* * * * *", data: {} },
+  { queue: "search-compare", cron: "40 3 * * *", data: {} },
+  { queue: "sweep", cron: "17 * * * *", data: {} },
+];
 
-export const loops: Loop[] = [];
+export const loops: Loop[] = [
+  { name: "deliveries", run: deliveryLoop },
+  { name: "search sender", run: runSearchSender },
+];

@@ -11,11 +11,13 @@ interface QueueSettings {
 /** The queues, which the migration makes: the application's role may not make tables. */
 export const jobQueues = {
   /** A file in quarantine is hashed, read in bounded time and memory, and moved to its content address. */
-  "file-read": { data: z.strictObject({ fileId: z.uuid() }), retryLimit: 2, expireInSeconds: 300 },
+  "file-read": { data: z.strictObject({ uploadId: z.uuid() }), retryLimit: 2, expireInSeconds: 300 },
   /** Publishes the rounds whose hour has come. Sent every minute by the clock. */
   "publish-due": { data: z.strictObject({}), retryLimit: 0, expireInSeconds: 300 },
+  /** Compares the search index with the database and mends what differs. Sent nightly by the clock. */
+  "search-compare": { data: z.strictObject({}), retryLimit: 1, expireInSeconds: 1_800 },
   /** Fills the search index anew from the database. */
-  "search-rebuild": { data: z.strictObject({}), retryLimit: 1, expireInSeconds: 1_800 },
+  "search-rebuild": { data: z.strictObject({}), retryLimit: 1, expireInSeconds: 60 },
   /** Deletes what has run out: tokens, rate windows, idempotency keys, abandoned uploads. Sent hourly by the clock. */
   sweep: { data: z.strictObject({}), retryLimit: 0, expireInSeconds: 300 },
 } as const satisfies Record<string, QueueSettings>;

@@ -37,13 +37,13 @@ test("a job sent in a transaction is there when it commits, and only then", asyn
   const jobs = await connectJobs(false);
   await expect(
     database.app.transaction(async (transaction) => {
-      expect(await jobs.send("file-read", { fileId }, { within: sqlExecutor(transaction) })).toBeTypeOf("string");
+      expect(await jobs.send("file-read", { uploadId: fileId }, { within: sqlExecutor(transaction) })).toBeTypeOf("string");
       throw new Error("taken back");
     }),
   ).rejects.toThrow("taken back");
   expect(await waiting()).toBe(0);
   await database.app.transaction(async (transaction) => {
-    await jobs.send("file-read", { fileId }, { within: sqlExecutor(transaction) });
+    await jobs.send("file-read", { uploadId: fileId }, { within: sqlExecutor(transaction) });
   });
   expect(await waiting()).toBe(1);
 });
@@ -53,8 +53,8 @@ test("of two sent with the same key while one waits, the second is not kept; wit
   expect(await jobs.send("search-rebuild", {}, { onceBy: "all" })).toBeTypeOf("string");
   expect(await jobs.send("search-rebuild", {}, { onceBy: "all" })).toBeUndefined();
   expect(await waiting()).toBe(1);
-  await jobs.send("file-read", { fileId });
-  await jobs.send("file-read", { fileId });
+  await jobs.send("file-read", { uploadId: fileId });
+  await jobs.send("file-read", { uploadId: fileId });
   expect(await waiting()).toBe(3);
 });
 
@@ -62,7 +62,7 @@ test("two workers on one database do each job once", async () => {
   const [one, two] = [await connectJobs(true), await connectJobs(true)];
   const done: string[] = [];
   const ids: (string | undefined)[] = [];
-  for (let n = 0; n < 6; n += 1) ids.push(await one.send("file-read", { fileId }));
+  for (let n = 0; n < 6; n += 1) ids.push(await one.send("file-read", { uploadId: fileId }));
   const finished = new Promise<void>((resolve) => {
     const handler = async (_data: object, jobId: string): Promise<void> => {
       done.push(jobId);
@@ -77,7 +77,7 @@ test("two workers on one database do each job once", async () => {
 
 test("a job whose data isn't what its queue carries is refused when it is sent", async () => {
   const jobs = await connectJobs(false);
-  await expect(jobs.send("file-read", { fileId: "not an id" })).rejects.toThrow(/uuid/i);
+  await expect(jobs.send("file-read", { uploadId: "not an id" })).rejects.toThrow(/uuid/i);
 });
 
 test("the application's role works the queues but owns none of their tables", async () => {
