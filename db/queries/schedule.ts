@@ -1,3 +1,4 @@
+import type { RoundState } from "@/lib/domain/seasons/round-moves";
 import type { Handle } from "../client/connect";
 
 /** Rounds that are scheduled and whose hour has come, the earliest first. */
@@ -15,4 +16,10 @@ export async function setPublishAt(
   { roundId, publishAt }: { roundId: string; publishAt: Date | null },
 ): Promise<void> {
   await db("round").where({ id: roundId }).update({ publish_at: publishAt });
+}
+
+/** Holds a round's row until the transaction ends. @returns its state; undefined when there is none */
+export async function lockRound(db: Handle, { roundId }: { roundId: string }): Promise<RoundState | undefined> {
+  const row = await db("round").where({ id: roundId }).forUpdate().first<{ state: RoundState } | undefined>("state");
+  return row?.state;
 }

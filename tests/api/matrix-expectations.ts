@@ -48,6 +48,17 @@ const choices = { entry_state: false, questions: false, corrections: false, seas
 const nowhere = "00000000-0000-7000-8000-000000000000";
 const noId = "00000000-0000-0000-0000-000000000000";
 const power = { quantity: "power_w", value: 150 };
+/** The address of something of the host's that isn't there. */
+const under = (what: string, then?: string) => () => `/api/v1/host/${what}/${nowhere}${then ? `/${then}` : ""}`;
+const budgetPart = {
+  quantity: "delta_t_k",
+  name: "Sensor noise",
+  u: 0.05,
+  evaluation: "A",
+  distribution: "normal",
+  source: "ten repeats",
+  kind: "own_run",
+};
 const notThis = "this is not the password";
 
 /** Every route × every role. A route that isn't here, or is here and not in the tree, fails the test. */
@@ -224,6 +235,83 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   },
 
   "PAGE /fit": { expected: all(200) },
+  "GET /api/v1/host/benches": { expected: hostOnly(200) },
+  "POST /api/v1/host/benches": { body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/benches/[id]/versions": { path: under("benches", "versions"), body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/bench-versions/[id]/positions": {
+    path: under("bench-versions", "positions"),
+    body: { name: "on axis", distanceMm: 100, angleDeg: 0 },
+    expected: hostOnly(404),
+  },
+  "POST /api/v1/host/bench-versions/[id]/budgets": {
+    path: under("bench-versions", "budgets"),
+    body: { note: "" },
+    expected: hostOnly(404),
+  },
+  "POST /api/v1/host/budgets/[id]/parts": {
+    path: under("budgets", "parts"),
+    body: { ...budgetPart, unit: "K" },
+    expected: hostOnly(404),
+  },
+  "POST /api/v1/host/protocols": { body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/protocols/[id]/versions": {
+    path: under("protocols", "versions"),
+    body: { heatLoadW: 150, setSpeeds: [900], mounts: 3, runsPerMount: 1, backgroundGrade: "survey" },
+    expected: hostOnly(404),
+  },
+  "POST /api/v1/host/baselines": { body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/baselines/[id]/units": {
+    path: under("baselines", "units"),
+    body: { serial: "X-1", inServiceFrom: "2026-01-01T00:00:00Z" },
+    expected: hostOnly(404),
+  },
+  "GET /api/v1/host/seasons": { expected: hostOnly(200) },
+  "POST /api/v1/host/seasons": { body: {}, expected: signedIn(400) },
+  "GET /api/v1/host/seasons/levels": {
+    path: () => "/api/v1/host/seasons/levels?levels=40,46",
+    expected: hostOnly(200),
+  },
+  "GET /api/v1/host/seasons/[id]": { path: under("seasons"), expected: hostOnly(404) },
+  "PUT /api/v1/host/seasons/[id]": { path: under("seasons"), body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/seasons/[id]/moves": {
+    path: under("seasons", "moves"),
+    body: { to: "opened" },
+    expected: hostOnly(404),
+  },
+  "POST /api/v1/host/seasons/[id]/rounds": { path: under("seasons", "rounds"), body: {}, expected: hostOnly(404) },
+  "GET /api/v1/host/rounds/[id]": {
+    path: ({ roundInReviewId }) => `/api/v1/host/rounds/${roundInReviewId}`,
+    expected: hostOnly(200),
+  },
+  "POST /api/v1/host/rounds/[id]/entries": {
+    path: ({ roundInReviewId }) => `/api/v1/host/rounds/${roundInReviewId}/entries`,
+    body: { entryIds: [nowhere] },
+    expected: hostOnly(409),
+  },
+  "POST /api/v1/host/rounds/[id]/entries/[entryId]/take-out": {
+    path: ({ roundInReviewId }) => `/api/v1/host/rounds/${roundInReviewId}/entries/${nowhere}/take-out`,
+    body: { reason: "It isn't of this round." },
+    expected: hostOnly(409),
+  },
+  "PUT /api/v1/host/rounds/[id]/loan": {
+    path: ({ roundInReviewId }) => `/api/v1/host/rounds/${roundInReviewId}/loan`,
+    body: { handle: "nobody-of-that-name" },
+    expected: hostOnly(400),
+  },
+  "DELETE /api/v1/host/rounds/[id]/loan": { path: under("rounds", "loan"), expected: hostOnly(404) },
+  // A host owns none of its entries; the operator's role doesn't publish.
+  "POST /api/v1/host/rounds/[id]/publish": {
+    path: ({ roundInReviewId }) => `/api/v1/host/rounds/${roundInReviewId}/publish`,
+    body: { publishAt: null },
+    expected: hostOnly(409),
+  },
+  "GET /api/v1/host/entries": { expected: hostOnly(200) },
+  "POST /api/v1/host/entries/[id]/moves": {
+    path: under("entries", "moves"),
+    body: { from: "sent_in", to: "accepted" },
+    expected: hostOnly(404),
+  },
+
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },
@@ -240,6 +328,16 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     path: ({ roundInReviewId, entryInReviewId }) => `/review/${roundInReviewId}/${entryInReviewId}`,
     expected: asPage(only(200, "operator", "host", "borrower")),
   },
+  "PAGE /host": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/seasons": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/seasons/new": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/seasons/[id]": { path: () => `/host/seasons/${nowhere}`, expected: asPage(hostOnly(404)) },
+  "PAGE /host/rounds/[id]": {
+    path: ({ roundInReviewId }) => `/host/rounds/${roundInReviewId}`,
+    expected: asPage(hostOnly(200)),
+  },
+  "PAGE /host/entries": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/benches": { expected: asPage(hostOnly(200)) },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
   "PAGE /bench": { expected: asPage(staff(200)) },
   "PAGE /bench/prints": { expected: asPage(staff(200)) },

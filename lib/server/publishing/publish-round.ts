@@ -8,7 +8,7 @@ import {
   upsertPublishedEntry,
   writeRanks,
 } from "@/db/queries/publishing";
-import { standingSignature } from "@/db/queries/review";
+import { openHolds, standingSignature } from "@/db/queries/review";
 import { publishedSessionsOfSeason, roundContext, type RoundContext } from "@/db/queries/round-context";
 import { sessionRecords } from "@/db/queries/session-record";
 import { newestRuleVersion, type RuleVersion } from "@/db/queries/standings";
@@ -44,6 +44,11 @@ export async function publishRound(
   if (!signature || signature.signedSha256 !== (await roundDigest(tx, round))) {
     throw new ExpectedError("moved_on", "What was signed is not what stands now: the round goes back to review.");
   }
+  if (round.entries.some((entry) => entry.state !== "in_review")) {
+    throw new ExpectedError("moved_on", "An entry of the round is not in review any more.");
+  }
+  const [held] = await openHolds(tx, { roundId });
+  if (held) throw new ExpectedError("moved_on", `A session of this round is held since: ${held.reason}`);
   const publicationIds = await publishEntries(tx, round, at);
   await moveEntries(
     tx,
