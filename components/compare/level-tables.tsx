@@ -24,7 +24,6 @@ export function EqualNoiseTable({ entries, name, baselines }: LevelTablesProps) 
         name: { words: name(entry.id) },
         deltaT: cell(entry.deltaTK, whyWords(entry), bound),
         against: cell(entry.differenceK, whyWords(entry), { signed: true, ...bound }),
-        ratio: cell(entry.ratioPercent, whyWords(entry), bound),
       },
     };
   });
@@ -35,7 +34,6 @@ export function EqualNoiseTable({ entries, name, baselines }: LevelTablesProps) 
       name: { words: baseline.name },
       deltaT: cell(baseline.deltaTK, "the baseline was not measured at this level"),
       against: { figure: { value: 0, decimals: 0 } },
-      ratio: { figure: { value: 100, decimals: 0 } },
     },
   }));
   return (
@@ -45,7 +43,6 @@ export function EqualNoiseTable({ entries, name, baselines }: LevelTablesProps) 
         { key: "name", head: "Entry" },
         { key: "deltaT", head: "ΔT", unit: "K" },
         { key: "against", head: "Against baseline", unit: "K", tone: "strong" },
-        { key: "ratio", head: "ΔT/P, of baseline", unit: "%" },
       ]}
       rows={[...rows, ...below]}
     />

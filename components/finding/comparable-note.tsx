@@ -24,7 +24,8 @@ export function ComparableNote({ answer, asked }: ComparableNoteProps) {
   return (
     <p className="small-print mb-3 max-w-3xl">
       These come from more than one bench version, protocol or baseline unit. So no levels or ΔT in K stand here, but
-      each entry’s ratio and difference to the baseline of its own session, at its own season’s headline level.
+      each entry’s ratio and difference to the baseline of its own session, at its own season’s headline level. Against
+      different baseline units they hold only against their own.
       {bounds ? " The bounds in K or sone were let go for the same reason." : null}
       {columns ? " Columns asked for in the address that need one scale are left out." : null} Choose a season to see
       levels and ΔT. Intervals are 95 % coverage for the one printed copy measured; copy-to-copy spread is not included.

@@ -10,15 +10,23 @@ type Line = { key: string; label: string; unit?: string; say: (of: TraitsOf) => 
 const figure = (value: number | null, decimals: number) => (value === null ? null : formatNumber(value, { decimals }));
 const yesNo = (flag: boolean) => (flag ? "yes" : "no");
 
-/** A rotor's trait, stage by stage: "0.92 + 0.81"; null where any stage has none. */
-function byStage(label: string, key: string, unit: string, read: (rotor: RotorRow) => string | null): Line {
+/** A rotor's trait, stage by stage: "0.92 + 0.81"; null where any stage has none. `once`: what all stages share is said once. */
+function byStage(
+  label: string,
+  key: string,
+  unit: string,
+  read: (rotor: RotorRow) => string | null,
+  once = false,
+): Line {
   return {
     key,
     label,
     ...(unit && { unit }),
     say: ({ rotors }) => {
       const said = rotors.map(read);
-      return said.length === 0 || said.includes(null) ? null : said.join(" + ");
+      if (said.length === 0 || said.includes(null)) return null;
+      // "no" and "no + no" say the same; two stages of 9 blades and one of 9 don't.
+      return (once ? [...new Set(said)] : said).join(" + ");
     },
   };
 }
@@ -40,7 +48,7 @@ const lines: readonly Line[] = [
   },
   { key: "spacer", label: "Spacer", unit: "mm", say: ({ trait }) => figure(trait.spacer_mm, 0) },
   { key: "struts", label: "Struts", say: ({ trait }) => String(trait.struts) },
-  byStage("Shroud ring", "shroud", "", (rotor) => yesNo(rotor.shroud)),
+  byStage("Shroud ring", "shroud", "", (rotor) => yesNo(rotor.shroud), true),
   { key: "frame", label: "Frame", unit: "mm", say: ({ trait }) => trait.frame_key.replace("x", " × ") },
   { key: "tip_gap", label: "Tip gap", unit: "mm", say: ({ trait }) => figure(trait.tip_gap_mm, 1) },
   byStage("Tip diameter", "tip_diameter", "mm", (rotor) => figure(rotor.tip_diameter_mm, 1)),
@@ -49,7 +57,7 @@ const lines: readonly Line[] = [
   byStage("Pitch at mid-span", "pitch_mid", "°", (rotor) => figure(rotor.pitch_mid_deg, 1)),
   byStage("Chord at mid-span", "chord_mid", "mm", (rotor) => figure(rotor.chord_mid_mm, 1)),
   byStage("Axial depth", "axial_depth", "mm", (rotor) => figure(rotor.axial_depth_mm, 1)),
-  byStage("Unequal blade spacing", "unequal_spacing", "", (rotor) => yesNo(rotor.unequal_spacing)),
+  byStage("Unequal blade spacing", "unequal_spacing", "", (rotor) => yesNo(rotor.unequal_spacing), true),
   byStage("Rotor mass", "mass", "g", (rotor) => figure(rotor.mass_g, 1)),
   { key: "material", label: "Material", say: ({ trait }) => trait.material },
   { key: "print_time", label: "Print time", unit: "min", say: ({ trait }) => figure(trait.print_time_min, 0) },
