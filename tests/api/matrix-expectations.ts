@@ -143,6 +143,10 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     path: ({ seasonSlug }) => `/seasons/${seasonSlug}/rounds/1`,
     expected: all(200),
   },
+  "GET /api/v1/baselines": { expected: all(200) },
+  "GET /api/v1/baselines/[slug]": { path: () => "/api/v1/baselines/alder-reference-seven", expected: all(200) },
+  "PAGE /baselines": { expected: all(200) },
+  "PAGE /baselines/[slug]": { path: () => "/baselines/alder-reference-seven", expected: all(200) },
   "PAGE /designs/[slug]": {
     path: ({ publishedDesignSlug }) => `/designs/${publishedDesignSlug}`,
     expected: all(200),
@@ -312,6 +316,19 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     expected: hostOnly(404),
   },
 
+  "GET /api/v1/designs": { expected: all(200) },
+  "GET /api/v1/compare": {
+    path: ({ publishedEntryId }) => `/api/v1/compare?entries=${publishedEntryId}`,
+    expected: all(200),
+  },
+  "GET /api/v1/compare/csv": {
+    path: ({ publishedEntryId }) => `/api/v1/compare/csv?entries=${publishedEntryId}`,
+    expected: all(200),
+  },
+
+  "PAGE /": { expected: all(200) },
+  "PAGE /designs": { expected: all(200) },
+  "PAGE /compare": { expected: all(200) },
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },
