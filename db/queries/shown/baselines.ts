@@ -1,0 +1,177 @@
+import type { Handle } from "../../client/connect";
+
+export interface ShownBaselineRow {
+  id: string;
+  slug: string;
+  name: string;
+  description: string;
+  blades: number | null;
+}
+
+export interface ShownUnitRow {
+  id: string;
+  baselineId: string;
+  serial: string;
+  inServiceFrom: Date;
+  retiredAt: Date | null;
+  retiredReason: string | null;
+}
+
+/** Baselines that open seasons count, by name, or the one with this address. */
+export async function shownBaselines(db: Handle, { slug }: { slug?: string } = {}): Promise<ShownBaselineRow[]> {
+  return db("shown.baseline")
+    .modify((query) => void (slug !== undefined && query.where({ slug })))
+    .orderBy("name")
+    .select("id", "slug", "name", "description", "blades");
+}
+
+/** Units of baselines, the one that went into service first before the others. */
+export async function shownUnits(
+  db: Handle,
+  { baselineIds }: { baselineIds: readonly string[] },
+): Promise<ShownUnitRow[]> {
+  return db("shown.baseline_unit")
+    .whereIn("baseline_id", [...baselineIds])
+    .orderBy(["in_service_from", "serial"])
+    .select({
+      id: "id",
+      baselineId: "baseline_id",
+      serial: "serial",
+      inServiceFrom: "in_service_from",
+      retiredAt: "retired_at",
+      retiredReason: "retired_reason",
+    });
+}
+
+export interface BaselineSessionRow {
+  unitId: string;
+  session: number;
+  beganAt: Date;
+  season: string;
+  seasonTitle: string;
+  round: number;
+  bench: string;
+  microphoneDistanceMm: number;
+  points: unknown;
+}
+
+/** Most sessions that a page lists. */
+const sessionsMost = 200;
+
+/**
+ * What published sessions read of these units, the newest first: the baseline's points as the snapshot of any entry of
+ * the session froze them.
+ */
+export async function shownBaselineSessions(
+  db: Handle,
+  { unitIds }: { unitIds: readonly string[] },
+): Promise<BaselineSessionRow[]> {
+  const { rows }: { rows: BaselineSessionRow[] } = await db.raw(
+    `select s.baseline_unit_id as "unitId", s.number as session, s.began_at as "beganAt", f.season_slug as season,
+       f.season_title as "seasonTitle", f.round_number as round, b.bench_name || ', version ' || b.number as bench,
+       b.microphone_distance_mm as "microphoneDistanceMm", f.points
+     from shown.session s join shown.bench_version b on b.id = s.bench_version_id
+     cross join lateral (
+       select e.season_slug, e.season_title, e.round_number, p.snapshot -> 'baselinePoints' as points
+       from shown.run r join shown.entry e on e.entry_id = r.entry_id join shown.publication p on p.id = e.publication_id
+       where r.session_id = s.id and p.snapshot ->> 'sessionId' = s.id::text limit 1) f
+     where s.baseline_unit_id = any (:unitIds::uuid[])
+     order by s.began_at desc, s.id limit :sessionsMost`,
+    { unitIds: [...unitIds], sessionsMost },
+  );
+  return rows;
+}
+
+export interface AgreedRow {
+  unitId: string;
+  bench: string;
+  microphoneDistanceMm: number;
+  quantity: "level_dba" | "thermal_resistance_kpw";
+  setSpeed: number;
+  value: number;
+  u: number;
+  from: Date;
+  reason: string;
+}
+
+const benchWords = "b.bench_name || ', version ' || b.number";
+
+/** The agreed values of units on each bench version that hold now: the newest of each quantity and set speed. */
+export async function shownAgreedValues(db: Handle, { unitIds }: { unitIds: readonly string[] }): Promise<AgreedRow[]> {
+  const { rows }: { rows: AgreedRow[] } = await db.raw(
+    `select distinct on (v.baseline_unit_id, b.bench_id, b.number, v.quantity, v.set_speed) v.baseline_unit_id as "unitId",
+       ${benchWords} as bench, b.microphone_distance_mm as "microphoneDistanceMm", v.quantity,
+       v.set_speed as "setSpeed", v.value, v.u, v.from_at as "from", v.reason
+     from shown.baseline_value v join shown.bench_version b on b.id = v.bench_version_id
+     where v.baseline_unit_id = any (:unitIds::uuid[])
+     order by v.baseline_unit_id, b.bench_id, b.number, v.quantity, v.set_speed, v.from_at desc`,
+    { unitIds: [...unitIds] },
+  );
+  return rows;
+}
+
+export interface ShownBridgeRow {
+  fromUnit: string;
+  toUnit: string;
+  bench: string;
+  microphoneDistanceMm: number;
+  quantity: "level_dba" | "thermal_resistance_kpw";
+  setSpeed: number | null;
+  levelDba: number | null;
+  ratio: number | null;
+  difference: number | null;
+  u: number;
+  dof: number | null;
+  sessions: number;
+}
+
+/** Bridges between units of which one is given, the newest first. */
+export async function shownBridges(db: Handle, { unitIds }: { unitIds: readonly string[] }): Promise<ShownBridgeRow[]> {
+  return db("shown.bridge as g")
+    .join("shown.bench_version as b", "b.id", "g.bench_version_id")
+    .where((either) => void either.whereIn("g.unit_from", [...unitIds]).orWhereIn("g.unit_to", [...unitIds]))
+    .orderBy([{ column: "g.created_at", order: "desc" }, "g.quantity", "g.level_dba", "g.set_speed"])
+    .select({
+      fromUnit: "g.unit_from",
+      toUnit: "g.unit_to",
+      bench: db.raw(benchWords),
+      microphoneDistanceMm: "b.microphone_distance_mm",
+      quantity: "g.quantity",
+      setSpeed: "g.set_speed",
+      levelDba: "g.level_dba",
+      ratio: "g.ratio",
+      difference: "g.difference",
+      u: "g.u",
+      dof: "g.dof",
+      sessions: db.raw("cardinality(g.session_ids)"),
+    });
+}
+
+export interface ShownCheckRow {
+  unitId: string;
+  bench: string;
+  quantity: "level_dba" | "thermal_resistance_kpw" | "calibrator_db";
+  setSpeed: number | null;
+  at: Date;
+  value: number;
+  ruleBroken: string | null;
+  centre: number | null;
+  sigma: number | null;
+}
+
+/** Check runs of published sessions, the oldest first, each with the centre and sigma of the phase it fell into. */
+export async function shownChecks(db: Handle, { unitIds }: { unitIds: readonly string[] }): Promise<ShownCheckRow[]> {
+  const { rows }: { rows: ShownCheckRow[] } = await db.raw(
+    `select c.baseline_unit_id as "unitId", ${benchWords} as bench, c.quantity, c.set_speed as "setSpeed", c.at, c.value,
+       c.rule_broken as "ruleBroken", h.centre, h.sigma
+     from shown.baseline_check c join shown.bench_version b on b.id = c.bench_version_id
+     left join lateral (
+       select k.centre, k.sigma from shown.control_phase k
+       where k.baseline_unit_id = c.baseline_unit_id and k.bench_version_id = c.bench_version_id
+         and k.quantity = c.quantity and k.set_speed is not distinct from c.set_speed and k.from_at <= c.at
+       order by k.from_at desc limit 1) h on true
+     where c.baseline_unit_id = any (:unitIds::uuid[]) order by c.at, c.id`,
+    { unitIds: [...unitIds] },
+  );
+  return rows;
+}

@@ -1,0 +1,90 @@
+import { z } from "zod";
+import { slug, time } from "./base";
+import { sheetPointSchema, statedSchema } from "./sheet";
+
+export const baselineParams = z.strictObject({ slug });
+
+const quantity = z.enum(["level_dba", "thermal_resistance_kpw"]);
+
+export const baselineUnitSchema = z.strictObject({
+  serial: z.string(),
+  inServiceFrom: time,
+  retiredAt: time.nullable(),
+  retiredReason: z.string().nullable(),
+});
+export type BaselineUnit = z.infer<typeof baselineUnitSchema>;
+
+export const baselineLineSchema = z.strictObject({
+  slug: z.string(),
+  name: z.string(),
+  description: z.string(),
+  blades: z.int().nullable(),
+  units: z.array(baselineUnitSchema),
+});
+export type BaselineLine = z.infer<typeof baselineLineSchema>;
+export const baselinesSchema = z.strictObject({ items: z.array(baselineLineSchema) });
+
+/** What a published session read of its baseline, set speed by set speed. */
+export const baselineSessionSchema = z.strictObject({
+  serial: z.string(),
+  session: z.int(),
+  beganAt: time,
+  season: z.string(),
+  seasonTitle: z.string(),
+  round: z.int(),
+  bench: z.string(),
+  microphoneDistanceMm: z.number(),
+  points: z.array(sheetPointSchema),
+});
+export type BaselineSession = z.infer<typeof baselineSessionSchema>;
+
+export const agreedValueSchema = z.strictObject({
+  serial: z.string(),
+  bench: z.string(),
+  microphoneDistanceMm: z.number(),
+  quantity,
+  setSpeed: z.number(),
+  value: z.number(),
+  /** Standard uncertainty. */
+  u: z.number(),
+  from: time,
+  reason: z.string(),
+});
+export type AgreedValue = z.infer<typeof agreedValueSchema>;
+
+/** How one unit stands to another, from sessions that ran both: a ratio or a difference, with its 95 % half-width. */
+export const bridgeSchema = z.strictObject({
+  from: z.string(),
+  to: z.string(),
+  bench: z.string(),
+  microphoneDistanceMm: z.number(),
+  quantity,
+  setSpeed: z.number().nullable(),
+  levelDba: z.number().nullable(),
+  kind: z.enum(["ratio", "difference"]),
+  figure: statedSchema,
+  sessions: z.int(),
+});
+export type BaselineBridge = z.infer<typeof bridgeSchema>;
+
+export const baselineCheckSchema = z.strictObject({
+  serial: z.string(),
+  bench: z.string(),
+  quantity: z.enum(["level_dba", "thermal_resistance_kpw", "calibrator_db"]),
+  setSpeed: z.number().nullable(),
+  at: time,
+  value: z.number(),
+  ruleBroken: z.string().nullable(),
+  centre: z.number().nullable(),
+  sigma: z.number().nullable(),
+});
+export type BaselineCheck = z.infer<typeof baselineCheckSchema>;
+
+export const baselineSchema = z.strictObject({
+  ...baselineLineSchema.shape,
+  agreed: z.array(agreedValueSchema),
+  bridges: z.array(bridgeSchema),
+  checks: z.array(baselineCheckSchema),
+  sessions: z.array(baselineSessionSchema),
+});
+export type Baseline = z.infer<typeof baselineSchema>;
