@@ -1,4 +1,5 @@
 import type { BenchSetup } from "@/lib/contracts/bench-admin";
+import type { Protocol } from "@/lib/domain/bench/protocol";
 import type { Handle } from "../client/connect";
 
 /** ISO 8601 in UTC, as answers give times. */
@@ -37,4 +38,22 @@ export async function benchSetupRows(db: Handle): Promise<BenchSetup> {
       coalesce((select jsonb_agg(jsonb_build_object('id', f.id, 'key', f.key) order by f.outer_mm, f.depth_mm) from frame f), '[]') as frames`);
   const [setup] = rows;
   return setup ?? { benches: [], protocols: [], baselines: [], rules: [], frames: [] };
+}
+
+/** A protocol version as far as planning goes; undefined when there is none. */
+export async function planningProtocol(
+  db: Handle,
+  { protocolVersionId }: { protocolVersionId: string },
+): Promise<Protocol | undefined> {
+  return db("protocol_version").where({ id: protocolVersionId }).first<Protocol | undefined>({
+    setSpeeds: "set_speeds",
+    mounts: "mounts",
+    runsPerMount: "runs_per_mount",
+    minutesPerRun: "minutes_per_run",
+    minutesPerMount: "minutes_per_mount",
+    ambientMinC: "ambient_min_c",
+    ambientMaxC: "ambient_max_c",
+    ambientDriftMaxK: "ambient_drift_max_k",
+    calibratorDriftMaxDb: "calibrator_drift_max_db",
+  });
 }

@@ -40,6 +40,9 @@ export const signedIn = (status: number): Statuses => only(status, "member", "ow
 export const staff = (status: number): Statuses => only(status, "operator", "host");
 export const hostOnly = (status: number): Statuses => only(status, "host");
 
+/** `status` for the owner, 404 for everybody else who is signed in. */
+export const ownerElse = (status: number): Statuses => ({ ...signedIn(404), owner: status });
+
 /** Pages send those signed out to sign in (307) instead of answering 401. */
 export const asPage = (statuses: Statuses): Statuses => ({ ...statuses, signedOut: 307, closed: 307 });
 
@@ -50,6 +53,10 @@ const noId = "00000000-0000-0000-0000-000000000000";
 const power = { quantity: "power_w", value: 150 };
 /** The address of something of the host's that isn't there. */
 const under = (what: string, then?: string) => () => `/api/v1/host/${what}/${nowhere}${then ? `/${then}` : ""}`;
+const ownDesign =
+  (then = "") =>
+  ({ ownedDesignSlug }: MatrixFacts) =>
+    `/api/v1/my/designs/${ownedDesignSlug}${then}`;
 const budgetPart = {
   quantity: "delta_t_k",
   name: "Sensor noise",
@@ -147,6 +154,11 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "GET /api/v1/baselines/[slug]": { path: () => "/api/v1/baselines/alder-reference-seven", expected: all(200) },
   "PAGE /baselines": { expected: all(200) },
   "PAGE /baselines/[slug]": { path: () => "/baselines/alder-reference-seven", expected: all(200) },
+  "GET /api/v1/methods": { expected: all(200) },
+  "GET /api/v1/corrections": { expected: all(200) },
+  "GET /corrections/feed.xml": { expected: all(200) },
+  "PAGE /method": { expected: all(200) },
+  "PAGE /corrections": { expected: all(200) },
   "PAGE /designs/[slug]": {
     path: ({ publishedDesignSlug }) => `/designs/${publishedDesignSlug}`,
     expected: all(200),
@@ -329,12 +341,34 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "PAGE /": { expected: all(200) },
   "PAGE /designs": { expected: all(200) },
   "PAGE /compare": { expected: all(200) },
+  "GET /api/v1/my/designs": { expected: signedIn(200) },
+  "POST /api/v1/my/designs": { body: {}, expected: signedIn(400) },
+  // Another's design is as little there as none.
+  "GET /api/v1/my/designs/[slug]": { path: ownDesign(), expected: ownerElse(200) },
+  "POST /api/v1/my/designs/[slug]/revisions": { path: ownDesign("/revisions"), body: {}, expected: signedIn(400) },
+  "POST /api/v1/my/designs/[slug]/entries": {
+    path: ownDesign("/entries"),
+    body: { letter: "ZZ", seasonId: nowhere },
+    expected: signedIn(404),
+  },
+  "POST /api/v1/my/designs/[slug]/entries/[entryId]/moves": {
+    path: ownDesign(`/entries/${nowhere}/moves`),
+    body: { from: "returned", to: "sent_in" },
+    expected: signedIn(404),
+  },
+
   "PAGE /sign-in": { expected: { ...all(307), signedOut: 200, closed: 200 } },
   "PAGE /sign-up": { expected: all(200) },
   "PAGE /verify": { expected: all(200) },
   "PAGE /verify/email": { path: () => "/verify/email?token=x", expected: all(200) },
   "PAGE /reset": { expected: all(200) },
   "PAGE /reset/new": { path: () => "/reset/new?token=x", expected: all(200) },
+  "PAGE /my/designs": { expected: asPage(signedIn(200)) },
+  "PAGE /my/designs/new": { expected: asPage(signedIn(200)) },
+  "PAGE /my/designs/[slug]": {
+    path: ({ ownedDesignSlug }) => `/my/designs/${ownedDesignSlug}`,
+    expected: asPage(ownerElse(200)),
+  },
   "PAGE /my/account": { expected: asPage(signedIn(200)) },
   "PAGE /review": { expected: asPage(signedIn(200)) },
   "PAGE /review/[roundId]": {

@@ -1,5 +1,5 @@
 import { appDb } from "@/db/client/handles";
-import { protocolOf } from "@/db/queries/bench-sessions";
+import { planningProtocol } from "@/db/queries/bench-setup";
 import { hostEntryRows } from "@/db/queries/host-entries";
 import { hostRoundRows, hostSeasonRows, roundRecord } from "@/db/queries/host-seasons";
 import { handlesOf } from "@/db/queries/people";
@@ -13,10 +13,10 @@ import { demand } from "../permission";
 import { hostEntryView } from "./read-entries";
 
 /** Length of a sitting that hours are planned with. */
-export const sittingHours = 10;
+const sittingHours = 10;
 
-export function hoursOf(protocol: Protocol, entries: number): BenchHours | null {
-  const plan = planBench(protocol, entries, sittingHours);
+function hoursOf(protocol: Protocol | undefined, entries: number): BenchHours | null {
+  const plan = protocol && planBench(protocol, entries, sittingHours);
   return plan ? { ...plan, entries, sessionHours: sittingHours } : null;
 }
 
@@ -32,7 +32,7 @@ export async function readHostRound(actor: Actor, { roundId }: { roundId: string
   const placeable = ["accepted", "printing", "on_the_bench"] as const;
   const waiting = await hostEntryRows(db, { seasonId: row.seasonId, states: placeable });
   const free = waiting.filter((entry) => entry.roundId === null);
-  const protocol = await protocolOf(db, season);
+  const protocol = await planningProtocol(db, season);
   const signature = row.state === "in_review" ? undefined : await standingSignature(db, { roundId });
   const handles = await handlesOf(db, { personIds: signature ? [signature.reviewerId] : [] });
   return {

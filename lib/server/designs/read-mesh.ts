@@ -1,0 +1,84 @@
+import { Worker } from "node:worker_threads";
+import { meshReadingResult, type MeshReadingResult } from "@/lib/contracts/mesh-reading";
+import type { ReadingLimits } from "@/lib/science/geometry/reading";
+import { Refusal } from "@/lib/science/refusal";
+
+export interface ThreadOrder {
+  file: string;
+  limits: Partial<ReadingLimits>;
+}
+
+export type ThreadAnswer =
+  | { kind: "progress"; read: number; expected: number | undefined }
+  | { kind: "measuring"; triangles: number }
+  | { kind: "measured"; result: unknown }
+  | { kind: "refused"; code: string; message: string };
+
+export interface MeshReadingControl {
+  /** Told now and then; `measuring` once all triangles are read. */
+  onProgress?: (stage: "reading" | "measuring", triangles: number, expected: number | undefined) => void;
+  /** Ends the reading at once when it is aborted. */
+  signal?: AbortSignal;
+  /** For reading and measuring together. */
+  withinMs?: number;
+  limits?: Partial<ReadingLimits>;
+}
+
+/** Time that reading and measuring one file may take, in ms: within the job's own limit of 300 s. */
+export const meshTimeMaxMs = 180_000;
+const modelBytesMax = 300_000_000;
+/** A thread doesn't inherit what lets its process run TypeScript, so it sets that up itself. */
+const startThread = `
+  import("tsx/esm/api").then(({ register }) => {
+    register();
+    return import(${JSON.stringify(new URL("./read-mesh-thread.ts", import.meta.url).href)});
+  });
+`;
+/** Heap of the thread in MB; typed arrays lie outside it and are bounded by the limits on bytes and triangles. */
+const heapMaxMb = 1_024;
+
+/**
+ * Reads and measures a model file in a thread of its own, in bounded time and memory; the process goes on whatever the
+ * file does to the thread.
+ *
+ * @param file path of a file of this machine
+ * @throws Refusal with the reader's reason; codes "cancelled", "time-limit" and "memory-limit" where it was ended
+ */
+export function readMeshFile(file: string, control: MeshReadingControl = {}): Promise<MeshReadingResult> {
+  const { onProgress, signal, withinMs = meshTimeMaxMs, limits = {} } = control;
+  const order: ThreadOrder = { file, limits: { bytesMax: modelBytesMax, elapsedMsMax: withinMs, ...limits } };
+  const thread = new Worker(startThread, {
+    eval: true,
+    workerData: order,
+    execArgv: [],
+    resourceLimits: { maxOldGenerationSizeMb: heapMaxMb },
+  });
+  return new Promise<MeshReadingResult>((resolve, reject) => {
+    const cancel = (): void => reject(new Refusal("cancelled", "Reading was cancelled."));
+    const timer = setTimeout(() => reject(tooSlow(withinMs)), withinMs);
+    signal?.addEventListener("abort", cancel, { once: true });
+    if (signal?.aborted) cancel();
+    thread.on("message", (answer: ThreadAnswer) => {
+      if (answer.kind === "progress") onProgress?.("reading", answer.read, answer.expected);
+      else if (answer.kind === "measuring") onProgress?.("measuring", answer.triangles, answer.triangles);
+      else if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
+      else {
+        const parsed = meshReadingResult.safeParse(answer.result);
+        if (parsed.success) resolve(parsed.data);
+        else reject(parsed.error);
+      }
+    });
+    thread.on("error", (error) => reject(outOfMemory(error) ? tooBig() : error));
+    thread.on("exit", (code) => reject(new Error(`The reader's thread ended early (${code}).`)));
+    thread.once("exit", () => {
+      clearTimeout(timer);
+      signal?.removeEventListener("abort", cancel);
+    });
+  }).finally(() => void thread.terminate());
+}
+
+const tooSlow = (withinMs: number): Refusal =>
+  new Refusal("time-limit", `Reading took longer than ${Math.round(withinMs / 1000)} s and was stopped.`);
+const tooBig = (): Refusal => new Refusal("memory-limit", "The model needs more memory than one reading may take.");
+const outOfMemory = (error: Error): boolean =>
+  ("code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY") || /array buffer allocation/i.test(error.message);
