@@ -60,6 +60,7 @@ export const environmentSchema = z.object({
   MAIL_FROM: z.preprocess(blankAsMissing, z.string().trim().default("Fanfold <no-reply@localhost>")),
   NEXTAUTH_URL: address("http", "https"),
   NEXTAUTH_SECRET: z.preprocess(blankAsMissing, z.string().min(32, "needs 32 characters or more").optional()),
+  FIRST_HOST_EMAIL: text,
   TRUSTED_PROXIES: list,
   WEBHOOK_ALLOWED_HOSTS: list,
   FANFOLD_DEMO: flag,

@@ -1,8 +1,10 @@
 import { appDb } from "@/db/client/handles";
-import { insertPerson, lockPerson, personByEmail, personByHandle, updatePerson } from "@/db/queries/people";
+import type { Handle } from "@/db/client/connect";
+import { insertPerson, lockHosts, lockPerson, personByEmail, personByHandle, updatePerson } from "@/db/queries/people";
 import { ANONYMOUS } from "@/lib/domain/accounts/actor";
 import { passwordProblem } from "@/lib/domain/accounts/credentials";
 import { ExpectedError } from "@/lib/domain/expected-error";
+import { env } from "@/lib/env/env";
 import { hashPassword } from "@/lib/services/passwords/passwords";
 import { note } from "../audit/audit";
 import { log } from "../log";
@@ -65,5 +67,20 @@ export async function verifyEmail({ token, requestId }: { token: string; request
     await updatePerson(trx, { personId, change: { emailVerifiedAt: new Date() } });
     const asked = { actor: ANONYMOUS, requestId };
     await note(trx, asked, { action: "person.verify", subjectKind: "person", subjectId: personId });
+    if (await isFirstHost(trx, person.email)) {
+      await updatePerson(trx, { personId, change: { role: "host" } });
+      const change = { before: { role: person.role }, after: { role: "host" } };
+      await note(trx, asked, { action: "person.first_host", subjectKind: "person", subjectId: personId, ...change });
+    }
   });
+}
+
+/**
+ * Whether the settings name this address as the first host's and there is none yet. Only who reads its mail gets here:
+ * the token of the letter was spent.
+ */
+async function isFirstHost(trx: Handle, email: string | null): Promise<boolean> {
+  const named = env().FIRST_HOST_EMAIL?.toLowerCase();
+  if (named === undefined || email?.toLowerCase() !== named) return false;
+  return (await lockHosts(trx)).length === 0;
 }
