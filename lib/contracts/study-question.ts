@@ -67,3 +67,18 @@ export function studyAddress(
 /** Tables that can be downloaded: what the page shows, and the very entries that it rests on. */
 export const studyTables = ["effects", "pairs", "distribution", "entries"] as const;
 export type StudyTable = (typeof studyTables)[number];
+
+const many = z.union([word, z.array(word).max(20)]).optional();
+
+/** The question in a program's request: unlike a typed address, a word that says nothing is refused. */
+export const studyQuery = z.strictObject({
+  trait: z.enum(traitKeys).optional(),
+  by: z.enum(traitKeys).optional(),
+  figure: z.enum(outcomeKeys).optional(),
+  frame: many,
+  rotation: z
+    .union([z.enum(["single", "co", "counter"]), z.array(z.enum(["single", "co", "counter"])).max(3)])
+    .optional(),
+  season: word.optional(),
+});
+export const studyTableQuery = studyQuery.extend({ table: z.enum(studyTables).optional() });

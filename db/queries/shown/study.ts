@@ -98,6 +98,14 @@ export async function studyEntries(db: Handle, scope: StudyScope): Promise<Study
   return rows.map(entryOf);
 }
 
+/** Names in addresses of the entries within a scope, by id. */
+export async function studyNames(
+  db: Handle,
+  scope: StudyScope,
+): Promise<{ entryId: string; slug: string; letter: string }[]> {
+  return within(db, scope).select({ entryId: "entry_id", slug: "design_slug", letter: "revision_letter" });
+}
+
 /** Which public revision was made from which public one; in a stable order. */
 export async function studyDerivations(db: Handle): Promise<Derivation[]> {
   return db("shown.derivation")

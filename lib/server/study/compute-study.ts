@@ -9,7 +9,6 @@ import {
 } from "@/db/queries/shown/study";
 import { keepStudyResult } from "@/db/queries/study-results";
 import { studyParams, type StudyQuestion } from "@/lib/contracts/study-question";
-import type { StudyEntry } from "@/lib/domain/study/study-entry";
 import { study, type StudyResult } from "@/lib/domain/study/study";
 import { seasonSlugs } from "./choices";
 
@@ -32,24 +31,27 @@ export function oneView<T>(work: (db: Handle) => Promise<T>): Promise<T> {
   return publicDb().transaction(work, { isolationLevel: "repeatable read", readOnly: true });
 }
 
-/** The public entries that a question asks of; empty for a season that isn't there. */
-export async function entriesAsked(
+/** What a question asks of, and the seasons it comes to; no scope for a season that isn't there, which nothing fits. */
+export async function scopeOf(
   db: Handle,
   question: StudyQuestion,
-): Promise<{ entries: StudyEntry[]; seasonSlugs: string[] }> {
+): Promise<{ scope: StudyScope | undefined; seasonSlugs: string[] }> {
   const seasons = seasonSlugs(question.season, await studyChoices(db));
-  if (seasons === undefined) return { entries: [], seasonSlugs: [question.season] };
-  const scope: StudyScope = { frames: question.frames, rotations: question.rotations, seasons };
-  return { entries: await studyEntries(db, scope), seasonSlugs: seasons };
+  if (seasons === undefined) return { scope: undefined, seasonSlugs: [question.season] };
+  return { scope: { frames: question.frames, rotations: question.rotations, seasons }, seasonSlugs: seasons };
 }
 
 /** Works a question out from what is public now and keeps the answer. */
 export async function computeStudy(question: StudyQuestion): Promise<StudyFound & { generation: number }> {
-  const read = await oneView(async (db) => ({
-    generation: await studyGeneration(db),
-    ...(await entriesAsked(db, question)),
-    derivations: await studyDerivations(db),
-  }));
+  const read = await oneView(async (db) => {
+    const asked = await scopeOf(db, question);
+    return {
+      generation: await studyGeneration(db),
+      seasonSlugs: asked.seasonSlugs,
+      entries: asked.scope ? await studyEntries(db, asked.scope) : [],
+      derivations: await studyDerivations(db),
+    };
+  });
   const traits = [question.trait, question.by].filter((key) => key !== null);
   const result = study({ traits, outcome: question.figure }, read.entries, read.derivations);
   const found = { seasonSlugs: read.seasonSlugs, result };
