@@ -10,6 +10,9 @@ import { MaterialsTable } from "./materials-table";
 const openMesh = "the mesh isn’t closed, so no mass is known";
 const noSection = "the mesh doesn’t tell";
 
+/** A correction below this is rounding of the mesh. */
+const NOTHING_G = 0.002;
+
 const told = (value: number | null, unit: string, decimals: number, why: string) =>
   value === null ? <Missing why={why} /> : `${formatNumber(value, { decimals })} ${unit}`;
 
@@ -26,8 +29,8 @@ function facts(turning: TurningFigures): Fact[] {
     {
       label: "Correction at the hub’s edge",
       value:
-        correctionMassG === null || correctionAngleDeg === null ? (
-          <Missing why={turning.massG === null ? openMesh : "nothing is off"} />
+        correctionMassG === null || correctionAngleDeg === null || correctionMassG < NOTHING_G ? (
+          <Missing why={turning.massG === null ? openMesh : "nothing is off as drawn"} />
         ) : (
           `${formatNumber(correctionMassG, { decimals: 3 })} g at ${formatNumber(correctionAngleDeg)}°`
         ),

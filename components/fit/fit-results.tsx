@@ -3,6 +3,7 @@ import type { ModelState } from "@/lib/client/fit/use-model-reading";
 import { BalanceSection } from "./balance-section";
 import type { CompareWith } from "./compare-fields";
 import { CrossingsSection } from "./crossings-section";
+import { DrawingSection } from "./drawing-section";
 import { FrameSection } from "./frame-section";
 import { TraitsSection } from "./traits-section";
 import { ValiditySection } from "./validity-section";
@@ -24,6 +25,7 @@ export function FitResults({ state, limits, chosen }: FitResultsProps) {
     <>
       <TraitsSection measured={measured} />
       {frame ? <FrameSection measured={measured} frame={frame} season={season} /> : null}
+      <DrawingSection name={model.name} drawn={state.drawn} />
       {first && second ? (
         <CrossingsSection
           key={`${first.blades}-${second.blades}-${first.hand}-${second.hand}`}

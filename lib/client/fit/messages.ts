@@ -1,4 +1,5 @@
 import type { MeshAnalysis, RotorTraits } from "@/lib/science/geometry/analysis-types";
+import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import type { ModelFormat } from "@/lib/science/geometry/model-file";
 import type { MeshWarning } from "@/lib/science/geometry/reading";
 import type { LengthUnit } from "@/lib/science/geometry/units";
@@ -33,4 +34,6 @@ export type WorkerAnswer =
   | { readonly kind: "progress"; readonly job: number; readonly read: number; readonly expected: number | undefined }
   | { readonly kind: "read"; readonly job: number; readonly model: ModelFile }
   | { readonly kind: "measured"; readonly job: number; readonly measured: ModelMeasured }
+  /** After `measured`, as drawing takes a while longer. `svg` is both views as one document. */
+  | { readonly kind: "drawn"; readonly job: number; readonly drawing: FanDrawing; readonly svg: string }
   | { readonly kind: "refused"; readonly job: number; readonly code: string; readonly message: string };

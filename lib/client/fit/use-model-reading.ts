@@ -1,5 +1,6 @@
 "use client";
 
+import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import { useCallback, useEffect, useRef, useState } from "react";
 import type { ModelFile, ModelMeasured, WorkerAnswer, WorkerRequest } from "./messages";
 
@@ -15,6 +16,8 @@ export type ModelState =
       readonly model: ModelFile;
       readonly mmPerUnit: number;
       readonly measured: ModelMeasured;
+      /** Follows a little later. */
+      readonly drawn: { readonly drawing: FanDrawing; readonly svg: string } | undefined;
     }
   | { readonly step: "refused"; readonly name: string; readonly code: string; readonly message: string };
 
@@ -65,7 +68,16 @@ export function useModelReading(): ModelReadingActs {
         if (model.guess === "mm") measureIn(model.mmPerUnit ?? 1);
       }
       if (message.kind === "measured" && at.step === "measuring") {
-        go({ step: "measured", model: at.model, mmPerUnit: at.mmPerUnit, measured: message.measured });
+        go({
+          step: "measured",
+          model: at.model,
+          mmPerUnit: at.mmPerUnit,
+          measured: message.measured,
+          drawn: undefined,
+        });
+      }
+      if (message.kind === "drawn" && at.step === "measured") {
+        go({ ...at, drawn: { drawing: message.drawing, svg: message.svg } });
       }
       if (message.kind === "refused") {
         const name = "model" in at ? at.model.name : "name" in at ? at.name : "";

@@ -1,5 +1,7 @@
 import { MEASURED_AT, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
+import { fanDrawing } from "@/lib/science/geometry/drawing/fan-drawing";
+import { drawingSvg } from "@/lib/science/geometry/drawing/svg-text";
 import { meshBounds, scaledMesh, type Mesh } from "@/lib/science/geometry/mesh";
 import { readModelFile } from "@/lib/science/geometry/model-file";
 import type { ByteSource } from "@/lib/science/geometry/reading";
@@ -51,8 +53,10 @@ async function read(job: number, file: File): Promise<void> {
 function measure(job: number, mmPerUnit: number): void {
   if (kept?.job !== job) throw new Refusal("not-read", "The file is no longer there; choose it again.");
   const inMm = mmPerUnit === 1 ? kept.mesh : scaledMesh(kept.mesh, mmPerUnit);
-  const { mesh: _judged, ...measured } = analyseMesh(inMm, MEASURED_AT);
+  const { mesh: judged, ...measured } = analyseMesh(inMm, MEASURED_AT);
   answer({ kind: "measured", job, measured });
+  const drawing = fanDrawing(judged, measured);
+  answer({ kind: "drawn", job, drawing, svg: drawingSvg(drawing) });
 }
 
 function refuse(job: number, error: unknown): void {

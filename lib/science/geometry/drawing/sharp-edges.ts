@@ -1,6 +1,7 @@
 import { DisjointSets } from "../disjoint-sets";
 import type { Mesh } from "../mesh";
 import { meshEdges, type MeshEdges } from "./mesh-edges";
+import { shellSeams, type Seam } from "./shell-seams";
 
 /** What a drawing of a mesh needs whatever it is seen from. */
 export interface DrawableMesh {
@@ -10,12 +11,13 @@ export interface DrawableMesh {
   readonly normals: Float64Array;
   /** 1 for an edge that is drawn from wherever it is seen: a crease, the border of a flat face, an open edge. */
   readonly sharp: Uint8Array;
+  readonly seams: readonly Seam[];
 }
 
 /** Triangles within this of one plane are one face. */
 const FLAT_COS = Math.cos((0.6 * Math.PI) / 180);
 /** Borders of large flat faces are drawn from this angle on, edges inside curved regions only when they are creases. */
-const BORDER_COS = Math.cos((14 * Math.PI) / 180);
+const BORDER_COS = Math.cos((18 * Math.PI) / 180);
 const CREASE_COS = Math.cos((45 * Math.PI) / 180);
 /** A flat face is large above this share of the mesh's area, or when it has many triangles. */
 const LARGE_SHARE = 0.004;
@@ -23,7 +25,7 @@ const LARGE_SHARE = 0.004;
 /**
  * Finds what is sharp in a mesh. No one angle suits all meshes: the corners of a thin plate may be flatter than the
  * facets of a coarse cylinder. So triangles of one plane are grouped into faces; the border of a large face is drawn
- * from 14° on, and elsewhere an edge has to be a crease of 45° (house values, tried on meshes of rotors).
+ * from 18° on, and elsewhere an edge has to be a crease of 45° (house values, tried on meshes of rotors).
  */
 export function drawableMesh(mesh: Mesh): DrawableMesh {
   const edges = meshEdges(mesh);
@@ -55,7 +57,7 @@ export function drawableMesh(mesh: Mesh): DrawableMesh {
     const border = cosine < BORDER_COS && (large(s) || large(t));
     if (open || cosine < CREASE_COS || border) sharp[e] = 1;
   }
-  return { mesh, edges, normals, sharp };
+  return { mesh, edges, normals, sharp, seams: shellSeams(mesh, edges) };
 }
 
 const dotOf = (n: Float64Array, s: number, t: number): number =>

@@ -63,3 +63,9 @@ export function seeMesh(mesh: Mesh, view: View, about: Vec3): SeenMesh {
   }
   return { x, y, depth, triangles };
 }
+
+/** One point as seen: x to the right, y up, depth towards the eye, mm. */
+export function seePoint(point: Vec3, { right, up, towards }: View, about: Vec3): Vec3 {
+  const from: Vec3 = [point[0] - about[0], point[1] - about[1], point[2] - about[2]];
+  return [dot(from, right), dot(from, up), dot(from, towards)];
+}
