@@ -66,8 +66,11 @@ function rankWords(item: IndexItem): BarsCell {
 const fullSpeed = (quantity: string) => (facts: ListFacts) =>
   facts.fullSetSpeed === undefined ? `${quantity}, full speed` : `${quantity}, ${formatNumber(facts.fullSetSpeed)} rpm`;
 
-/** Every column that the index has beside the design's name, in the order in which they stand. */
+/** Every column that the index has beside the design's name, in the order in which they stand:
+ * what is sorted by first, so that a phone shows it beside the name. */
 export const indexColumns: readonly IndexColumn[] = [
+  figure("equal", 1, (item) => [item.equalNoiseK, item.uEqualNoiseK], whyNoEqualNoise, { signed: true, strong: true }),
+  figure("ratio", 1, (item) => [item.equalNoisePercent, item.uEqualNoisePercent], whyNoEqualNoise, { strong: true }),
   { key: "designer", head: "Designer", cell: ({ designers }) => ({ words: designers.join(", ") }) },
   words("stages", "Stages", stagesWords),
   words("blades", "Blades", bladesWords),
@@ -97,8 +100,6 @@ export const indexColumns: readonly IndexColumn[] = [
       figure: { value: deltaTFullK, uncertainty: uDeltaTFullK, decimals: 1 },
     }),
   },
-  figure("equal", 1, (item) => [item.equalNoiseK, item.uEqualNoiseK], whyNoEqualNoise, { signed: true, strong: true }),
-  figure("ratio", 1, (item) => [item.equalNoisePercent, item.uEqualNoisePercent], whyNoEqualNoise, { strong: true }),
   figure("cooling", 1, (item) => [item.equalCoolingDb, item.uEqualCoolingDb], "no one level cools like the baseline", {
     signed: true,
   }),
@@ -126,8 +127,8 @@ export const indexColumns: readonly IndexColumn[] = [
 ];
 
 const usual = {
-  comparable: ["designer", "stages", "blades", "inlet", "leveldba", "deltat", "equal", "rank"],
-  ratios: ["designer", "stages", "blades", "inlet", "ratio", "level", "rank", "season"],
+  comparable: ["equal", "designer", "stages", "blades", "inlet", "leveldba", "deltat", "rank"],
+  ratios: ["ratio", "designer", "stages", "blades", "inlet", "level", "rank", "season"],
 } as const;
 
 /** The columns that may be shown over these entries. A figure that nothing has yet isn't offered. */

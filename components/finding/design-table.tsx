@@ -1,4 +1,5 @@
 import Link from "next/link";
+import type { ReactNode } from "react";
 import { BarsTable } from "@/components/tables/bars-table";
 import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 import { indexAddress, type IndexAnswer, type IndexItem, type IndexQuery } from "@/lib/contracts/index-query";
@@ -34,7 +35,28 @@ function headOf(column: IndexColumn, facts: ListFacts, query: IndexQuery): BarsC
   };
 }
 
-function rowOf(item: IndexItem, columns: readonly IndexColumn[]): BarsRow {
+type Piece = { text: string; hit: boolean };
+
+/** The name with what was typed marked in it, where the search service found it there. */
+function nameWords(item: IndexItem, pieces: readonly Piece[] | undefined): ReactNode {
+  if (!pieces || pieces.map((piece) => piece.text).join("") !== item.name) return entryName(item);
+  return (
+    <>
+      {pieces.map(({ text, hit }, index) =>
+        hit ? (
+          <mark key={index} className="bg-transparent text-inherit decoration-4">
+            {text}
+          </mark>
+        ) : (
+          text
+        ),
+      )}{" "}
+      {item.letter}
+    </>
+  );
+}
+
+function rowOf(item: IndexItem, columns: readonly IndexColumn[], pieces: readonly Piece[] | undefined): BarsRow {
   const name = entryName(item);
   const token = entryToken(item);
   return {
@@ -45,7 +67,7 @@ function rowOf(item: IndexItem, columns: readonly IndexColumn[]): BarsRow {
         words: (
           <>
             <Link href={`/designs/${item.slug}`} className="sm:whitespace-nowrap">
-              {name}
+              {nameWords(item, pieces)}
             </Link>
             {item.corrections > 0 ? <span className="small-print"> corrected</span> : null}
           </>
@@ -77,7 +99,7 @@ export function DesignTable({ answer, query, columns, distanceMm }: DesignTableP
         name,
         ...columns.map((column) => headOf(column, facts, query)),
       ]}
-      rows={answer.items.map((item) => rowOf(item, columns))}
+      rows={answer.items.map((item) => rowOf(item, columns, answer.highlights?.[item.entryId]?.name))}
     />
   );
 }

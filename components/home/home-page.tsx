@@ -19,7 +19,13 @@ export function HomePage({ counts, corrections, latest }: HomePageProps) {
           Designers send in models. Each is printed, spun up behind a guard and run on one air cooler beside the same
           baseline fan: how loud it is, and how warm the cooler gets. Then it is read where both are equally loud.
         </p>
-        <form role="search" action="/designs" method="get" className="mt-5 flex flex-wrap items-end gap-3">
+        <form
+          role="search"
+          aria-label="The whole index"
+          action="/designs"
+          method="get"
+          className="mt-5 flex flex-wrap items-end gap-3"
+        >
           <div className="field w-full max-w-md">
             <label className="field-label" htmlFor="home-words">
               Find a design, designer or material
