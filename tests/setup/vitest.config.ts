@@ -16,12 +16,12 @@ const plain = (name: string, extra: Record<string, unknown> = {}) => ({
 });
 
 /** Real servers answer, so a hook may wait for one to come up; no test asserts on time. */
-const patient = { testTimeout: 30_000, hookTimeout: 120_000 };
+const patient = { testTimeout: 120_000, hookTimeout: 300_000 };
 
 /** Runs against the product as `npm start` serves it, one file after the other: they share its database. */
 const served = {
   ...patient,
-  testTimeout: 120_000,
+  testTimeout: 240_000,
   globalSetup: ["tests/setup/server-setup.ts"],
   fileParallelism: false,
 };
@@ -32,12 +32,12 @@ export default defineConfig({
   test: {
     maxWorkers: 2,
     projects: [
-      plain("architecture", { testTimeout: 60_000 }),
-      plain("unit"),
-      plain("reference", { testTimeout: 30_000 }),
-      plain("recorded", { testTimeout: 30_000 }),
+      plain("architecture", { testTimeout: 180_000 }),
+      plain("unit", { testTimeout: 120_000 }),
+      plain("reference", { testTimeout: 180_000 }),
+      plain("recorded", { testTimeout: 120_000 }),
       plain("db", { ...patient, globalSetup: ["tests/setup/cluster-setup.ts"] }),
-      plain("faults", { ...patient, testTimeout: 240_000, fileParallelism: false }),
+      plain("faults", { ...patient, testTimeout: 400_000, fileParallelism: false }),
       plain("api", served),
       plain("browser", served),
     ],
