@@ -40,7 +40,7 @@ const take = async (csv: string, query: Record<string, string>, by = room.operat
     await takeLog(asked(by), {
       sessionId,
       query: logQuery.parse({ kind: "temperature", ...query }),
-      body: bytesOf(csv),
+      request: csvRequest(csv),
     }),
   );
 const readingsOf = async (runId: string) =>
@@ -151,5 +151,26 @@ describe("a level log", () => {
     ).rejects.toMatchObject({ code: "not_found" });
     await setRunState(asked(room.operator), { runId, version: 1, state: "discarded", reason: "belt slipped" });
     await expect(take(levelCsv(45, 46, 60), query)).rejects.toMatchObject({ code: "moved_on" });
+  });
+
+  it("is refused as another kind of file, and beyond 64 MB while it comes, before anything is kept", async () => {
+    const runId = await newRun();
+    const query = logQuery.parse({ runId, kind: "level" });
+    const send = (request: Request) => takeLog(asked(room.operator), { sessionId, query, request });
+    const words = new Request("http://bench.example/", { method: "POST", body: "x" });
+    await expect(send(words)).rejects.toMatchObject({ code: "wrong_kind" });
+    const megabyte = new TextEncoder().encode(`0.5,45.0,${"x".repeat(54)}\n`.repeat(2 ** 14));
+    let sent = 0;
+    const endless = new ReadableStream<Uint8Array>({
+      pull(controller) {
+        sent += 1;
+        controller.enqueue(sent === 1 ? new TextEncoder().encode("time (s),LAeq (dB(A)),note\n") : megabyte);
+      },
+    });
+    const headers = { "content-type": "text/csv" };
+    const long = new Request("http://bench.example/", { method: "POST", body: endless, headers, duplex: "half" });
+    await expect(send(long)).rejects.toMatchObject({ code: "too_large" });
+    expect(sent).toBeLessThan(70);
+    expect(await db.owner("log_file").where({ run_id: runId })).toEqual([]);
   });
 });
