@@ -102,7 +102,7 @@ function leftOutWords({
   const parts = [
     severalTraits > 0 && `${severalTraits} changed several traits`,
     noTrait > 0 && `${noTrait} changed none that is read`,
-    otherBaseline > 0 && `${otherBaseline} were measured against another baseline unit and can’t be compared`,
+    otherBaseline > 0 && `${otherBaseline} were measured against another baseline unit, so the two are on no common scale here`,
     otherDesigner > 0 && `${otherDesigner} have another designer`,
     notReached > 0 && `${notReached} didn’t reach the level`,
   ].filter((words) => words !== false);

@@ -137,6 +137,9 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
     path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings.csv`,
     expected: all(200),
   },
+  "GET /api/v1/traits": { path: () => "/api/v1/traits?trait=blades&by=inlet", expected: all(200) },
+  "GET /api/v1/traits/csv": { path: () => "/api/v1/traits/csv?table=pairs", expected: all(200) },
+  "PAGE /traits": { expected: all(200) },
   "GET /api/v1/seasons": { expected: all(200) },
   "GET /api/v1/seasons/[slug]": { path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}`, expected: all(200) },
   "GET /api/v1/seasons/[slug]/rounds/[number]": {
