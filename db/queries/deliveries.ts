@@ -10,19 +10,37 @@ export interface DeliveryRow {
   subject: Record<string, unknown>;
 }
 
-/** Takes the next waiting delivery of these consumers, locked until the transaction ends; others pass it by. */
-export async function nextDelivery(
+const columns = `d.id, d.event_id as "eventId", d.consumer, d.target, d.attempts, e.kind, e.subject`;
+
+/**
+ * Takes the next waiting delivery of these consumers and notes that it is begun; no other worker takes it from then on.
+ * Workers that look at once pass each other by.
+ */
+export async function beginDelivery(
   db: Handle,
   { consumers, now }: { consumers: readonly string[]; now: Date },
 ): Promise<DeliveryRow | undefined> {
   const { rows }: { rows: DeliveryRow[] } = await db.raw(
-    `select d.id, d.event_id as "eventId", d.consumer, d.target, d.attempts, e.kind, e.subject
-     from delivery d join event e on e.id = d.event_id
-     where d.state = 'waiting' and d.next_at <= :now and d.consumer = any (:consumers)
-     order by d.next_at, d.id limit 1 for update of d skip locked`,
+    `update delivery d set begun_at = :now from event e
+     where e.id = d.event_id and d.id = (
+       select w.id from delivery w
+       where w.state = 'waiting' and w.begun_at is null and w.next_at <= :now and w.consumer = any (:consumers)
+       order by w.next_at, w.id limit 1 for update skip locked)
+     returning ${columns}`,
     { consumers: [...consumers], now },
   );
   return rows[0];
+}
+
+/** Gives up deliveries that were begun before a moment and of which nothing was heard. @returns how many */
+export async function giveUpBroken(
+  db: Handle,
+  { begunBefore, note }: { begunBefore: Date; note: string },
+): Promise<number> {
+  return db("delivery")
+    .where({ state: "waiting" })
+    .where("begun_at", "<", begunBefore)
+    .update({ state: "failed", attempts: db.raw("attempts + 1"), last_error: note });
 }
 
 export async function markSent(db: Handle, { deliveryId, at }: { deliveryId: number; at: Date }): Promise<void> {
@@ -40,6 +58,7 @@ export async function markFailed(
       state: nextAt ? "waiting" : "failed",
       attempts: db.raw("attempts + 1"),
       last_error: error.slice(0, 500),
+      begun_at: null,
       ...(nextAt && { next_at: nextAt }),
     });
 }

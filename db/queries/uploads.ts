@@ -86,6 +86,47 @@ export async function changeUpload(
     });
 }
 
+/** Ends an upload that isn't finished, with a reason. @returns whether there was one to end */
+export async function endUpload(
+  db: Handle,
+  { uploadId, reason, finishedAt }: { uploadId: string; reason: string; finishedAt: Date },
+): Promise<boolean> {
+  const ended = await db("upload")
+    .where({ id: uploadId })
+    .whereIn("state", ["sending", "received"])
+    .update({ state: "refused", reason, finished_at: finishedAt });
+  return ended > 0;
+}
+
+/** Tells how far a file's reading is. @returns false when the upload was ended meanwhile */
+export async function tellProgress(
+  db: Handle,
+  { uploadId, progress }: { uploadId: string; progress: Record<string, unknown> },
+): Promise<boolean> {
+  const told = await db("upload")
+    .where({ id: uploadId, state: "received" })
+    .update({ progress: JSON.stringify(progress) });
+  return told > 0;
+}
+
+/** Why a file of this content was taken down; undefined when none was. */
+export async function takenDownReason(db: Handle, { sha256 }: { sha256: string }): Promise<string | undefined> {
+  const row = await db("file").where({ sha256, state: "taken_down" }).first<{ reason: string } | undefined>("reason");
+  return row?.reason;
+}
+
+/** A person's latest uploads for one subject, newest first. */
+export async function uploadsOf(
+  db: Handle,
+  { personId, subjectId, limit = 20 }: { personId: string; subjectId: string; limit?: number },
+): Promise<UploadRow[]> {
+  return db("upload")
+    .where({ person_id: personId, subject_id: subjectId })
+    .orderBy([{ column: "created_at", order: "desc" }, { column: "id" }])
+    .limit(limit)
+    .select<UploadRow[]>(columns);
+}
+
 /** The file of this content: the one that is there already, or a new one. Nobody is told which. */
 export async function fileOfContent(
   db: Handle,
@@ -111,18 +152,16 @@ export async function fileOfContent(
 export async function attachFile(
   db: Handle,
   { revisionId, fileId, role, name }: { revisionId: string; fileId: string; role: string; name: string },
-): Promise<void> {
+): Promise<string> {
   const last = await db("attachment")
     .where({ revision_id: revisionId, role })
     .max<{ max: number | null }>("ordinal as max")
     .first();
-  await db("attachment").insert({
-    revision_id: revisionId,
-    file_id: fileId,
-    role,
-    name,
-    ordinal: (last?.max ?? 0) + 1,
-  });
+  const [made]: { id: string }[] = await db("attachment")
+    .insert({ revision_id: revisionId, file_id: fileId, role, name, ordinal: (last?.max ?? 0) + 1 })
+    .returning("id");
+  if (!made) throw new Error("no attachment came back");
+  return made.id;
 }
 
 /** Who owns the design of a revision today, and whether it was sent in; undefined for no such revision. */
@@ -139,13 +178,13 @@ export async function revisionForUpload(
   return rows[0];
 }
 
-/** Uploads that nobody finished since a moment; for the sweep. */
+/** Uploads that were neither finished nor read since a moment; for the sweep. */
 export async function abandonedUploads(
   db: Handle,
   { before, limit = 100 }: { before: Date; limit?: number },
 ): Promise<UploadRow[]> {
   return db("upload")
-    .where({ state: "sending" })
+    .whereIn("state", ["sending", "received"])
     .where("created_at", "<", before)
     .limit(limit)
     .select<UploadRow[]>(columns);

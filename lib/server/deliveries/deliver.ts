@@ -2,9 +2,10 @@ import { appDb } from "@/db/client/handles";
 import type { Handle } from "@/db/client/connect";
 import {
   addTargets,
+  beginDelivery,
+  giveUpBroken,
   markFailed,
   markSent,
-  nextDelivery,
   peopleToTell,
   roundLetter,
   type DeliveryRow,
@@ -50,23 +51,29 @@ async function deliverMail(tx: Handle, { eventId, consumer, target, kind, subjec
   });
 }
 
+/** A letter that was begun this long ago and never noted belongs to a worker that is no more; sending has its own limits. */
+const silenceMaxMs = 15 * minute;
+const broken = "A worker stopped between sending and noting it: it may have arrived, so it isn't sent again.";
+
 /** Works one delivery that waits. @returns whether there was one */
 export async function deliverNext(now: Date, db: Handle = appDb()): Promise<boolean> {
-  return db.transaction(async (tx) => {
-    const delivery = await nextDelivery(tx, { consumers: Object.keys(consumers), now });
-    if (!delivery) return false;
-    try {
-      await tx.transaction(async (inner) => consumers[delivery.consumer]?.(inner, delivery));
+  const given = await giveUpBroken(db, { begunBefore: new Date(now.getTime() - silenceMaxMs), note: broken });
+  if (given > 0) log().warn({ given }, "deliveries that broke off");
+  const delivery = await beginDelivery(db, { consumers: Object.keys(consumers), now });
+  if (!delivery) return false;
+  try {
+    await db.transaction(async (tx) => {
+      await consumers[delivery.consumer]?.(tx, delivery);
       await markSent(tx, { deliveryId: delivery.id, at: now });
-    } catch (error) {
-      const message = error instanceof Error ? error.message : String(error);
-      const later =
-        delivery.attempts + 1 < attemptsMost ? new Date(now.getTime() + minute * 2 ** delivery.attempts) : null;
-      await markFailed(tx, { deliveryId: delivery.id, error: message, nextAt: later });
-      log().warn({ deliveryId: delivery.id, consumer: delivery.consumer, again: later }, "delivery failed");
-    }
-    return true;
-  });
+    });
+  } catch (error) {
+    const message = error instanceof Error ? error.message : String(error);
+    const again =
+      delivery.attempts + 1 < attemptsMost ? new Date(now.getTime() + minute * 2 ** delivery.attempts) : null;
+    await markFailed(db, { deliveryId: delivery.id, error: message, nextAt: again });
+    log().warn({ deliveryId: delivery.id, consumer: delivery.consumer, again }, "delivery failed");
+  }
+  return true;
 }
 
 const pollMs = 5_000;

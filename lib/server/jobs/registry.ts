@@ -24,7 +24,7 @@ interface Schedule<N extends QueueName> {
 
 /** What the worker does with each queue. A queue without a handler is left to another worker. */
 export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
-  "file-read": ({ uploadId }) => readQuarantinedFile(uploadId, new Date()),
+  "file-read": ({ uploadId }) => readQuarantinedFile(uploadId, () => new Date()),
   "search-rebuild": () => askForRebuild(appDb()),
   "search-compare": async () => void (await compareIndex()),
   sweep: async () => {

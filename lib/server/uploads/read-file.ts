@@ -1,53 +1,77 @@
-import { createHash } from "node:crypto";
 import { appDb } from "@/db/client/handles";
-import { abandonedUploads, attachFile, changeUpload, fileOfContent, uploadBy } from "@/db/queries/uploads";
-import { uploadPurposes } from "@/lib/contracts/uploads";
-import { fileKind } from "@/lib/domain/designs/file-kind";
+import { insertMeshReading } from "@/db/queries/mesh-readings";
+import {
+  abandonedUploads,
+  attachFile,
+  changeUpload,
+  endUpload,
+  fileOfContent,
+  takenDownReason,
+  uploadBy,
+  type UploadRow,
+} from "@/db/queries/uploads";
+import type { MeshReadingResult } from "@/lib/contracts/mesh-reading";
+import { uploadPurposes, type UploadProgress } from "@/lib/contracts/uploads";
+import { READER_VERSION } from "@/lib/science/geometry/reader-version";
+import { Refusal } from "@/lib/science/refusal";
 import { dropQuarantined, quarantined } from "@/lib/services/quarantine/quarantine";
-import { storage } from "@/lib/services/storage/from-env";
+import { contentOf, keepContent, photographOf, type Content } from "./content";
+import { measureModel } from "./measure-model";
 
 const day = 86_400_000;
 
 /**
- * Reads an upload that is all there: its SHA-256, its kind by content; then it is copied to its content address if
- * nothing is there yet, and attached to what it is for. A kind that isn't taken is refused with the reason. Working it
- * twice does nothing the second time.
+ * Reads an upload that is all there: its SHA-256, its kind by content, and a model's mesh; then it is copied to its
+ * content address if nothing is there yet, and attached to what it is for. What isn't taken is refused with the reason.
+ * All of it is done for every upload, whether its content is known or not, so that nobody learns which. Working it twice
+ * does nothing the second time.
  */
-export async function readQuarantinedFile(uploadId: string, now: Date): Promise<void> {
+export async function readQuarantinedFile(uploadId: string, now: () => Date): Promise<void> {
   const row = await uploadBy(appDb(), { uploadId });
   if (!row || row.state !== "received") return;
-  const { open, bytes } = await quarantined(row.quarantineKey);
-  const { sha256, kind } = await readOnce(await open(), bytes);
-  const { kinds } = uploadPurposes[row.purpose];
-  if (bytes !== row.bytes || !(kinds as readonly string[]).includes(kind)) {
-    const reason =
-      bytes === row.bytes ? `This is ${kind}; taken are ${kinds.join(", ")}.` : "The length is not the announced one.";
-    await changeUpload(appDb(), { uploadId, state: "refused", reason, finishedAt: now });
-    await dropQuarantined(row.quarantineKey);
-    return;
+  try {
+    const { open, bytes } = await quarantined(row.quarantineKey);
+    if (bytes !== row.bytes) throw new Refusal("length", "The length is not the announced one.");
+    const content = await takenContent(row, await contentOf(open, bytes));
+    const mesh = row.purpose === "model" ? await measureModel(row.id, content) : undefined;
+    await keep(row, content, mesh, now());
+  } catch (error) {
+    if (!(error instanceof Refusal)) throw error;
+    await endUpload(appDb(), { uploadId, reason: error.message, finishedAt: now() });
   }
-  const storageKey = `content/${sha256.slice(0, 2)}/${sha256}`;
-  if (!(await storage().head(storageKey))) await storage().put(storageKey, await open(), bytes);
-  await appDb().transaction(async (tx) => {
-    const still = await uploadBy(tx, { uploadId, lock: true });
-    if (still?.state !== "received") return;
-    const fileId = await fileOfContent(tx, { sha256, bytes, kind, storageKey, receivedFrom: row.personId });
-    if (row.purpose !== "log" && row.purpose !== "recording") {
-      await attachFile(tx, { revisionId: row.subjectId, fileId, role: row.purpose, name: row.name });
-    }
-    await changeUpload(tx, { uploadId, state: "read", fileId, progress: { bytes, kind }, finishedAt: now });
-  });
   await dropQuarantined(row.quarantineKey);
 }
 
-async function readOnce(body: AsyncIterable<Uint8Array>, bytes: number) {
-  const hash = createHash("sha256");
-  let head = new Uint8Array(0);
-  for await (const piece of body) {
-    hash.update(piece);
-    if (head.length < 1024) head = Uint8Array.from([...head, ...piece.subarray(0, 1024 - head.length)]);
+/** What is kept of an upload. @throws Refusal for a kind that isn't taken, a picture that can't be opened, what was taken down */
+async function takenContent({ purpose }: UploadRow, sent: Content): Promise<Content> {
+  const { kinds } = uploadPurposes[purpose];
+  if (!(kinds as readonly string[]).includes(sent.kind)) {
+    const what = sent.kind === "unknown" ? "of no kind that is known here" : sent.kind;
+    throw new Refusal("wrong-kind", `By its content this file is ${what}; taken are ${kinds.join(", ")}.`);
   }
-  return { sha256: hash.digest("hex"), kind: fileKind(head, bytes) };
+  const kept = purpose === "photograph" ? await photographOf(sent) : sent;
+  if (!kept) throw new Refusal("broken-picture", "The picture can't be opened: it is broken or too large to draw.");
+  const gone = await takenDownReason(appDb(), { sha256: kept.sha256 });
+  if (gone !== undefined) throw new Refusal("taken-down", `A file of this content was taken down: ${gone}`);
+  return kept;
+}
+
+async function keep(row: UploadRow, content: Content, mesh: MeshReadingResult | undefined, now: Date): Promise<void> {
+  const { sha256, bytes, kind } = content;
+  const storageKey = await keepContent(content);
+  await appDb().transaction(async (tx) => {
+    const still = await uploadBy(tx, { uploadId: row.id, lock: true });
+    if (still?.state !== "received") return;
+    const fileId = await fileOfContent(tx, { sha256, bytes, kind, storageKey, receivedFrom: row.personId });
+    if (mesh) await insertMeshReading(tx, { fileId, readerVersion: READER_VERSION, result: mesh });
+    const progress: UploadProgress & { attachmentId?: string } = { stage: "done", kind };
+    if (row.purpose === "model") progress.measured = mesh !== undefined;
+    if (row.purpose !== "log" && row.purpose !== "recording") {
+      const place = { revisionId: row.subjectId, fileId, role: row.purpose, name: row.name };
+      progress.attachmentId = await attachFile(tx, place);
+    }
+    await changeUpload(tx, { uploadId: row.id, state: "read", fileId, progress, finishedAt: now });
+  });
 }
 
 /** Forgets uploads that nobody finished within a day. */
@@ -55,12 +79,7 @@ export async function sweepUploads(now: Date): Promise<number> {
   const abandoned = await abandonedUploads(appDb(), { before: new Date(now.getTime() - day) });
   for (const { id, quarantineKey } of abandoned) {
     await dropQuarantined(quarantineKey);
-    await changeUpload(appDb(), {
-      uploadId: id,
-      state: "refused",
-      reason: "It was not finished within a day.",
-      finishedAt: now,
-    });
+    await endUpload(appDb(), { uploadId: id, reason: "It was not finished within a day.", finishedAt: now });
   }
   return abandoned.length;
 }

@@ -22,7 +22,9 @@ export interface Mailer {
  * @param from the sender, as `Name <address>`
  */
 export function smtpMailer(url: string, from: string): Mailer {
-  const transport = nodemailer.createTransport(url, { from });
+  // One server that hangs holds up nobody else for long.
+  const waits = { connectionTimeout: 10_000, greetingTimeout: 10_000, socketTimeout: 30_000 };
+  const transport = nodemailer.createTransport({ url, ...waits }, { from });
   return {
     async send({ to, subject, text, html }) {
       const sent = await transport.sendMail({
