@@ -75,11 +75,11 @@ function bridgeWords(bridge: BaselineBridge): string {
   const what = quantity === "level_dba" ? "level" : "ΔT/P";
   if (kind === "ratio") {
     const percent = writeMeasured({ value: 100 * figure.value, uncertainty: 100 * figure.u95, decimals: 1 }, "%");
-    return `${what} of ${bridge.to} is ${percent} of ${bridge.from}’s at ${at}`;
+    return `${what} of ${bridge.from} is ${percent} of ${bridge.to}’s at ${at}`;
   }
   const unit = quantity === "level_dba" ? "dB" : "K/W";
   const difference = writeMeasured({ value: figure.value, uncertainty: figure.u95, decimals: 2, signed: true }, unit);
-  return `${what} of ${bridge.to} less ${bridge.from}’s is ${difference} at ${at}`;
+  return `${what} of ${bridge.from} less ${bridge.to}’s is ${difference} at ${at}`;
 }
 
 /** What each unit is agreed to read on each bench version, and how one unit stands to the next; absent without any. */
@@ -110,7 +110,8 @@ export function AgreedSection({ baseline }: { baseline: Baseline }) {
             ))}
           </ul>
           <p className="small-print mt-2">
-            ± is 95 % coverage. Ratios to different units compare only through these, with their uncertainty added.
+            ± is 95 % coverage. A ratio to the first unit times this is a ratio to the second. Ratios to different units
+            compare only through these, with their uncertainty added.
           </p>
         </Section>
       ) : null}

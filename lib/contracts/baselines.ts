@@ -52,7 +52,7 @@ export const agreedValueSchema = z.strictObject({
 });
 export type AgreedValue = z.infer<typeof agreedValueSchema>;
 
-/** How one unit stands to another, from sessions that ran both: a ratio or a difference, with its 95 % half-width. */
+/** What a ratio to the unit `from` is multiplied by to be one to `to` (or the difference), from sessions that ran both. */
 export const bridgeSchema = z.strictObject({
   from: z.string(),
   to: z.string(),

@@ -169,7 +169,7 @@ export async function seedBench(db: Knex): Promise<DemoBench> {
     await one(db, "baseline_unit", {
       baseline_id: baselineId,
       serial: "ARS-02",
-      in_service_from: "2026-06-20T09:00:00Z",
+      in_service_from: "2026-05-11T09:00:00Z",
     }),
   ];
   return {

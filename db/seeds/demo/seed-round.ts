@@ -50,7 +50,7 @@ async function moveEntries(db: Knex, entries: readonly { id: string; owner: stri
 
 /**
  * Brings a round as far as its measurements go: entries sent in, accepted, printed, spun up, measured in sessions of
- * five, and put to review. In a round that is being measured the last session stays open and its entries on the bench.
+ * five, and put to review; the last session also runs `bridgeUnitId` where one is given. In a round that is being measured the last session stays open and its entries on the bench.
  */
 export async function seedRound(
   db: Knex,
@@ -59,6 +59,7 @@ export async function seedRound(
   cast: DemoCast,
   season: DemoSeason,
   round: DemoRound,
+  bridgeUnitId?: string,
 ): Promise<DemoRoundIds> {
   const host = id(cast.people, "alderkeeper");
   const operator = id(cast.people, "benchwright");
@@ -146,7 +147,15 @@ export async function seedRound(
     }));
     const beganAt = new Date(measuredAt.getTime() + (from / entriesPerSession) * day);
     sessionIds.push(
-      await seedSession(db, random, bench, { season, roundId, operatorId: operator, beganAt, subjects, closed }),
+      await seedSession(db, random, bench, {
+        season,
+        roundId,
+        operatorId: operator,
+        beganAt,
+        subjects,
+        closed,
+        bridgeUnitId: last ? bridgeUnitId : undefined,
+      }),
     );
     if (closed) done.push(...here);
   }

@@ -11,6 +11,8 @@ export interface DemoSeason {
 }
 
 const months = 6;
+/** Declared levels of every season, dB(A) at the bench's microphone. */
+export const demoLevelsDba: readonly number[] = [40, 46, 52];
 
 /** Seasons follow each other every six months; the second bench version and later the second baseline unit come in between. */
 export async function seedSeasons(db: Knex, bench: DemoBench, count: number): Promise<DemoSeason[]> {
@@ -34,7 +36,7 @@ export async function seedSeasons(db: Knex, bench: DemoBench, count: number): Pr
           "One revision a design and season. It must fit the frame, clear the keep-out solids and pass the spin-up. The score is the mean ratio of ΔT/P to the session's baseline at the declared levels.",
         protocol_version_id: protocolVersionId,
         scoring_rule_version_id: bench.equalNoiseRuleId,
-        levels_dba: [40, 46, 52],
+        levels_dba: [...demoLevelsDba],
         headline_dba: 46,
         total_depth_max_mm: 90,
         inlet_stack_max_mm: 30,

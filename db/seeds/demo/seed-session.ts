@@ -1,9 +1,9 @@
 import type { Knex } from "knex";
 import { v7 as uuidv7 } from "uuid";
-import type { Random } from "@/lib/science/statistics/random";
+import { createRandom, type Random } from "@/lib/science/statistics/random";
 import type { DemoBench } from "./seed-bench";
 import type { DemoSeason } from "./seed-seasons";
-import { levelDba, referenceFan, resistanceKPerW, type ToyFan } from "./toy-model";
+import { levelDba, referenceFan, resistanceKPerW, secondReferenceFan, type ToyFan } from "./toy-model";
 
 /** Something on the bench: an entry's specimen, or the baseline unit. */
 export interface DemoSubject {
@@ -19,12 +19,15 @@ export interface DemoSession {
   operatorId: string;
   beganAt: Date;
   subjects: readonly DemoSubject[];
+  /** Another baseline unit that runs as well, before the last mount of the session's own. */
+  bridgeUnitId?: string;
   /** False leaves the session open, with the baseline's last mount still to come. */
   closed: boolean;
 }
 
 const setSpeeds = [750, 1100, 1450, 1800];
 const mounts = 3;
+const bridgeSeed = 7_002;
 const round1 = (value: number): number => Math.round(value * 10) / 10;
 
 interface Draft {
@@ -196,6 +199,12 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
   for (const mount of [1, 2]) measureMount(random, c, baseline, mount, draft);
   for (const subject of session.subjects)
     for (let mount = 1; mount <= mounts; mount += 1) measureMount(random, c, subject, mount, draft);
+  if (session.bridgeUnitId) {
+    // A draw of its own, so that the rest of the demo is the same with the bridge and without.
+    const bridge: DemoSubject = { fan: secondReferenceFan, baselineUnitId: session.bridgeUnitId };
+    const aside = createRandom(bridgeSeed);
+    for (let mount = 1; mount <= mounts; mount += 1) measureMount(aside, c, bridge, mount, draft);
+  }
   if (session.closed) measureMount(random, c, baseline, 3, draft);
   await insertDraft(db, draft);
   if (session.closed) {

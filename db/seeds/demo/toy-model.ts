@@ -92,3 +92,6 @@ export const referenceFan: ToyFan = {
   luckCooling: 0,
   luckLevelDb: 0,
 };
+
+/** A second printed copy of it, which differs a little, as copies do. */
+export const secondReferenceFan: ToyFan = { ...referenceFan, luckCooling: -0.004, luckLevelDb: 0.15 };

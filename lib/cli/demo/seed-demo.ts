@@ -4,7 +4,7 @@ import { seedBench } from "@/db/seeds/demo/seed-bench";
 import { seedDesigns } from "@/db/seeds/demo/seed-designs";
 import { demoPassword, seedPeople } from "@/db/seeds/demo/seed-people";
 import { seedRound, type DemoRoundIds } from "@/db/seeds/demo/seed-round";
-import { seedSeasons } from "@/db/seeds/demo/seed-seasons";
+import { demoLevelsDba, seedSeasons } from "@/db/seeds/demo/seed-seasons";
 import { drawWorld, type DemoSize } from "@/db/seeds/demo/world";
 import { setPublishAt } from "@/db/queries/schedule";
 import { moveRound } from "@/db/queries/moves";
@@ -13,12 +13,14 @@ import { createRandom } from "@/lib/science/statistics/random";
 import { publishRound } from "@/lib/server/publishing/publish-round";
 import { computeSession } from "@/lib/server/results/compute-session";
 import { signRound } from "@/lib/server/review/sign-round";
+import { agreeBaselineValues, bridgeBaselines } from "./seed-baselines";
 
 const worldSeed = 20_240;
 const benchSeed = 7_001;
 /** Fewer than a host's standing has, so that the demo is there in seconds; the standing says so. */
 const demoDraws = 400;
 const day = 86_400_000;
+const publishedAfterDays = 10;
 
 export const demoSize: DemoSize = { seasons: 4, roundsPerSeason: 6, entriesPerRound: 16 };
 
@@ -35,18 +37,31 @@ export async function seedDemo(db: Handle, size: DemoSize = demoSize): Promise<v
   const random = createRandom(benchSeed);
   const reviewer = actorOf(people, "secondlook", "operator");
   const host = actorOf(people, "alderkeeper", "host");
+  const agreed = new Set<string>();
   for (const round of world.rounds) {
     const season = seasons[round.season - 1];
     if (!season) throw new Error(`the demo has no season ${round.season}`);
-    const made = await seedRound(db, random, bench, { people, revisions }, season, round);
+    const isLast = world.rounds.findLast((each) => each.season === round.season) === round;
+    const nextUnitId = seasons[round.season]?.baselineUnitId;
+    const bridgeUnitId = isLast && nextUnitId !== season.baselineUnitId ? nextUnitId : undefined;
+    const made = await seedRound(db, random, bench, { people, revisions }, season, round, bridgeUnitId);
     for (const sessionId of made.sessionIds) await computeSession(db, sessionId);
-    if (round.ends === "published") await signAndPublish(db, made, reviewer, host);
+    if (round.ends !== "published") continue;
+    await signAndPublish(db, made, reviewer, host);
+    const at = new Date(made.measuredAt.getTime() + publishedAfterDays * day);
+    const ran = `${season.baselineUnitId} ${season.benchIndex}`;
+    if (!agreed.has(ran)) await agreeBaselineValues(db, made.sessionIds, at);
+    agreed.add(ran);
+    const lastSession = made.sessionIds.at(-1);
+    if (bridgeUnitId && lastSession) {
+      await bridgeBaselines(db, { sessionId: lastSession, toUnitId: bridgeUnitId, levelsDba: demoLevelsDba, at });
+    }
   }
 }
 
 async function signAndPublish(db: Handle, { roundId, measuredAt }: DemoRoundIds, reviewer: Person, host: Person) {
   const signedAt = new Date(measuredAt.getTime() + 8 * day);
-  const publishedAt = new Date(measuredAt.getTime() + 10 * day);
+  const publishedAt = new Date(measuredAt.getTime() + publishedAfterDays * day);
   await signRound({ actor: reviewer, requestId: null }, { roundId, remark: "", at: signedAt }, db);
   await db.transaction(async (tx) => {
     await setPublishAt(tx, { roundId, publishAt: publishedAt });

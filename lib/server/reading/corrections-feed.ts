@@ -1,4 +1,4 @@
-import { env } from "@/lib/env/env";
+import { siteOrigin } from "@/lib/env/site";
 import { readCorrections } from "./read-corrections";
 
 const escapes: Readonly<Record<string, string>> = {
@@ -29,14 +29,9 @@ function entry(origin: string, { key, title, at, text }: Item): string {
   ].join("\n");
 }
 
-/**
- * The ledger as an Atom feed (RFC 4287), the newest first.
- *
- * @param host as the request named it; counts only where no public address is set
- */
-export async function correctionsFeed(host: string): Promise<string> {
-  const { NEXTAUTH_URL: address } = env();
-  const origin = address === undefined ? `http://${host}` : new URL(address).origin;
+/** The ledger as an Atom feed (RFC 4287), the newest first. */
+export async function correctionsFeed(): Promise<string> {
+  const origin = siteOrigin();
   const { corrections, questions } = await readCorrections();
   const items: Item[] = [
     ...corrections.map((each) => ({
