@@ -1,5 +1,6 @@
 import { NumberField } from "@/components/ui/number-field";
 import { Select } from "@/components/ui/field";
+import { Slot } from "@/components/ui/slot";
 import type { FitLimits } from "@/lib/contracts/fit-limits";
 
 /** What a model is compared with. */
@@ -8,6 +9,8 @@ export type CompareWith = {
   seasonSlug: string;
   speedRpm: number | undefined;
   densityGCm3: number | undefined;
+  /** The file's axis points at the cooler. */
+  turned: boolean;
 };
 
 export type CompareFieldsProps = {
@@ -19,7 +22,7 @@ export type CompareFieldsProps = {
 /** Frame, season, speed and density: set before or after the model, they hold at once. */
 export function CompareFields({ limits, chosen, onChange }: CompareFieldsProps) {
   return (
-    <div className="grid max-w-4xl gap-4 sm:grid-cols-2 lg:grid-cols-4">
+    <div className="grid max-w-4xl items-start gap-4 sm:grid-cols-2 lg:grid-cols-4">
       <Select
         label="Frame"
         value={chosen.frameKey}
@@ -54,6 +57,13 @@ export function CompareFields({ limits, chosen, onChange }: CompareFieldsProps) 
         defaultValue={chosen.densityGCm3}
         onValue={(densityGCm3) => onChange({ densityGCm3 })}
       />
+      <div className="sm:col-span-2 lg:col-span-4">
+        <Slot
+          label="The file’s axis points at the cooler, not away from it"
+          checked={chosen.turned}
+          onChange={(event) => onChange({ turned: event.target.checked })}
+        />
+      </div>
     </div>
   );
 }

@@ -1,6 +1,6 @@
 "use client";
 
-import { useState } from "react";
+import { useEffect, useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Progress } from "@/components/ui/progress";
 import { Section } from "@/components/ui/sheet";
@@ -55,13 +55,21 @@ function Reading({ state, measureIn, cancel }: ModelReadingActs) {
 /** A model is dropped, read beside the page, and compared with a frame, a season and a bench. */
 export function FitDesk({ limits }: { limits: FitLimits }) {
   const reading = useModelReading();
-  const { state, choose } = reading;
+  const { state, choose, compare } = reading;
   const [chosen, setChosen] = useState<CompareWith>({
     frameKey: limits.seasons[0]?.frameKeys[0] ?? limits.frames[0]?.key ?? "",
     seasonSlug: limits.seasons[0]?.slug ?? "",
     speedRpm: BENCH_RPM,
     densityGCm3: PLA_GCM3,
+    turned: false,
   });
+  const measured = state.step === "measured" ? state.measured : undefined;
+  const { frameKey, seasonSlug, turned } = chosen;
+  useEffect(() => {
+    const frame = limits.frames.find((each) => each.key === frameKey);
+    const season = limits.seasons.find((each) => each.slug === seasonSlug);
+    if (measured && frame) compare({ frame, season, turned });
+  }, [measured, limits, frameKey, seasonSlug, turned, compare]);
   return (
     <>
       <Section

@@ -24,7 +24,7 @@ export function FitResults({ state, limits, chosen }: FitResultsProps) {
   return (
     <>
       <TraitsSection measured={measured} />
-      {frame ? <FrameSection measured={measured} frame={frame} season={season} /> : null}
+      {frame ? <FrameSection compared={state.compared} frame={frame} season={season} /> : null}
       <DrawingSection name={model.name} drawn={state.drawn} />
       {first && second ? (
         <CrossingsSection

@@ -1,54 +1,74 @@
 import { Facts } from "@/components/ui/facts";
-import { Missing } from "@/components/ui/missing";
 import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/sheet";
+import { LoadingState } from "@/components/ui/states";
 import type { FitFrame, FitSeason } from "@/lib/contracts/fit-limits";
-import { compareWithFrame } from "@/lib/client/fit/frame-comparison";
-import type { ModelMeasured } from "@/lib/client/fit/messages";
+import type { Comparison } from "@/lib/client/fit/compare-model";
 import { formatNumber } from "@/lib/format/numbers";
+import { KeepOutTable } from "./keep-out-table";
 
 const mm = (value: number) => `${formatNumber(value, { decimals: 2 })} mm`;
 
-export type FrameSectionProps = { measured: ModelMeasured; frame: FitFrame; season: FitSeason | undefined };
+export type FrameSectionProps = {
+  compared: { readonly comparison: Comparison | undefined } | undefined;
+  frame: FitFrame;
+  season: FitSeason | undefined;
+};
 
-/** The model against a frame and a season's limits: fits or not, by how much, and what to change. */
-export function FrameSection({ measured, frame, season }: FrameSectionProps) {
-  const { fit, tipGapMm, depthMm, seasonReasons } = compareWithFrame(measured, frame, season);
-  const reasons = [...(fit?.reasons ?? []), ...seasonReasons];
-  const noRotor = <Missing why="no rotor was found in the file" />;
-  const against = `the frame ${frame.key}${season ? ` and ${season.title}` : ""}`;
+function Verdict({ reasons, against }: { reasons: readonly string[]; against: string }) {
+  if (reasons.length === 0) return <p className="text-lg font-bold">It fits {against}.</p>;
   return (
-    <Section id="frame" title="Frame and season" note={`against ${against}`} className="grid gap-4">
-      {reasons.length > 0 ? (
-        <Notice kind="wrong" title={`it doesn’t fit ${against}`}>
-          <ul className="mt-1 list-[square] space-y-1 pl-5">
-            {reasons.map((reason) => (
-              <li key={reason}>{reason}</li>
-            ))}
-          </ul>
-        </Notice>
-      ) : fit ? (
-        <p className="text-lg font-bold">It fits {against}.</p>
-      ) : (
-        <p>Without a rotor there is no tip gap to judge.</p>
-      )}
-      <Facts
-        flow="strip"
-        facts={[
-          { label: "Tip gap, nominal", value: tipGapMm === undefined ? noRotor : mm(tipGapMm) },
-          { label: "Smallest clearance after tolerance", value: fit ? mm(fit.smallestClearanceMm) : noRotor },
-          { label: "Bore of the frame", value: mm(frame.boreMm) },
-          { label: "Tolerance", value: `${mm(frame.toleranceMm)} a side` },
-          { label: "Depth in all", value: mm(depthMm) },
-          ...(season?.totalDepthMaxMm ? [{ label: "Depth allowed", value: mm(season.totalDepthMaxMm) }] : []),
-          ...(season && season.inletStackMaxMm !== null
-            ? [{ label: "Inlet stack allowed", value: mm(season.inletStackMaxMm) }]
-            : []),
-        ]}
-      />
+    <Notice kind="wrong" title={`it doesn’t fit ${against}`}>
+      <ul className="mt-1 list-[square] space-y-1 pl-5">
+        {reasons.map((reason) => (
+          <li key={reason}>{reason}</li>
+        ))}
+      </ul>
+    </Notice>
+  );
+}
+
+/** The model against a frame, a season's limits and what stands around the cooler: fits or not, and what to change. */
+export function FrameSection({ compared, frame, season }: FrameSectionProps) {
+  const against = `the frame ${frame.key}${season ? ` and ${season.title}` : ""}`;
+  const comparison = compared?.comparison;
+  return (
+    <Section id="frame" title="Frame, season and bench" note={`against ${against}`} className="grid gap-4">
+      {compared ? null : <LoadingState label="Comparing" rows={4} />}
+      {compared && !comparison ? <p>Without a rotor there is no tip gap to judge and nothing that turns.</p> : null}
+      {comparison ? (
+        <>
+          <Verdict
+            against={against}
+            reasons={[
+              ...comparison.limits.reasons,
+              ...comparison.keepOuts.flatMap(({ meets, name, change }) =>
+                meets ? `${name}: ${change ?? "in the way"}.` : [],
+              ),
+            ]}
+          />
+          <Facts
+            flow="strip"
+            facts={[
+              { label: "Tip gap, nominal", value: mm(comparison.limits.tipGapMm) },
+              { label: "Smallest clearance in the frame", value: mm(comparison.limits.smallestClearanceMm) },
+              { label: "Bore of the frame", value: mm(frame.boreMm) },
+              { label: "Tolerance, taken off", value: `${mm(frame.toleranceMm)} a side` },
+              { label: "Depth in all", value: mm(comparison.limits.depthMm) },
+              { label: "Past the frame, inlet side", value: mm(comparison.limits.inletMm) },
+              ...(season?.totalDepthMaxMm ? [{ label: "Depth allowed", value: mm(season.totalDepthMaxMm) }] : []),
+              ...(season && season.inletStackMaxMm !== null
+                ? [{ label: "Inlet stack allowed", value: mm(season.inletStackMaxMm) }]
+                : []),
+            ]}
+          />
+          {season && season.keepOuts.length > 0 ? <KeepOutTable comparison={comparison} season={season} /> : null}
+        </>
+      ) : null}
       <p className="small-print max-w-3xl">
-        Rotors are taken as centred in the frame’s bore and depth. Frame presets are common practice without a standard
-        behind them; measure yours. A tip gap under 0.5 mm is small for a printed rotor: runout and warmth use it up.
+        Each rotor is taken as centred in a frame of its own, the first frame on the cooler’s mounting face. Frame
+        presets are common practice without a standard behind them; measure yours. A tip gap under 0.5 mm is small for a
+        printed rotor: runout and warmth use it up.
       </p>
     </Section>
   );

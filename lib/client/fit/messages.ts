@@ -4,6 +4,8 @@ import type { ModelFormat } from "@/lib/science/geometry/model-file";
 import type { MeshWarning } from "@/lib/science/geometry/reading";
 import type { LengthUnit } from "@/lib/science/geometry/units";
 
+import type { Comparison, Surroundings } from "./compare-model";
+
 /** Density and speed that the worker measures at; every figure is carried from there to those on the page. */
 export const MEASURED_AT = { densityGCm3: 1, speedRpm: 1000 } as const;
 
@@ -28,7 +30,9 @@ export type ModelMeasured = Omit<MeshAnalysis, "mesh">;
 
 export type WorkerRequest =
   | { readonly kind: "read"; readonly job: number; readonly file: File }
-  | { readonly kind: "measure"; readonly job: number; readonly mmPerUnit: number };
+  | { readonly kind: "measure"; readonly job: number; readonly mmPerUnit: number }
+  /** Against a frame, a season and its bench; only once the model is measured. */
+  | { readonly kind: "compare"; readonly job: number; readonly ask: number; readonly around: Surroundings };
 
 export type WorkerAnswer =
   | { readonly kind: "progress"; readonly job: number; readonly read: number; readonly expected: number | undefined }
@@ -36,4 +40,11 @@ export type WorkerAnswer =
   | { readonly kind: "measured"; readonly job: number; readonly measured: ModelMeasured }
   /** After `measured`, as drawing takes a while longer. `svg` is both views as one document. */
   | { readonly kind: "drawn"; readonly job: number; readonly drawing: FanDrawing; readonly svg: string }
+  /** The answer to the comparison `ask`; undefined where there is no rotor to compare. */
+  | {
+      readonly kind: "compared";
+      readonly job: number;
+      readonly ask: number;
+      readonly comparison: Comparison | undefined;
+    }
   | { readonly kind: "refused"; readonly job: number; readonly code: string; readonly message: string };

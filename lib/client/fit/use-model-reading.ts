@@ -2,6 +2,7 @@
 
 import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import { useCallback, useEffect, useRef, useState } from "react";
+import type { Comparison, Surroundings } from "./compare-model";
 import type { ModelFile, ModelMeasured, WorkerAnswer, WorkerRequest } from "./messages";
 
 /** Where the reading of a model stands. */
@@ -18,6 +19,8 @@ export type ModelState =
       readonly measured: ModelMeasured;
       /** Follows a little later. */
       readonly drawn: { readonly drawing: FanDrawing; readonly svg: string } | undefined;
+      /** The latest answer to `compare`; undefined before it. */
+      readonly compared: { readonly comparison: Comparison | undefined } | undefined;
     }
   | { readonly step: "refused"; readonly name: string; readonly code: string; readonly message: string };
 
@@ -28,6 +31,8 @@ export interface ModelReadingActs {
   /** Measures the model in a unit, mm per file unit. */
   measureIn(mmPerUnit: number): void;
   cancel(): void;
+  /** Compares the measured model; the answer comes as the state's `compared`. The latest question counts. */
+  compare(around: Surroundings): void;
 }
 
 const makeWorker = (): Worker => new Worker(new URL("../workers/mesh-reader.worker.ts", import.meta.url));
@@ -37,6 +42,7 @@ export function useModelReading(): ModelReadingActs {
   const [state, setState] = useState<ModelState>({ step: "none" });
   const worker = useRef<Worker | undefined>(undefined);
   const job = useRef(0);
+  const ask = useRef(0);
   const now = useRef(state);
   const go = useCallback((next: ModelState) => {
     now.current = next;
@@ -79,6 +85,9 @@ export function useModelReading(): ModelReadingActs {
       if (message.kind === "drawn" && at.step === "measured") {
         go({ ...at, drawn: { drawing: message.drawing, svg: message.svg } });
       }
+      if (message.kind === "compared" && at.step === "measured" && message.ask === ask.current) {
+        go({ ...at, compared: { comparison: message.comparison } });
+      }
       if (message.kind === "refused") {
         const name = "model" in at ? at.model.name : "name" in at ? at.name : "";
         go({ step: "refused", name, code: message.code, message: message.message });
@@ -118,5 +127,13 @@ export function useModelReading(): ModelReadingActs {
     go({ step: "none" });
   }, [go, start]);
 
-  return { state, choose, measureIn, cancel };
+  const compare = useCallback(
+    (around: Surroundings) => {
+      ask.current += 1;
+      send({ kind: "compare", job: job.current, ask: ask.current, around });
+    },
+    [send],
+  );
+
+  return { state, choose, measureIn, cancel, compare };
 }

@@ -1,4 +1,5 @@
-import { MEASURED_AT, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
+import { compareModel, type Surroundings } from "@/lib/client/fit/compare-model";
+import { MEASURED_AT, type ModelMeasured, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
 import { fanDrawing } from "@/lib/science/geometry/drawing/fan-drawing";
 import { drawingSvg } from "@/lib/science/geometry/drawing/svg-text";
@@ -10,7 +11,7 @@ import { Refusal } from "@/lib/science/refusal";
 
 /** Reads, measures and draws a model beside the page; the file never leaves the browser. */
 const PROGRESS_EVERY_MS = 80;
-let kept: { job: number; mesh: Mesh } | undefined;
+let kept: { job: number; mesh: Mesh; judged?: { mesh: Mesh; measured: ModelMeasured } } | undefined;
 
 const answer = (message: WorkerAnswer): void => self.postMessage(message);
 
@@ -54,9 +55,21 @@ function measure(job: number, mmPerUnit: number): void {
   if (kept?.job !== job) throw new Refusal("not-read", "The file is no longer there; choose it again.");
   const inMm = mmPerUnit === 1 ? kept.mesh : scaledMesh(kept.mesh, mmPerUnit);
   const { mesh: judged, ...measured } = analyseMesh(inMm, MEASURED_AT);
+  kept.judged = { mesh: judged, measured };
   answer({ kind: "measured", job, measured });
   const drawing = fanDrawing(judged, measured);
   answer({ kind: "drawn", job, drawing, svg: drawingSvg(drawing) });
+}
+
+function compare(job: number, ask: number, around: Surroundings): void {
+  if (kept?.job !== job || !kept.judged) return;
+  answer({ kind: "compared", job, ask, comparison: compareModel(kept.judged.mesh, kept.judged.measured, around) });
+}
+
+async function work(request: WorkerRequest): Promise<void> {
+  if (request.kind === "read") await read(request.job, request.file);
+  if (request.kind === "measure") measure(request.job, request.mmPerUnit);
+  if (request.kind === "compare") compare(request.job, request.ask, request.around);
 }
 
 function refuse(job: number, error: unknown): void {
@@ -70,6 +83,5 @@ function refuse(job: number, error: unknown): void {
 }
 
 self.addEventListener("message", ({ data }: MessageEvent<WorkerRequest>) => {
-  const work = data.kind === "read" ? read(data.job, data.file) : (async () => measure(data.job, data.mmPerUnit))();
-  work.catch((error: unknown) => refuse(data.job, error));
+  work(data).catch((error: unknown) => refuse(data.job, error));
 });
