@@ -33,6 +33,7 @@ const demoNote = "Demo: every design, person and figure is invented. Letters tha
 const accountLinks: readonly AccountLink[] = [
   { href: "/my/designs", word: "My designs" },
   { href: "/my/comparisons", word: "Kept comparisons" },
+  { href: "/review", word: "Review" },
   { href: "/my/account", word: "Account" },
 ];
 
