@@ -90,14 +90,17 @@ function addWords(query: Knex.QueryBuilder, words: string): void {
       void either
         .whereILike("design_name", like)
         .orWhereILike("material", like)
-        .orWhereRaw("exists (select 1 from unnest(designers) as d(handle) where d.handle ilike ?)", [like]);
+        .orWhereRaw("design_id in (select d.design_id from shown.designer d where d.handle ilike ?)", [like]);
     });
   }
 }
 
 function addFacet(query: Knex.QueryBuilder, facet: FacetKey, values: readonly string[]): void {
   const { column } = facets[facet];
-  if (facet === "designer") void query.whereRaw("designers && ?::text[]", [[...values]]);
+  if (facet === "designer")
+    void query.whereRaw("design_id in (select d.design_id from shown.designer d where d.handle = any (?::text[]))", [
+      [...values],
+    ]);
   else void query.whereRaw(`??::text = any (?::text[])`, [column, [...values]]);
 }
 

@@ -42,11 +42,12 @@ async function groupedCounts(
 
 /** One designer's handle a row, since a design may have several. */
 async function designerCounts(db: Handle, question: IndexQuery): Promise<{ value: string; count: number }[]> {
-  const inner = asked(db, question, "designer").select(db.raw("unnest(designers) as value"));
+  const inner = asked(db, question, "designer").select("design_id");
   return db
-    .from(inner.as("v"))
-    .groupBy("value")
-    .select("value", db.raw("count(*)::int as count"))
+    .from(inner.as("e"))
+    .join("shown.designer as d", "d.design_id", "e.design_id")
+    .groupBy("d.handle")
+    .select({ value: "d.handle" }, db.raw("count(*)::int as count"))
     .orderBy([{ column: "count", order: "desc" }, "value"])
     .limit(mostValues);
 }

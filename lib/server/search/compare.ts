@@ -1,11 +1,10 @@
 import type { Handle } from "@/db/client/connect";
-import { noteComparison } from "@/db/queries/search-build";
+import { noteComparison, searchBuild } from "@/db/queries/search-build";
 import { markDirty, waitingAmong } from "@/db/queries/search-outbox";
 import { searchSourcesAfter, searchSourcesByIds } from "@/db/queries/search-sources";
 import { searchDocument } from "@/search/document";
 import { DESIGNS_INDEX } from "@/search/settings";
 import { documentPage, dropIndex, isBuild, ourIndexes } from "@/search/write";
-import { searchBuild } from "@/db/queries/search-build";
 import { log } from "../log";
 import { outlet, type Outlet } from "./outlet";
 
@@ -34,30 +33,41 @@ async function indexRevs({ client }: Outlet): Promise<Map<string, string>> {
 }
 
 /**
- * Compares the index with the database, document by document, and marks what differs, so that the sender mends it.
- * Entries that wait to be sent anyway, or changed while it looked, are no differences. An index that a rebuild put aside
- * a day ago is dropped.
+ * Compares the index with the database, document by document. Entries that wait to be sent anyway, or changed while it
+ * looked, are no differences.
  *
- * @returns ids that differed; undefined where there is no index: the sender makes one
+ * @returns ids that differ; undefined where there is no index: the sender makes one
  */
-export async function compareIndex(from: Outlet = outlet(), now = new Date()): Promise<string[] | undefined> {
-  const indexes = await ourIndexes(from.client());
-  const build = await searchBuild(from.db);
-  for (const [uid, { updatedAt }] of indexes) {
-    const isOld = now.getTime() - updatedAt.getTime() > day;
-    if (isBuild(uid) && uid !== build?.indexUid && isOld) await dropIndex(from.client(), uid);
-  }
-  if (!indexes.has(DESIGNS_INDEX)) return undefined;
+export async function indexDifferences(from: Outlet): Promise<string[] | undefined> {
+  if (!(await ourIndexes(from.client())).has(DESIGNS_INDEX)) return undefined;
   const held = await indexRevs(from);
   const wanted = await databaseRevs(from.db);
   const suspects = [...new Set([...held.keys(), ...wanted.keys()])].filter((id) => held.get(id) !== wanted.get(id));
-  const differing = await stillDiffering(from.db, suspects, held);
+  return stillDiffering(from.db, suspects, held);
+}
+
+/**
+ * The nightly comparison: marks what differs, so that the sender mends it, and reports it. An index that a rebuild put
+ * aside a day ago is dropped.
+ *
+ * @returns ids that differed; undefined where there is no index
+ */
+export async function compareIndex(from: Outlet = outlet(), now = new Date()): Promise<string[] | undefined> {
+  const build = await searchBuild(from.db);
+  for (const [uid, { updatedAt }] of await ourIndexes(from.client())) {
+    const isOld = now.getTime() - updatedAt.getTime() > day;
+    if (isBuild(uid) && uid !== build?.indexUid && isOld) await dropIndex(from.client(), uid);
+  }
+  const differing = await indexDifferences(from);
+  if (!differing) return undefined;
   await markDirty(from.db, { entryIds: differing });
   await noteComparison(from.db, { differences: differing.length });
-  const report = { documents: held.size, entries: wanted.size, differences: differing.length };
   if (differing.length > 0)
-    log().error({ ...report, entryIds: differing.slice(0, 20) }, "search index differed and is mended");
-  else log().info(report, "search index agrees");
+    log().error(
+      { differences: differing.length, entryIds: differing.slice(0, 20) },
+      "search index differed and is mended",
+    );
+  else log().info("search index agrees with the database");
   return differing;
 }
 
