@@ -32,14 +32,19 @@ export async function beginDelivery(
   return rows[0];
 }
 
-/** Gives up deliveries that were begun before a moment and of which nothing was heard. @returns how many */
-export async function giveUpBroken(
+/**
+ * Settles deliveries that were begun before a moment and of which nothing was heard. One with a target may have reached
+ * it: it is given up with a note. One without only makes others, once however often it is tried: it waits again.
+ * @returns how many were given up
+ */
+export async function settleBroken(
   db: Handle,
   { begunBefore, note }: { begunBefore: Date; note: string },
 ): Promise<number> {
-  return db("delivery")
-    .where({ state: "waiting" })
-    .where("begun_at", "<", begunBefore)
+  const broken = () => db("delivery").where({ state: "waiting" }).where("begun_at", "<", begunBefore);
+  await broken().where({ target: "" }).update({ begun_at: null });
+  return broken()
+    .whereNot({ target: "" })
     .update({ state: "failed", attempts: db.raw("attempts + 1"), last_error: note });
 }
 

@@ -72,6 +72,15 @@ const notThis = "this is not the password";
 export const matrix: Readonly<Record<string, MatrixRow>> = {
   "GET /api/auth/[...nextauth]": { path: () => "/api/auth/csrf", expected: all(200) },
   "POST /api/auth/[...nextauth]": { path: () => "/api/auth/callback/credentials", body: {}, expected: all(415) },
+  // Other people's uploads and files are answered like none.
+  "GET /api/v1/uploads": { path: () => `/api/v1/uploads?subject=${nowhere}`, expected: signedIn(200) },
+  "POST /api/v1/uploads": { body: {}, expected: signedIn(400) },
+  "GET /api/v1/uploads/[id]": { path: () => `/api/v1/uploads/${nowhere}`, expected: signedIn(404) },
+  "DELETE /api/v1/uploads/[id]": { path: () => `/api/v1/uploads/${nowhere}`, expected: signedIn(404) },
+  "HEAD /api/v1/uploads/tus/[key]": { path: () => "/api/v1/uploads/tus/nothing", expected: signedIn(404) },
+  "PATCH /api/v1/uploads/tus/[key]": { path: () => "/api/v1/uploads/tus/nothing", expected: signedIn(404) },
+  "GET /api/v1/files/[id]": { path: () => `/api/v1/files/${nowhere}`, expected: all(404) },
+  "DELETE /api/v1/files/[id]": { path: () => `/api/v1/files/${nowhere}`, expected: signedIn(404) },
   "GET /api/v1/health": { expected: all(200) },
   "GET /api/v1/account": { expected: signedIn(200) },
   "POST /api/v1/account": { body: {}, expected: all(400) },

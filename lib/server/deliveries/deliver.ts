@@ -3,7 +3,7 @@ import type { Handle } from "@/db/client/connect";
 import {
   addTargets,
   beginDelivery,
-  giveUpBroken,
+  settleBroken,
   markFailed,
   markSent,
   peopleToTell,
@@ -57,22 +57,22 @@ const broken = "A worker stopped between sending and noting it: it may have arri
 
 /** Works one delivery that waits. @returns whether there was one */
 export async function deliverNext(now: Date, db: Handle = appDb()): Promise<boolean> {
-  const given = await giveUpBroken(db, { begunBefore: new Date(now.getTime() - silenceMaxMs), note: broken });
+  const given = await settleBroken(db, { begunBefore: new Date(now.getTime() - silenceMaxMs), note: broken });
   if (given > 0) log().warn({ given }, "deliveries that broke off");
   const delivery = await beginDelivery(db, { consumers: Object.keys(consumers), now });
   if (!delivery) return false;
   try {
-    await db.transaction(async (tx) => {
-      await consumers[delivery.consumer]?.(tx, delivery);
-      await markSent(tx, { deliveryId: delivery.id, at: now });
-    });
+    await db.transaction(async (tx) => consumers[delivery.consumer]?.(tx, delivery));
   } catch (error) {
     const message = error instanceof Error ? error.message : String(error);
     const again =
       delivery.attempts + 1 < attemptsMost ? new Date(now.getTime() + minute * 2 ** delivery.attempts) : null;
     await markFailed(db, { deliveryId: delivery.id, error: message, nextAt: again });
     log().warn({ deliveryId: delivery.id, consumer: delivery.consumer, again }, "delivery failed");
+    return true;
   }
+  // Were this to fail the letter is out all the same: it must not look like one that failed.
+  await markSent(db, { deliveryId: delivery.id, at: now });
   return true;
 }
 
