@@ -19,8 +19,8 @@ export function LevelsTry({ levels }: { levels: readonly number[] }) {
           <ul className="list-[square] pl-5">
             {data.byLevel.map((each) => (
               <li key={each.levelDba}>
-                {each.levelDba} dB(A): {each.entryNotReached} don’t reach it; of {each.baselineNotReached} the session’s
-                baseline doesn’t
+                At {each.levelDba} dB(A) at the bench’s microphone {each.entryNotReached} don’t reach it; of{" "}
+                {each.baselineNotReached} the session’s baseline doesn’t
               </li>
             ))}
           </ul>

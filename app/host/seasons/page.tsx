@@ -40,7 +40,7 @@ export default async function HostSeasonsPage() {
             { key: "season", head: "Season" },
             { key: "state", head: "State" },
             { key: "rule", head: "Rule" },
-            { key: "levels", head: "Levels" },
+            { key: "levels", head: "Levels at the bench’s microphone", unit: "dB(A)" },
             { key: "entries", head: "Entries" },
             { key: "rounds", head: "Rounds" },
           ]}
@@ -50,7 +50,7 @@ export default async function HostSeasonsPage() {
               season: { words: <Link href={`/host/seasons/${season.seasonId}`}>{season.title}</Link> },
               state: { words: stateWords(season) },
               rule: { words: RULES[season.rule].label },
-              levels: { words: `${season.levelsDba.join(", ")} dB(A)` },
+              levels: { words: season.levelsDba.join(", ") },
               entries: { words: String(season.entries) },
               rounds: { words: String(season.rounds.length) },
             },

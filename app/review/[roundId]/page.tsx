@@ -8,6 +8,7 @@ import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";
 import { idOrNotFound } from "@/lib/auth/page-id";
+import { levelUnit } from "@/lib/format/quantities";
 import { readRoundForReview } from "@/lib/server/review/read-round";
 
 export const metadata: Metadata = { title: "Review of a round" };
@@ -18,6 +19,8 @@ export default async function ReviewRoundPage({ params }: { params: Promise<{ ro
   const actor = await personForPage(path);
   const round = await orPageState(readRoundForReview(actor, { roundId }), path);
   const inReview = round.entries.filter((entry) => entry.state === "in_review");
+  const distanceMm = round.entries.find((entry) => entry.snapshot)?.snapshot?.microphoneDistanceMm;
+  const levelsUnit = distanceMm === undefined ? "dB(A) at the bench’s microphone" : levelUnit(distanceMm);
   return (
     <>
       <Section
@@ -31,7 +34,7 @@ export default async function ReviewRoundPage({ params }: { params: Promise<{ ro
           facts={[
             { label: "State", value: round.state.replaceAll("_", " ") },
             { label: "Entries", value: round.entries.length },
-            { label: "Levels", value: `${round.levelsDba.join(", ")} dB(A)` },
+            { label: "Levels", value: `${round.levelsDba.join(", ")} ${levelsUnit}` },
             { label: "Simulated rounds", value: round.standings[0]?.draws ?? "none" },
           ]}
         />
