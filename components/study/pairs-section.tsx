@@ -31,6 +31,9 @@ function PairName({ pair, names }: { pair: Pair; names: Names }) {
   );
 }
 
+/** Rows on the page; the file has more. */
+const rowsShown = 40;
+
 function PairsTable({
   pairs,
   names,
@@ -50,7 +53,7 @@ function PairsTable({
         { key: "change", head: `${short}, change`, unit },
         { key: "together", head: "Measured" },
       ]}
-      rows={pairs.map((pair) => ({
+      rows={pairs.slice(0, rowsShown).map((pair) => ({
         key: `${pair.fromEntryId} ${pair.toEntryId}`,
         cells: {
           pair: { words: <PairName pair={pair} names={names} /> },
@@ -102,7 +105,8 @@ function leftOutWords({
   const parts = [
     severalTraits > 0 && `${severalTraits} changed several traits`,
     noTrait > 0 && `${noTrait} changed none that is read`,
-    otherBaseline > 0 && `${otherBaseline} were measured against another baseline unit, so the two are on no common scale here`,
+    otherBaseline > 0 &&
+      `${otherBaseline} were measured against another baseline unit, so the two are on no common scale here`,
     otherDesigner > 0 && `${otherDesigner} have another designer`,
     notReached > 0 && `${notReached} didn’t reach the level`,
   ].filter((words) => words !== false);
@@ -142,11 +146,12 @@ export function PairsSection({ question, result, names }: Pick<StudyAnswer, "que
               </ul>
             </Fold>
           ) : null}
-          <Fold title={`The ${countWords(pairs.length, "pair")}, one by one`} className="mt-2">
+          <Fold title="Pair by pair" className="mt-2">
             <PairsTable pairs={pairs} names={names} figure={figure} />
             <p className="small-print mt-2">
               Change ± half of its 95 % interval, both sessions taken as independent. Those measured together come
-              first, then the newest{pairCounts.pairs > pairs.length ? `; ${pairs.length} of ${pairCounts.pairs}` : ""}.
+              first, then the newest
+              {pairCounts.pairs > rowsShown ? `; ${rowsShown} of ${pairCounts.pairs}, more as CSV` : ""}.
             </p>
           </Fold>
         </>

@@ -1,5 +1,4 @@
 import { BarsTable } from "@/components/ui/bars/bars-table";
-import { Fold } from "@/components/ui/fold";
 import { Section } from "@/components/ui/sheet";
 import { SmallHistogram } from "@/components/ui/small-histogram";
 import type { StudyAnswer } from "@/lib/contracts/study";
@@ -9,6 +8,7 @@ import { formatNumber } from "@/lib/format/numbers";
 import { formatRange } from "@/lib/format/quantities";
 import { countWords } from "@/lib/format/words";
 import { DownloadLink } from "./download-links";
+import { SpreadOverview } from "./spread-overview";
 import { figureIn, figureWords, levelWords, type Result, type SpreadShown } from "./study-words";
 
 type Distribution = Result["distributions"][number];
@@ -123,7 +123,6 @@ function TraitSpread({ distribution, figure }: { distribution: Distribution; fig
 
 /** How the figure is spread over the levels of each trait, on one scale of small pictures a trait. */
 export function SpreadSection({ question, result }: Pick<StudyAnswer, "question" | "result">) {
-  const few = question.trait !== null;
   const { overall, otherBaseline } = result;
   const { unit, short } = figureWords[question.figure];
   return (
@@ -140,22 +139,15 @@ export function SpreadSection({ question, result }: Pick<StudyAnswer, "question"
           ? ` ${countWords(otherBaseline, "entry", "entries")} measured against another baseline unit are left out here: not comparable.`
           : ""}
       </p>
-      {result.distributions.map((distribution) =>
-        few ? (
+      {question.trait === null ? (
+        <SpreadOverview question={question} distributions={result.distributions} />
+      ) : (
+        result.distributions.map((distribution) => (
           <div key={distribution.trait} className="mb-6">
             <h3 className="mb-2">{traitOf(distribution.trait).label}</h3>
             <TraitSpread distribution={distribution} figure={question.figure} />
           </div>
-        ) : (
-          <Fold
-            key={distribution.trait}
-            title={traitOf(distribution.trait).label}
-            name="spread"
-            open={distribution.trait === "stages"}
-          >
-            <TraitSpread distribution={distribution} figure={question.figure} />
-          </Fold>
-        ),
+        ))
       )}
     </Section>
   );
