@@ -29,29 +29,40 @@ export function pchip(points: readonly { x: number; y: number }[]): Pchip {
   const knots = withSlopes(sorted);
   const xMin = sorted[0]?.x ?? Number.NaN;
   const xMax = sorted[sorted.length - 1]?.x ?? Number.NaN;
-  const segment = (x: number): [Knot, Knot] | undefined => {
-    if (!(x >= xMin && x <= xMax)) return undefined;
-    let low = 0;
-    let high = knots.length - 1;
-    while (high - low > 1) {
-      const middle = (low + high) >> 1;
-      if ((knots[middle]?.x ?? Number.NaN) <= x) low = middle;
-      else high = middle;
-    }
-    const a = knots[low];
-    const b = knots[high];
-    return a && b ? [a, b] : undefined;
+  return {
+    xMin,
+    xMax,
+    value(x) {
+      const found = segmentAt(knots, x);
+      return found && cubic(found[0], found[1], x);
+    },
+    slope(x) {
+      const found = segmentAt(knots, x);
+      return found && cubicSlope(found[0], found[1], x);
+    },
+    inverse(y) {
+      return inverse(knots, y);
+    },
   };
-  const value = (x: number) => {
-    const found = segment(x);
-    return found && cubic(found[0], found[1], x);
-  };
-  const slope = (x: number) => {
-    const found = segment(x);
-    return found && cubicSlope(found[0], found[1], x);
-  };
-  return { xMin, xMax, value, slope, inverse: (y) => inverse(knots, y) };
 }
+
+/** The two neighbours between which x lies; undefined outside the curve and for NaN. */
+function segmentAt(knots: readonly Knot[], x: number): [Knot, Knot] | undefined {
+  const last = knots.length - 1;
+  if (!(x >= (knots[0]?.x ?? Number.NaN) && x <= (knots[last]?.x ?? Number.NaN))) return undefined;
+  let low = 0;
+  let high = last;
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if ((knots[middle]?.x ?? Number.NaN) <= x) low = middle;
+    else high = middle;
+  }
+  const a = knots[low];
+  const b = knots[high];
+  return a && b ? [a, b] : undefined;
+}
+
+const at = (values: readonly number[], i: number): number => values[i] ?? Number.NaN;
 
 function withSlopes(points: readonly { x: number; y: number }[]): Knot[] {
   const widths: number[] = [];
@@ -65,17 +76,16 @@ function withSlopes(points: readonly { x: number; y: number }[]): Knot[] {
     widths.push(next.x - point.x);
     chords.push((next.y - point.y) / (next.x - point.x));
   });
-  const h = (i: number) => widths[i] ?? Number.NaN;
-  const m = (i: number) => chords[i] ?? Number.NaN;
   const last = chords.length - 1;
   return points.map(({ x, y }, i) => {
-    if (last === 0) return { x, y, d: m(0) };
-    if (i === 0) return { x, y, d: endSlope(h(0), h(1), m(0), m(1)) };
-    if (i === points.length - 1) return { x, y, d: endSlope(h(last), h(last - 1), m(last), m(last - 1)) };
-    if (!(m(i - 1) * m(i) > 0)) return { x, y, d: 0 };
-    const w1 = 2 * h(i) + h(i - 1);
-    const w2 = h(i) + 2 * h(i - 1);
-    return { x, y, d: (w1 + w2) / (w1 / m(i - 1) + w2 / m(i)) };
+    if (last === 0) return { x, y, d: at(chords, 0) };
+    if (i === 0) return { x, y, d: endSlope(at(widths, 0), at(widths, 1), at(chords, 0), at(chords, 1)) };
+    if (i === points.length - 1)
+      return { x, y, d: endSlope(at(widths, last), at(widths, last - 1), at(chords, last), at(chords, last - 1)) };
+    if (!(at(chords, i - 1) * at(chords, i) > 0)) return { x, y, d: 0 };
+    const w1 = 2 * at(widths, i) + at(widths, i - 1);
+    const w2 = at(widths, i) + 2 * at(widths, i - 1);
+    return { x, y, d: (w1 + w2) / (w1 / at(chords, i - 1) + w2 / at(chords, i)) };
   });
 }
 

@@ -116,6 +116,8 @@ async function addStandings(tx: Handle, round: RoundContext, at: Date, draws: nu
   const naive = await newestRuleVersion(tx, { kind: "plain-sum" });
   const rules = naive && naive.id !== season.id ? [season, naive] : [season];
   const inSeason = await publishedSessionsOfSeason(tx, { seasonId: round.seasonId });
+  // Read once for all standings: a season's readings are many.
+  const records = await sessionRecords(tx, { sessionIds: [...new Set(inSeason.map((each) => each.sessionId))] });
   const scopes = [
     {
       scope: "round" as const,
@@ -130,6 +132,7 @@ async function addStandings(tx: Handle, round: RoundContext, at: Date, draws: nu
         seasonId: round.seasonId,
         roundId,
         entries,
+        records,
         rule,
         levelsDba: round.levelsDba,
         headlineDba: round.headlineDba,

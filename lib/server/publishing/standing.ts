@@ -8,6 +8,7 @@ import { METHOD_V1 } from "@/lib/domain/results/methods/v1/parameters";
 import { sessionPoints } from "@/lib/domain/results/methods/v1/session-points";
 import { roundResult } from "@/lib/domain/results/rounding";
 import { protocolPositionIds } from "@/lib/domain/results/session-figures";
+import type { SessionRecord } from "@/lib/domain/results/session-record";
 import type { RoundInput, RoundSession } from "@/lib/domain/scoring/round-input";
 import type { RuleKind } from "@/lib/domain/scoring/rules";
 import { scoreRound } from "@/lib/domain/scoring/score-round";
@@ -24,6 +25,8 @@ export interface StandingRequest {
   draws: number;
   seed: number;
   dryCorrections?: readonly string[];
+  /** Records that the caller has read already, of at least these sessions; else they are read. */
+  records?: readonly SessionRecord[];
 }
 
 /** Simulated rounds of a standing: the standard error of a probability is then 0.005 at most. */
@@ -32,10 +35,11 @@ export const standingDraws = 10_000;
 /** The input of a standing from stored readings: the same that `read -- round` takes from a file. */
 export async function standingInput(db: Handle, request: StandingRequest): Promise<RoundInput> {
   const bySession = groupBy(request.entries, (entry) => entry.sessionId);
-  const records = await sessionRecords(db, {
-    sessionIds: [...bySession.keys()].sort(),
-    dryCorrections: request.dryCorrections,
-  });
+  const sessionIds = [...bySession.keys()].sort();
+  const known = new Map(request.records?.map((record) => [record.sessionId, record]));
+  const records = request.records
+    ? sessionIds.flatMap((id) => known.get(id) ?? [])
+    : await sessionRecords(db, { sessionIds, dryCorrections: request.dryCorrections });
   const sessions = records.flatMap((record): RoundSession[] => {
     const { subjects } = sessionPoints(record, protocolPositionIds(record));
     const baseline = subjects.find((subject) => subject.baselineUnitId === record.baselineUnitId);
