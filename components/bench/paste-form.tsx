@@ -77,7 +77,6 @@ export function PasteForm({ session }: { session: BenchSession }) {
       <TextArea
         label="Block of cells"
         rows={5}
-        className="figures"
         hint="A row a run: set speed, mount, level, sensor, ambient, power. A first row of names may change the order."
         value={text}
         onChange={(event) => type("block", event.currentTarget.value)}

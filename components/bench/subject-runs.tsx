@@ -36,7 +36,7 @@ export function SubjectRuns({ session, subject, next, chosen, onChoose }: Subjec
   const here = chosen?.entryId === subject.entryId ? chosen : null;
   const left = subject.missing.reduce((sum, each) => sum + each.runs, 0);
   return (
-    <div className={isBaseline ? "border-l-4 border-carbon pl-4" : undefined}>
+    <div className={isBaseline ? "min-w-0 border-l-4 border-carbon pl-4" : "min-w-0"}>
       <div className="flex flex-wrap items-baseline gap-x-4">
         <h3>{subject.name}</h3>
         <span className="docket">

@@ -39,10 +39,7 @@ export async function sessionSubjects(
     specimenNumber: null,
     closed: null,
     sentBack: null,
-    missing: missingRuns(
-      { ...protocol, mounts: 2, runsPerMount: 1 },
-      doneOf((run) => run.baselineUnitId === session.baselineUnitId),
-    ),
+    missing: baselineMissing(protocol, session.baselineUnitId, runs),
   };
   if (!session.roundId) return [first];
   const [entries, rows, owned] = await Promise.all([
@@ -69,6 +66,19 @@ export async function sessionSubjects(
       ),
     })),
   ];
+}
+
+/** Its two turns; one more mount where an entry ran after what was to be the last. */
+function baselineMissing(protocol: ProtocolRow, baselineUnitId: string, runs: readonly RunRow[]) {
+  const done = runs.filter((run) => run.state === "done");
+  const own = done.filter((run) => run.baselineUnitId === baselineUnitId);
+  const mounts = new Set(own.map((run) => run.mountNumber)).size;
+  const turns = Math.max(2, mounts);
+  const taken = own.map((run) => ({ setSpeed: run.setSpeed, mount: run.mountNumber }));
+  const missing = missingRuns({ ...protocol, mounts: turns, runsPerMount: 1 }, taken);
+  const isLast = done.at(-1)?.baselineUnitId === baselineUnitId;
+  if (missing.length > 0 || isLast || done.length === 0) return missing;
+  return missingRuns({ ...protocol, mounts: turns + 1, runsPerMount: 1 }, taken);
 }
 
 function whyClosed(session: SessionHead, entry: BenchEntry, owned: boolean): string | null {
