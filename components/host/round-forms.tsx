@@ -3,6 +3,7 @@
 import { useRouter } from "next/navigation";
 import { useEffect, useState } from "react";
 import { Button } from "@/components/ui/button";
+import { Slot, SlotGroup } from "@/components/ui/slot";
 import { StatusLine } from "@/components/ui/status-line";
 import { useAddRoundEntries, useEndLoan, useLend, usePublish, useTakeOut } from "@/lib/client/host";
 import { HostForm } from "./host-form";
@@ -63,22 +64,18 @@ export function AddEntriesForm(props: { roundId: string; free: readonly { entryI
       busyWords="Adding …"
       onDone={() => setTicked([])}
     >
-      <fieldset className="grid gap-1">
-        <legend className="sr-only">Entries that stand in no round</legend>
+      <SlotGroup legend="Entries that stand in no round" flow="column" hideLegend>
         {free.map(({ entryId, name }) => (
-          <label key={entryId} className="flex items-center gap-2">
-            <input
-              type="checkbox"
-              className="slot"
-              checked={ticked.includes(entryId)}
-              onChange={(event) =>
-                setTicked(event.currentTarget.checked ? [...ticked, entryId] : ticked.filter((id) => id !== entryId))
-              }
-            />
-            {name}
-          </label>
+          <Slot
+            key={entryId}
+            label={name}
+            checked={ticked.includes(entryId)}
+            onChange={(event) =>
+              setTicked(event.currentTarget.checked ? [...ticked, entryId] : ticked.filter((id) => id !== entryId))
+            }
+          />
         ))}
-      </fieldset>
+      </SlotGroup>
     </HostForm>
   );
 }

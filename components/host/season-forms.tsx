@@ -2,6 +2,7 @@
 
 import { useState, type FormEvent } from "react";
 import type { ActField } from "@/components/ui/act/act-values";
+import { Slot, SlotGroup } from "@/components/ui/slot";
 import { useChangeSeason, useMakeSeason, useMoveSeason, usePlanRound } from "@/lib/client/host";
 import type { BenchSetup } from "@/lib/contracts/bench-admin";
 import type { HostSeason } from "@/lib/contracts/seasons-admin";
@@ -137,20 +138,16 @@ export function SeasonForm(props: { setup: BenchSetup; season?: HostSeason; next
         busyWords="Keeping …"
         doneWords="Kept."
       >
-        <fieldset className="field">
-          <legend className="field-label">Frames</legend>
+        <SlotGroup legend="Frames">
           {setup.frames.map((frame) => (
-            <label key={frame.id} className="flex items-center gap-2">
-              <input
-                type="checkbox"
-                className="slot"
-                checked={frames.includes(frame.id)}
-                onChange={(event) => tick(frame.id, event.currentTarget.checked)}
-              />
-              {frame.key}
-            </label>
+            <Slot
+              key={frame.id}
+              label={frame.key}
+              checked={frames.includes(frame.id)}
+              onChange={(event) => tick(frame.id, event.currentTarget.checked)}
+            />
           ))}
-        </fieldset>
+        </SlotGroup>
         <LevelsTry levels={levels} />
       </HostForm>
     </div>

@@ -5,6 +5,7 @@ import { useState, type FormEvent } from "react";
 import { Button } from "@/components/ui/button";
 import { Field, TextArea } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
+import { Slot } from "@/components/ui/slot";
 import { useSendBack } from "@/lib/client/review";
 
 type Named = { entryId: string; name: string };
@@ -39,10 +40,7 @@ export function SendBackForm({ roundId, entries }: { roundId: string; entries: r
     <form aria-label="Send back" onSubmit={submit} noValidate method="post" className="grid max-w-xl gap-3">
       {entries.map(({ entryId, name }) => (
         <div key={entryId} className="grid gap-1">
-          <label className="flex items-center gap-2">
-            <input type="checkbox" className="slot" onChange={(event) => tick(entryId, event.currentTarget.checked)} />
-            Send back {name}
-          </label>
+          <Slot label={`Send back ${name}`} onChange={(event) => tick(entryId, event.currentTarget.checked)} />
           {ticked.has(entryId) ? (
             <Field name={`reason ${entryId}`} label={`Reason for ${name}`} maxLength={1000} />
           ) : null}

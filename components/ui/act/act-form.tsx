@@ -5,6 +5,7 @@ import { Button } from "../button";
 import type { ButtonKind } from "../button-class";
 import { Field, Select, TextArea } from "../field";
 import { Notice } from "../notice";
+import { Slot } from "../slot";
 import { readTyped, type ActField, type ActProblems, type ActValues } from "./act-values";
 
 /** What a mutation of the client gives, as far as a form needs it. */
@@ -91,12 +92,7 @@ function OneField({ field, error }: { field: ActField; error: string | undefined
     return <Select {...shared} options={optional ? [{ value: "", label: "–" }, ...given] : given} />;
   }
   if (kind === "tick") {
-    return (
-      <label className="flex items-center gap-2">
-        <input type="checkbox" name={name} defaultChecked={defaultValue === "on"} className="slot" />
-        {label}
-      </label>
-    );
+    return <Slot name={name} label={label} defaultChecked={defaultValue === "on"} />;
   }
   if (kind === "time") return <Field {...shared} type="datetime-local" />;
   const figures = kind === "number" || kind === "numbers";

@@ -32,7 +32,7 @@ export default async function HostSeasonPage({ params }: { params: Promise<{ id:
         {season.openedAt === null ? <MoveSeasonForm seasonId={seasonId} to="opened" /> : null}
         {open ? <MoveSeasonForm seasonId={seasonId} to="closed" /> : null}
         {season.frozenAt ? (
-          <Notice>
+          <Notice className="mt-4">
             <p>
               Its first reading was taken {formatDateTime(season.frozenAt)}: protocol, rule, levels, bench and budget
               stand.
@@ -68,7 +68,11 @@ export default async function HostSeasonPage({ params }: { params: Promise<{ id:
         ) : (
           <p>None yet.</p>
         )}
-        {open ? <PlanRoundForm seasonId={seasonId} /> : null}
+        {open ? (
+          <div className="mt-6">
+            <PlanRoundForm seasonId={seasonId} />
+          </div>
+        ) : null}
       </Section>
       <Section id="change" title="Change the season">
         <SeasonForm setup={setup} season={season} nextNumber={season.number} />
