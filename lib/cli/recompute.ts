@@ -1,15 +1,19 @@
 import { appDb, closeDbs } from "@/db/client/handles";
+import { READER_VERSION } from "@/lib/science/geometry/reader-version";
+import { recomputeGeometry } from "@/lib/server/designs/recompute-geometry";
 import { recomputePublications, recomputeStandings } from "@/lib/server/publishing/recompute";
 
 /**
  * `npm run recompute`: computes every current publication and the newest standings again from the raw readings and
  * compares digests with what was published. Exit status 1 where one differs. `recompute -- standings` alone, or
- * `recompute -- publications`.
+ * `recompute -- publications`. `recompute -- geometry` reads every stored model again by the reader as it is now and
+ * tells what changed; a change between versions of the reader is no fault, one within a version is.
  */
 async function main(): Promise<number> {
   const what = process.argv[2] ?? "all";
+  if (what === "geometry") return geometry();
   if (!["all", "publications", "standings"].includes(what)) {
-    process.stderr.write("usage: npm run recompute [-- publications | standings]\n");
+    process.stderr.write("usage: npm run recompute [-- publications | standings | geometry]\n");
     return 2;
   }
   const reports = [];
@@ -20,6 +24,16 @@ async function main(): Promise<number> {
     for (const each of report.differing) process.stdout.write(`  differs: ${each}\n`);
   }
   return reports.some((report) => report.differing.length > 0) ? 1 : 0;
+}
+
+async function geometry(): Promise<number> {
+  const { stored, same, differing, refused } = await recomputeGeometry(appDb());
+  const counts = `${same} the same, ${differing.length} differing, ${refused.length} refused`;
+  process.stdout.write(`geometry, reader ${READER_VERSION}: ${counts}; ${stored} readings stored\n`);
+  for (const each of differing) process.stdout.write(`  changed: ${each}\n`);
+  for (const each of refused) process.stdout.write(`  refused: ${each}\n`);
+  const within = differing.some((each) => each.includes(`version ${READER_VERSION} → ${READER_VERSION}`));
+  return within || refused.length > 0 ? 1 : 0;
 }
 
 main()

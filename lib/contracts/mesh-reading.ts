@@ -10,7 +10,7 @@ const station = z.object({
 });
 
 /** One rotor as read; the mass is at 1 g/cm³, null where the mesh isn't closed. */
-export const readRotor = z.object({
+export const readRotor = z.looseObject({
   blades: z.int(),
   hand: z.enum(["right", "left"]),
   tipDiameterMm: number,
