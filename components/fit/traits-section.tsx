@@ -63,12 +63,20 @@ export function TraitsSection({ measured }: { measured: ModelMeasured }) {
       </Section>
     );
   }
-  const each = (of: (rotor: RotorTraits) => string) => rotors.map(of).join(" + ");
+  const each = (of: (rotor: RotorTraits) => string) => {
+    const values = rotors.map(of);
+    // Said once where all are alike, but for the blades, which are added up in one's head.
+    return values.every((value) => value === values[0]) ? values[0] : values.join(" + ");
+  };
   return (
     <Section id="traits" title="Traits" note="as read off the mesh" className="grid gap-5">
       <FigureBlock
         figures={[
-          { label: "Blades", value: each((rotor) => String(rotor.blades)), note: countWords(rotors.length, "rotor") },
+          {
+            label: "Blades",
+            value: rotors.map((rotor) => rotor.blades).join(" + "),
+            note: countWords(rotors.length, "rotor"),
+          },
           {
             label: "Hand",
             value: each((rotor) => rotor.hand),

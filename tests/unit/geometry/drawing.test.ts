@@ -117,6 +117,12 @@ describe("a fan's drawing", () => {
     expect(drawing?.front.title).toContain("7 blades, right-handed");
     // Two edges and a tip for each of seven blades that leave each other free, and the hub.
     expect(drawing?.front.outlines).toHaveLength(7 * 3 + 1);
+    const noDepth = drawingOfTraits({
+      rotors: [{ ...declared, axialDepthMm: undefined }],
+      spacerMm: 0,
+      inletStackMm: 0,
+    });
+    expect(noDepth?.side.words.map((words) => words.text)).toEqual(["112.0"]);
     expect(drawingOfTraits({ rotors: [], spacerMm: 0, inletStackMm: 0 })).toBeUndefined();
     expect(
       drawingOfTraits({ rotors: [{ ...declared, tipDiameterMm: 40 }], spacerMm: 0, inletStackMm: 0 }),

@@ -55,20 +55,27 @@ export function dimensionedFront(view: PlainView, rotors: readonly DimensionedRo
   });
 }
 
-/** The side view with each rotor's depth, the depth in all and the largest height. */
-export function dimensionedSide(view: PlainView, rotors: readonly DimensionedRotor[], textMm: number): DrawnView {
+/** The side view with each rotor's depth, the depth in all and the largest height; without depths that aren't known. */
+export function dimensionedSide(
+  view: PlainView,
+  rotors: readonly DimensionedRotor[],
+  textMm: number,
+  depthsKnown = true,
+): DrawnView {
   const writer = new DimensionWriter(view, textMm);
   const { minX, maxX, minY, maxY } = view;
-  rotors.forEach((rotor, index) => {
-    // Neighbours stand at two heights, so that their numbers don't meet.
-    const y = maxY + (1.4 + 2.2 * (index % 2)) * textMm;
-    writer.level(rotor.fromMm, rotor.toMm, y, 0, mm(rotor.toMm - rotor.fromMm));
-  });
-  writer.level(minX, maxX, minY - 2 * textMm, minY, mm(maxX - minX));
+  if (depthsKnown) {
+    rotors.forEach((rotor, index) => {
+      // Neighbours stand at two heights, so that their numbers don't meet.
+      const y = maxY + (1.4 + 2.2 * (index % 2)) * textMm;
+      writer.level(rotor.fromMm, rotor.toMm, y, 0, mm(rotor.toMm - rotor.fromMm));
+    });
+    writer.level(minX, maxX, minY - 2 * textMm, minY, mm(maxX - minX));
+  }
   writer.upright(minY, maxY, minX - 1.6 * textMm, minX, mm(maxY - minY));
   const reach = 0.5 * textMm;
   return writer.view({
-    title: `Side view: ${mm(maxX - minX)} mm along the axis, ${mm(maxY - minY)} mm across`,
+    title: `Side view: ${depthsKnown ? `${mm(maxX - minX)} mm along the axis, ` : ""}${mm(maxY - minY)} mm across`,
     outlines: view.outlines,
     dashed: view.dashed ?? "",
     centres: rotors.length > 0 ? pathOf([minX - reach, 0, maxX + reach, 0]) : "",

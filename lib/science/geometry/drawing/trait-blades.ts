@@ -24,6 +24,11 @@ const radii = ({ hubRadiusMm, tipRadiusMm }: TraitBlades): number[] =>
 const halfAngle = (rotor: TraitBlades, radius: number): number =>
   (rotor.chordMidMm * Math.cos(pitchAt(rotor, radius))) / (2 * radius);
 
+/** Extent along the axis of a plain blade, which is deepest at the hub, mm. */
+export function bladeDepthMm(rotor: TraitBlades): number {
+  return rotor.chordMidMm * Math.sin(pitchAt(rotor, rotor.hubRadiusMm));
+}
+
 /**
  * Lines of the blades seen from the inlet, y up: each blade's near edge, its far edge where the next blade doesn't
  * cover it, and its tip. Seen against the axis' direction, a right-handed blade is nearest at its clockwise edge.

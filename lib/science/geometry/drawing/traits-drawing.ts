@@ -1,6 +1,6 @@
 import { pathOf, type FanDrawing } from "./drawn-view";
 import { dimensionedFront, dimensionedSide, textHeightMm, type DimensionedRotor } from "./fan-dimensions";
-import { frontBlades, sideBlades, type TraitBlades } from "./trait-blades";
+import { bladeDepthMm, frontBlades, sideBlades, type TraitBlades } from "./trait-blades";
 
 /** A rotor as declared. Lengths in mm, angles in degrees from the plane of rotation. */
 export interface DeclaredRotor {
@@ -8,7 +8,8 @@ export interface DeclaredRotor {
   readonly hand: "right" | "left";
   readonly hubDiameterMm: number;
   readonly tipDiameterMm: number;
-  readonly axialDepthMm: number;
+  /** Undefined where it wasn't declared: the blades' own depth is drawn then, and none is written. */
+  readonly axialDepthMm?: number;
   readonly pitchMidDeg: number;
   readonly chordMidMm: number;
   readonly shroud: boolean;
@@ -75,7 +76,12 @@ export function drawingOfTraits(fan: DeclaredFan): FanDrawing | undefined {
   const textMm = textHeightMm(front);
   return {
     front: dimensionedFront(front, placed, textMm),
-    side: dimensionedSide(side, placed, textMm),
+    side: dimensionedSide(
+      side,
+      placed,
+      textMm,
+      fan.rotors.every((rotor) => rotor.axialDepthMm !== undefined),
+    ),
     from: "traits",
   };
 }
@@ -84,7 +90,7 @@ const isDrawable = (rotor: DeclaredRotor): boolean =>
   rotor.blades >= 1 &&
   rotor.hubDiameterMm > 0 &&
   rotor.tipDiameterMm > rotor.hubDiameterMm &&
-  rotor.axialDepthMm > 0 &&
+  (rotor.axialDepthMm ?? 1) > 0 &&
   rotor.chordMidMm > 0 &&
   rotor.pitchMidDeg > 0 &&
   rotor.pitchMidDeg < 90;
@@ -94,7 +100,7 @@ function place({ rotors, spacerMm }: DeclaredFan): DimensionedRotor[] {
   let from = 0;
   return rotors.map((rotor) => {
     const fromMm = from;
-    const toMm = fromMm + rotor.axialDepthMm;
+    const toMm = fromMm + (rotor.axialDepthMm ?? bladeDepthMm(bladesOf(rotor)));
     from = toMm + spacerMm;
     return { ...rotor, sweptDiameterMm: rotor.tipDiameterMm + (rotor.shroud ? 2 * RING_MM : 0), fromMm, toMm };
   });
