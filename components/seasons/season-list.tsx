@@ -52,7 +52,11 @@ export function SeasonList({ seasons }: { seasons: readonly SeasonLine[] }) {
               ) : (
                 <span className="inline-flex flex-wrap gap-x-3">
                   {season.rounds.map((round) => (
-                    <Link key={round.number} href={`/seasons/${season.slug}/rounds/${round.number}`}>
+                    <Link
+                      key={round.number}
+                      href={`/seasons/${season.slug}/rounds/${round.number}`}
+                      className="inline-block min-h-6 min-w-6 text-center"
+                    >
                       <span className="sr-only">{season.title}, round </span>
                       {round.number}
                     </Link>

@@ -22,7 +22,16 @@ export function RawRunsFold({ slug, entryId, setSpeed, unit, runs }: RawRunsFold
   const [wanted, setWanted] = useState(false);
   const { data, error, refetch } = useRawRuns(slug, entryId, wanted);
   return (
-    <details className="fold" onToggle={(event) => setWanted((before) => before || event.currentTarget.open)}>
+    <details
+      className="fold"
+      // Opened before the page could listen: its toggle was never heard.
+      ref={(node) => {
+        if (node?.open) setWanted(true);
+      }}
+      onToggle={(event) => {
+        if (event.currentTarget.open) setWanted(true);
+      }}
+    >
       <summary>
         {setSpeed === null
           ? "The session’s own readings: calibrator, background, air"
