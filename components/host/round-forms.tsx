@@ -1,7 +1,7 @@
 "use client";
 
 import { useRouter } from "next/navigation";
-import { useEffect, useState } from "react";
+import { useEffect, useState, useSyncExternalStore } from "react";
 import { Button } from "@/components/ui/button";
 import { Slot, SlotGroup } from "@/components/ui/slot";
 import { StatusLine } from "@/components/ui/status-line";
@@ -80,14 +80,28 @@ export function AddEntriesForm(props: { roundId: string; free: readonly { entryI
   );
 }
 
+const never = () => () => undefined;
+
 /** Sets the hour in the zone of whoever types it, which is named, or publishes now. */
 export function PublishForms({ roundId }: { roundId: string }) {
-  const zone = Intl.DateTimeFormat().resolvedOptions().timeZone;
+  // The zone is the browser's own; the server can't know it.
+  const zone = useSyncExternalStore(
+    never,
+    () => Intl.DateTimeFormat().resolvedOptions().timeZone,
+    () => "",
+  );
   return (
     <div className="grid gap-6">
       <HostForm
         label="Publish at"
-        fields={[{ name: "publishAt", label: "Date and time", kind: "time", hint: `In your zone, ${zone}.` }]}
+        fields={[
+          {
+            name: "publishAt",
+            label: "Date and time",
+            kind: "time",
+            hint: `In your own time zone${zone === "" ? "" : `, ${zone}`}.`,
+          },
+        ]}
         work={usePublish(roundId)}
         words="Publish at"
         busyWords="Setting the hour …"
