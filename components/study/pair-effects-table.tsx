@@ -1,7 +1,7 @@
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import { traitOf } from "@/lib/domain/study/traits";
 import { formatNumber } from "@/lib/format/numbers";
-import { chanceWords, figureWords, valueWords, type Result } from "./study-words";
+import { chanceWords, figureWords, unitAfter, valueWords, type Result } from "./study-words";
 
 type PairEffect = Result["pairEffects"][number];
 
@@ -9,7 +9,7 @@ function nameOf({ trait, from, to, growth }: PairEffect): string {
   const { label, unit } = traitOf(trait);
   if (from !== undefined && to !== undefined) return `${label}: ${valueWords(trait, from)} → ${valueWords(trait, to)}`;
   const by = growth === undefined ? "" : `, by ${formatNumber(growth, { decimals: Number.isInteger(growth) ? 0 : 1 })}`;
-  return `${label} up${by}${by && unit ? ` ${unit}` : ""}`;
+  return `${label} up${by}${by ? unitAfter(unit) : ""}`;
 }
 
 const few = "too few to tell: six designers are needed for an interval";

@@ -64,7 +64,7 @@ function LevelsTable({ distribution }: { distribution: Distribution }) {
     <BarsTable
       caption={`${label}: all three figures by level`}
       columns={[
-        { key: "level", head: label },
+        { key: "name", head: label },
         ...outcomeKeys.flatMap((key) => [
           { key: `${key}-n`, head: "n" },
           { key, head: `${figureWords[key].short}, median`, unit: figureWords[key].unit },
@@ -75,7 +75,7 @@ function LevelsTable({ distribution }: { distribution: Distribution }) {
       rows={distribution.levels.map((level) => ({
         key: level.key,
         cells: {
-          level: { words: levelWords(distribution.trait, level) },
+          name: { words: levelWords(distribution.trait, level) },
           ...Object.fromEntries(
             outcomeKeys.flatMap((key) => {
               const { n, median, low, high } = level.spreads[key];

@@ -25,12 +25,15 @@ const decimalsOf = (trait: TraitKey) => {
   return step < 1 ? 2 : Number.isInteger(step) && trait !== "pitch" && trait !== "spacer" ? 0 : 1;
 };
 
+/** A unit as it follows its number: the degree sign without a space (ISO 80000-1:2022, 7.1.4). */
+export const unitAfter = (unit: string) => (unit === "" || unit === "°" ? unit : ` ${unit}`);
+
 /** A trait's value for people: "7", "0.8 mm", "120 × 25 mm", "no stack". */
 export function valueWords(trait: TraitKey, value: string | number): string {
   const { unit } = traitOf(trait);
   if (typeof value === "number") {
     const decimals = Number.isInteger(value) ? 0 : decimalsOf(trait);
-    return `${formatNumber(value, { decimals })}${unit === "" ? "" : unit === "°" ? "°" : ` ${unit}`}`;
+    return `${formatNumber(value, { decimals })}${unitAfter(unit)}`;
   }
   if (trait === "frame") return `${value.replace("x", " × ")} mm`;
   return levelNames[trait]?.[value] ?? value;
@@ -42,7 +45,7 @@ export function levelWords(trait: TraitKey, { key, from, to }: LevelShown): stri
   if (from === to) return valueWords(trait, from);
   const { unit } = traitOf(trait);
   const decimals = [from, to].every((end) => Number.isInteger(end)) ? 0 : decimalsOf(trait);
-  return `${formatRange(from, to, { decimals })}${unit === "" ? "" : ` ${unit}`}`;
+  return `${formatRange(from, to, { decimals })}${unitAfter(unit)}`;
 }
 
 /** What an effect is of: "Tip gap, +0.1 mm", "Inlet stack: cone", "Shroud ring". */
@@ -50,7 +53,7 @@ export function effectName({ trait, level, step }: Pick<EffectShown, "trait" | "
   const { label, unit } = traitOf(trait);
   if (level !== undefined) return isYesNo(trait) ? label : `${label}: ${valueWords(trait, level)}`;
   if (step === undefined) return label;
-  return `${label}, +${formatNumber(step, { decimals: step < 1 ? 1 : 0 })}${unit === "" ? "" : ` ${unit}`}`;
+  return `${label}, +${formatNumber(step, { decimals: step < 1 ? 1 : 0 })}${unitAfter(unit)}`;
 }
 
 /** What a choice's effects are against: "against no stack". */

@@ -2,6 +2,7 @@ import { DotIntervalChart } from "@/components/charts/dot-interval-chart";
 import { TraitScatterChart } from "@/components/charts/trait-scatter-chart";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Fold } from "@/components/ui/fold";
+import { Missing } from "@/components/ui/missing";
 import { Section } from "@/components/ui/sheet";
 import type { StudyAnswer } from "@/lib/contracts/study";
 import { traitOf } from "@/lib/domain/study/traits";
@@ -33,7 +34,7 @@ function MeetingTable({ two, figure }: { two: Two; figure: Figure }) {
               if (spread?.median !== undefined)
                 return [level.key, { words: `${figureIn(unit, spread.median)}, n = ${n}` }];
               const why = n === 0 ? "no entry has both" : `too few to tell: n = ${n}`;
-              return [level.key, { figure: { value: undefined, why } }];
+              return [level.key, { words: <Missing why={why} /> }];
             }),
           ),
         },

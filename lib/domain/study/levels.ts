@@ -41,18 +41,21 @@ function bands(key: TraitKey, entries: readonly StudyEntry[]): Level[] {
   const read = (entry: StudyEntry) => Number(traitOf(key).of(entry));
   const values = Float64Array.from(entries, read);
   const cuts = [0, 0.25, 0.5, 0.75, 1].map((p) => quantile(values, p) ?? Number.NaN);
-  // Two decimals of the trait's step, so that a band's ends can be read aloud.
-  const unit = traitOf(key).step / 10;
+  // Whole numbers get whole bands; else a tenth of the trait's step, so that a band's ends can be read aloud.
+  const whole = values.every((value) => Number.isInteger(value));
+  const unit = whole ? 1 : traitOf(key).step / 10;
   const rounded = cuts.map((cut, i) => (i === 4 ? Math.ceil(cut / unit) : Math.floor(cut / unit)) * unit);
   const edges = [...new Set(rounded.map((edge) => Number(edge.toFixed(6))))];
-  return edges.slice(1).map((to, i) => {
-    const from = edges[i] ?? to;
+  return edges.slice(1).map((next, i) => {
+    const from = edges[i] ?? next;
     const last = i === edges.length - 2;
+    // Of whole numbers the band ends before the next one begins: 3–6, 7–8.
+    const to = whole && !last ? next - 1 : next;
     return {
       key: `${from}-${to}`,
       from,
       to,
-      entries: entries.filter((entry) => read(entry) >= from && (last ? read(entry) <= to : read(entry) < to)),
+      entries: entries.filter((entry) => read(entry) >= from && (last ? read(entry) <= next : read(entry) < next)),
     };
   });
 }
