@@ -63,12 +63,16 @@ export async function run(sizes: readonly number[] = defaultSizes): Promise<Benc
       await untilAnswers(host, gone);
       const results: BenchResult[] = [];
       let held = 0;
+      let before: { size: number; p95Ms: number } | undefined;
       for (const size of sizes) {
         await fillField(owner, { entries: size - held });
         held = size;
         await askForRebuild(owner);
         await reindex(() => undefined, outletOf(owner, host, apiKey));
-        results.push(...(await benchSize(reader, host, size)));
+        const { rows, p95Ms } = await benchSize(reader, host, size);
+        results.push(...rows);
+        if (before) results.push(growth(before, { size, p95Ms }));
+        before = { size, p95Ms };
       }
       return results;
     } finally {
@@ -79,6 +83,16 @@ export async function run(sizes: readonly number[] = defaultSizes): Promise<Benc
     await gone;
     await cluster.stop();
   }
+}
+
+/** How the p95 without words grows, as a part of how the number of entries grows: below 1 is below linear. */
+function growth(before: { size: number; p95Ms: number }, now: { size: number; p95Ms: number }): BenchResult {
+  return {
+    name: `index query without words, growth from ${before.size} to ${now.size} entries against linear growth`,
+    ratio: now.p95Ms / before.p95Ms / (now.size / before.size),
+    goal: 1,
+    detail: `p95 ${before.p95Ms.toFixed(1)} ms, then ${now.p95Ms.toFixed(1)} ms`,
+  };
 }
 
 async function untilAnswers(host: string, gone: Promise<void>): Promise<void> {
@@ -109,7 +123,7 @@ function drawQuestions(size: number, words: readonly string[]): IndexQuery[] {
   });
 }
 
-async function benchSize(reader: Handle, host: string, size: number): Promise<BenchResult[]> {
+async function benchSize(reader: Handle, host: string, size: number): Promise<{ rows: BenchResult[]; p95Ms: number }> {
   const client = createSearchClient({ host, apiKey }, 60_000);
   const names: { name: string }[] = await reader("shown.entry").select({ name: "design_name" }).limit(500);
   const typed = drawQuestions(size, [...new Set(names.flatMap(({ name }) => name.toLowerCase().split(" ")))]);
@@ -120,8 +134,10 @@ async function benchSize(reader: Handle, host: string, size: number): Promise<Be
     { name: "with words", asked: typed, aimMs: size === 10_000 ? 60 : undefined },
   ];
   const results: BenchResult[] = [];
+  let p95Ms = Number.NaN;
   for (const { name, asked, aimMs } of rows) {
     const full = await quantiles(asked, (query) => searchDesigns(client, query));
+    if (asked === browsed) p95Ms = full.p95;
     const bare = await quantiles(asked, (query) => facetless(client, query));
     const said = `p50 ${full.p50.toFixed(1)} ms, p95 ${full.p95.toFixed(1)} ms`;
     const aim = aimMs === undefined ? "" : `; aim: p95 under ${aimMs} ms on two cores of one's own`;
@@ -140,7 +156,7 @@ async function benchSize(reader: Handle, host: string, size: number): Promise<Be
       },
     );
   }
-  return results;
+  return { rows: results, p95Ms };
 }
 
 const facetless = (client: ReturnType<typeof createSearchClient>, query: IndexQuery) =>

@@ -1,4 +1,5 @@
 import os from "node:os";
+import { run as benchIndexQuery } from "./index-query";
 import { benchLog, type BenchResult } from "./log";
 import { benchMesh } from "./mesh";
 import { run as benchSound } from "./sound";
@@ -7,6 +8,7 @@ const rooms: Record<string, () => BenchResult[] | Promise<BenchResult[]>> = {
   sound: benchSound,
   log: benchLog,
   mesh: benchMesh,
+  index: benchIndexQuery,
 };
 
 /** Runs the rooms named on the command line, or all, one after the other, and prints each ratio beside its goal. */
