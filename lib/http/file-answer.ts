@@ -1,4 +1,5 @@
 import { Readable } from "node:stream";
+import { filePolicy } from "./security-headers";
 
 export interface ServedFile {
   name: string;
@@ -7,9 +8,6 @@ export interface ServedFile {
   /** By content, never by what was claimed. */
   type: string;
 }
-
-/** Nothing in a served file runs, loads or is framed, even if a browser opens it in spite of all. */
-const policy = "sandbox; default-src 'none'; frame-ancestors 'none'";
 
 /**
  * One part of a file as HTTP's Range asks for (RFC 9110, 14.1.2): undefined for the whole, "outside" where the part lies
@@ -49,7 +47,7 @@ export async function fileAnswer(
     "accept-ranges": "bytes",
     "cache-control": "private, no-cache",
     "content-disposition": dispositionOf(file.name),
-    "content-security-policy": policy,
+    "content-security-policy": filePolicy,
     "x-content-type-options": "nosniff",
     "cross-origin-resource-policy": "same-origin",
   };

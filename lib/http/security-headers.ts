@@ -28,10 +28,14 @@ export function contentSecurityPolicy(nonce: string): string {
   ].join("; ");
 }
 
+/** Nothing in a served file runs, loads or is framed, even if a browser opens it in spite of all. */
+export const filePolicy = "sandbox; default-src 'none'; frame-ancestors 'none'";
+const isFile = (path: string) => path.startsWith("/api/v1/files/");
+
 /** Headers of every answer, pages, files and API alike. */
 export function securityHeaders(path: string, policy: string): Record<string, string> {
   return {
-    "content-security-policy": policy,
+    "content-security-policy": isFile(path) ? filePolicy : policy,
     "x-content-type-options": "nosniff",
     "referrer-policy": isTokenPage(path) ? "no-referrer" : "strict-origin-when-cross-origin",
     "permissions-policy": "camera=(), microphone=(), geolocation=()",

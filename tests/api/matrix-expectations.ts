@@ -81,6 +81,19 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "PATCH /api/v1/uploads/tus/[key]": { path: () => "/api/v1/uploads/tus/nothing", expected: signedIn(404) },
   "GET /api/v1/files/[id]": { path: () => `/api/v1/files/${nowhere}`, expected: all(404) },
   "DELETE /api/v1/files/[id]": { path: () => `/api/v1/files/${nowhere}`, expected: signedIn(404) },
+  "GET /api/v1/my/designs/[slug]/revisions/[letter]/files": {
+    path: () => "/api/v1/my/designs/nobodys/revisions/A/files",
+    expected: signedIn(404),
+  },
+  "PUT /api/v1/my/designs/[slug]/revisions/[letter]/traits": {
+    path: () => "/api/v1/my/designs/nobodys/revisions/A/traits",
+    body: {},
+    expected: signedIn(400),
+  },
+  "PAGE /my/designs/[slug]/revisions/[letter]": {
+    path: () => "/my/designs/nobodys/revisions/A",
+    expected: asPage(signedIn(404)),
+  },
   "GET /api/v1/health": { expected: all(200) },
   "GET /api/v1/account": { expected: signedIn(200) },
   "POST /api/v1/account": { body: {}, expected: all(400) },
