@@ -73,6 +73,10 @@ export const comparedHeadSchema = z.strictObject({
   distanceMm: z.number(),
   sessionId: z.uuid(),
   baselineUnit: z.string(),
+  /** Where the session ran another baseline unit than that of the first entry: what carries its ratio over. */
+  bridge: z
+    .strictObject({ fromUnit: z.uuid(), ratio: z.number(), u: z.number(), dof: z.number().nullable() })
+    .nullable(),
   methodVersion: z.int(),
   corrections: z.int(),
   printNotes: z.string(),

@@ -35,6 +35,30 @@ export async function shownRanks(db: Handle, { entryIds }: { entryIds: readonly 
   return rows;
 }
 
+export interface BridgeRow {
+  fromUnit: string;
+  ratio: number;
+  u: number;
+  dof: number | null;
+}
+
+/**
+ * Public bridges of thermal resistance to a baseline unit: what a ratio to `fromUnit` is multiplied by to be one to
+ * `toUnit`. Of several from one unit the one at the level nearest to the one asked for, then the newest.
+ */
+export async function shownBridges(
+  db: Handle,
+  { toUnit, levelDba }: { toUnit: string; levelDba: number },
+): Promise<BridgeRow[]> {
+  const { rows }: { rows: BridgeRow[] } = await db.raw(
+    `select distinct on (unit_from) unit_from as "fromUnit", ratio, u, dof from shown.bridge
+     where unit_to = :toUnit and quantity = 'thermal_resistance_kpw' and ratio is not null
+     order by unit_from, abs(coalesce(level_dba, :levelDba) - :levelDba), created_at desc`,
+    { toUnit, levelDba },
+  );
+  return rows;
+}
+
 /** What is known of the baselines' own traits, by unit: only the number of blades is declared. */
 export async function shownBaselineTraits(
   db: Handle,

@@ -44,6 +44,14 @@ export type ComparedPair = {
   readonly coolingDb?: Contrast;
 };
 
+/** What a ratio to one baseline unit is multiplied by to be one to another, from sessions that ran both. */
+export type UnitBridge = {
+  readonly fromUnit: string;
+  readonly ratio: number;
+  readonly u: number;
+  readonly dof: number | null;
+};
+
 export type CompareFigures = { readonly entries: readonly ComparedEntry[]; readonly pairs: readonly ComparedPair[] };
 
 function estimate(value: number, effects: readonly Effect[]): Estimate {
@@ -66,6 +74,7 @@ const less = (a: readonly Effect[], b: readonly Effect[]) =>
 const times = (factor: number, effects: readonly Effect[]) => combineEffects([{ factor, effects }]);
 
 type Read = {
+  readonly bridge: UnitBridge | undefined;
   readonly laid: LaidEntry;
   readonly levelDba: number;
   readonly noise: EqualNoiseReading | NotReached;
@@ -95,6 +104,27 @@ function comparedEntry({ laid, levelDba, noise, cooling }: Read): ComparedEntry 
   };
 }
 
+/** The ratio as one to the common baseline unit: over the bridge, whose uncertainty is one source more. */
+function commonRatio({ ratio, ratioEffects, boundAllowance }: EqualNoiseReading, bridge: UnitBridge | undefined) {
+  if (!bridge) return { ratio, effects: ratioEffects, boundAllowance };
+  const own: Effect = {
+    source: `bridge from ${bridge.fromUnit}`,
+    kind: "bridge",
+    quantity: "ratio",
+    owner: bridge.fromUnit,
+    size: ratio * bridge.u,
+    dof: bridge.dof ?? Infinity,
+  };
+  return {
+    ratio: ratio * bridge.ratio,
+    effects: combineEffects([
+      { factor: bridge.ratio, effects: ratioEffects },
+      { factor: 1, effects: [own] },
+    ]),
+    boundAllowance: boundAllowance * bridge.ratio,
+  };
+}
+
 function comparedPair(a: Read, b: Read): ComparedPair {
   const pair = { a: a.laid.id, b: b.laid.id };
   const dB = a.cooling &&
@@ -104,11 +134,15 @@ function comparedPair(a: Read, b: Read): ComparedPair {
   if (!reached(a.noise) || !reached(b.noise)) return { ...pair, ...dB };
   const allowance = a.noise.boundAllowance - b.noise.boundAllowance;
   const baselineK = a.noise.deltaTK / a.noise.ratio;
-  const ratios = less(a.noise.ratioEffects, b.noise.ratioEffects);
+  const [ofA, ofB] = [commonRatio(a.noise, a.bridge), commonRatio(b.noise, b.bridge)];
   return {
     ...pair,
     ...dB,
-    percent: contrast(100 * (a.noise.ratio - b.noise.ratio), times(100, ratios), 100 * allowance),
+    percent: contrast(
+      100 * (ofA.ratio - ofB.ratio),
+      times(100, less(ofA.effects, ofB.effects)),
+      100 * (ofA.boundAllowance - ofB.boundAllowance),
+    ),
     deltaTK: contrast(
       a.noise.deltaTK - b.noise.deltaTK,
       less(a.noise.deltaTEffects, b.noise.deltaTEffects),
@@ -123,12 +157,19 @@ function comparedPair(a: Read, b: Read): ComparedPair {
  * sources; what is not reached has its reason and no figure.
  *
  * @param levelOf level in dB(A) by entry id
+ * @param bridgeOf by entry id, where its session ran another baseline unit than the common one; acts on the percentages
+ *   between entries alone
  */
-export function compareFigures(laid: readonly LaidEntry[], levelOf: (id: string) => number): CompareFigures {
+export function compareFigures(
+  laid: readonly LaidEntry[],
+  levelOf: (id: string) => number,
+  bridgeOf: (id: string) => UnitBridge | undefined = () => undefined,
+): CompareFigures {
   const reads = laid.map((entry): Read => {
     const levelDba = levelOf(entry.id);
     return {
       laid: entry,
+      bridge: bridgeOf(entry.id),
       levelDba,
       noise: equalNoise(entry.curve, entry.baseline.curve, levelDba),
       cooling: equalCooling(entry.curve, entry.baseline.curve, levelDba),

@@ -32,7 +32,11 @@ function answerAt(sheet: CompareSheet, levelDba: number | undefined): CompareAns
   const oneAxis = sheet.comparability === "same-axis";
   const headline = new Map(sheet.entries.map((entry) => [entry.entryId, entry.headlineDba]));
   const common = readingLevel(laid, { asked: levelDba, headlineDba: sheet.entries[0]?.headlineDba ?? Number.NaN });
-  const figures = compareFigures(laid, (id) => (oneAxis ? common : (headline.get(id) ?? Number.NaN)));
+  const figures = compareFigures(
+    laid,
+    (id) => (oneAxis ? common : (headline.get(id) ?? Number.NaN)),
+    (id) => sheet.entries.find((entry) => entry.entryId === id)?.bridge ?? undefined,
+  );
   return compareAnswerSchema.parse({
     comparability: sheet.comparability,
     missing: sheet.missing,
@@ -51,7 +55,7 @@ function answerAt(sheet: CompareSheet, levelDba: number | undefined): CompareAns
     pairs:
       sheet.comparability === "not-comparable"
         ? []
-        : figures.pairs.map(({ deltaTK, ...pair }) => (oneAxis ? { ...pair, deltaTK } : pair)),
+        : figures.pairs.map(({ deltaTK, coolingDb, ...pair }) => (oneAxis ? { ...pair, deltaTK, coolingDb } : pair)),
     traits: sheet.traits,
   });
 }

@@ -1,6 +1,6 @@
 import { appDb, publicDb } from "@/db/client/handles";
 import { sessionRecords } from "@/db/queries/session-record";
-import { shownBaselineTraits, shownRanks } from "@/db/queries/shown/compare";
+import { shownBaselineTraits, shownBridges, shownRanks } from "@/db/queries/shown/compare";
 import { entriesByIds } from "@/db/queries/shown/entries";
 import { shownBaselineUnits, shownEntriesByIds, shownPublications, shownRevisions } from "@/db/queries/shown/sheet";
 import { compareMost, type ComparedHead, type ComparedTrait } from "@/lib/contracts/compare";
@@ -64,8 +64,14 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
     const rotors = revisions.rotors.filter((rotor) => rotor.revision_id === entry.revisionId);
     return { entry, snapshot, item, revision, trait, rotors, unit };
   });
+  const toUnit = complete[0]?.entry.baselineUnitId ?? "";
+  const levelDba = complete[0]?.snapshot.headlineDba ?? Number.NaN;
+  const bridges = unitIds.length > 1 ? await shownBridges(db, { toUnit, levelDba }) : [];
+  const bridgeFrom = (unitId: string) => bridges.find((bridge) => bridge.fromUnit === unitId) ?? null;
+  const carried = unitIds.every((unitId) => unitId === toUnit || bridgeFrom(unitId));
+  const comparability = comparabilityOf(entries);
   return {
-    comparability: comparabilityOf(entries),
+    comparability: comparability === "not-comparable" && carried ? "ratios" : comparability,
     missing: ids.length - entries.length,
     entries: complete.map(({ entry, snapshot, item, revision, unit }): ComparedHead => ({
       token: entryToken({ slug: item.slug, letter: item.letter, seasonSlug: item.seasonSlug }),
@@ -83,6 +89,7 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
       distanceMm: snapshot.microphoneDistanceMm,
       sessionId: snapshot.sessionId,
       baselineUnit: `${unit.name}, unit ${unit.serial}`,
+      bridge: carried ? bridgeFrom(entry.baselineUnitId) : null,
       methodVersion: snapshot.methodVersion,
       corrections: item.corrections,
       printNotes: revision.print_notes,

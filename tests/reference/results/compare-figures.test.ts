@@ -28,7 +28,9 @@ const sessions = [
   { id: "two", grade, baselinePoints: y },
 ];
 
-function compared(sessionOfB: "one" | "two", levelDba = 36) {
+const bridge = { fromUnit: "unit 2", ratio: 1.012, u: 0.006, dof: 9 };
+
+function compared(sessionOfB: "one" | "two", levelDba = 36, overBridge = false) {
   const laid = layOver({
     entries: [
       { id: "a", sessionId: "one", points: a },
@@ -36,7 +38,11 @@ function compared(sessionOfB: "one" | "two", levelDba = 36) {
     ],
     sessions,
   });
-  const { entries, pairs } = compareFigures(laid, () => levelDba);
+  const { entries, pairs } = compareFigures(
+    laid,
+    () => levelDba,
+    (id) => (overBridge && id === "b" ? bridge : undefined),
+  );
   return { a: entries[0] as ComparedEntry, b: entries[1] as ComparedEntry, pair: pairs[0] as ComparedPair };
 }
 
@@ -73,6 +79,14 @@ describe("figures of a comparison against scipy", () => {
     expectFigure(pair.percent, -1.397118, 4.539963);
     expectFigure(pair.deltaTK, -0.500894, 1.128373);
     expectFigure(pair.coolingDb, -0.556575, 1.437093);
+  });
+});
+
+describe("an entry against another baseline unit", () => {
+  it("is carried over by the bridge, whose uncertainty is added", () => {
+    const { b: ofB, pair } = compared("two", 36, true);
+    expectFigure(pair.percent, -2.634173, 4.723338);
+    expectFigure(ofB.ratioPercent, 103.087934, 3.28624);
   });
 });
 
