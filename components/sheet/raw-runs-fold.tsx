@@ -51,7 +51,7 @@ export function RawRunsFold({ slug, entryId, setSpeed, unit, runs }: RawRunsFold
         ) : setSpeed === null ? (
           <SessionReadingsTable raw={data} />
         ) : (
-          <RawRunsTable raw={data} setSpeed={setSpeed} />
+          <RawRunsTable raw={data} setSpeed={setSpeed} unit={unit} />
         )}
       </div>
     </details>

@@ -72,7 +72,8 @@ function Table({ caption, rows }: { caption: string; rows: readonly BarsRow[] })
 }
 
 /** All readings of a set speed, the design's runs first, then the baseline's. */
-export function RawRunsTable({ raw, setSpeed }: { raw: RawRuns; setSpeed: number }) {
+export function RawRunsTable({ raw, setSpeed, unit }: { raw: RawRuns; setSpeed: number; unit: string }) {
+  const at = `${formatNumber(setSpeed)} ${unit}`;
   const rowsOf = (subject: RawRun["subject"]) =>
     raw.runs
       .filter((run) => run.subject === subject && run.setSpeed === setSpeed)
@@ -83,8 +84,8 @@ export function RawRunsTable({ raw, setSpeed }: { raw: RawRuns; setSpeed: number
       );
   return (
     <div className="grid gap-6">
-      <Table caption="This design, reading by reading" rows={rowsOf("entry")} />
-      <Table caption="The baseline in the same session" rows={rowsOf("baseline")} />
+      <Table caption={`This design, reading by reading, at ${at}`} rows={rowsOf("entry")} />
+      <Table caption={`The baseline in the same session, at ${at}`} rows={rowsOf("baseline")} />
     </div>
   );
 }
