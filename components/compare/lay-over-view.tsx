@@ -48,7 +48,7 @@ export function LayOverView({ heads, input, levelDba }: LayOverViewProps) {
     const head = heads.find((each) => each.entryId === id);
     return head ? nameOf(head, heads) : id;
   };
-  const sessions = [...new Map(laid.map((entry) => [entry.sessionId, entry])).values()];
+  const sessions = laid.filter((entry, n) => laid.findIndex(({ sessionId }) => sessionId === entry.sessionId) === n);
   const baselines = sessions.map((entry) => ({
     key: entry.sessionId,
     name: sessions.length === 1 ? "Baseline" : `Baseline beside ${name(entry.id)}`,

@@ -54,7 +54,7 @@ export type PointsSectionProps = { heads: readonly ComparedHead[]; laid: readonl
 
 /** What was measured at each set speed. One table within one axis; else a table for each entry and its own baseline. */
 export function PointsSection({ heads, laid, oneAxis }: PointsSectionProps) {
-  const sessions = [...new Map(laid.map((entry) => [entry.sessionId, entry])).values()];
+  const sessions = laid.filter((entry, n) => laid.findIndex(({ sessionId }) => sessionId === entry.sessionId) === n);
   const headOf = (id: string) => heads.find((head) => head.entryId === id);
   const name = (id: string) => {
     const head = headOf(id);
