@@ -4,8 +4,16 @@ import clsx from "clsx";
 import { useId, useRef, useState, type DragEvent } from "react";
 import { Button } from "@/components/ui/button";
 
+export type DropModelProps = {
+  onFile: (file: File) => void;
+  /** The reader is loaded. */
+  ready: boolean;
+  /** A model is there already. */
+  again: boolean;
+};
+
 /** Where a model is dropped or chosen. STEP may be chosen too, to be told that it isn't measured. */
-export function DropModel({ onFile, again }: { onFile: (file: File) => void; again: boolean }) {
+export function DropModel({ onFile, ready, again }: DropModelProps) {
   const input = useRef<HTMLInputElement>(null);
   const [over, setOver] = useState(false);
   const noteId = useId();
@@ -17,6 +25,7 @@ export function DropModel({ onFile, again }: { onFile: (file: File) => void; aga
   };
   return (
     <div
+      aria-busy={!ready}
       className={clsx(
         "grid max-w-3xl justify-items-start gap-3 border-2 border-dashed p-5",
         over ? "border-ink bg-bar" : "border-rule",

@@ -55,7 +55,7 @@ function Reading({ state, measureIn, cancel }: ModelReadingActs) {
 /** A model is dropped, read beside the page, and compared with a frame, a season and a bench. */
 export function FitDesk({ limits }: { limits: FitLimits }) {
   const reading = useModelReading();
-  const { state, choose, compare } = reading;
+  const { state, ready, choose, compare } = reading;
   const [chosen, setChosen] = useState<CompareWith>({
     frameKey: limits.seasons[0]?.frameKeys[0] ?? limits.frames[0]?.key ?? "",
     seasonSlug: limits.seasons[0]?.slug ?? "",
@@ -79,7 +79,7 @@ export function FitDesk({ limits }: { limits: FitLimits }) {
         note="traits, frame, balance and drawing, off your mesh"
         className="grid gap-5"
       >
-        <DropModel onFile={choose} again={state.step !== "none"} />
+        <DropModel onFile={choose} ready={ready} again={state.step !== "none"} />
         <Reading {...reading} />
         <CompareFields
           limits={limits}

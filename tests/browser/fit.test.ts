@@ -25,6 +25,8 @@ const rotorFile = (...specs: RotorSpec[]) => file("rotor.stl", binaryStl(generat
 
 async function openFit(page: Page): Promise<string[]> {
   await page.goto("/fit", { waitUntil: "networkidle" });
+  // The reader itself is loaded with the page.
+  await page.locator("#fit [aria-busy=false]").waitFor();
   const asked: string[] = [];
   page.on("request", (request) => {
     // The drawing's own link is data, not a request.

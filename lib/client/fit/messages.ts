@@ -35,6 +35,8 @@ export type WorkerRequest =
   | { readonly kind: "compare"; readonly job: number; readonly ask: number; readonly around: Surroundings };
 
 export type WorkerAnswer =
+  /** Said once, when the worker has all that it needs. */
+  | { readonly kind: "ready" }
   | { readonly kind: "progress"; readonly job: number; readonly read: number; readonly expected: number | undefined }
   | { readonly kind: "read"; readonly job: number; readonly model: ModelFile }
   | { readonly kind: "measured"; readonly job: number; readonly measured: ModelMeasured }

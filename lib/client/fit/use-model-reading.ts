@@ -26,6 +26,8 @@ export type ModelState =
 
 export interface ModelReadingActs {
   readonly state: ModelState;
+  /** The reader is loaded: from now on nothing is fetched. A file chosen earlier waits for it. */
+  readonly ready: boolean;
   /** Reads a file and, where its unit is beyond doubt, measures it. Another file takes the place of the first. */
   choose(file: File): void;
   /** Measures the model in a unit, mm per file unit. */
@@ -40,6 +42,7 @@ const makeWorker = (): Worker => new Worker(new URL("../workers/mesh-reader.work
 /** Reads model files in a web worker of this page. It is started with the page, so that later nothing is fetched. */
 export function useModelReading(): ModelReadingActs {
   const [state, setState] = useState<ModelState>({ step: "none" });
+  const [ready, setReady] = useState(false);
   const worker = useRef<Worker | undefined>(undefined);
   const job = useRef(0);
   const ask = useRef(0);
@@ -63,6 +66,10 @@ export function useModelReading(): ModelReadingActs {
   const hear = useCallback(
     (message: WorkerAnswer) => {
       const at = now.current;
+      if (message.kind === "ready") {
+        setReady(true);
+        return;
+      }
       if (message.job !== job.current) return;
       if (message.kind === "progress" && at.step === "reading") {
         go({ ...at, read: message.read, expected: message.expected });
@@ -135,5 +142,5 @@ export function useModelReading(): ModelReadingActs {
     [send],
   );
 
-  return { state, choose, measureIn, cancel, compare };
+  return { state, ready, choose, measureIn, cancel, compare };
 }

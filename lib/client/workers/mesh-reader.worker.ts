@@ -85,3 +85,5 @@ function refuse(job: number, error: unknown): void {
 self.addEventListener("message", ({ data }: MessageEvent<WorkerRequest>) => {
   work(data).catch((error: unknown) => refuse(data.job, error));
 });
+
+answer({ kind: "ready" });
