@@ -7,10 +7,10 @@ import { countWords, listWords } from "@/lib/format/words";
 import { DownloadLink } from "./download-links";
 import { EffectsTable } from "./effects-table";
 import { ModelNote } from "./model-note";
-import { effectName, figureWords, whyWords, type EffectShown } from "./study-words";
+import { chartName, effectName, figureWords, whyWords, type EffectShown } from "./study-words";
 
 /** A row of the chart; what isn't given stays off it and is said below. */
-export function chartRow(effect: EffectShown, name = effectName(effect)): DotInterval {
+export function chartRow(effect: EffectShown, name = chartName(effect)): DotInterval {
   const { key, estimate, low, high, n, why } = effect;
   return { key, name, estimate, low, high, count: n, ...(why ? { why: whyWords[why] } : {}) };
 }

@@ -56,6 +56,22 @@ export function effectName({ trait, level, step }: Pick<EffectShown, "trait" | "
   return `${label}, +${formatNumber(step, { decimals: step < 1 ? 1 : 0 })}${unitAfter(unit)}`;
 }
 
+const shortLabels: Partial<Record<TraitKey, string>> = {
+  blades: "Blades",
+  blades2: "2nd blades",
+  hand: "Hand",
+  inlet: "Inlet",
+  inletmm: "Inlet length",
+  solidity: "Solidity",
+  pitch: "Pitch",
+};
+
+/** The same, short enough for a chart's side on a phone: "Blades, +1", "Inlet: cone". */
+export function chartName(effect: Pick<EffectShown, "trait" | "level" | "step">): string {
+  const { label } = traitOf(effect.trait);
+  return effectName(effect).replace(label, shortLabels[effect.trait] ?? label);
+}
+
 /** What a choice's effects are against: "against no stack". */
 export function againstWords({ trait, reference }: Pick<EffectShown, "trait" | "reference">): string | undefined {
   return reference === undefined ? undefined : `against ${valueWords(trait, reference)}`;

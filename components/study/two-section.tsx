@@ -7,7 +7,7 @@ import { Section } from "@/components/ui/sheet";
 import type { StudyAnswer } from "@/lib/contracts/study";
 import { traitOf } from "@/lib/domain/study/traits";
 import { chartRow } from "./effects-section";
-import { effectName, figureIn, figureWords, levelWords, whyWords, type Result } from "./study-words";
+import { chartName, effectName, figureIn, figureWords, levelWords, whyWords, type Result } from "./study-words";
 
 type Two = NonNullable<Result["two"]>;
 type Figure = keyof typeof figureWords;
@@ -97,7 +97,7 @@ export function TwoSection({ question, result }: Pick<StudyAnswer, "question" | 
       const where = levelWords(second, level);
       const several = effects.length > 1;
       return {
-        ...chartRow(effect, several ? `${where}; ${effectName(effect)}` : where),
+        ...chartRow(effect, several ? `${where}; ${chartName(effect)}` : where),
         key: `${level.key} ${effect.key}`,
       };
     }),
