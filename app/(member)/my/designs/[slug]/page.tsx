@@ -40,7 +40,8 @@ export default async function MyDesignPage({ params }: { params: Promise<{ slug:
           {design.revisions.map((revision) => (
             <li key={revision.letter}>
               {revision.letter}: {revision.frameKey}, {revision.material}, {rotorWords(revision)}, {revision.licence}
-              {revision.sentInAt === null ? ", not sent in yet" : ""}
+              {revision.sentInAt === null ? ", not sent in yet" : ""}{" "}
+              <Link href={`/my/designs/${slug}/revisions/${revision.letter}`}>Files and traits</Link>
             </li>
           ))}
         </ul>
