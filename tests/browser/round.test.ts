@@ -112,7 +112,7 @@ describe("a whole round", () => {
       const baselineK = baselineDeltaTK(below, backgroundDba, headlineDba);
       await reader.page.goto("/designs?season=" + staged.seasonSlug);
       for (const { of } of expected)
-        await reader.page.getByRole("checkbox", { name: new RegExp(of.name) }).check({ force: true });
+        await reader.page.getByRole("checkbox", { name: new RegExp(`Clip ${of.name}`) }).check({ force: true });
       await reader.page.getByRole("link", { name: /Lay over the baseline/ }).click();
       await reader.page.waitForURL(/\/compare/);
       await reader.page.getByRole("heading", { level: 1, name: /over the baseline/ }).waitFor();

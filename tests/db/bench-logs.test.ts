@@ -168,7 +168,8 @@ describe("a level log", () => {
       },
     });
     const headers = { "content-type": "text/csv" };
-    const long = new Request("http://bench.example/", { method: "POST", body: endless, headers, duplex: "half" });
+    const init: RequestInit & { duplex: "half" } = { method: "POST", body: endless, headers, duplex: "half" };
+    const long = new Request("http://bench.example/", init);
     await expect(send(long)).rejects.toMatchObject({ code: "too_large" });
     expect(sent).toBeLessThan(70);
     expect(await db.owner("log_file").where({ run_id: runId })).toEqual([]);

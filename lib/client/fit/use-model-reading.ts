@@ -87,6 +87,7 @@ export function useModelReading(): ModelReadingActs {
           mmPerUnit: at.mmPerUnit,
           measured: message.measured,
           drawn: undefined,
+          compared: undefined,
         });
       }
       if (message.kind === "drawn" && at.step === "measured") {
