@@ -7,5 +7,6 @@ export const publicWords: readonly StripWord[] = [
   { href: "/traits", word: "Traits" },
   { href: "/seasons", word: "Seasons" },
   { href: "/baselines", word: "Baselines" },
+  { href: "/fit", word: "Fit" },
   { href: "/method", word: "Method" },
 ];

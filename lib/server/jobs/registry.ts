@@ -7,6 +7,7 @@ import { deliveryLoop } from "../deliveries/deliver";
 import { publishDueRounds } from "../publishing/schedule";
 import { compareIndex } from "../search/compare";
 import { runSearchSender } from "../search/sender";
+import { refreshStudies } from "../study/read-study";
 import { readQuarantinedFile, sweepUploads } from "../uploads/read-file";
 
 /** Work that goes on as long as the worker runs, the outbox's sender say; it ends soon after the signal. */
@@ -34,6 +35,7 @@ export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
   "publish-due": async () => {
     const { published, refused } = await publishDueRounds(new Date());
     if (published.length > 0 || refused.length > 0) log().info({ published, refused }, "rounds whose hour has come");
+    if (published.length > 0) await refreshStudies();
   },
 };
 
