@@ -2,6 +2,7 @@ import { ClipBar } from "@/components/shell/clip-bar";
 import type { Sheet } from "@/lib/contracts/sheet";
 import { BudgetSection } from "./budget-section";
 import { CoolingSection } from "./cooling-section";
+import { DrawingSection } from "./drawing-section";
 import { FourFigures } from "./four-figures";
 import { HistorySection } from "./history-section";
 import { OffAxis } from "./off-axis";
@@ -19,6 +20,7 @@ export function SheetView({ sheet }: { sheet: Sheet }) {
       <SheetHead sheet={sheet} />
       <FourFigures sheet={sheet} />
       <CoolingSection sheet={sheet} />
+      <DrawingSection sheet={sheet} />
       <ReadingsSection sheet={sheet} />
       <OffAxis sheet={sheet} />
       <BudgetSection sheet={sheet} />
