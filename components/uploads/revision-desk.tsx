@@ -1,5 +1,6 @@
 "use client";
 
+import Link from "next/link";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/sheet";
@@ -18,7 +19,12 @@ export function RevisionDesk({ slug, first }: { slug: string; first: RevisionFil
   const { reading } = revision;
   return (
     <>
-      <Section id="files" title={`Files of ${revision.designName} ${revision.letter}`} level={1}>
+      <Section
+        id="files"
+        title={`Files of ${revision.designName} ${revision.letter}`}
+        level={1}
+        aside={<Link href={`/my/designs/${slug}`}>The design</Link>}
+      >
         {revision.files.length === 0 ? <p>No file yet.</p> : null}
         <ul className="mb-4 space-y-2">
           {revision.files.map(({ attachmentId, role, name, bytes, gone }) => (

@@ -14,7 +14,7 @@ interface Row {
   line: TraitLine;
 }
 
-const nothing: TraitLine = { read: null, declared: null, holds: "declared" };
+const nothing: TraitLine = { read: null, declared: null, holds: null };
 
 function rowsOf({ whole, rotors }: RevisionFiles): { title: string; rows: Row[] }[] {
   return [
@@ -37,9 +37,9 @@ function rowsOf({ whole, rotors }: RevisionFiles): { title: string; rows: Row[] 
   ];
 }
 
-/** What was read is offered; what a person declared otherwise before keeps its place. */
-const firstDraft = ({ line: { read, declared } }: Row): TraitDraft => ({
-  from: read === null ? "declared" : "read",
+/** What was read is offered; what a person confirmed otherwise before keeps its place. */
+const firstDraft = ({ line: { read, declared, holds } }: Row): TraitDraft => ({
+  from: read === null || holds === "declared" ? "declared" : "read",
   text: textOf(declared ?? read),
 });
 

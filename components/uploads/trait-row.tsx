@@ -25,7 +25,6 @@ export function TraitRow({ name, words, line, draft, error, onChange }: TraitRow
   const label = words.unit === "" ? words.label : `${words.label}, ${words.unit}`;
   const declare = (text: string) => onChange({ from: "declared", text });
   const control = {
-    className: "field",
     "aria-label": `${label}, declared`,
     "aria-invalid": error ? (true as const) : undefined,
     value: draft.text,
@@ -56,16 +55,18 @@ export function TraitRow({ name, words, line, draft, error, onChange }: TraitRow
             checked={draft.from === "declared"}
             onChange={() => onChange({ ...draft, from: "declared" })}
           />
-          {words.kind === "number" ? (
-            <input {...control} inputMode="decimal" size={8} onChange={({ target }) => declare(target.value)} />
-          ) : (
-            <select {...control} onChange={({ target }) => declare(target.value)}>
-              {draft.text === "" ? <option value="">–</option> : null}
-              {options[words.kind].map((each) => (
-                <option key={each}>{each}</option>
-              ))}
-            </select>
-          )}
+          <span className="blank blank-figures max-w-32">
+            {words.kind === "number" ? (
+              <input {...control} inputMode="decimal" size={8} onChange={({ target }) => declare(target.value)} />
+            ) : (
+              <select {...control} onChange={({ target }) => declare(target.value)}>
+                {draft.text === "" ? <option value="">–</option> : null}
+                {options[words.kind].map((each) => (
+                  <option key={each}>{each}</option>
+                ))}
+              </select>
+            )}
+          </span>
         </div>
         {error ? (
           <p role="alert" className="small-print text-ribbon">

@@ -31,17 +31,15 @@ export function UploadField({ uploads, uploading }: { uploads: readonly UploadAn
       <div className="flex flex-wrap items-end gap-3">
         <label className="grid gap-1">
           <span className="field-label">What it is</span>
-          <select
-            className="field"
-            value={purpose}
-            onChange={({ target }) => setPurpose(target.value as RevisionPurpose)}
-          >
-            {purposeList.map((each) => (
-              <option key={each} value={each}>
-                {purposes[each]}
-              </option>
-            ))}
-          </select>
+          <span className="blank">
+            <select value={purpose} onChange={({ target }) => setPurpose(target.value as RevisionPurpose)}>
+              {purposeList.map((each) => (
+                <option key={each} value={each}>
+                  {purposes[each]}
+                </option>
+              ))}
+            </select>
+          </span>
         </label>
         <Button kind="solid" busy={sending !== undefined} busyWords="Sending …" onClick={() => input.current?.click()}>
           Choose a file

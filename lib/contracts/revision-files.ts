@@ -49,8 +49,12 @@ export type ConfirmTraits = z.infer<typeof confirmTraits>;
 const value = z.union([z.number(), z.string(), z.boolean()]).nullable();
 export type TraitValue = z.infer<typeof value>;
 
-/** One trait: what the mesh tells, what was declared, which holds. Null for what isn't known. */
-export const traitLine = z.strictObject({ read: value, declared: value, holds: z.enum(["read", "declared"]) });
+/** One trait: what the mesh tells, what was declared, which was confirmed to hold. Null for what isn't known or confirmed. */
+export const traitLine = z.strictObject({
+  read: value,
+  declared: value,
+  holds: z.enum(["read", "declared"]).nullable(),
+});
 export type TraitLine = z.infer<typeof traitLine>;
 
 export const revisionFiles = z.strictObject({

@@ -7,8 +7,8 @@ const megabyte = 1_000_000;
 /** What may be sent for what: the largest file in bytes, and the kinds found by content that are taken. */
 export const uploadPurposes = {
   model: { maxBytes: 300 * megabyte, kinds: ["stl", "3mf", "step"] },
-  source: { maxBytes: 100 * megabyte, kinds: ["stl", "3mf", "step", "text", "unknown"] },
-  print_profile: { maxBytes: 5 * megabyte, kinds: ["text"] },
+  source: { maxBytes: 100 * megabyte, kinds: ["stl", "3mf", "step", "text", "csv", "unknown"] },
+  print_profile: { maxBytes: 5 * megabyte, kinds: ["text", "csv"] },
   photograph: { maxBytes: 30 * megabyte, kinds: ["png", "jpeg", "webp"] },
   log: { maxBytes: 64 * megabyte, kinds: ["csv", "text"] },
   recording: { maxBytes: 200 * megabyte, kinds: ["wav"] },

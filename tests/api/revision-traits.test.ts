@@ -42,8 +42,8 @@ describe("a model sent for a draft", () => {
     const { reading, rotors } = await files();
     expect(reading).toMatchObject({ name: "rotor.stl", unit: { mmPerUnit: 1, from: "guessed" } });
     const [rotor] = rotors;
-    expect(rotor?.traits.blades).toEqual({ read: drawn.blades, declared: 5, holds: "declared" });
-    expect(rotor?.traits.hand).toEqual({ read: drawn.hand, declared: "left", holds: "declared" });
+    expect(rotor?.traits.blades).toEqual({ read: drawn.blades, declared: 5, holds: null });
+    expect(rotor?.traits.hand).toEqual({ read: drawn.hand, declared: "left", holds: null });
     expect(Number(rotor?.traits.tipDiameterMm?.read)).toBeCloseTo(2 * drawn.tipRadiusMm, 0);
     expect(Number(rotor?.traits.hubDiameterMm?.read)).toBeCloseTo(2 * drawn.hubRadiusMm, 0);
     expect(await owner("mesh_reading").where({ reader_version: reading?.readerVersion })).not.toEqual([]);
@@ -61,7 +61,8 @@ describe("a model sent for a draft", () => {
     expect(row.traits_declared).toMatchObject({ hubDiameterMm: 41.5 });
     const trait = await owner("revision_trait").where({ revision_id: draft.revisionId }).first();
     expect([trait.stages, trait.struts, trait.holds.struts]).toEqual([1, 3, "declared"]);
-    expect((await files()).rotors[0]?.traits.blades?.holds).toBe("read");
+    const { traits } = (await files()).rotors[0] ?? { traits: {} };
+    expect([traits.blades?.holds, traits.hubDiameterMm?.holds]).toEqual(["read", "declared"]);
   });
 
   it("refuses what wasn't read, what can't be, and a file that is no longer the one that was read", async () => {

@@ -86,8 +86,9 @@ function line(
   held: Values[string] | undefined,
   kept: { declared: Values; holds: Holds } | undefined,
 ): TraitLine {
-  const holds = kept?.holds[traitKeyOf(name)] === "read" ? "read" : "declared";
-  const declared = kept?.declared[name] ?? (holds === "declared" ? held : undefined);
+  const said = kept?.holds[traitKeyOf(name)];
+  const holds = said === "read" || said === "declared" ? said : null;
+  const declared = kept?.declared[name] ?? (holds === "read" ? undefined : held);
   return { read: read ?? null, declared: declared ?? null, holds };
 }
 

@@ -1,5 +1,4 @@
 import type { Metadata } from "next";
-import Link from "next/link";
 import { notFound } from "next/navigation";
 import { RevisionDesk } from "@/components/uploads/revision-desk";
 import { orPageState, personForPage } from "@/lib/auth/page";
@@ -15,12 +14,5 @@ export default async function RevisionPage({ params }: { params: Promise<{ slug:
   const path = `/my/designs/${slug}/revisions/${letter}`;
   const actor = await personForPage(path);
   const first = await orPageState(readRevisionFiles(actor, name.data), path);
-  return (
-    <>
-      <p className="small-print">
-        <Link href={`/my/designs/${slug}`}>Back to the design</Link>
-      </p>
-      <RevisionDesk slug={slug} first={first} />
-    </>
-  );
+  return <RevisionDesk slug={slug} first={first} />;
 }
