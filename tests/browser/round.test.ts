@@ -76,6 +76,9 @@ describe("a whole round", () => {
       const reviewer = await browser.open({ as: "reviewer" });
       await reviewer.page.goto(`/review/${staged.roundId}`);
       await reviewer.page
+        .getByRole("checkbox", { name: new RegExp(`^Send back ${other.name}`) })
+        .check({ force: true });
+      await reviewer.page
         .getByLabel(new RegExp(`^Reason for ${other.name}`))
         .fill("The heater's power at 800 rpm looks off.");
       await reviewer.page.getByLabel("What is wrong").fill("Look at one power again.");
