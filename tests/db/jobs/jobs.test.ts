@@ -37,7 +37,9 @@ test("a job sent in a transaction is there when it commits, and only then", asyn
   const jobs = await connectJobs(false);
   await expect(
     database.app.transaction(async (transaction) => {
-      expect(await jobs.send("file-read", { uploadId: fileId }, { within: sqlExecutor(transaction) })).toBeTypeOf("string");
+      expect(await jobs.send("file-read", { uploadId: fileId }, { within: sqlExecutor(transaction) })).toBeTypeOf(
+        "string",
+      );
       throw new Error("taken back");
     }),
   ).rejects.toThrow("taken back");
