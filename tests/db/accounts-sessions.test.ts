@@ -121,15 +121,13 @@ describe("guessing", () => {
   });
 
   it("is stopped from one address over all accounts after a hundred failures", async () => {
-    await db
-      .owner("sign_in_attempt")
-      .insert(
-        Array.from({ length: 100 }, (_, n) => ({
-          account_key: `someone-${n}`,
-          address: "203.0.113.77",
-          succeeded: false,
-        })),
-      );
+    await db.owner("sign_in_attempt").insert(
+      Array.from({ length: 100 }, (_, n) => ({
+        account_key: `someone-${n}`,
+        address: "203.0.113.77",
+        succeeded: false,
+      })),
+    );
     const { email } = await makePerson(db.owner, "bystander");
     const from = (each: string) => checkCredentials({ email, password: testPassword, address: each });
     expect(await from("203.0.113.77")).toEqual({ ok: false, why: "too_many" });
