@@ -17,12 +17,15 @@ export function benchHand(page: Page) {
       await page.waitForURL(/\/bench\/sessions\//);
     },
     async calibrator(phase: "before" | "after", typed: string): Promise<void> {
-      await page.getByLabel(`Calibrator ${phase}, on axis`).fill(typed);
+      await page.getByRole("textbox", { name: `Calibrator ${phase}, on axis` }).fill(typed);
+      const kept = page.waitForResponse(
+        (answer) => answer.url().endsWith("/readings") && answer.request().method() === "POST",
+      );
       await page.getByRole("button", { name: `Keep reading: calibrator ${phase}, on axis` }).click();
-      await page.getByText(new RegExp(`calibrator`, "i")).first().waitFor();
+      await kept;
     },
     async background(typed: string): Promise<void> {
-      await page.getByLabel("Background level").fill(typed);
+      await page.getByRole("textbox", { name: "Background level" }).fill(typed);
       const kept = page.waitForResponse(
         (answer) => answer.url().endsWith("/readings") && answer.request().method() === "POST",
       );
@@ -37,11 +40,11 @@ export function benchHand(page: Page) {
       typed: { level: string; power: string; rpm: string; sensor?: string; ambient?: string },
     ): Promise<void> {
       await cell(subject, mount, setSpeed).click();
-      await page.getByLabel("Level on axis").fill(typed.level);
-      await page.getByLabel("Heater power").fill(typed.power);
-      await page.getByLabel("Speed of rotor 1").fill(typed.rpm);
-      if (typed.sensor) await page.getByLabel("Sensor temperature").fill(typed.sensor);
-      if (typed.ambient) await page.getByLabel("Ambient temperature").fill(typed.ambient);
+      await page.getByRole("textbox", { name: "Level on axis" }).fill(typed.level);
+      await page.getByRole("textbox", { name: "Heater power" }).fill(typed.power);
+      await page.getByRole("textbox", { name: "Speed of rotor 1" }).fill(typed.rpm);
+      if (typed.sensor) await page.getByRole("textbox", { name: "Sensor temperature" }).fill(typed.sensor);
+      if (typed.ambient) await page.getByRole("textbox", { name: "Ambient temperature" }).fill(typed.ambient);
       await page.getByRole("button", { name: "Add run" }).click();
       await done().waitFor();
     },
@@ -76,11 +79,13 @@ export function benchHand(page: Page) {
       for (const name of names) {
         const moved = page.waitForResponse((answer) => answer.url().endsWith("/moves"));
         await page.getByRole("button", { name: new RegExp(`^To review: ${name}`) }).click();
-        await moved;
+        const answer = await moved;
+        if (!answer.ok()) throw new Error(`${name} did not go to review: ${await answer.text()}`);
       }
-      const round = page.waitForResponse((answer) => answer.url().endsWith("/to-review"));
-      await page.getByRole("button", { name: new RegExp(`^Round to review: ${roundName}`) }).click();
-      await round;
+      await page.goto("/bench");
+      const round = page.getByRole("button", { name: new RegExp(`^Round to review: ${roundName}`) });
+      await round.click();
+      await round.waitFor({ state: "hidden" });
     },
   };
 }
