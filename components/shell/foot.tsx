@@ -7,7 +7,6 @@ const words = [
   { href: "/method#cautions", word: "Cautions" },
   { href: "/method", word: "How it is measured" },
   { href: "/corrections", word: "Corrections" },
-  { href: "/docs/api", word: "For programs" },
   { href: "/licences/atkinson-hyperlegible-next.txt", word: "Type: SIL OFL", file: true },
 ];
 

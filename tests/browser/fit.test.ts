@@ -24,13 +24,14 @@ const file = (name: string, bytes: Uint8Array) => ({ name, mimeType: "model/stl"
 const rotorFile = (...specs: RotorSpec[]) => file("rotor.stl", binaryStl(generateRotors(specs)));
 
 async function openFit(page: Page): Promise<string[]> {
-  await page.goto("/fit", { waitUntil: "networkidle" });
+  await page.goto("/fit");
   // The reader itself is loaded with the page.
   await page.locator("#fit [aria-busy=false]").waitFor();
   const asked: string[] = [];
   page.on("request", (request) => {
-    // The drawing's own link is data, not a request.
-    if (/^https?:/.test(request.url())) asked.push(request.url());
+    // The page fetches its neighbours ahead; what would take a model away has a body, or goes elsewhere.
+    const elsewhere = /^https?:/.test(request.url()) && !request.url().startsWith(new URL(page.url()).origin);
+    if (elsewhere || request.postDataBuffer() !== null) asked.push(request.url());
   });
   return asked;
 }
