@@ -1,6 +1,6 @@
 import type { Metadata } from "next";
 import Link from "next/link";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Section } from "@/components/ui/sheet";
 import { EmptyState } from "@/components/ui/states";
 import { orPageState, personForPage } from "@/lib/auth/page";

@@ -1,5 +1,5 @@
 import Link from "next/link";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import { EmptyState } from "@/components/ui/states";
 import type { PeoplePage, PeopleQuery, PersonItem } from "@/lib/contracts/people";
 import { RoleForm } from "./role-form";

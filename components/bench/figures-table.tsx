@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BenchSession } from "@/lib/contracts/bench-session";
 import { speedWords } from "./words";
 

@@ -1,6 +1,6 @@
 import { Fold } from "@/components/ui/fold";
 import { Notice } from "@/components/ui/notice";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { LogAnswer } from "@/lib/contracts/bench-logs";
 
 const whole = (value: number | null): string => (value === null ? "an unknown time" : `${Math.round(value)} s`);

@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsRow, Figure } from "@/components/ui/bars/bars-model";
 import type { ComparedEntry, Contrast, Estimate } from "@/lib/domain/results/compare-figures";
 import { whyWords, type NameById } from "./compare-words";

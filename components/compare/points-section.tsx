@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsRow } from "@/components/ui/bars/bars-model";
 import { Section } from "@/components/ui/sheet";
 import type { ComparedHead } from "@/lib/contracts/compare";

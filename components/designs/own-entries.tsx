@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { OwnDesign } from "@/lib/contracts/own-designs";
 import { formatDateTime } from "@/lib/format/dates";
 import { OwnMoveForm } from "./entry-forms";

@@ -1,6 +1,6 @@
 import Link from "next/link";
 import type { ReactNode } from "react";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 import { indexAddress, type IndexAnswer, type IndexItem, type IndexQuery } from "@/lib/contracts/index-query";
 import { entryToken } from "@/lib/domain/designs/entry-token";

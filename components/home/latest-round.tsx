@@ -1,5 +1,5 @@
 import Link from "next/link";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 import { LinkButton } from "@/components/ui/button";
 import { Section } from "@/components/ui/sheet";

@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Facts } from "@/components/ui/facts";
 import { Fold } from "@/components/ui/fold";
 import type { BenchSetup } from "@/lib/contracts/bench-admin";

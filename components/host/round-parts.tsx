@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Fold } from "@/components/ui/fold";
 import type { HostRound } from "@/lib/contracts/seasons-admin";
 import { formatDateTime } from "@/lib/format/dates";

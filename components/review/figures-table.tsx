@@ -1,5 +1,6 @@
 import Link from "next/link";
-import { BarsTable, type Figure } from "@/components/tables/bars-table";
+import type { Figure } from "@/components/ui/bars/bars-model";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { ReviewEntry, ReviewRound } from "@/lib/contracts/review";
 import type { Figure as Measured } from "@/lib/contracts/publication";
 import { stated } from "@/lib/domain/results/stated";

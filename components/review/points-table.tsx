@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { Snapshot } from "@/lib/contracts/publication";
 import { measuredCell, notReachedWords } from "./figures-table";
 

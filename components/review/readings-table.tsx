@@ -1,4 +1,4 @@
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { ReviewReading } from "@/lib/contracts/review";
 import { formatDateTime } from "@/lib/format/dates";
 

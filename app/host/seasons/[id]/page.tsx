@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import Link from "next/link";
 import { MoveSeasonForm, PlanRoundForm, SeasonForm } from "@/components/host/season-forms";
-import { BarsTable } from "@/components/tables/bars-table";
+import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";

@@ -1,2 +1,0 @@
-export { BarsTable, type BarsTableProps } from "@/components/ui/bars/bars-table";
-export type { BarsCell, BarsColumn, BarsRow, Figure } from "@/components/ui/bars/bars-model";
