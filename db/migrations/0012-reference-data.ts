@@ -1,11 +1,12 @@
 import type { Knex } from "knex";
+import { framePresets } from "@/lib/science/geometry/frames";
 
 /** SHA-256 of the golden result of method 1; a test holds it to the recorded file. */
 const goldenOfMethod1 = "d1df1ba5552300da17d6b7b05df59c05933a53319b70ef4d6a8318159076e739";
 
 /**
  * What every installation starts with: method 1, the scoring rules at their first version, and the frame presets.
- * Hole spacings are common practice without a source; the bore is the house's; a host edits them.
+ * The presets are the domain's own; a host edits them.
  */
 export async function up(knex: Knex): Promise<void> {
   await knex("method_version").insert({ number: 1, note: "The first method.", golden_sha256: goldenOfMethod1 });
@@ -31,23 +32,16 @@ export async function up(knex: Knex): Promise<void> {
       parameters: JSON.stringify(parameters),
     });
   }
-  const frames = [
-    ["80x25", 80, 80, 71.5, 76.5, 25],
-    ["92x25", 92, 92, 82.5, 88, 25],
-    ["120x25", 120, 120, 105, 114, 25],
-    ["120x38", 120, 120, 105, 114, 38],
-    ["140x25", 140, 140, 124.5, 134, 25],
-  ] as const;
   await knex("frame").insert(
-    frames.map(([key, class_mm, outer_mm, hole_spacing_mm, bore_mm, depth_mm]) => ({
-      key,
-      class_mm,
-      outer_mm,
-      hole_spacing_mm,
-      bore_mm,
-      depth_mm,
-      hole_diameter_mm: 4.3,
-      tolerance_mm: 0.5,
+    framePresets.map((frame) => ({
+      key: frame.key,
+      class_mm: frame.sizeMm,
+      outer_mm: frame.sizeMm,
+      hole_spacing_mm: frame.holeSpacingMm,
+      bore_mm: frame.boreMm,
+      depth_mm: frame.depthMm,
+      hole_diameter_mm: frame.holeMm,
+      tolerance_mm: frame.toleranceMm,
     })),
   );
 }

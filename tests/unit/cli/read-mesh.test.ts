@@ -19,7 +19,7 @@ const rotor = generateRotor({
   chordMm: 24,
   thicknessMm: 2,
   hubRadiusMm: 20,
-  tipRadiusMm: 57,
+  tipRadiusMm: 56,
   hubDepthMm: 20,
   boreRadiusMm: 2.5,
 });
@@ -77,8 +77,8 @@ describe("read -- mesh", () => {
         "confidence",
       ]),
     );
-    // π · 0.114 m · 2000/60 per second.
-    expect(found.rotors[0]?.["tipSpeedMs"]).toBeCloseTo((Math.PI * 0.114 * 2000) / 60, 5);
+    // π · 0.112 m · 2000/60 per second.
+    expect(found.rotors[0]?.["tipSpeedMs"]).toBeCloseTo((Math.PI * 0.112 * 2000) / 60, 5);
     expect(found.fit?.fits).toBe(true);
     expect(found.warnings.some((warning) => warning.code.includes("unit"))).toBe(false);
   });
@@ -103,7 +103,7 @@ describe("read -- mesh", () => {
     const guessed = (await readMesh([inches])) as Report;
     expect(guessed.warnings.some((warning) => warning.code.includes("unit"))).toBe(true);
     const told = (await readMesh([inches, "--unit", "in"])) as Report;
-    expect(told.rotors[0]?.["tipDiameterMm"]).toBeCloseTo(114, 2);
+    expect(told.rotors[0]?.["tipDiameterMm"]).toBeCloseTo(112, 2);
     expect(told.unit).toBe("in");
   });
 
@@ -112,7 +112,7 @@ describe("read -- mesh", () => {
     const path = file("mirror.3mf", threeMf(objectXml(1, scaledMesh(rotor, 0.1)), items, "centimeter"));
     const found = (await readMesh([path])) as Report;
     expect(found.rotors.map((r) => [r["blades"], r["hand"]])).toEqual([[7, "left"]]);
-    expect(found.rotors[0]?.["tipDiameterMm"]).toBeCloseTo(114, 2);
+    expect(found.rotors[0]?.["tipDiameterMm"]).toBeCloseTo(112, 2);
   });
 
   it.each([
