@@ -131,3 +131,28 @@ export async function standingSpectra(
   );
   return rows;
 }
+
+/** Blade counts that tones are predicted from, rotor 1 first; null where there are more than two rotors or none. */
+export interface ToneMakersRow {
+  blades: number[];
+  rotation: "counter" | "co" | null;
+  struts: number | null;
+}
+
+/** By id of a revision or of a baseline unit. A baseline's struts are not recorded. */
+export async function toneMakers(
+  db: Handle,
+  { revisionIds, baselineUnitIds }: { revisionIds: readonly string[]; baselineUnitIds: readonly string[] },
+): Promise<Map<string, ToneMakersRow>> {
+  const { rows }: { rows: (ToneMakersRow & { id: string })[] } = await db.raw(
+    `select t.revision_id as id, array_agg(r.blades order by r.position) as blades,
+       case when count(*) = 1 then null when t.counter_rotating then 'counter' else 'co' end as rotation, t.struts
+     from revision_trait t join rotor r on r.revision_id = t.revision_id
+     where t.revision_id = any (:revisionIds) group by t.revision_id having count(*) <= 2
+     union all
+     select u.id, array[b.blades], null, null from baseline_unit u join baseline b on b.id = u.baseline_id
+     where u.id = any (:baselineUnitIds)`,
+    { revisionIds: [...revisionIds], baselineUnitIds: [...baselineUnitIds] },
+  );
+  return new Map(rows.map(({ id, ...makers }) => [id, makers]));
+}

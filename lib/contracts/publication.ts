@@ -62,6 +62,69 @@ export const equalNoiseSchema = z.union([
 ]);
 export type EqualNoise = z.infer<typeof equalNoiseSchema>;
 
+const toneMatchSchema = z.strictObject({
+  kind: z.enum(["blade-passing", "interaction"]),
+  rotor: z.union([z.literal(1), z.literal(2)]).nullable(),
+  m1: z.int(),
+  m2: z.int(),
+  strutModes: z.array(z.int()).nullable(),
+  residualHz: z.number(),
+});
+
+/** A tone found, with its ratios and which predicted one it is; prominent is null where the standard doesn't reach. */
+export const toneSchema = z.strictObject({
+  frequencyHz: z.number(),
+  levelDb: z.number(),
+  toneToNoiseDb: z.number().nullable(),
+  prominenceDb: z.number().nullable(),
+  prominent: z.boolean().nullable(),
+  match: toneMatchSchema.extend({ alsoMatches: z.array(toneMatchSchema) }).nullable(),
+});
+export type Tone = z.infer<typeof toneSchema>;
+
+/** Third-octave levels in dB, as read and with the background taken out (an upper bound where it was too near). */
+export const spectrumBandSchema = z.strictObject({
+  nominalHz: z.number(),
+  midHz: z.number(),
+  levelDb: z.number().nullable(),
+  correctedDb: z.number().nullable(),
+  upperBound: z.boolean().nullable(),
+});
+export type SpectrumBandFigure = z.infer<typeof spectrumBandSchema>;
+
+/** A subject's sound at a set speed and a microphone position; loudness is read where the microphone stood. */
+export const setSpeedSpectrumSchema = z.strictObject({
+  setSpeed: z.number(),
+  position: z.string(),
+  ofProtocol: z.boolean(),
+  levelADba: z.number().nullable(),
+  bands: z.array(spectrumBandSchema),
+  tones: z.array(toneSchema),
+  tonesOfRunId: z.uuid(),
+  loudness: z.strictObject({ sone: z.number(), phon: z.number() }).nullable(),
+  runs: z.int().positive(),
+  spectrumIds: z.array(z.uuid()).min(1),
+  backgroundIds: z.array(z.uuid()),
+});
+export type SetSpeedSpectrum = z.infer<typeof setSpeedSpectrumSchema>;
+
+/** What tones are predicted from, beside the speeds: blade counts, rotor 1 first. Rotation null for one rotor. */
+export const toneMakersSchema = z.strictObject({
+  blades: z.array(z.int().positive()).min(1).max(2),
+  rotation: z.enum(["counter", "co"]).nullable(),
+  struts: z.int().min(0).nullable(),
+});
+export type ToneMakers = z.infer<typeof toneMakersSchema>;
+
+/** Spectra of an entry and of its session's baseline. Absent where no spectrum of the entry stands. Version 1. */
+export const spectraSchema = z.strictObject({
+  version: z.literal(1),
+  makers: z.strictObject({ entry: toneMakersSchema.nullable(), baseline: toneMakersSchema.nullable() }),
+  entry: z.array(setSpeedSpectrumSchema).min(1),
+  baseline: z.array(setSpeedSpectrumSchema),
+});
+export type Spectra = z.infer<typeof spectraSchema>;
+
 /**
  * What a publication froze: an entry's figures with where each came from. Ids of people only, no rank: ranks stand in
  * standings, names are resolved when read. Version 1.
@@ -93,5 +156,7 @@ export const snapshotSchema = z.strictObject({
   budget: z.array(budgetLineSchema),
   notes: z.array(z.strictObject({ code: z.string(), message: z.string() })),
   leftOutRuns: z.array(z.strictObject({ runId: z.uuid(), why: z.string() })),
+  /** Left out of the digest's JSON where there is none, so that what was published before keeps its digest. */
+  spectra: spectraSchema.optional(),
 });
 export type Snapshot = z.infer<typeof snapshotSchema>;

@@ -1,9 +1,11 @@
 import type { Knex } from "knex";
 import { v7 as uuidv7 } from "uuid";
+import { insertSpectra, type SpectrumInsert } from "@/db/queries/spectra";
 import { createRandom, type Random } from "@/lib/science/statistics/random";
 import type { DemoBench } from "./seed-bench";
 import type { DemoSeason } from "./seed-seasons";
 import { levelDba, referenceFan, resistanceKPerW, secondReferenceFan, type ToyFan } from "./toy-model";
+import { toyBackground, toySpectrum, type ToySpectrum } from "./toy-spectrum";
 
 /** Something on the bench: an entry's specimen, or the baseline unit. */
 export interface DemoSubject {
@@ -28,12 +30,15 @@ export interface DemoSession {
 const setSpeeds = [750, 1100, 1450, 1800];
 const mounts = 3;
 const bridgeSeed = 7_002;
+/** The mount whose runs have a spectrum, at each set speed. */
+const spectraMount = 1;
 const round1 = (value: number): number => Math.round(value * 10) / 10;
 
 interface Draft {
   runs: Record<string, unknown>[];
   speeds: Record<string, unknown>[];
   readings: Record<string, unknown>[];
+  spectra: SpectrumInsert[];
 }
 
 interface Circumstances {
@@ -46,6 +51,16 @@ interface Circumstances {
   minute: number;
   ordinal: number;
   beganAt: Date;
+  /** Of its own, so that the rest of the demo is the same with spectra and without. */
+  forSpectra: Random;
+}
+
+/** A stored spectrum of the toy bench, as bands: no recording was made. */
+function spectrum(c: Circumstances, runId: string | null, positionId: string, read: ToySpectrum): SpectrumInsert {
+  const at = new Date(c.beganAt.getTime() + c.minute * 60_000);
+  const purpose = runId === null ? "background" : "run";
+  const of = { sessionId: c.sessionId, runId, positionId, purpose, source: "bands", readerVersion: 1 } as const;
+  return { ...of, ...read, durationS: 30, usedS: 30, byPerson: c.operatorId, at };
 }
 
 function reading(
@@ -99,8 +114,8 @@ function measureMount(random: Random, c: Circumstances, subject: DemoSubject, mo
       by_person: c.operatorId,
       began_at: new Date(c.beganAt.getTime() + c.minute * 60_000),
     });
-    subject.fan.rotors.forEach((_rotor, i) => {
-      const rpm = speedRpm + (i === 0 ? 0 : Math.round(3 * random.normal()));
+    const speeds = subject.fan.rotors.map((_rotor, i) => speedRpm + (i === 0 ? 0 : Math.round(3 * random.normal())));
+    speeds.forEach((rpm, i) => {
       draft.speeds.push({ run_id: runId, rotor_position: i + 1, speed_rpm: rpm, source: "tachometer" });
       draft.readings.push(reading(c, runId, "speed_rpm", rpm, "rpm", { rotor_position: i + 1 }));
     });
@@ -108,7 +123,11 @@ function measureMount(random: Random, c: Circumstances, subject: DemoSubject, mo
       const aside = position.name === "on axis" ? 0 : -1.1;
       const own = levelDba(subject.fan, speedRpm) + aside + c.levelOffsetDb + mountLevelDb + 0.12 * random.normal();
       const heard = 10 * Math.log10(10 ** (own / 10) + 10 ** (backgroundOf(position.name) / 10));
-      draft.readings.push(reading(c, runId, "level_dba", round1(heard), "dB(A)", { position_id: position.id }));
+      const readDba = round1(heard);
+      draft.readings.push(reading(c, runId, "level_dba", readDba, "dB(A)", { position_id: position.id }));
+      if (mount !== spectraMount || position.name !== "on axis") continue;
+      const read = { rpm: speeds, readDba, backgroundDba: backgroundOf(position.name) };
+      draft.spectra.push(spectrum(c, runId, position.id, toySpectrum(c.forSpectra, subject.fan, read)));
     }
     draft.readings.push(reading(c, runId, "ambient_c", ambientC, "°C"));
     draft.readings.push(reading(c, runId, "sensor_c", round1(ambientC + deltaTK), "°C"));
@@ -122,6 +141,7 @@ async function insertDraft(db: Knex, draft: Draft): Promise<void> {
   await db.batchInsert("run", draft.runs, 200);
   await db.batchInsert("run_speed", draft.speeds, 500);
   await db.batchInsert("reading", draft.readings, 500);
+  await insertSpectra(db, draft.spectra);
 }
 
 /** Calibrator and background at the start or the end of a session. */
@@ -142,6 +162,10 @@ async function insertChecks(db: Knex, random: Random, c: Circumstances, phase: "
       },
     );
     await db("reading").insert([calibrator, background]);
+    if (phase === "before" && position.name === "on axis") {
+      const read = toyBackground(c.forSpectra, background.value);
+      await insertSpectra(db, [spectrum(c, null, position.id, read)]);
+    }
     await db("calibration_check").insert({
       session_id: c.sessionId,
       position_id: position.id,
@@ -189,12 +213,13 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
     minute: 5,
     ordinal: 0,
     beganAt: session.beganAt,
+    forSpectra: createRandom(session.beganAt.getTime() / 60_000),
   };
   const humidity = reading(c, null, "humidity_percent", Math.round(40 + 10 * random.uniform()), "%");
   const pressure = reading(c, null, "pressure_pa", Math.round(100_200 + 900 * random.normal()), "Pa");
   await db("reading").insert([humidity, pressure]);
   await insertChecks(db, random, c, "before");
-  const draft: Draft = { runs: [], speeds: [], readings: [] };
+  const draft: Draft = { runs: [], speeds: [], readings: [], spectra: [] };
   const baseline: DemoSubject = { fan: referenceFan, baselineUnitId: session.season.baselineUnitId };
   for (const mount of [1, 2]) measureMount(random, c, baseline, mount, draft);
   for (const subject of session.subjects)

@@ -18,7 +18,8 @@ import { note, type Asked } from "../audit/audit";
 import { roundDigest } from "../review/round-digest";
 import { digestOf } from "./digest";
 import { publishedRow } from "./published-row";
-import { buildSnapshot, computedSession } from "./snapshot";
+import { computedSessions, makersOf } from "./session-loading";
+import { buildSnapshot } from "./snapshot";
 import { addStanding, standingDraws } from "./standing";
 
 export interface PublishedRound {
@@ -80,8 +81,12 @@ export async function publishRound(
 
 async function publishEntries(tx: Handle, round: RoundContext, at: Date): Promise<string[]> {
   const sessionIds = [...new Set(round.entries.flatMap((entry) => entry.sessionId ?? []))];
-  const records = await sessionRecords(tx, { sessionIds });
-  const sessions = new Map(records.map((record) => [record.sessionId, computedSession(record)]));
+  const sessions = await computedSessions(tx, { sessionIds });
+  const records = [...sessions.values()].map((session) => session.record);
+  const makers = await makersOf(tx, {
+    revisionIds: round.entries.map((entry) => entry.revisionId),
+    baselineUnitIds: records.map((record) => record.baselineUnitId),
+  });
   const distances = await microphoneDistances(tx, { benchVersionIds: records.map((each) => each.benchVersionId) });
   const traits = await listedTraits(tx, { revisionIds: round.entries.map((entry) => entry.revisionId) });
   const publicationIds: string[] = [];
@@ -90,7 +95,12 @@ async function publishEntries(tx: Handle, round: RoundContext, at: Date): Promis
     const listed = traits.get(entry.revisionId);
     if (!session || !listed) throw new ExpectedError("moved_on", "An entry of the round has no figures or no traits.");
     const microphoneDistanceMm = distances.get(session.record.benchVersionId) ?? Number.NaN;
-    const snapshot = buildSnapshot(session, { round, entry, microphoneDistanceMm });
+    const snapshot = buildSnapshot(session, {
+      round,
+      entry,
+      microphoneDistanceMm,
+      makers: makers(entry.revisionId, session.record.baselineUnitId),
+    });
     const { id } = await insertPublication(tx, {
       entryId: entry.entryId,
       roundId: round.roundId,

@@ -1,9 +1,10 @@
-import type { Snapshot } from "@/lib/contracts/publication";
+import type { SetSpeedSpectrum, Snapshot } from "@/lib/contracts/publication";
 import type { ListedTraits } from "@/db/queries/publishing";
 
 /**
  * The read model's row of an entry, from its snapshot and traits: figures at the headline level and at the highest set
- * speed that both the entry and the baseline ran. Ranks are written by the standings.
+ * speed that both the entry and the baseline ran; loudness at that speed too, at the protocol's first position that has a
+ * spectrum. Ranks are written by the standings.
  */
 export function publishedRow({
   publicationId,
@@ -21,6 +22,7 @@ export function publishedRow({
   if (!against || !full) throw new Error(`the entry ${snapshot.entryId} shares no set speed with its baseline`);
   const headline = snapshot.equalNoise.find((reading) => reading.levelDba === snapshot.headlineDba);
   const reached = headline && "ratio" in headline ? headline : undefined;
+  const heard = (snapshot.spectra?.entry ?? []).filter((each) => each.ofProtocol);
   const levels = snapshot.points.map((point) => point.level.value);
   return {
     entry_id: snapshot.entryId,
@@ -62,5 +64,12 @@ export function publishedRow({
     dof_resistance_ratio: against.resistanceRatio.dof,
     level_low_dba: Math.min(...levels),
     level_high_dba: Math.max(...levels),
+    loudness_sone: heard.find((each) => each.setSpeed === full.setSpeed)?.loudness?.sone ?? null,
+    prominent_tone: prominentTone(heard),
   };
+}
+
+/** Whether a tone is prominent at any set speed; null where no spectrum stands, so that nobody knows. */
+function prominentTone(heard: readonly SetSpeedSpectrum[]): boolean | null {
+  return heard.length === 0 ? null : heard.some((each) => each.tones.some((tone) => tone.prominent === true));
 }

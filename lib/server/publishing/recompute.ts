@@ -1,10 +1,10 @@
 import type { Handle } from "@/db/client/connect";
 import { currentPublications, newestStandings, standingEntries, storedStandingRows } from "@/db/queries/recompute";
 import { microphoneDistances } from "@/db/queries/publishing";
-import { sessionRecords } from "@/db/queries/session-record";
 import { snapshotSchema } from "@/lib/contracts/publication";
 import { digestOf } from "./digest";
-import { buildSnapshot, computedSession, type ComputedSession } from "./snapshot";
+import { computedSessions } from "./session-loading";
+import { buildSnapshot, type ComputedSession } from "./snapshot";
 import { standingInput, standingRows } from "./standing";
 
 export interface RecomputeReport {
@@ -21,8 +21,8 @@ export async function recomputePublications(db: Handle): Promise<RecomputeReport
   for await (const row of currentPublications(db)) {
     const snapshot = snapshotSchema.parse(row.snapshot);
     if (session?.record.sessionId !== snapshot.sessionId) {
-      const [record] = await sessionRecords(db, { sessionIds: [snapshot.sessionId] });
-      session = record && computedSession(record);
+      const sessions = await computedSessions(db, { sessionIds: [snapshot.sessionId] });
+      session = sessions.get(snapshot.sessionId);
     }
     if (!session) {
       report.differing.push(`${row.id}: its session is gone`);
@@ -46,6 +46,7 @@ export async function recomputePublications(db: Handle): Promise<RecomputeReport
         sessionId: snapshot.sessionId,
       },
       microphoneDistanceMm: distances.get(snapshot.benchVersionId) ?? Number.NaN,
+      makers: snapshot.spectra?.makers ?? { entry: null, baseline: null },
     });
     if (digestOf(again) === row.sha256) report.same += 1;
     else report.differing.push(`publication ${row.id} of entry ${snapshot.entryId}`);

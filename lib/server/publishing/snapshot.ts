@@ -5,6 +5,7 @@ import {
   type Figure,
   type Snapshot,
   type SnapshotPoint,
+  type Spectra,
 } from "@/lib/contracts/publication";
 import type { RoundContext, RoundEntryRow } from "@/db/queries/round-context";
 import { budgetLines } from "@/lib/domain/results/budget";
@@ -20,28 +21,32 @@ import {
   type SubjectFigures,
 } from "@/lib/domain/results/session-figures";
 import type { SessionRecord } from "@/lib/domain/results/session-record";
+import type { SessionSpectra } from "@/lib/domain/results/session-spectra";
 
 /** What surrounds an entry's figures in its snapshot. */
 export interface SnapshotContext {
   round: RoundContext;
   entry: RoundEntryRow;
   microphoneDistanceMm: number;
+  /** What the tones are predicted from; frozen beside the spectra. */
+  makers: Spectra["makers"];
 }
 
-/** A session with its figures, and those of each other microphone position alone. */
+/** A session with its figures, those of each other microphone position alone, and its spectra. */
 export interface ComputedSession {
   record: SessionRecord;
   figures: SessionFigures;
   others: { name: string; figures: SessionFigures }[];
+  spectra: SessionSpectra;
 }
 
 /** Computes a session once, for all entries that are published from it. */
-export function computedSession(record: SessionRecord): ComputedSession {
+export function computedSession(record: SessionRecord, spectra: SessionSpectra): ComputedSession {
   const protocol = protocolPositionIds(record);
   const others = record.positions
     .filter((position) => !protocol.includes(position.id))
     .map(({ id, name }) => ({ name, figures: sessionFigures(record, [id]) }));
-  return { record, figures: sessionFigures(record), others };
+  return { record, figures: sessionFigures(record), others, spectra };
 }
 
 export function figureOf(value: number, effects: readonly Effect[], factor = 1): Figure {
@@ -58,7 +63,7 @@ export function figureOf(value: number, effects: readonly Effect[], factor = 1):
  */
 export function buildSnapshot(
   session: ComputedSession,
-  { round, entry, microphoneDistanceMm }: SnapshotContext,
+  { round, entry, microphoneDistanceMm, makers }: SnapshotContext,
 ): Snapshot {
   const { record, figures } = session;
   const own = figures.entries.find(({ subject }) => subject.entryId === entry.entryId);
@@ -68,6 +73,7 @@ export function buildSnapshot(
   const readings = round.levelsDba.map((level) => equalNoise(own.curve, baseline.curve, level));
   const headline = equalNoise(own.curve, baseline.curve, round.headlineDba);
   const cooling = equalCooling(own.curve, baseline.curve, round.headlineDba);
+  const spectra = session.spectra.get(entry.entryId);
   return snapshotSchema.parse({
     schemaVersion: 1,
     entryId: entry.entryId,
@@ -125,6 +131,9 @@ export function buildSnapshot(
     leftOutRuns: figures.leftOut.filter(({ runId }) =>
       record.runs.some((run) => run.runId === runId && run.entryId === entry.entryId),
     ),
+    ...(spectra && {
+      spectra: { version: 1, makers, entry: spectra, baseline: session.spectra.get(record.baselineUnitId) ?? [] },
+    }),
   });
 }
 

@@ -5,11 +5,11 @@ import { handlesOf } from "@/db/queries/people";
 import { microphoneDistances } from "@/db/queries/publishing";
 import { changesSince, entryNames, reviewsOfRound, sessionsOfRound, type ChangeRow } from "@/db/queries/review-rounds";
 import type { RoundContext, RoundEntryRow } from "@/db/queries/round-context";
-import { sessionRecords } from "@/db/queries/session-record";
 import { newestRuleVersion, type RuleVersion } from "@/db/queries/standings";
 import type { DryStanding, ReviewEntry, ReviewRound } from "@/lib/contracts/review";
 import type { Actor } from "@/lib/domain/accounts/actor";
-import { buildSnapshot, computedSession, type ComputedSession } from "../publishing/snapshot";
+import { computedSessions, makersOf } from "../publishing/session-loading";
+import { buildSnapshot, type ComputedSession } from "../publishing/snapshot";
 import { standingInput, standingRows } from "../publishing/standing";
 import { personObstacle, roundObstacles } from "./obstacles";
 import { demandReviewRound } from "./review-access";
@@ -82,8 +82,12 @@ export async function reviewEntries(
 ): Promise<ReviewEntry[]> {
   const names = await entryNames(db, { entryIds: wanted.map((entry) => entry.entryId) });
   const sessionIds = [...new Set(wanted.flatMap((entry) => entry.sessionId ?? []))];
-  const records = await sessionRecords(db, { sessionIds });
-  const sessions = new Map(records.map((record) => [record.sessionId, computedSession(record)]));
+  const sessions = await computedSessions(db, { sessionIds });
+  const records = [...sessions.values()].map((session) => session.record);
+  const makers = await makersOf(db, {
+    revisionIds: wanted.map((entry) => entry.revisionId),
+    baselineUnitIds: records.map((record) => record.baselineUnitId),
+  });
   const distances = await microphoneDistances(db, { benchVersionIds: records.map((each) => each.benchVersionId) });
   return wanted
     .map((entry): ReviewEntry => {
@@ -96,7 +100,15 @@ export async function reviewEntries(
         letter: names.get(entry.entryId)?.letter ?? "",
         state: entry.state,
         sessionId: entry.sessionId,
-        snapshot: session && whyNone === null ? buildSnapshot(session, { round, entry, microphoneDistanceMm }) : null,
+        snapshot:
+          session && whyNone === null
+            ? buildSnapshot(session, {
+                round,
+                entry,
+                microphoneDistanceMm,
+                makers: makers(entry.revisionId, session.record.baselineUnitId),
+              })
+            : null,
         whyNone,
       };
     })
