@@ -5,9 +5,12 @@ import { Button } from "@/components/ui/button";
 import { Progress } from "@/components/ui/progress";
 import { Section } from "@/components/ui/sheet";
 import { ErrorState } from "@/components/ui/states";
+import { takeKeptModel } from "@/lib/client/fit/kept-model";
+import type { CarryChoices } from "@/lib/contracts/carry";
 import type { FitLimits } from "@/lib/contracts/fit-limits";
 import { useModelReading, type ModelReadingActs } from "@/lib/client/fit/use-model-reading";
 import { formatCount } from "@/lib/format/numbers";
+import { CarryOn } from "./carry-on";
 import { CompareFields, type CompareWith } from "./compare-fields";
 import { DropModel } from "./drop-model";
 import { FitResults } from "./fit-results";
@@ -53,9 +56,11 @@ function Reading({ state, measureIn, cancel }: ModelReadingActs) {
 }
 
 /** A model is dropped, read beside the page, and compared with a frame, a season and a bench. */
-export function FitDesk({ limits }: { limits: FitLimits }) {
+export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices | null }) {
   const reading = useModelReading();
   const { state, ready, choose, compare } = reading;
+  const [file, setFile] = useState<File>();
+  const [carrying, setCarrying] = useState(false);
   const [chosen, setChosen] = useState<CompareWith>({
     frameKey: limits.seasons[0]?.frameKeys[0] ?? limits.frames[0]?.key ?? "",
     seasonSlug: limits.seasons[0]?.slug ?? "",
@@ -70,6 +75,22 @@ export function FitDesk({ limits }: { limits: FitLimits }) {
     const season = limits.seasons.find((each) => each.slug === seasonSlug);
     if (measured && frame) compare({ frame, season, turned });
   }, [measured, limits, frameKey, seasonSlug, turned, compare]);
+  useEffect(() => {
+    takeKeptModel()
+      .then((kept) => {
+        if (!kept) return;
+        setFile(kept.file);
+        setCarrying(true);
+        choose(kept.file, kept.mmPerUnit);
+      })
+      // A browser that keeps nothing kept nothing.
+      .catch(() => undefined);
+  }, [choose]);
+  const chooseFile = (given: File) => {
+    setFile(given);
+    setCarrying(false);
+    choose(given);
+  };
   return (
     <>
       <Section
@@ -79,8 +100,18 @@ export function FitDesk({ limits }: { limits: FitLimits }) {
         note="traits, frame, balance and drawing, off your mesh"
         className="grid gap-5"
       >
-        <DropModel onFile={choose} ready={ready} again={state.step !== "none"} />
+        <DropModel onFile={chooseFile} ready={ready} again={state.step !== "none"} />
         <Reading {...reading} />
+        {state.step === "measured" && file ? (
+          <CarryOn
+            model={{ file, mmPerUnit: state.mmPerUnit }}
+            rotors={state.measured.rotors}
+            frameKey={frameKey}
+            choices={own}
+            open={carrying}
+            onOpen={setCarrying}
+          />
+        ) : null}
         <CompareFields
           limits={limits}
           chosen={chosen}

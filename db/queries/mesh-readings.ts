@@ -1,3 +1,4 @@
+import type { MeshDrawing } from "@/lib/contracts/drawing";
 import type { MeshReadingResult } from "@/lib/contracts/mesh-reading";
 import type { Handle } from "../client/connect";
 
@@ -8,6 +9,22 @@ export async function insertMeshReading(
 ): Promise<void> {
   await db("mesh_reading")
     .insert({ file_id: fileId, reader_version: readerVersion, result: JSON.stringify(result) })
+    .onConflict(["file_id", "reader_version"])
+    .ignore();
+}
+
+/** Keeps a mesh's drawing; a version of the reader that has drawn it already keeps its first one. */
+export async function insertMeshDrawing(
+  db: Handle,
+  { fileId, readerVersion, drawing }: { fileId: string; readerVersion: string; drawing: MeshDrawing },
+): Promise<void> {
+  await db("mesh_drawing")
+    .insert({
+      file_id: fileId,
+      reader_version: readerVersion,
+      drawing: JSON.stringify(drawing.drawing),
+      thumbnail: JSON.stringify(drawing.thumbnail),
+    })
     .onConflict(["file_id", "reader_version"])
     .ignore();
 }

@@ -14,6 +14,8 @@ export interface UploadRow {
   progress: Record<string, unknown>;
   reason: string | null;
   createdAt: Date;
+  /** Said of a model; null where it is to be guessed. */
+  mmPerUnit: number | null;
 }
 
 const columns = {
@@ -29,11 +31,14 @@ const columns = {
   progress: "progress",
   reason: "reason",
   createdAt: "created_at",
+  mmPerUnit: "mm_per_unit",
 } as const;
 
 export async function insertUpload(
   db: Handle,
-  upload: Pick<UploadRow, "personId" | "purpose" | "subjectId" | "quarantineKey" | "name" | "bytes">,
+  upload: Pick<UploadRow, "personId" | "purpose" | "subjectId" | "quarantineKey" | "name" | "bytes"> & {
+    mmPerUnit?: number | undefined;
+  },
 ): Promise<string> {
   const [made]: { id: string }[] = await db("upload")
     .insert({
@@ -43,6 +48,7 @@ export async function insertUpload(
       quarantine_key: upload.quarantineKey,
       name: upload.name,
       bytes: upload.bytes,
+      mm_per_unit: upload.mmPerUnit ?? null,
     })
     .returning("id");
   if (!made) throw new Error("no upload came back");

@@ -39,6 +39,19 @@ export interface Uploading {
   cancel(uploadId: string): void;
 }
 
+type Heard = Required<Pick<tus.UploadOptions, "onProgress" | "onError" | "onSuccess">>;
+
+/** A file on its way to the address that its announcement gave, in pieces, each tried again when the line breaks. */
+export function piecewise(file: File, address: string, heard: Heard): tus.Upload {
+  return new tus.Upload(file, {
+    uploadUrl: new URL(address, window.location.href).href,
+    chunkSize: pieceBytes,
+    retryDelays: [500, 2_000, 5_000, 15_000],
+    storeFingerprintForResuming: false,
+    ...heard,
+  });
+}
+
 /** Sends files in pieces by tus. Leaving the page breaks off; choosing the same file again goes on where it stood. */
 export function useUploading(subjectId: string, known: readonly UploadAnswer[]): Uploading {
   const client = useQueryClient();
@@ -64,11 +77,7 @@ export function useUploading(subjectId: string, known: readonly UploadAnswer[]):
           : await sendJson(begunUpload, "/api/v1/uploads", { method: "POST", body });
       const told = { uploadId, name: file.name, bytes: file.size };
       setSending({ ...told, sentBytes: open?.sentBytes ?? 0 });
-      running.current = new tus.Upload(file, {
-        uploadUrl: new URL(address, window.location.href).href,
-        chunkSize: pieceBytes,
-        retryDelays: [500, 2_000, 5_000, 15_000],
-        storeFingerprintForResuming: false,
+      running.current = piecewise(file, address, {
         onProgress: (sentBytes) => setSending({ ...told, sentBytes }),
         onError: () => {
           setSending(undefined);

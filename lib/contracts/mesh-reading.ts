@@ -28,8 +28,8 @@ export type ReadRotor = z.infer<typeof readRotor>;
 /** What a version of the reader found in a model file, as stored. Parts that only drawings need are kept as they come. */
 export const meshReadingResult = z.looseObject({
   format: z.enum(["stl-binary", "stl-ascii", "3mf"]),
-  /** Millimetres in one unit of the file, and whether the file says so or it was guessed from the size. */
-  unit: z.object({ mmPerUnit: number, from: z.enum(["file", "guessed"]) }),
+  /** Millimetres in one unit of the file: the file says so, a person said so, or it was guessed from the size. */
+  unit: z.object({ mmPerUnit: number, from: z.enum(["file", "said", "guessed"]) }),
   triangles: z.int(),
   shells: z.int(),
   watertight: z.boolean(),

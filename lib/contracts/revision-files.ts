@@ -78,7 +78,7 @@ export const revisionFiles = z.strictObject({
       attachmentId: id,
       name: z.string(),
       readerVersion: z.string(),
-      unit: z.strictObject({ mmPerUnit: z.number(), from: z.enum(["file", "guessed"]) }),
+      unit: z.strictObject({ mmPerUnit: z.number(), from: z.enum(["file", "said", "guessed"]) }),
       triangles: z.int(),
       watertight: z.boolean(),
       /** 0–1, the lowest of its rotors; null without one. */

@@ -22,6 +22,8 @@ export const newUpload = z.strictObject({
   subjectId: id,
   name: z.string().trim().min(1).max(255),
   bytes: z.int().positive(),
+  /** Of a model: millimetres in one unit of the file, as a person knows them; guessed from the size where left out. */
+  mmPerUnit: z.number().positive().max(1000).optional(),
 });
 export type NewUpload = z.infer<typeof newUpload>;
 

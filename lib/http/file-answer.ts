@@ -73,3 +73,16 @@ export async function fileAnswer(
     },
   });
 }
+
+/** A small file made for this answer, as a download that nothing runs in. */
+export function download(name: string, type: string, body: string | Uint8Array<ArrayBuffer>): Response {
+  return new Response(body, {
+    headers: {
+      "content-type": type,
+      "content-disposition": dispositionOf(name),
+      "content-security-policy": filePolicy,
+      "cache-control": "private, no-store",
+      "x-content-type-options": "nosniff",
+    },
+  });
+}

@@ -66,6 +66,10 @@ const budgetPart = {
   source: "ten repeats",
   kind: "own_run",
 };
+const kit =
+  (then: string) =>
+  ({ seasonSlug }: MatrixFacts) =>
+    `/api/v1/seasons/${seasonSlug}/kit${then}`;
 const notThis = "this is not the password";
 
 /** Every route × every role. A route that isn't here, or is here and not in the tree, fails the test. */
@@ -164,6 +168,21 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "PAGE /traits": { expected: all(200) },
   "GET /api/v1/seasons": { expected: all(200) },
   "GET /api/v1/seasons/[slug]": { path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}`, expected: all(200) },
+  "GET /api/v1/seasons/[slug]/kit": { path: kit(""), expected: all(200) },
+  "GET /api/v1/seasons/[slug]/kit/frames/[frame]/drawing.svg": {
+    path: kit("/frames/120x25/drawing.svg"),
+    expected: all(200),
+  },
+  "GET /api/v1/seasons/[slug]/kit/frames/[frame]/drawing.pdf": {
+    path: kit("/frames/120x25/drawing.pdf"),
+    expected: all(200),
+  },
+  "GET /api/v1/seasons/[slug]/kit/keep-outs.stl": { path: kit("/keep-outs.stl"), expected: all(200) },
+  "GET /api/v1/seasons/[slug]/kit/keep-outs/[id]": {
+    path: ({ seasonSlug, keepOutId }) => `/api/v1/seasons/${seasonSlug}/kit/keep-outs/${keepOutId}`,
+    expected: all(200),
+  },
+  "PAGE /seasons/[slug]/kit": { path: ({ seasonSlug }) => `/seasons/${seasonSlug}/kit`, expected: all(200) },
   "GET /api/v1/seasons/[slug]/rounds/[number]": {
     path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}/rounds/1?rule=plain-sum`,
     expected: all(200),
@@ -229,6 +248,31 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
       `/api/v1/bench/sessions/${openSessionId}/logs?runId=${openRunId}&kind=temperature`,
     body: {},
     expected: staff(415),
+  },
+  "GET /api/v1/bench/sessions/[id]/recordings": {
+    path: ({ openSessionId }) => `/api/v1/bench/sessions/${openSessionId}/recordings`,
+    expected: staff(200),
+  },
+  "POST /api/v1/bench/sessions/[id]/recordings": {
+    path: ({ closedSessionId }) => `/api/v1/bench/sessions/${closedSessionId}/recordings`,
+    body: { purpose: "background", uploadId: noId, positionId: noId, calibration: { fullScaleDb: 120 } },
+    expected: staff(409),
+  },
+  "GET /api/v1/bench/recordings/[id]": { path: () => `/api/v1/bench/recordings/${nowhere}`, expected: staff(404) },
+  "DELETE /api/v1/bench/recordings/[id]": { path: () => `/api/v1/bench/recordings/${nowhere}`, expected: staff(404) },
+  "POST /api/v1/bench/recordings/[id]/keep": {
+    path: () => `/api/v1/bench/recordings/${nowhere}/keep`,
+    body: {},
+    expected: staff(404),
+  },
+  "PUT /api/v1/bench/recordings/[id]/listened": {
+    path: () => `/api/v1/bench/recordings/${nowhere}/listened`,
+    body: { noVoices: true },
+    expected: staff(404),
+  },
+  "GET /api/v1/bench/recordings/[id]/file": {
+    path: () => `/api/v1/bench/recordings/${nowhere}/file`,
+    expected: staff(404),
   },
   "POST /api/v1/bench/sessions/[id]/holds": {
     path: () => `/api/v1/bench/sessions/${noId}/holds`,
@@ -361,6 +405,31 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "GET /api/v1/compare/csv": {
     path: ({ publishedEntryId }) => `/api/v1/compare/csv?entries=${publishedEntryId}`,
     expected: all(200),
+  },
+
+  "GET /api/v1/my/comparisons": { expected: signedIn(200) },
+  "POST /api/v1/my/comparisons": { body: {}, expected: signedIn(400) },
+  // Another's saved comparison is as little there as none.
+  "GET /api/v1/my/comparisons/[id]": { path: () => `/api/v1/my/comparisons/${nowhere}`, expected: signedIn(404) },
+  "PUT /api/v1/my/comparisons/[id]": {
+    path: () => `/api/v1/my/comparisons/${nowhere}`,
+    body: { name: "Somebody else's", note: "", shared: true },
+    expected: signedIn(404),
+  },
+  "DELETE /api/v1/my/comparisons/[id]": { path: () => `/api/v1/my/comparisons/${nowhere}`, expected: signedIn(404) },
+  "GET /api/v1/my/searches": { expected: signedIn(200) },
+  "POST /api/v1/my/searches": { body: {}, expected: signedIn(400) },
+  "DELETE /api/v1/my/searches/[id]": { path: () => `/api/v1/my/searches/${nowhere}`, expected: signedIn(404) },
+  "GET /api/v1/shared-comparisons/[key]": {
+    path: () => `/api/v1/shared-comparisons/${"x".repeat(22)}`,
+    expected: all(404),
+  },
+  "PAGE /compare/shared/[key]": { path: () => `/compare/shared/${"x".repeat(22)}`, expected: all(404) },
+  "PAGE /my/comparisons": { expected: asPage(signedIn(200)) },
+  "PAGE /my/searches": { expected: asPage(signedIn(200)) },
+  "PAGE /my/designs/[slug]/field": {
+    path: ({ ownedDesignSlug }) => `/my/designs/${ownedDesignSlug}/field`,
+    expected: asPage(ownerElse(200)),
   },
 
   "PAGE /": { expected: all(200) },

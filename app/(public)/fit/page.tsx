@@ -1,5 +1,7 @@
 import type { Metadata } from "next";
 import { FitDesk } from "@/components/fit/fit-desk";
+import { actorFromPage } from "@/lib/auth/actor";
+import { readCarryChoices } from "@/lib/server/designs/carry-choices";
 import { readFitLimits } from "@/lib/server/reading/fit-limits";
 
 export const metadata: Metadata = {
@@ -12,5 +14,6 @@ export const metadata: Metadata = {
 export const dynamic = "force-dynamic";
 
 export default async function FitPage() {
-  return <FitDesk limits={await readFitLimits()} />;
+  const [limits, own] = await Promise.all([readFitLimits(), actorFromPage().then(readCarryChoices)]);
+  return <FitDesk limits={limits} own={own} />;
 }

@@ -53,11 +53,13 @@ export async function shownSeasonLimits(db: Handle): Promise<ShownSeasonLimits[]
 }
 
 export interface ShownKeepOut {
+  id: string;
   benchVersionId: string;
   name: string;
   shape: "box" | "mesh";
   minMm: number[] | null;
   maxMm: number[] | null;
+  note: string;
 }
 
 /** Keep-out solids of bench versions in cooler coordinates, mm; a mesh has no corners. */
@@ -68,5 +70,21 @@ export async function shownKeepOuts(
   return db("shown.keep_out")
     .whereIn("bench_version_id", [...benchVersionIds])
     .orderBy("name")
-    .select({ benchVersionId: "bench_version_id", name: "name", shape: "shape", minMm: "min_mm", maxMm: "max_mm" });
+    .select({
+      id: "id",
+      benchVersionId: "bench_version_id",
+      name: "name",
+      shape: "shape",
+      minMm: "min_mm",
+      maxMm: "max_mm",
+      note: "note",
+    });
+}
+
+/** Where the model file of a keep-out mesh is kept; undefined for a box, and for a file that was taken down. */
+export async function shownKeepOutFile(
+  db: Handle,
+  { keepOutId }: { keepOutId: string },
+): Promise<{ storageKey: string; bytes: number } | undefined> {
+  return db("shown.keep_out_file").where({ keep_out_id: keepOutId }).first({ storageKey: "storage_key", bytes: "bytes" });
 }

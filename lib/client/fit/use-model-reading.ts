@@ -28,8 +28,11 @@ export interface ModelReadingActs {
   readonly state: ModelState;
   /** The reader is loaded: from now on nothing is fetched. A file chosen earlier waits for it. */
   readonly ready: boolean;
-  /** Reads a file and, where its unit is beyond doubt, measures it. Another file takes the place of the first. */
-  choose(file: File): void;
+  /**
+   * Reads a file and, where its unit is beyond doubt, measures it; with a unit given, mm, nothing is asked. Another
+   * file takes the place of the first.
+   */
+  choose(file: File, mmPerUnit?: number): void;
   /** Measures the model in a unit, mm per file unit. */
   measureIn(mmPerUnit: number): void;
   cancel(): void;
@@ -46,6 +49,7 @@ export function useModelReading(): ModelReadingActs {
   const worker = useRef<Worker | undefined>(undefined);
   const job = useRef(0);
   const ask = useRef(0);
+  const unit = useRef<number | undefined>(undefined);
   const now = useRef(state);
   const go = useCallback((next: ModelState) => {
     now.current = next;
@@ -78,7 +82,8 @@ export function useModelReading(): ModelReadingActs {
         const { model } = message;
         go({ step: "unit", model });
         // A unit that the file names counts; without one, millimetres that look like a fan's are taken.
-        if (model.guess === "mm") measureIn(model.mmPerUnit ?? 1);
+        if (unit.current !== undefined) measureIn(unit.current);
+        else if (model.guess === "mm") measureIn(model.mmPerUnit ?? 1);
       }
       if (message.kind === "measured" && at.step === "measuring") {
         go({
@@ -119,7 +124,8 @@ export function useModelReading(): ModelReadingActs {
   }, [start]);
 
   const choose = useCallback(
-    (file: File) => {
+    (file: File, mmPerUnit?: number) => {
+      unit.current = mmPerUnit;
       // What still runs for another file is stopped, not waited for.
       if (["reading", "measuring"].includes(now.current.step)) start();
       job.current += 1;

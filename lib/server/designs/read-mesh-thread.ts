@@ -1,6 +1,8 @@
 import { open } from "node:fs/promises";
 import { parentPort, workerData } from "node:worker_threads";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
+import { fanDrawing } from "@/lib/science/geometry/drawing/fan-drawing";
+import { smallFront } from "@/lib/science/geometry/drawing/thumbnail";
 import { meshBounds, scaledMesh } from "@/lib/science/geometry/mesh";
 import { readModelFile } from "@/lib/science/geometry/model-file";
 import type { ByteSource, MeshWarning } from "@/lib/science/geometry/reading";
@@ -12,7 +14,7 @@ const progressEveryMs = 250;
 const tell = (answer: ThreadAnswer): void => parentPort?.postMessage(answer);
 
 /** Reads and measures one file in a thread of its own; the thread that started it may end it at any moment. */
-async function work({ file, limits }: ThreadOrder): Promise<void> {
+async function work({ file, limits, mmPerUnit: said, meshAlone }: ThreadOrder): Promise<void> {
   const began = performance.now();
   let told = began;
   const handle = await open(file, "r");
@@ -42,14 +44,17 @@ async function work({ file, limits }: ThreadOrder): Promise<void> {
     });
     const triangles = reading.mesh.triangles.length / 3;
     tell({ kind: "measuring", triangles });
-    const unit = unitOf(reading.mmPerUnit, extentOf(reading.mesh));
+    const unit = said === undefined ? unitOf(reading.mmPerUnit, extentOf(reading.mesh)) : saidUnit(said);
     const inMm = unit.mmPerUnit === 1 ? reading.mesh : scaledMesh(reading.mesh, unit.mmPerUnit);
+    if (meshAlone) return tell({ kind: "mesh", mesh: inMm });
     // At 1 g/cm³, so that a mass at any material's density is one multiplication away.
-    const { mesh: _judged, fit: _fit, ...measured } = analyseMesh(inMm, { densityGCm3: 1 });
+    const { mesh: judged, fit: _fit, ...measured } = analyseMesh(inMm, { densityGCm3: 1 });
     const warnings = [...reading.warnings, ...unit.warnings, ...measured.warnings];
     const { mmPerUnit: scale, from } = unit;
     const result = { ...measured, format: reading.format, unit: { mmPerUnit: scale, from }, warnings };
     tell({ kind: "measured", result });
+    const drawing = { drawing: fanDrawing(judged, measured), thumbnail: smallFront(judged, measured) };
+    tell({ kind: "drawn", drawing });
   } finally {
     await handle.close();
   }
@@ -59,6 +64,8 @@ function extentOf(mesh: Parameters<typeof meshBounds>[0]): number {
   const bounds = meshBounds(mesh);
   return bounds ? Math.max(...bounds.max.map((value, axis) => value - (bounds.min[axis] ?? 0))) : 0;
 }
+
+const saidUnit = (scale: number) => ({ mmPerUnit: scale, from: "said" as const, warnings: [] as MeshWarning[] });
 
 function unitOf(own: number | undefined, extent: number) {
   if (own !== undefined) return { mmPerUnit: own, from: "file" as const, warnings: [] };

@@ -1,18 +1,33 @@
 import { Worker } from "node:worker_threads";
+import { meshDrawing, type MeshDrawing } from "@/lib/contracts/drawing";
 import { meshReadingResult, type MeshReadingResult } from "@/lib/contracts/mesh-reading";
+import type { Mesh } from "@/lib/science/geometry/mesh";
 import type { ReadingLimits } from "@/lib/science/geometry/reading";
 import { Refusal } from "@/lib/science/refusal";
 
 export interface ThreadOrder {
   file: string;
   limits: Partial<ReadingLimits>;
+  /** Said by a person; guessed from the size where left out and the file names none. */
+  mmPerUnit?: number;
+  /** Only read, in mm, and handed back. */
+  meshAlone?: boolean;
 }
 
 export type ThreadAnswer =
   | { kind: "progress"; read: number; expected: number | undefined }
   | { kind: "measuring"; triangles: number }
   | { kind: "measured"; result: unknown }
+  /** Follows `measured`. */
+  | { kind: "drawn"; drawing: unknown }
+  | { kind: "mesh"; mesh: Mesh }
   | { kind: "refused"; code: string; message: string };
+
+/** What a file's mesh tells, and its drawing: null where that took too long or failed. */
+export interface MeshRead {
+  result: MeshReadingResult;
+  drawing: MeshDrawing | null;
+}
 
 export interface MeshReadingControl {
   /** Told now and then; `measuring` once all triangles are read. */
@@ -22,6 +37,8 @@ export interface MeshReadingControl {
   /** For reading and measuring together. */
   withinMs?: number;
   limits?: Partial<ReadingLimits>;
+  /** The unit that a person named, mm. */
+  mmPerUnit?: number | undefined;
 }
 
 /** Time that reading and measuring one file may take, in ms: within the job's own limit of 300 s. */
@@ -37,39 +54,52 @@ const startThread = `
 /** Heap of the thread in MB; typed arrays lie outside it and are bounded by the limits on bytes and triangles. */
 const heapMaxMb = 1_024;
 
-/**
- * Reads and measures a model file in a thread of its own, in bounded time and memory; the process goes on whatever the
- * file does to the thread.
- *
- * @param file path of a file of this machine
- * @throws Refusal with the reader's reason; codes "cancelled", "time-limit" and "memory-limit" where it was ended
- */
-export function readMeshFile(file: string, control: MeshReadingControl = {}): Promise<MeshReadingResult> {
-  const { onProgress, signal, withinMs = meshTimeMaxMs, limits = {} } = control;
-  const order: ThreadOrder = { file, limits: { bytesMax: modelBytesMax, elapsedMsMax: withinMs, ...limits } };
-  const thread = new Worker(startThread, {
+/** Starts the thread that reads one file; whoever starts it ends it. */
+export function startMeshThread(order: ThreadOrder): Worker {
+  return new Worker(startThread, {
     eval: true,
     workerData: order,
     execArgv: [],
     resourceLimits: { maxOldGenerationSizeMb: heapMaxMb },
   });
-  return new Promise<MeshReadingResult>((resolve, reject) => {
+}
+
+/**
+ * Reads, measures and draws a model file in a thread of its own, in bounded time and memory; the process goes on whatever the
+ * file does to the thread.
+ *
+ * @param file path of a file of this machine
+ * @throws Refusal with the reader's reason; codes "cancelled", "time-limit" and "memory-limit" where it was ended
+ */
+export function readMeshFile(file: string, control: MeshReadingControl = {}): Promise<MeshRead> {
+  const { onProgress, signal, withinMs = meshTimeMaxMs, limits = {}, mmPerUnit } = control;
+  const bounds = { bytesMax: modelBytesMax, elapsedMsMax: withinMs, ...limits };
+  const order: ThreadOrder = { file, limits: bounds, ...(mmPerUnit !== undefined && { mmPerUnit }) };
+  let measured: MeshReadingResult | undefined;
+  const thread = startMeshThread(order);
+  return new Promise<MeshRead>((resolve, reject) => {
+    // Once it is measured, what goes wrong goes wrong with the drawing alone.
+    const fail = (error: unknown): void => (measured ? resolve({ result: measured, drawing: null }) : reject(error));
     const cancel = (): void => reject(new Refusal("cancelled", "Reading was cancelled."));
-    const timer = setTimeout(() => reject(tooSlow(withinMs)), withinMs);
+    const timer = setTimeout(() => fail(tooSlow(withinMs)), withinMs);
     signal?.addEventListener("abort", cancel, { once: true });
     if (signal?.aborted) cancel();
     thread.on("message", (answer: ThreadAnswer) => {
       if (answer.kind === "progress") onProgress?.("reading", answer.read, answer.expected);
       else if (answer.kind === "measuring") onProgress?.("measuring", answer.triangles, answer.triangles);
       else if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
-      else {
+      else if (answer.kind === "mesh") fail(new Error("The thread handed back a mesh that nobody asked for."));
+      else if (answer.kind === "drawn") {
+        const parsed = meshDrawing.safeParse(answer.drawing);
+        if (measured) resolve({ result: measured, drawing: parsed.success ? parsed.data : null });
+      } else {
         const parsed = meshReadingResult.safeParse(answer.result);
-        if (parsed.success) resolve(parsed.data);
+        if (parsed.success) measured = parsed.data;
         else reject(parsed.error);
       }
     });
-    thread.on("error", (error) => reject(outOfMemory(error) ? tooBig() : error));
-    thread.on("exit", (code) => reject(new Error(`The reader's thread ended early (${code}).`)));
+    thread.on("error", (error) => fail(outOfMemory(error) ? tooBig() : error));
+    thread.on("exit", (code) => fail(new Error(`The reader's thread ended early (${code}).`)));
     thread.once("exit", () => {
       clearTimeout(timer);
       signal?.removeEventListener("abort", cancel);

@@ -1,5 +1,6 @@
 import type { Handle } from "@/db/client/connect";
-import { insertMeshReading, modelFiles, type StoredReading } from "@/db/queries/mesh-readings";
+import { insertMeshDrawing, insertMeshReading, modelFiles, type StoredReading } from "@/db/queries/mesh-readings";
+import { meshReadingResult } from "@/lib/contracts/mesh-reading";
 import { readingChanges } from "@/lib/domain/designs/reading-changes";
 import { READER_VERSION } from "@/lib/science/geometry/reader-version";
 import { Refusal } from "@/lib/science/refusal";
@@ -39,12 +40,14 @@ async function readAgain(db: Handle, file: StoredReading, version: string, repor
   const { fileId, storageKey, readerVersion } = file;
   try {
     const { body } = await storage().get(storageKey);
-    const result = await asLocalFile(body, (path) => readMeshFile(path));
+    const mmPerUnit = saidUnit(file.result);
+    const { result, drawing } = await asLocalFile(body, (path) => readMeshFile(path, { mmPerUnit }));
     const changes = readerVersion === null ? [] : readingChanges(file.result, JSON.parse(JSON.stringify(result)));
     if (readerVersion !== version) {
       await insertMeshReading(db, { fileId, readerVersion: version, result });
       report.stored += 1;
     }
+    if (drawing) await insertMeshDrawing(db, { fileId, readerVersion: version, drawing });
     if (changes.length === 0) report.same += 1;
     else {
       const told = changes
@@ -57,6 +60,12 @@ async function readAgain(db: Handle, file: StoredReading, version: string, repor
     if (!(error instanceof Refusal)) throw error;
     report.refused.push(`file ${fileId}: ${error.message}`);
   }
+}
+
+/** The unit that a person named when the file was first read. */
+function saidUnit(stored: unknown): number | undefined {
+  const before = meshReadingResult.safeParse(stored);
+  return before.success && before.data.unit.from === "said" ? before.data.unit.mmPerUnit : undefined;
 }
 
 const said = (value: unknown): string => (value === undefined ? "nothing" : JSON.stringify(value));

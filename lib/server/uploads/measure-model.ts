@@ -1,11 +1,10 @@
 import { setInterval } from "node:timers";
 import { appDb } from "@/db/client/handles";
-import { tellProgress } from "@/db/queries/uploads";
-import type { MeshReadingResult } from "@/lib/contracts/mesh-reading";
+import { tellProgress, type UploadRow } from "@/db/queries/uploads";
 import type { UploadProgress } from "@/lib/contracts/uploads";
 import { Refusal } from "@/lib/science/refusal";
 import { asLocalFile } from "@/lib/services/quarantine/quarantine";
-import { readMeshFile } from "../designs/read-mesh";
+import { readMeshFile, type MeshRead } from "../designs/read-mesh";
 import { log } from "../log";
 import type { Content } from "./content";
 
@@ -16,7 +15,10 @@ const tellEveryMs = 500;
  * reading. Undefined for STEP, which is kept and not measured.
  * @throws Refusal with the reader's reason
  */
-export async function measureModel(uploadId: string, content: Content): Promise<MeshReadingResult | undefined> {
+export async function measureModel(
+  { id: uploadId, mmPerUnit }: Pick<UploadRow, "id" | "mmPerUnit">,
+  content: Content,
+): Promise<MeshRead | undefined> {
   if (content.kind !== "stl" && content.kind !== "3mf") return undefined;
   const stop = new AbortController();
   let progress: UploadProgress = { stage: "reading", trianglesRead: 0 };
@@ -31,6 +33,7 @@ export async function measureModel(uploadId: string, content: Content): Promise<
     return await asLocalFile(await content.open(), (file) =>
       readMeshFile(file, {
         signal: stop.signal,
+        mmPerUnit: mmPerUnit ?? undefined,
         onProgress: (stage, trianglesRead, expected) => {
           progress = { stage, trianglesRead, ...(expected !== undefined && { trianglesExpected: expected }) };
         },

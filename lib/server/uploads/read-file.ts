@@ -1,5 +1,4 @@
 import { appDb } from "@/db/client/handles";
-import { insertMeshReading } from "@/db/queries/mesh-readings";
 import {
   abandonedUploads,
   attachFile,
@@ -10,11 +9,11 @@ import {
   uploadBy,
   type UploadRow,
 } from "@/db/queries/uploads";
-import type { MeshReadingResult } from "@/lib/contracts/mesh-reading";
 import { uploadPurposes, type UploadProgress } from "@/lib/contracts/uploads";
-import { READER_VERSION } from "@/lib/science/geometry/reader-version";
 import { Refusal } from "@/lib/science/refusal";
 import { dropQuarantined, quarantined } from "@/lib/services/quarantine/quarantine";
+import { keepReading } from "../designs/keep-reading";
+import type { MeshRead } from "../designs/read-mesh";
 import { contentOf, keepContent, photographOf, type Content } from "./content";
 import { measureModel } from "./measure-model";
 
@@ -33,7 +32,7 @@ export async function readQuarantinedFile(uploadId: string, now: () => Date): Pr
     const { open, bytes } = await quarantined(row.quarantineKey);
     if (bytes !== row.bytes) throw new Refusal("length", "The length is not the announced one.");
     const content = await takenContent(row, await contentOf(open, bytes));
-    const mesh = row.purpose === "model" ? await measureModel(row.id, content) : undefined;
+    const mesh = row.purpose === "model" ? await measureModel(row, content) : undefined;
     await keep(row, content, mesh, now());
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
@@ -56,14 +55,14 @@ async function takenContent({ purpose }: UploadRow, sent: Content): Promise<Cont
   return kept;
 }
 
-async function keep(row: UploadRow, content: Content, mesh: MeshReadingResult | undefined, now: Date): Promise<void> {
+async function keep(row: UploadRow, content: Content, mesh: MeshRead | undefined, now: Date): Promise<void> {
   const { sha256, bytes, kind } = content;
   const storageKey = await keepContent(content);
   await appDb().transaction(async (tx) => {
     const still = await uploadBy(tx, { uploadId: row.id, lock: true });
     if (still?.state !== "received") return;
     const fileId = await fileOfContent(tx, { sha256, bytes, kind, storageKey, receivedFrom: row.personId });
-    if (mesh) await insertMeshReading(tx, { fileId, readerVersion: READER_VERSION, result: mesh });
+    if (mesh) await keepReading(tx, fileId, mesh);
     const progress: UploadProgress & { attachmentId?: string } = { stage: "done", kind };
     if (row.purpose === "model") progress.measured = mesh !== undefined;
     if (row.purpose !== "log" && row.purpose !== "recording") {

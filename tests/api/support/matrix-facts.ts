@@ -9,6 +9,8 @@ export interface MatrixFacts {
   publishedDesignSlug: string;
   publishedEntryId: string;
   seasonSlug: string;
+  /** Of the bench of that season. */
+  keepOutId: string;
   benchId: string;
   roundInReviewId: string;
   entryInReviewId: string;
@@ -35,6 +37,8 @@ const questions: Record<keyof MatrixFacts, string> = {
   publishedDesignSlug: `select d.slug as value from published_entry e join design d on d.id = e.design_id order by d.slug limit 1`,
   publishedEntryId: `select entry_id as value from published_entry order by entry_id limit 1`,
   seasonSlug: `select slug as value from season order by slug limit 1`,
+  keepOutId: `select k.id as value from keep_out k join season_bench b on b.bench_version_id = k.bench_version_id
+    join season s on s.id = b.season_id order by s.slug, k.name limit 1`,
   benchId: `select id as value from bench limit 1`,
   roundInReviewId: `select id as value from round where state = 'in_review' limit 1`,
   entryInReviewId: `select re.entry_id as value from round_entry re join round n on n.id = re.round_id

@@ -48,6 +48,9 @@ export default async function SeasonPage(props: Props) {
         <p className="docket mt-2">
           {seasonState(season)} · {season.entries} published entries · {levelsWords(season)}
         </p>
+        <p className="mt-2">
+          <Link href={`${path}/kit`}>The kit for designers: frames, limits and keep-out solids</Link>
+        </p>
         {season.rounds.length > 0 ? (
           <nav aria-label="Rounds" className="mt-3 flex flex-wrap gap-x-4 gap-y-1">
             {season.rounds.map((round) => (

@@ -87,6 +87,19 @@ export class DimensionWriter {
     this.reach(x + 0.5 * this.textMm, toY);
   }
 
+  /** Words in the middle of a place, and how far they reach. */
+  note(x: number, y: number, text: string, upright = false): void {
+    this.texts.push({
+      x: upright ? x + 0.35 * this.textMm : x,
+      y: -(y - (upright ? 0 : 0.35 * this.textMm)),
+      text,
+      upright,
+    });
+    const [along, across] = [0.31 * this.textMm * text.length, 0.7 * this.textMm];
+    this.reach(x - (upright ? across : along), y - (upright ? along : across));
+    this.reach(x + (upright ? across : along), y + (upright ? along : across));
+  }
+
   /** The finished view. */
   view(rest: Pick<DrawnView, "title" | "outlines" | "centres" | "dashed">): DrawnView {
     const margin = 0.5 * this.textMm;

@@ -37,7 +37,7 @@ function group(view: DrawnView, x: number, y: number): string {
 }
 
 /** Both views side by side as one SVG document in true size (mm), the axis at one height in both. */
-export function drawingSvg({ front, side }: FanDrawing): string {
+export function drawingSvg({ front, side }: Pick<FanDrawing, "front" | "side">): string {
   const gap = 2 * front.textMm;
   const width = front.width + gap + side.width;
   const top = Math.min(front.minY, side.minY);

@@ -1,0 +1,10 @@
+import { seasonParams } from "@/lib/contracts/seasons";
+import { download } from "@/lib/http/file-answer";
+import { route } from "@/lib/http/route";
+import { kitSolidsStl } from "@/lib/server/kit/kit-solids";
+
+/** All keep-out solids of a season's bench in one STL. */
+export const GET = route({ access: "public", params: seasonParams }, async ({ params }) => {
+  const { name, bytes } = await kitSolidsStl(params);
+  return download(name, "model/stl", bytes);
+});

@@ -1,0 +1,27 @@
+import type { Mesh } from "@/lib/science/geometry/mesh";
+import { Refusal } from "@/lib/science/refusal";
+import { startMeshThread } from "./read-mesh";
+
+const WITHIN_MS = 30_000;
+/** What stands around a cooler needs few; a larger file is not shown. */
+const TRIANGLES_MAX = 200_000;
+
+/**
+ * The mesh of a model file in mm, read in a thread of its own and not measured.
+ *
+ * @param file path of a file of this machine
+ * @throws Refusal with the reader's reason, "time-limit" after 30 s
+ */
+export function readMeshAlone(file: string): Promise<Mesh> {
+  const thread = startMeshThread({ file, limits: { trianglesMax: TRIANGLES_MAX }, meshAlone: true });
+  return new Promise<Mesh>((resolve, reject) => {
+    const timer = setTimeout(() => reject(new Refusal("time-limit", "The solid took too long to read.")), WITHIN_MS);
+    thread.on("message", (answer) => {
+      if (answer.kind === "mesh") resolve(answer.mesh);
+      if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
+    });
+    thread.on("error", reject);
+    thread.on("exit", (code) => reject(new Error(`The reader's thread ended early (${code}).`)));
+    thread.once("exit", () => clearTimeout(timer));
+  }).finally(() => void thread.terminate());
+}
