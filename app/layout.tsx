@@ -32,7 +32,8 @@ const demoNote = "Demo: every design, person and figure is invented. Letters tha
 
 const accountLinks: readonly AccountLink[] = [
   { href: "/my/designs", word: "My designs" },
-  { href: "/my/comparisons", word: "Kept comparisons" },
+  { href: "/my/comparisons", word: "Saved comparisons" },
+  { href: "/my/searches", word: "Saved searches" },
   { href: "/review", word: "Review" },
   { href: "/my/account", word: "Account" },
 ];

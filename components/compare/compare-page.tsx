@@ -1,14 +1,17 @@
 import Link from "next/link";
+import type { ReactNode } from "react";
 import { PrintAddress } from "@/components/shell/print-address";
 import { Facts } from "@/components/ui/facts";
 import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/sheet";
-import { compareMost, type ComparedHead, type ComparedTrait } from "@/lib/contracts/compare";
+import { compareAddress, compareMost, type ComparedHead, type ComparedTrait } from "@/lib/contracts/compare";
 import { readingLevel, type Comparability } from "@/lib/domain/results/compare-levels";
+import { readingDeltaT } from "@/lib/domain/results/equal-cooling-levels";
 import { layOver, type LayOverInput } from "@/lib/domain/results/lay-over";
 import { listWords } from "@/lib/format/words";
+import { DrawingsSection } from "./drawings-section";
 import { LayOverView } from "./lay-over-view";
-import { compareAddress, nameOf } from "./names";
+import { nameOf } from "./names";
 import { PointsSection } from "./points-section";
 import { RanksSection } from "./ranks-section";
 import { RatioSection } from "./ratio-section";
@@ -24,6 +27,13 @@ export type ComparePageProps = {
   /** Of those asked for, how many are not public or not there, and how many were too many. */
   missing: number;
   tooMany: number;
+  /** ΔT that the other reading is asked at, K. */
+  askedDeltaTK?: number;
+  /** Instead of the names, where somebody named it; and what stands under it. */
+  title?: string;
+  intro?: ReactNode;
+  /** What saves it. */
+  saver?: ReactNode;
 };
 
 const each = (heads: readonly ComparedHead[], read: (head: ComparedHead) => string) =>
@@ -38,15 +48,19 @@ export function ComparePage(props: ComparePageProps) {
     asked: props.askedLevelDba,
     headlineDba: heads[0]?.headlineDba ?? Number.NaN,
   });
+  const deltaTK = readingDeltaT(laid, { asked: props.askedDeltaTK, levelDba });
   const tokens = heads.map((head) => head.token);
+  const names = `${listWords(heads.map((head) => nameOf(head, heads)))}, over the baseline`;
   return (
     <>
       <Section
         id="compare"
-        title={`${listWords(heads.map((head) => nameOf(head, heads)))}, over the baseline`}
+        title={props.title ?? names}
         level={1}
         aside={<TakeAway tokens={tokens} levelDba={levelDba} />}
       >
+        {props.intro}
+        {props.title ? <p>{names}.</p> : null}
         <p className="docket">
           {each(heads, (head) => head.seasonTitle)} · {each(heads, (head) => head.bench)} ·{" "}
           {each(heads, (head) => head.baselineUnit)}
@@ -63,14 +77,16 @@ export function ComparePage(props: ComparePageProps) {
             Only {compareMost} fit over a baseline; the first {compareMost} are drawn.
           </Notice>
         ) : null}
+        {props.saver}
       </Section>
       {oneAxis ? (
         <Section id="over">
-          <LayOverView key={tokens.join()} heads={heads} input={props.laid} levelDba={levelDba} />
+          <LayOverView key={tokens.join()} heads={heads} input={props.laid} levelDba={levelDba} deltaTK={deltaTK} />
         </Section>
       ) : (
         <RatioSection heads={heads} laid={laid} comparability={comparability} />
       )}
+      <DrawingsSection heads={heads} />
       <TraitsSection heads={heads} traits={traits} />
       <RanksSection heads={heads} />
       <Section id="prints" title="Print notes">

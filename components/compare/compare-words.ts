@@ -1,4 +1,5 @@
 import { writeMeasured } from "@/lib/format/measured";
+import { formatP } from "@/lib/format/numbers";
 import type { ComparedEntry, ComparedPair, Contrast } from "@/lib/domain/results/compare-figures";
 
 export type NameById = (id: string) => string;
@@ -10,16 +11,22 @@ const noise: Quantity = { unit: "dB", where: "there", below: "quieter", above: "
 const write = (figure: Contrast, unit: string) =>
   writeMeasured({ value: Math.abs(figure.value), uncertainty: figure.half95, decimals: 1 }, unit);
 
+/** Above the 95 % limit and yet a tie: the lead is no larger than what a bound's correction gave. */
+function tieWords({ p }: Contrast): string {
+  if (p < 0.05) return "The lead is within what a background correction could give: call it a tie.";
+  return `The data can’t separate them (p ${formatP(p)}): call it a tie.`;
+}
+
 function said(a: string, b: string, figure: Contrast, { unit, where, below, above }: Quantity): string {
   const size = write(figure, unit);
-  if (figure.tie) return `${a} and ${b} differ by ${size} ${where}. The data can’t separate them: call it a tie.`;
-  return `${a} is ${size} ${figure.value < 0 ? below : above} than ${b} ${where}.`;
+  if (figure.tie) return `${a} and ${b} differ by ${size} ${where}. ${tieWords(figure)}`;
+  return `${a} is ${size} ${figure.value < 0 ? below : above} than ${b} ${where} (p ${formatP(figure.p)}).`;
 }
 
 function saidAsRatio(a: string, b: string, figure: Contrast): string {
   const size = `${write(figure, "%")} of the baseline’s ΔT/P, each at its season’s headline level`;
-  if (figure.tie) return `${a} and ${b} differ by ${size}. The data can’t separate them: call it a tie.`;
-  return `${a} cools ${figure.value < 0 ? "better" : "worse"} than ${b}, by ${size}.`;
+  if (figure.tie) return `${a} and ${b} differ by ${size}. ${tieWords(figure)}`;
+  return `${a} cools ${figure.value < 0 ? "better" : "worse"} than ${b}, by ${size} (p ${formatP(figure.p)}).`;
 }
 
 /** One sentence a pair at equal noise: which is cooler and by how much, or that it is a tie. */

@@ -3,14 +3,17 @@
 import { useEffect, useMemo, useState } from "react";
 import { CoolingChart } from "@/components/charts/cooling-chart";
 import { EqualNoiseSlider } from "@/components/charts/equal-noise-slider";
+import { FigureSlider } from "@/components/charts/figure-slider";
 import { Button } from "@/components/ui/button";
 import type { ComparedHead } from "@/lib/contracts/compare";
+import { formatNumber } from "@/lib/format/numbers";
 import { formatLevel } from "@/lib/format/quantities";
 import { compareFigures } from "@/lib/domain/results/compare-figures";
 import { sliderEnds } from "@/lib/domain/results/compare-levels";
-import { layOver, type LayOverInput } from "@/lib/domain/results/lay-over";
+import { baselineLevelAt, coolingEnds } from "@/lib/domain/results/equal-cooling-levels";
+import { layOver, type LaidEntry, type LayOverInput } from "@/lib/domain/results/lay-over";
 import { seriesOf } from "./chart-series";
-import { equalCoolingWords, equalNoiseWords } from "./compare-words";
+import { equalCoolingWords, equalNoiseWords, type NameById } from "./compare-words";
 import { EqualCoolingTable, EqualNoiseTable } from "./level-tables";
 import { nameOf } from "./names";
 
@@ -18,31 +21,33 @@ export type LayOverViewProps = {
   heads: readonly ComparedHead[];
   input: LayOverInput;
   levelDba: number;
+  /** Where the other reading stands, K; undefined where it has no place. */
+  deltaTK: number | undefined;
 };
 
 /** Waits until the slider rests: browsers refuse too many changes of an address. */
 const addressAfterMs = 250;
 
-function useLevelInAddress(levelDba: number, moved: boolean) {
+function useInAddress(name: "level" | "dt", moved: number | undefined) {
   useEffect(() => {
-    if (!moved) return;
+    if (moved === undefined) return;
     const wait = setTimeout(() => {
       const address = new URL(window.location.href);
-      address.searchParams.set("level", String(levelDba));
+      address.searchParams.set(name, String(moved));
       window.history.replaceState(null, "", address.toString().replaceAll("%2C", ","));
     }, addressAfterMs);
     return () => clearTimeout(wait);
-  }, [levelDba, moved]);
+  }, [name, moved]);
 }
 
 /** Curves over the baseline with a slider of the common level; every figure is read anew where the slider stands. */
-export function LayOverView({ heads, input, levelDba }: LayOverViewProps) {
+export function LayOverView({ heads, input, levelDba, deltaTK }: LayOverViewProps) {
   const [moved, setMoved] = useState<number>();
   const level = moved ?? levelDba;
   const laid = useMemo(() => layOver(input), [input]);
   const ends = useMemo(() => sliderEnds(laid), [laid]);
   const figures = useMemo(() => compareFigures(laid, () => level), [laid, level]);
-  useLevelInAddress(level, moved !== undefined);
+  useInAddress("level", moved);
 
   const name = (id: string) => {
     const head = heads.find((each) => each.entryId === id);
@@ -101,14 +106,40 @@ export function LayOverView({ heads, input, levelDba }: LayOverViewProps) {
         )}
         <EqualNoiseTable entries={figures.entries} name={name} baselines={baselines} />
         <Words said={equalNoiseWords(figures.pairs, name, true)} pairs={figures.pairs.length} />
-        <h2 className="mt-2">At equal ΔT</h2>
-        <p className="small-print">
-          Each entry’s level where it cools as its baseline does at {formatLevel(level, distanceMm)}, less that level.
-        </p>
-        <EqualCoolingTable entries={figures.entries} name={name} />
-        <Words said={equalCoolingWords(figures.pairs, name)} pairs={figures.pairs.length} />
+        <EqualCoolingPart laid={laid} name={name} deltaTK={deltaTK} />
       </div>
     </div>
+  );
+}
+
+/** The other way: a ΔT of the baseline, and how much louder or quieter each entry is where it cools like that. */
+function EqualCoolingPart(props: { laid: readonly LaidEntry[]; name: NameById; deltaTK: number | undefined }) {
+  const { laid, name, deltaTK } = props;
+  const [moved, setMoved] = useState<number>();
+  const ends = useMemo(() => coolingEnds(laid), [laid]);
+  const wanted = moved ?? deltaTK;
+  const figures = useMemo(() => {
+    const levels = new Map(laid.map((entry) => [entry.id, baselineLevelAt(entry, wanted ?? Number.NaN)]));
+    return compareFigures(laid, (id) => levels.get(id) ?? Number.NaN);
+  }, [laid, wanted]);
+  useInAddress("dt", moved);
+  return (
+    <>
+      <h2 className="mt-2">At equal ΔT</h2>
+      {ends && wanted !== undefined ? (
+        <>
+          <FigureSlider label="Equal ΔT at" unit="K" value={wanted} from={ends.low} to={ends.high} onValue={setMoved} />
+          <p className="small-print">
+            Each entry’s level where it cools as the baseline of its session does when that rises by{" "}
+            {formatNumber(wanted, { decimals: 1 })} K, less the baseline’s level there.
+          </p>
+          <EqualCoolingTable entries={figures.entries} name={name} />
+          <Words said={equalCoolingWords(figures.pairs, name)} pairs={figures.pairs.length} />
+        </>
+      ) : (
+        <p>No entry shares a level with its baseline, so nothing can be read off at equal ΔT.</p>
+      )}
+    </>
   );
 }
 

@@ -1,3 +1,4 @@
+import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import { drawingOfTraits, type DeclaredRotor } from "@/lib/science/geometry/drawing/traits-drawing";
 import { FanDrawingView } from "./fan-drawing-view";
 
@@ -34,11 +35,14 @@ function declared(rotor: DrawnTraits["rotors"][number]): DeclaredRotor[] {
   ];
 }
 
+/** The drawing of declared traits; undefined where too few of them are known to draw every rotor. */
+export function drawingOf({ rotors: given, spacerMm, inletStackMm }: DrawnTraits): FanDrawing | undefined {
+  const rotors = given.flatMap(declared);
+  return rotors.length === given.length ? drawingOfTraits({ rotors, spacerMm, inletStackMm }) : undefined;
+}
+
 /** A drawing made from declared traits, which says so; nothing where too few of them are known to draw every rotor. */
 export function TraitsDrawingView({ traits }: { traits: DrawnTraits }) {
-  const rotors = traits.rotors.flatMap(declared);
-  if (rotors.length !== traits.rotors.length) return null;
-  const { spacerMm, inletStackMm } = traits;
-  const drawing = drawingOfTraits({ rotors, spacerMm, inletStackMm });
+  const drawing = drawingOf(traits);
   return drawing ? <FanDrawingView drawing={drawing} /> : null;
 }

@@ -1,7 +1,12 @@
 import type { DrawnView } from "@/lib/science/geometry/drawing/drawn-view";
 
+/** At a scale as long as there is room for it; or as wide as a share of what it stands in. */
+export type ViewSvgProps = { view: DrawnView } & (
+  { pxPerMm: number; width?: never } | { width: string; pxPerMm?: never }
+);
+
 /** One view in the ink of the page; `pxPerMm` keeps two views at one scale as long as there is room. */
-export function ViewSvg({ view, pxPerMm }: { view: DrawnView; pxPerMm: number }) {
+export function ViewSvg({ view, pxPerMm, width }: ViewSvgProps) {
   const { textMm, outlines, centres, dashed, dimensions, words } = view;
   const line = textMm / 14;
   const dash = (...parts: number[]) => parts.map((part) => part * textMm).join(" ");
@@ -10,7 +15,7 @@ export function ViewSvg({ view, pxPerMm }: { view: DrawnView; pxPerMm: number })
       role="img"
       aria-label={view.title}
       viewBox={`${view.minX} ${view.minY} ${view.width} ${view.height}`}
-      style={{ width: `${Math.round(view.width * pxPerMm)}px` }}
+      style={{ width: width ?? `${Math.round(view.width * pxPerMm)}px` }}
       className="h-auto max-w-full"
     >
       <g stroke="var(--ink)" strokeWidth={line} strokeLinecap="round" strokeLinejoin="round">

@@ -17,3 +17,4 @@ export const reviewKeys = keysOf("review");
 export const hostKeys = keysOf("host");
 export const myDesignKeys = keysOf("my-designs");
 export const benchKeys = keysOf("bench");
+export const savedKeys = keysOf("saved");

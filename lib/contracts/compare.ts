@@ -21,9 +21,16 @@ export const compareQuery = z.strictObject({
 });
 export type CompareQuery = z.infer<typeof compareQuery>;
 
+/** The page's address: names in the order in which they are drawn, and the level where one was chosen. */
+export function compareAddress(tokens: readonly string[], levelDba?: number): string {
+  const level = levelDba === undefined ? "" : `&level=${levelDba}`;
+  return tokens.length === 0 ? "/compare" : `/compare?entries=${tokens.join(",")}${level}`;
+}
+
 /** A value with the half-width of its 95 % coverage interval. */
 const estimate = z.strictObject({ value: z.number(), half95: z.number() });
-const contrast = estimate.extend({ tie: z.boolean() });
+/** `p` of no difference, two-sided; a tie may have a small one where the lead is within a bound's correction. */
+const contrast = estimate.extend({ tie: z.boolean(), p: z.number() });
 
 export const comparedPointSchema = z.strictObject({
   setSpeedRpm: z.number(),
@@ -57,6 +64,24 @@ export const comparedRankSchema = z.strictObject({
 });
 export type ComparedRank = z.infer<typeof comparedRankSchema>;
 
+export const drawnTraitsSchema = z.strictObject({
+  rotors: z.array(
+    z.strictObject({
+      blades: z.int(),
+      hand: z.string(),
+      hubDiameterMm: z.number().nullable(),
+      tipDiameterMm: z.number().nullable(),
+      axialDepthMm: z.number().nullable(),
+      pitchMidDeg: z.number().nullable(),
+      chordMidMm: z.number().nullable(),
+      shroud: z.boolean(),
+    }),
+  ),
+  spacerMm: z.number(),
+  inletStackMm: z.number(),
+});
+export type DrawnTraitsAnswer = z.infer<typeof drawnTraitsSchema>;
+
 export const comparedHeadSchema = z.strictObject({
   token: z.string(),
   entryId: z.uuid(),
@@ -81,6 +106,8 @@ export const comparedHeadSchema = z.strictObject({
   corrections: z.int(),
   printNotes: z.string(),
   licence: z.string(),
+  /** What a drawing from the traits is made of. */
+  drawnFrom: drawnTraitsSchema,
   ranks: z.array(comparedRankSchema),
 });
 export type ComparedHead = z.infer<typeof comparedHeadSchema>;

@@ -40,3 +40,8 @@ export function formatCount(count: number): string {
   if (!Number.isInteger(count) || count < 0) throw new RangeError("A count is whole and not below zero");
   return formatNumber(count);
 }
+
+/** A p-value: "= 0.032", "under 0.001"; two figures where that says enough. */
+export function formatP(p: number): string {
+  return p < 0.001 ? "under 0.001" : `= ${formatNumber(p, { decimals: p < 0.095 ? 3 : 2 })}`;
+}

@@ -1,4 +1,5 @@
-import { coverageFactor95 } from "@/lib/science/statistics/uncertainty";
+import { studentTTwoSided } from "@/lib/science/statistics/distributions";
+import { coverageDof, coverageFactor95 } from "@/lib/science/statistics/uncertainty";
 import { combineEffects, effectiveDof, standardUncertainty, type Effect } from "./effects";
 import type { LaidEntry } from "./lay-over";
 import { readDeltaT } from "./methods/v1/cooling-curve";
@@ -13,8 +14,11 @@ import {
 
 /** A figure with the half-width of its 95 % coverage interval (k by its effective degrees of freedom). */
 export type Estimate = { readonly value: number; readonly half95: number };
-/** A difference; a tie where the interval holds 0, or where the lead is within a bound's correction. */
-export type Contrast = Estimate & { readonly tie: boolean };
+/**
+ * A difference; a tie where the interval holds 0, or where the lead is within a bound's correction. `p` is two-sided, of
+ * no difference at all: t = |value|/u with the degrees of freedom of the interval. Each is that of its own pair alone.
+ */
+export type Contrast = Estimate & { readonly tie: boolean; readonly p: number };
 
 export type ComparedEntry = {
   readonly id: string;
@@ -61,8 +65,11 @@ function estimate(value: number, effects: readonly Effect[]): Estimate {
 /** @param allowance how much of a lead below zero, in the value's unit, is a bound's correction; negative for above */
 function contrast(value: number, effects: readonly Effect[], allowance = 0): Contrast {
   const read = estimate(value, effects);
+  const u = standardUncertainty(effects);
   const withinBound = allowance * -Math.sign(value) > Math.abs(value);
-  return { ...read, tie: Math.abs(value) <= read.half95 || withinBound };
+  // Without any uncertainty a difference is one for certain, and none is none.
+  const p = u > 0 ? studentTTwoSided(value / u, coverageDof(effectiveDof(effects))) : value === 0 ? 1 : 0;
+  return { ...read, tie: Math.abs(value) <= read.half95 || withinBound, p };
 }
 
 const less = (a: readonly Effect[], b: readonly Effect[]) =>

@@ -89,12 +89,17 @@ export function truncateDof(dof: number): number {
   return dof === Infinity ? Infinity : Math.floor(dof * (1 + 1e-12));
 }
 
+/** Degrees of freedom that an interval is formed with: truncated, a fraction below one as it is. */
+export function coverageDof(dof: number): number {
+  return dof < 1 ? dof : truncateDof(dof);
+}
+
 /**
  * Coverage factor k for 95 % from the effective degrees of freedom, truncated first (JCGM 100:2008, G.4.1 and G.6.4).
  * Below one degree of freedom truncation would give none, so the fraction itself is used. NaN for dof ≤ 0.
  */
 export function coverageFactor95(dof: number): number {
-  return studentTQuantile(0.975, dof < 1 ? dof : truncateDof(dof));
+  return studentTQuantile(0.975, coverageDof(dof));
 }
 
 /** Expanded uncertainty U = k·u at 95 % (JCGM 100:2008, 6.2 and G.6.4), unit of u. */

@@ -14,6 +14,7 @@ import type { MeasuredPoint } from "@/lib/domain/results/measured-point";
 import { sessionPoints } from "@/lib/domain/results/methods/v1/session-points";
 import { protocolPositionIds } from "@/lib/domain/results/session-figures";
 import { comparedTraits } from "./compare-traits";
+import { drawnTraits } from "./drawn-traits";
 import { indexItem } from "./list-designs";
 
 /** Public entries side by side, with the measured points that laying them over their baselines takes. */
@@ -73,7 +74,7 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
   return {
     comparability: comparability === "not-comparable" && carried ? "ratios" : comparability,
     missing: ids.length - entries.length,
-    entries: complete.map(({ entry, snapshot, item, revision, unit }): ComparedHead => ({
+    entries: complete.map(({ entry, snapshot, item, revision, trait, rotors, unit }): ComparedHead => ({
       token: entryToken({ slug: item.slug, letter: item.letter, seasonSlug: item.seasonSlug }),
       entryId: item.entryId,
       slug: item.slug,
@@ -94,6 +95,7 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
       corrections: item.corrections,
       printNotes: revision.print_notes,
       licence: revision.licence,
+      drawnFrom: drawnTraits(trait, rotors),
       ranks: (ranksOf.get(item.entryId) ?? []).map((row) => ({
         rule: row.ruleName,
         of: row.roundId === null ? "season" : "round",

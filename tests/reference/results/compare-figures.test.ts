@@ -98,6 +98,29 @@ describe("a tie", () => {
   });
 });
 
+describe("the probability of no difference", () => {
+  it.each([
+    ["an entry over its baseline", () => compared("one").a.differenceK],
+    ["two entries of one session", () => compared("one").pair.deltaTK],
+    ["levels at equal ΔT", () => compared("two").pair.coolingDb],
+  ])("of %s agrees with its interval: 0.05 is where the interval ends at 0", (_name, read) => {
+    const figure = read();
+    expect(figure).toBeDefined();
+    if (!figure) return;
+    expect(figure.p < 0.05).toBe(Math.abs(figure.value) > figure.half95);
+    expect(figure.p).toBeGreaterThan(0);
+    expect(figure.p).toBeLessThanOrEqual(1);
+  });
+
+  it("is that of Student's distribution", () => {
+    const { b: ofB, pair } = compared("one");
+    // scipy 1.17.1: 2·t.sf(|value|/(half95/t.ppf(0.975, ν)), ν), value and half95 from the script above, ν = 35, 28 and 34.
+    expect(pair.deltaTK?.p).toBeCloseTo(0.277391, 4);
+    expect(ofB.differenceK?.p).toBeCloseTo(0.034925, 4);
+    expect(pair.coolingDb?.p).toBeCloseTo(0.190094, 4);
+  });
+});
+
 describe("outside the range of both curves", () => {
   it("nothing is read, and which curve ends is said", () => {
     const below = compared("one", 27);
