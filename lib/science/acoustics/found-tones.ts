@@ -41,7 +41,10 @@ export function findTones(spectrum: Spectrum): FoundTone[] {
     .sort((a, b) => a.frequencyHz - b.frequencyHz);
 }
 
-/** Strongest peaks first, each claiming its lines, so that one smeared tone is one tone. */
+/**
+ * Strongest peaks first, each claiming its lines, so that one smeared tone is one tone. The valley between two tones is
+ * left unclaimed: both may stand on it.
+ */
 function toneBands(spectrum: Spectrum): ToneBand[] {
   const claimed = new Uint8Array(spectrum.psd.length);
   const bands: ToneBand[] = [];
@@ -49,7 +52,7 @@ function toneBands(spectrum: Spectrum): ToneBand[] {
     if (claimed[peak] === 1) continue;
     const band = toneBand(spectrum, peak, claimed);
     if (band === undefined) continue;
-    claimed.fill(1, band.from, band.to + 1);
+    claimed.fill(1, band.from + 1, band.to);
     bands.push(band);
   }
   return bands;

@@ -58,6 +58,20 @@ describe("tones of a fan with known parts (levels by definition, frequencies m·
     );
   });
 
+  it("tells two tones five lines apart by level and frequency: they share the valley between them", async () => {
+    const spacing = RATE / 16384;
+    const [low, high] = [174.2, 174.2 + 5 * spacing];
+    const samples = addTone(addTone(noise(24, 15 * RATE, 0.003), low, 0.01, RATE), high, 0.008, RATE);
+    const { tones } = await read(wavBytes({ sampleRateHz: RATE, channels: [samples], bits: 24 }));
+    for (const [hz, rms] of [
+      [low, 0.01],
+      [high, 0.008],
+    ] as const) {
+      const tone = tones.find(({ frequencyHz }) => Math.abs(frequencyHz - hz) < 0.1);
+      expect(Math.abs((tone?.levelDb ?? NaN) - (100 + 20 * Math.log10(rms))), `${hz} Hz`).toBeLessThan(0.5);
+    }
+  });
+
   it("carries the speed over, and says so, where a rotor has no family of its own", async () => {
     const samples = addTone(addTone(noise(22, 12 * RATE, 0.01), F1 * 1.004, 0.01, RATE), 2 * F1 * 1.004, 0.01, RATE);
     const report = await read(wavBytes({ sampleRateHz: RATE, channels: [samples], bits: 24 }), {
