@@ -3,8 +3,8 @@ import type { Handle } from "../client/connect";
 export interface LogFileInsert {
   fileId: string;
   sessionId: string;
-  runId: string;
-  kind: "temperature" | "level";
+  runId: string | null;
+  kind: "temperature" | "level" | "recording";
   name: string;
   columnsRecognised: readonly unknown[];
   columnsConfirmed: Record<string, unknown>;

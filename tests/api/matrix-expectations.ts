@@ -323,6 +323,16 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "GET /api/v1/host/benches": { expected: hostOnly(200) },
   "POST /api/v1/host/benches": { body: {}, expected: signedIn(400) },
   "POST /api/v1/host/benches/[id]/versions": { path: under("benches", "versions"), body: {}, expected: signedIn(400) },
+  "POST /api/v1/host/bench-versions/[id]/sessions": {
+    path: under("bench-versions", "sessions"),
+    body: {},
+    expected: signedIn(400),
+  },
+  "POST /api/v1/host/bench-versions/[id]/changes": {
+    path: under("bench-versions", "changes"),
+    body: { fromSessionId: nowhere, kind: "service", reason: "paste renewed" },
+    expected: hostOnly(400),
+  },
   "POST /api/v1/host/bench-versions/[id]/positions": {
     path: under("bench-versions", "positions"),
     body: { name: "on axis", distanceMm: 100, angleDeg: 0 },

@@ -1,21 +1,26 @@
 import { Refusal } from "../refusal";
+import { backgroundOf, isBackgroundRead, readBackground, type BackgroundRead } from "./background-read";
 import { backgroundReport } from "./background-report";
 import { RECORDING_BANDS } from "./bands";
-import { readCalibration } from "./calibration";
+import { readCalibrator, type CalibratorRead } from "./calibrator-read";
 import type { RotorSet } from "./fan-tones";
 import { LOUDNESS_BANDS, stationaryLoudness } from "./loudness";
-import { readRecording, type ByteSource, type Recording } from "./recording";
+import { readRecording, type ByteSource } from "./recording";
 import { recordingWarnings } from "./recording-warnings";
 import { rounded, type SoundGrade, type SoundReport, type Warning } from "./sound-report";
-import { spectrumLevels, type SpectrumLevels } from "./spectrum-levels";
+import { levelsOfPowers, type SpectrumLevels } from "./spectrum-levels";
 import { toneReport } from "./tone-report";
 
 export interface SoundOptions {
-  /** A calibrator recording with its level in dB, or the level in dB of a signal whose rms is 1 re full scale. */
-  calibration: { recording: ByteSource; levelDb: number } | { fullScaleDb: number };
+  /**
+   * A calibrator recording with its level in dB, what was read from one before, or the level in dB of a signal whose rms
+   * is 1 re full scale.
+   */
+  calibration: { recording: ByteSource; levelDb: number } | { read: CalibratorRead } | { fullScaleDb: number };
   /** From 1; the first where left out, with a warning if there are more. */
   channel?: number;
-  background?: ByteSource;
+  /** A recording, or what was read from one before. */
+  background?: ByteSource | BackgroundRead;
   /** engineering where left out. */
   grade?: SoundGrade;
   rotors?: RotorSet;
@@ -29,6 +34,8 @@ export interface SoundAnalysis {
   spectrum: { spacingHz: number; levelsDb: Float64Array } | null;
   /** A-weighted level of every second of the recording, dB(A); -Infinity for silence. */
   secondsDba: number[];
+  /** What it is where another recording takes it for its background. */
+  asBackground: BackgroundRead;
 }
 
 /**
@@ -54,11 +61,12 @@ export async function analyseRecording(source: ByteSource, options: SoundOptions
   });
   const warnings: Warning[] = recordingWarnings(recording, "The recording", "", options.channel);
   const calibrated = await unitLevel(options, channel, progress());
-  const unitLevelDb = calibrated.levelDb;
+  const { unitLevelDb } = calibrated;
   warnings.push(...calibrated.warnings);
 
   const { spectrum } = recording;
-  const levels = spectrum === undefined ? undefined : spectrumLevels(spectrum, unitLevelDb);
+  const asBackground = backgroundOf(recording, channel);
+  const levels = asBackground.powers === null ? undefined : levelsOfPowers(asBackground.powers, unitLevelDb);
   const corrected = await background(options, channel, unitLevelDb, levels, warnings, progress());
   const tones = spectrum === undefined ? undefined : toneReport(spectrum, unitLevelDb, options.rotors);
   warnings.push(...(tones?.warnings ?? []));
@@ -94,6 +102,7 @@ export async function analyseRecording(source: ByteSource, options: SoundOptions
             levelsDb: spectrum.psd.map((line) => 10 * Math.log10(line * spectrum.spacingHz) + unitLevelDb),
           },
     secondsDba: recording.secondsDb.map((levelDb) => levelDb + unitLevelDb),
+    asBackground,
   };
 }
 
@@ -125,39 +134,18 @@ function checkRotors(rotors: RotorSet | undefined): void {
 }
 
 async function unitLevel(
-  options: SoundOptions,
+  { calibration }: SoundOptions,
   channel: number,
   onBytes: (bytes: number) => void,
-): Promise<{ levelDb: number; warnings: Warning[] }> {
-  const { calibration } = options;
-  if ("fullScaleDb" in calibration) {
-    if (!Number.isFinite(calibration.fullScaleDb)) {
-      throw new Refusal("full-scale-invalid", "The full-scale level is a number in dB.", "full-scale");
-    }
-    return { levelDb: calibration.fullScaleDb, warnings: [] };
+): Promise<CalibratorRead> {
+  if ("read" in calibration) return calibration.read;
+  if ("recording" in calibration) {
+    return readCalibrator(calibration.recording, { channel, orMono: true, levelDb: calibration.levelDb, onBytes });
   }
-  const recording = await readRecording(calibration.recording, {
-    channel,
-    orMono: true,
-    what: "The calibration recording",
-    keep: "steady",
-    onBytes,
-  });
-  return calibrationLevel(recording, calibration.levelDb);
-}
-
-function calibrationLevel(recording: Recording, calibratorDb: number): { levelDb: number; warnings: Warning[] } {
-  const reading = readCalibration(recording, calibratorDb);
-  const warnings: Warning[] = [];
-  if (recording.usedS < 2) {
-    const message = `The calibrator is steady for ${recording.usedS.toFixed(1)} s only; 2 s or more are wanted.`;
-    warnings.push({ code: "calibration-short", message });
+  if (!Number.isFinite(calibration.fullScaleDb)) {
+    throw new Refusal("full-scale-invalid", "The full-scale level is a number in dB.", "full-scale");
   }
-  if (reading.noisy) {
-    const message = `The calibrator's tone at ${reading.toneHz.toFixed(0)} Hz holds under 90 % of its recording's power.`;
-    warnings.push({ code: "calibration-noisy", message });
-  }
-  return { levelDb: reading.offsetDb, warnings };
+  return { unitLevelDb: calibration.fullScaleDb, warnings: [] };
 }
 
 async function background(
@@ -169,21 +157,12 @@ async function background(
   onBytes: (bytes: number) => void,
 ): Promise<ReturnType<typeof backgroundReport> | undefined> {
   if (options.background === undefined) return undefined;
-  const what = "The background recording";
-  const recording = await readRecording(options.background, {
-    channel,
-    orMono: true,
-    what,
-    keep: "undisturbed",
-    onBytes,
-  });
-  warnings.push(...recordingWarnings(recording, what, "background-", channel));
-  if (levels === undefined || recording.spectrum === undefined) return undefined;
-  const result = backgroundReport(
-    levels,
-    spectrumLevels(recording.spectrum, unitLevelDb),
-    options.grade ?? "engineering",
-  );
+  const read = isBackgroundRead(options.background)
+    ? options.background
+    : await readBackground(options.background, { channel, onBytes });
+  warnings.push(...read.warnings);
+  if (levels === undefined || read.powers === null) return undefined;
+  const result = backgroundReport(levels, levelsOfPowers(read.powers, unitLevelDb), options.grade ?? "engineering");
   warnings.push(...result.warnings);
   return result;
 }

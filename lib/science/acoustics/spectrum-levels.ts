@@ -34,6 +34,38 @@ export interface SpectrumLevels {
   bandsDb: (number | undefined)[];
 }
 
+/** The same as mean squares in the signal's unit squared; null for a band beyond half the sample rate. Plain JSON. */
+export interface SpectrumPowers {
+  z: number;
+  c: number;
+  a: number;
+  bands: (number | null)[];
+}
+
+/** Mean squares that overall and band levels are made of; see spectrumLevels. */
+export function spectrumPowers(spectrum: Spectrum): SpectrumPowers {
+  const topHz = (spectrum.psd.length - 1) * spectrum.spacingHz;
+  return {
+    z: bandPower(spectrum, Z_RANGE_HZ.from, Z_RANGE_HZ.to),
+    c: bandPower(spectrum, 0, Infinity, "C"),
+    a: bandPower(spectrum, 0, Infinity, "A"),
+    bands: RECORDING_BANDS.map(({ lowerHz, upperHz }) =>
+      upperHz > topHz ? null : bandPower(spectrum, lowerHz, upperHz),
+    ),
+  };
+}
+
+/** Levels in dB of mean squares, given the level of a signal whose rms is 1 in their unit. -Infinity for no power. */
+export function levelsOfPowers(powers: SpectrumPowers, unitLevelDb: number): SpectrumLevels {
+  const levelDb = (power: number) => (power > 0 ? 10 * Math.log10(power) + unitLevelDb : -Infinity);
+  return {
+    levelZDb: levelDb(powers.z),
+    levelCDb: levelDb(powers.c),
+    levelADba: levelDb(powers.a),
+    bandsDb: powers.bands.map((power) => (power === null ? undefined : levelDb(power))),
+  };
+}
+
 /**
  * Overall levels (Z over 10 Hz to 20 kHz; C and A over every line) and one-third-octave band levels of a spectrum, in dB.
  *
@@ -42,15 +74,5 @@ export interface SpectrumLevels {
  * Source: IEC 61672-1:2013 Annex E (weightings), IEC 61260-1:2014 (bands).
  */
 export function spectrumLevels(spectrum: Spectrum, unitLevelDb: number): SpectrumLevels {
-  const levelDb = (power: number) => (power > 0 ? 10 * Math.log10(power) + unitLevelDb : -Infinity);
-  const weighted = (weighting: Weighting) => levelDb(bandPower(spectrum, 0, Infinity, weighting));
-  const topHz = (spectrum.psd.length - 1) * spectrum.spacingHz;
-  return {
-    levelZDb: levelDb(bandPower(spectrum, Z_RANGE_HZ.from, Z_RANGE_HZ.to)),
-    levelCDb: weighted("C"),
-    levelADba: weighted("A"),
-    bandsDb: RECORDING_BANDS.map(({ lowerHz, upperHz }) =>
-      upperHz > topHz ? undefined : levelDb(bandPower(spectrum, lowerHz, upperHz)),
-    ),
-  };
+  return levelsOfPowers(spectrumPowers(spectrum), unitLevelDb);
 }

@@ -9,6 +9,8 @@ import { latestSendBack } from "@/db/queries/review-causes";
 import type { SessionReading, supersede as supersedeSchema } from "@/lib/contracts/bench";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
+import { chartSession } from "../baselines/control-session";
+import { settleSession } from "../baselines/settle-session";
 import { computeSession } from "../results/compute-session";
 import { returnSignedRound } from "../review/return-to-review";
 import { demandBench, demandNotOwner } from "./bench-access";
@@ -22,6 +24,15 @@ const spans = {
   humidity_percent: [0, 100],
 } as const;
 
+/** Refuses what no calibrator, quiet room or weather reads. @throws ExpectedError impossible */
+export function checkSessionValue({ quantity, value }: { quantity: keyof typeof units; value: number }): void {
+  const [low, high] = spans[quantity];
+  if (value >= low && value <= high) return;
+  throw new ExpectedError("impossible", "The figure can't be.", [
+    { path: "value", message: `lies outside ${low} to ${high} ${units[quantity]}` },
+  ]);
+}
+
 /**
  * Keeps a reading of the session itself. A background read while heated lasts at most 30 s, under an independent
  * thermal cut-out; the database holds to that as well.
@@ -30,12 +41,7 @@ export async function addSessionReading(
   asked: Asked,
   { sessionId, reading }: { sessionId: string; reading: SessionReading },
 ): Promise<{ readingId: string }> {
-  const [low, high] = spans[reading.quantity];
-  if (!(reading.value >= low && reading.value <= high)) {
-    throw new ExpectedError("impossible", "The figure can't be.", [
-      { path: "value", message: `lies outside ${low} to ${high} ${units[reading.quantity]}` },
-    ]);
-  }
+  checkSessionValue(reading);
   if (reading.quantity === "background_dba" && reading.heated && reading.durationS > 30) {
     throw new ExpectedError(
       "malformed",
@@ -120,7 +126,10 @@ export async function supersedeReading(
         takenBy: person.personId,
       },
     ]);
-    if (session.endedAt) await computeSession(tx, session.id);
+    if (session.endedAt) {
+      await computeSession(tx, session.id);
+      await chartSession(tx, { sessionId: session.id, at: new Date() });
+    }
     await note(tx, asked, {
       action: "reading.supersede",
       subjectKind: "reading",
@@ -176,6 +185,7 @@ export async function liftHold(
     if (!(await liftHoldRow(tx, { holdId, liftedBy: person.personId, liftNote, at }))) {
       throw new ExpectedError("moved_on", "Somebody lifted this hold already.");
     }
+    await settleSession(tx, { sessionId, at });
     await note(tx, asked, { action: "hold.lift", subjectKind: "hold", subjectId: holdId, after: { liftNote } });
   });
 }

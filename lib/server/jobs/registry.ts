@@ -3,6 +3,7 @@ import { log } from "../log";
 import { appDb } from "@/db/client/handles";
 import { askForRebuild } from "@/db/queries/search-build";
 import { sweepThrottle } from "@/db/queries/throttle";
+import { readRecordingFile } from "../bench/read-recording";
 import { deliveryLoop } from "../deliveries/deliver";
 import { publishDueRounds } from "../publishing/schedule";
 import { compareIndex } from "../search/compare";
@@ -26,6 +27,7 @@ interface Schedule<N extends QueueName> {
 /** What the worker does with each queue. A queue without a handler is left to another worker. */
 export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
   "file-read": ({ uploadId }) => readQuarantinedFile(uploadId, () => new Date()),
+  "recording-read": ({ recordingId }) => readRecordingFile(recordingId, () => new Date()),
   "search-rebuild": () => askForRebuild(appDb()),
   "search-compare": async () => void (await compareIndex()),
   sweep: async () => {
