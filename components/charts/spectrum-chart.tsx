@@ -1,27 +1,31 @@
 "use client";
 
-import type { ChartData, ChartOptions, Plugin } from "chart.js";
+import type { ChartData, ChartOptions } from "chart.js";
 import type { ReactNode } from "react";
-import { Bar } from "react-chartjs-2";
+import { Chart } from "react-chartjs-2";
 import { ChartFrame } from "./chart-frame";
-import { placeLabels } from "./label-places";
 import { usePalette, type Palette } from "./palette";
 import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
+import { baselineStyle } from "./series-style";
 import {
   bandName,
   spectrumSummary,
   spectrumTable,
   tonesByBand,
   type BandTones,
-  type PredictedTone,
   type SpectrumBand,
+  type SpectrumLine,
+  type SpectrumTone,
 } from "./spectrum-model";
+import { toneNames } from "./tone-names";
 
 export type SpectrumChartProps = {
   bands: readonly SpectrumBand[];
-  tones?: readonly PredictedTone[];
-  /** "dB(A) @ 100 mm". */
+  tones?: readonly SpectrumTone[];
+  /** Laid over the bars, dashed. */
+  baseline?: SpectrumLine;
+  /** "dB @ 100 mm". */
   unit: string;
   caption?: ReactNode;
   summary?: string;
@@ -46,74 +50,59 @@ function hatch(palette: Palette): CanvasPattern | string {
   return ctx.createPattern(tile, "repeat") ?? palette.soft;
 }
 
-/** Names over the bars that hold a predicted tone, tied to them, clear of the bars and of each other. */
-const toneNames: Plugin<"bar"> = {
-  id: "toneNames",
-  afterDatasetsDraw(chart) {
-    const { ctx, chartArea } = chart;
-    const names = namesOf(chart.data.datasets[0]);
-    const bars = chart.getDatasetMeta(0).data;
-    ctx.save();
-    ctx.font = `12px ${chart.options.font?.family ?? "monospace"}`;
-    ctx.textBaseline = "middle";
-    const wishes = bars.flatMap((bar, index) =>
-      (names[index] ?? []).map((name) => {
-        // A narrow chart has room for the frequency; the name stands in the table.
-        const text = chart.width < 560 ? name.split(" Hz")[0] + " Hz" : name;
-        return { text, w: ctx.measureText(text).width, h: 14, at: { x: bar.x, y: bar.y - 8 } };
-      }),
-    );
-    const half = chartArea.width / Math.max(1, bars.length) / 2;
-    const obstacles = bars.map(({ x, y }) => ({ x: x - half, y: y - 4, w: 2 * half, h: chartArea.bottom - y + 4 }));
-    const area = { x: chartArea.left, y: 4, w: chartArea.width, h: chartArea.bottom - 4 };
-    const ink = typeof chart.options.color === "string" ? chart.options.color : "#000";
-    [ctx.fillStyle, ctx.strokeStyle, ctx.lineWidth] = [ink, ink, 1];
-    placeLabels(wishes, obstacles, area).forEach((place, order) => {
-      const wish = wishes[order];
-      if (!wish) return;
-      ctx.fillText(wish.text, place.x, place.y + place.h / 2);
-      ctx.beginPath();
-      ctx.moveTo(wish.at.x, wish.at.y + 6);
-      ctx.lineTo(Math.min(Math.max(wish.at.x, place.x), place.x + place.w), Math.min(wish.at.y + 6, place.y + place.h));
-      ctx.stroke();
-    });
-    ctx.restore();
-  },
-};
+type Data = ChartData<"bar" | "line", (number | null)[], string>;
 
-function namesOf(dataset: object | undefined): string[][] {
-  return dataset && "names" in dataset && Array.isArray(dataset.names) ? dataset.names : [];
-}
-
-function spectrumData(
+function barSet(
   bands: readonly SpectrumBand[],
   byBand: readonly BandTones[],
   palette: Palette,
-): ChartData<"bar"> {
+): Data["datasets"][number] {
   const hatched = hatch(palette);
-  const fill = (tones: BandTones | undefined) =>
-    tones?.solid ? palette.ink : tones?.hatched ? hatched : palette.graph;
+  const fill = (tones: BandTones | undefined, band: SpectrumBand) =>
+    tones?.solid ? palette.ink : tones?.hatched ? hatched : band.bound ? palette.bar : palette.graph;
+  const outline = (tones: BandTones | undefined, band: SpectrumBand) =>
+    tones?.solid ? "transparent" : tones?.hatched ? palette.ink : band.bound ? palette.graph : "transparent";
   const set = {
-    names: byBand.map((tones) => tones.names),
+    type: "bar" as const,
+    labels: byBand.map((tones) => tones.labels),
     data: bands.map((band) => band.levelDb ?? null),
-    backgroundColor: bands.map((_, index) => fill(byBand[index])),
-    borderColor: bands.map((_, index) => (byBand[index]?.hatched ? palette.ink : "transparent")),
+    backgroundColor: bands.map((band, index) => fill(byBand[index], band)),
+    borderColor: bands.map((band, index) => outline(byBand[index], band)),
     borderWidth: 1.5,
     barPercentage: 0.9,
     categoryPercentage: 0.92,
+    order: 1,
   };
-  return { labels: bands.map(({ nominalHz }) => bandName(nominalHz)), datasets: [set] };
+  return set;
 }
 
-/** Third-octave levels. Blade-passing tones are solid, rotor-interaction tones hatched. */
-export function SpectrumChart({ bands, tones = [], unit, caption, summary, fileName }: SpectrumChartProps) {
+function lineSet(bands: readonly SpectrumBand[], baseline: SpectrumLine, palette: Palette): Data["datasets"][number] {
+  const style = baselineStyle(palette);
+  return {
+    type: "line",
+    label: baseline.name,
+    data: bands.map(({ nominalHz }) => baseline.bands.find((each) => each.nominalHz === nominalHz)?.levelDb ?? null),
+    borderColor: style.colour,
+    borderDash: style.dash,
+    borderWidth: 2,
+    pointStyle: style.mark,
+    pointRadius: 3,
+    pointBorderWidth: 1.5,
+    pointBorderColor: style.colour,
+    pointBackgroundColor: palette.paper,
+    order: 0,
+  };
+}
+
+/** Third-octave levels, the baseline dashed over them. Blade-passing tones are solid, rotor-interaction tones hatched. */
+export function SpectrumChart({ bands, tones = [], baseline, unit, caption, summary, fileName }: SpectrumChartProps) {
   const palette = usePalette();
   const byBand = tonesByBand(bands, tones);
   const lowest = Math.min(0, ...bands.map((band) => band.levelDb ?? 0));
-  const options: ChartOptions<"bar"> | undefined = palette && {
+  const options: ChartOptions<"bar" | "line"> | undefined = palette && {
     ...commonOptions(palette),
     color: palette.ink,
-    layout: { padding: { top: tones.length > 0 ? 48 : 4 } },
+    layout: { padding: { top: byBand.some(({ labels }) => labels.length > 0) ? 48 : 16 } },
     scales: {
       x: { ...axis(palette, "one-third-octave band, Hz", false) },
       y: { ...figureAxis(palette, unit, true), suggestedMin: lowest },
@@ -121,19 +110,23 @@ export function SpectrumChart({ bands, tones = [], unit, caption, summary, fileN
   };
   return (
     <ChartFrame
-      summary={summary ?? spectrumSummary(bands, tones, unit)}
+      summary={summary ?? spectrumSummary(bands, tones, unit, baseline)}
       caption={caption}
-      table={spectrumTable(bands, tones, unit)}
+      table={spectrumTable(bands, tones, unit, baseline)}
       fileName={fileName}
       height="middle"
     >
       {(chart) =>
         palette && options ? (
-          <Bar
+          <Chart
+            type="bar"
             ref={(made) => {
               chart.current = made ?? null;
             }}
-            data={spectrumData(bands, byBand, palette)}
+            data={{
+              labels: bands.map(({ nominalHz }) => bandName(nominalHz)),
+              datasets: [barSet(bands, byBand, palette), ...(baseline ? [lineSet(bands, baseline, palette)] : [])],
+            }}
             options={options}
             plugins={[paperUnder, toneNames]}
           />

@@ -7,17 +7,25 @@ export type SpectrumBand = {
   nominalHz: number;
   /** Band level in dB; undefined where it is missing, with why. */
   levelDb: number | undefined;
+  /** The level is only an upper bound. */
+  bound?: boolean;
   why?: string;
 };
 
-export type PredictedTone = {
+export type SpectrumTone = {
   frequencyHz: number;
   kind: "blade-passing" | "interaction";
   /** "blade passing, stage 1". */
   name: string;
+  /** Named over its bar; the table names every tone. */
+  named?: boolean;
+  prominent?: boolean;
 };
 
-export type BandTones = { solid: boolean; hatched: boolean; names: string[] };
+/** A spectrum that is laid over another: the baseline's, or one of several designs'. */
+export type SpectrumLine = { key: string; name: string; bands: readonly SpectrumBand[] };
+
+export type BandTones = { solid: boolean; hatched: boolean; names: string[]; labels: string[] };
 
 /** Upper edge over mid-band of a third-octave band: 10^(1/20) (IEC 61260-1:2014, 5.2 to 5.5, value from memory). */
 const halfBand = 10 ** 0.05;
@@ -31,16 +39,20 @@ export function bandOf(bands: readonly SpectrumBand[], frequencyHz: number): num
   return index < 0 ? undefined : index;
 }
 
-/** For each band, in its order, the predicted tones that fall into it. */
-export function tonesByBand(bands: readonly SpectrumBand[], tones: readonly PredictedTone[]): BandTones[] {
-  const found = bands.map((): BandTones => ({ solid: false, hatched: false, names: [] }));
+const toneWords = (tone: SpectrumTone): string =>
+  `${formatNumber(tone.frequencyHz)} Hz ${tone.name}${tone.prominent ? ", prominent" : ""}`;
+
+/** For each band, in its order, the tones that fall into it. */
+export function tonesByBand(bands: readonly SpectrumBand[], tones: readonly SpectrumTone[]): BandTones[] {
+  const found = bands.map((): BandTones => ({ solid: false, hatched: false, names: [], labels: [] }));
   for (const tone of tones) {
     const index = bandOf(bands, tone.frequencyHz);
     const band = index === undefined ? undefined : found[index];
     if (!band) continue;
     if (tone.kind === "blade-passing") band.solid = true;
     else band.hatched = true;
-    band.names.push(`${formatNumber(tone.frequencyHz)} Hz ${tone.name}`);
+    band.names.push(toneWords(tone));
+    if (tone.named ?? true) band.labels.push(toneWords(tone));
   }
   return found;
 }
@@ -50,23 +62,40 @@ export function bandName(nominalHz: number): string {
   return nominalHz < 1000 ? String(nominalHz) : `${nominalHz / 1000}k`;
 }
 
+function loudestBand(bands: readonly SpectrumBand[]): SpectrumBand | undefined {
+  return bands.filter((band) => band.levelDb !== undefined).toSorted((a, b) => (b.levelDb ?? 0) - (a.levelDb ?? 0))[0];
+}
+
+const levelOf = (band: SpectrumBand): string =>
+  `${band.bound ? "at most " : ""}${formatNumber(band.levelDb ?? 0, { decimals: 1 })}`;
+
 /** One sentence for those who hear the chart. */
-export function spectrumSummary(bands: readonly SpectrumBand[], tones: readonly PredictedTone[], unit: string): string {
-  const known = bands.filter((band) => band.levelDb !== undefined);
-  const loudest = known.toSorted((a, b) => (b.levelDb ?? 0) - (a.levelDb ?? 0))[0];
+export function spectrumSummary(
+  bands: readonly SpectrumBand[],
+  tones: readonly SpectrumTone[],
+  unit: string,
+  baseline?: SpectrumLine,
+): string {
+  const loudest = loudestBand(bands);
   if (!loudest) return "No band of the spectrum was measured.";
-  const level = formatNumber(loudest.levelDb ?? 0, { decimals: 1 });
-  const said = listWords(tones.map((tone) => `${tone.name} at ${formatNumber(tone.frequencyHz)} Hz`));
-  return `The loudest third-octave band is ${bandName(loudest.nominalHz)} Hz with ${level} ${unit}. ${
-    said === "" ? "No tones are predicted." : `Predicted: ${said}.`
+  const below = baseline && loudestBand(baseline.bands);
+  const against = below ? `; of ${baseline.name} it is ${bandName(below.nominalHz)} Hz with ${levelOf(below)}` : "";
+  const said = listWords(
+    tones
+      .filter((tone) => tone.named ?? true)
+      .map((tone) => `${tone.name} at ${formatNumber(tone.frequencyHz)} Hz${tone.prominent ? " (prominent)" : ""}`),
+  );
+  return `The loudest third-octave band is ${bandName(loudest.nominalHz)} Hz with ${levelOf(loudest)} ${unit}${against}. ${
+    said === "" ? "No tone stands out." : `Tones: ${said}.`
   }`;
 }
 
 /** The chart's figures as a table, a row a band. */
 export function spectrumTable(
   bands: readonly SpectrumBand[],
-  tones: readonly PredictedTone[],
+  tones: readonly SpectrumTone[],
   unit: string,
+  baseline?: SpectrumLine,
 ): { caption: string; columns: BarsColumn[]; rows: BarsRow[] } {
   const byBand = tonesByBand(bands, tones);
   return {
@@ -74,14 +103,60 @@ export function spectrumTable(
     columns: [
       { key: "band", head: "Band", unit: "Hz" },
       { key: "level", head: "Level", unit },
-      { key: "tones", head: "Predicted tones" },
+      ...(baseline ? [{ key: "baseline", head: "Baseline", unit, tone: "baseline" as const }] : []),
+      { key: "tones", head: "Tones" },
     ],
     rows: bands.map((band, index) => ({
       key: String(band.nominalHz),
       cells: {
         band: { words: bandName(band.nominalHz), sortBy: band.nominalHz },
-        level: { figure: { value: band.levelDb, decimals: 1, why: band.why } },
+        level: bandCell(band),
+        ...(baseline && { baseline: bandCell(bandLike(baseline, band)) }),
         tones: { words: byBand[index]?.names.join(", ") || "none" },
+      },
+    })),
+  };
+}
+
+const bandLike = ({ bands }: SpectrumLine, { nominalHz }: SpectrumBand): SpectrumBand =>
+  bands.find((each) => each.nominalHz === nominalHz) ?? { nominalHz, levelDb: undefined, why: "not measured" };
+
+function bandCell({ levelDb, bound, why }: SpectrumBand) {
+  return { figure: { value: levelDb, decimals: 1, bound: bound ? ("upper" as const) : undefined, why } };
+}
+
+/** One sentence on several spectra over each other. */
+export function spectraSummary(lines: readonly SpectrumLine[], unit: string): string {
+  const said = lines.flatMap(({ name, bands }) => {
+    const loudest = loudestBand(bands);
+    return loudest ? [`${name} in ${bandName(loudest.nominalHz)} Hz with ${levelOf(loudest)} ${unit}`] : [];
+  });
+  return said.length === 0 ? "No spectrum was measured." : `The loudest third-octave band is, of ${listWords(said)}.`;
+}
+
+/** Several spectra as a table, a row a band and a column a line; the last may be the baseline's. */
+export function spectraTable(
+  lines: readonly SpectrumLine[],
+  unit: string,
+  baselineKey?: string,
+): { caption: string; columns: BarsColumn[]; rows: BarsRow[] } {
+  const bands = lines[0]?.bands ?? [];
+  return {
+    caption: "Third-octave bands of all, the chart’s figures",
+    columns: [
+      { key: "band", head: "Band", unit: "Hz" },
+      ...lines.map(({ key, name }) => ({
+        key,
+        head: name,
+        unit,
+        tone: key === baselineKey ? ("baseline" as const) : undefined,
+      })),
+    ],
+    rows: bands.map((band) => ({
+      key: String(band.nominalHz),
+      cells: {
+        band: { words: bandName(band.nominalHz), sortBy: band.nominalHz },
+        ...Object.fromEntries(lines.map((line) => [line.key, bandCell(bandLike(line, band))])),
       },
     })),
   };

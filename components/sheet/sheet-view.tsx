@@ -11,10 +11,11 @@ import { QuestionsSection } from "./questions-section";
 import { ReadingsSection } from "./readings-section";
 import { SheetHead } from "./sheet-head";
 import { sheetNumber } from "./sheet-words";
+import { SpectrumSection, type SpectrumAsked } from "./spectrum-section";
 import { TakeOut } from "./take-out";
 
-/** A design's sheet, piece by piece; a piece without data (off axis, budget) is absent. */
-export function SheetView({ sheet }: { sheet: Sheet }) {
+/** A design's sheet, piece by piece; a piece without data (spectrum, off axis, budget) is absent. */
+export function SheetView({ sheet, spectrum = {} }: { sheet: Sheet; spectrum?: SpectrumAsked }) {
   return (
     <article aria-labelledby="sheet-title">
       <SheetHead sheet={sheet} />
@@ -22,6 +23,7 @@ export function SheetView({ sheet }: { sheet: Sheet }) {
       <CoolingSection sheet={sheet} />
       <DrawingSection sheet={sheet} />
       <ReadingsSection sheet={sheet} />
+      <SpectrumSection sheet={sheet} asked={spectrum} />
       <OffAxis sheet={sheet} />
       <BudgetSection sheet={sheet} />
       <HistorySection sheet={sheet} />

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { time } from "./base";
 import { budgetLineSchema, notReachedWhy } from "./publication";
+import { sheetSpectraSchema } from "./sheet-spectra";
 
 /** A figure with its standard uncertainty, degrees of freedom (null: known), coverage factor and 95 % half-width. */
 export const statedSchema = z.strictObject({
@@ -152,6 +153,8 @@ export const sheetSchema = z.strictObject({
   baselinePoints: z.array(sheetPointSchema),
   against: z.array(sheetAgainstSchema),
   budget: z.array(budgetLineSchema),
+  /** Null where no spectrum was measured. */
+  spectra: sheetSpectraSchema.nullable(),
   notes: z.array(z.strictObject({ code: z.string(), message: z.string() })),
   leftOutRuns: z.array(z.strictObject({ runId: z.uuid(), why: z.string() })),
   specimens: z.array(

@@ -14,6 +14,11 @@ export function levelUnit(distanceMm: number): string {
   return `dB(A) @ ${formatNumber(distanceMm)} mm`;
 }
 
+/** The unit of an unweighted band or tone level with its distance: "dB @ 100 mm". */
+export function bandUnit(distanceMm: number): string {
+  return `dB @ ${formatNumber(distanceMm)} mm`;
+}
+
 /** A span of levels in dB(A) at a distance in mm, lower first: "38–55 dB(A) @ 100 mm". */
 export function formatLevelRange(fromDba: number, toDba: number, distanceMm: number): string {
   return `${formatRange(Math.min(fromDba, toDba), Math.max(fromDba, toDba))} ${levelUnit(distanceMm)}`;

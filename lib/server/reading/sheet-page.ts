@@ -14,6 +14,7 @@ import { sheetSchema, type Sheet, type SheetPoint, type SheetRank } from "@/lib/
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { stated } from "@/lib/domain/results/stated";
 import { readRawRuns, readSheet, type SheetAnswer } from "./read-sheet";
+import { sheetSpectra } from "./sheet-spectra";
 import { sheetTraits } from "./sheet-traits";
 
 const iso = (at: Date): string => at.toISOString();
@@ -151,6 +152,7 @@ function figuresOf(snapshot: Snapshot) {
       resistanceRatio: stated(each.resistanceRatio),
     })),
     budget: snapshot.budget,
+    spectra: sheetSpectra(snapshot),
     notes: snapshot.notes,
     leftOutRuns: snapshot.leftOutRuns,
   };

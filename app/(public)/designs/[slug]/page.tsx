@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { sheetQuery } from "@/lib/contracts/raw-runs";
+import type { SpectrumAsked } from "@/components/sheet/spectrum-section";
 import { sheetMetadata, ShowSheet } from "./show-sheet";
 
 type Props = {
@@ -18,6 +19,15 @@ export async function generateMetadata(props: Props): Promise<Metadata> {
   return sheetMetadata(slug, entryId);
 }
 
+/** What the address asks of the spectrum; what is nonsense is as good as not asked. */
+async function askedOfSpectrum({ searchParams }: Props): Promise<SpectrumAsked> {
+  const { speed, position } = await searchParams;
+  return {
+    speed: typeof speed === "string" && /^\d+(\.\d+)?$/.test(speed) ? Number(speed) : undefined,
+    position: typeof position === "string" ? position : undefined,
+  };
+}
+
 export default async function SheetPage(props: Props) {
-  return <ShowSheet {...await asked(props)} />;
+  return <ShowSheet {...await asked(props)} spectrum={await askedOfSpectrum(props)} />;
 }

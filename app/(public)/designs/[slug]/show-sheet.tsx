@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import { notFound } from "next/navigation";
 import { cache } from "react";
 import { SheetView } from "@/components/sheet/sheet-view";
+import type { SpectrumAsked } from "@/components/sheet/spectrum-section";
 import { LinkButton } from "@/components/ui/button";
 import { Section } from "@/components/ui/sheet";
 import { GoneState } from "@/components/ui/states";
@@ -58,9 +59,19 @@ export async function sheetMetadata(slug: string, entryId?: string, letter?: str
 }
 
 /** The sheet, or what stands in its place where the design was withdrawn. */
-export async function ShowSheet({ slug, entryId, letter }: { slug: string; entryId?: string; letter?: string }) {
+export async function ShowSheet({
+  slug,
+  entryId,
+  letter,
+  spectrum,
+}: {
+  slug: string;
+  entryId?: string;
+  letter?: string;
+  spectrum?: SpectrumAsked;
+}) {
   const found = await findSheet(slug, entryId, letter);
-  if ("sheet" in found) return <SheetView sheet={found.sheet} />;
+  if ("sheet" in found) return <SheetView sheet={found.sheet} spectrum={spectrum} />;
   return (
     <Section id="gone" title="This design was withdrawn" level={1}>
       <GoneState
