@@ -68,7 +68,6 @@ export function CarryForm({ model, rotors, frameKey, choices }: CarryFormProps) 
     <div className="grid gap-4">
       <Select
         label="Into which design"
-        className="max-w-xl"
         value={slug}
         onChange={(event) => setSlug(event.target.value)}
         options={[
