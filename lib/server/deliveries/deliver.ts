@@ -12,6 +12,7 @@ import {
 } from "@/db/queries/deliveries";
 import { siteOrigin } from "@/lib/env/site";
 import { mailer } from "@/lib/services/mail/from-env";
+import { rest } from "../jobs/rest";
 import { log } from "../log";
 
 const attemptsMost = 8;
@@ -87,11 +88,4 @@ export async function deliveryLoop(signal: AbortSignal): Promise<void> {
     });
     if (!worked) await rest(pollMs, signal);
   }
-}
-
-function rest(ms: number, signal: AbortSignal): Promise<void> {
-  return new Promise((resolve) => {
-    const timer = setTimeout(resolve, ms);
-    signal.addEventListener("abort", () => (clearTimeout(timer), resolve()), { once: true });
-  });
 }

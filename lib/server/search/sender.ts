@@ -4,6 +4,7 @@ import { searchBuild, searchState } from "@/db/queries/search-build";
 import { indexDigest } from "@/search/document";
 import { DESIGNS_INDEX } from "@/search/settings";
 import { hasOurSettings, ourIndexes } from "@/search/write";
+import { rest } from "../jobs/rest";
 import { log } from "../log";
 import { outlet, type Outlet } from "./outlet";
 import { beginRebuild, canGoOn, finishRebuild, giveUp, sendPage } from "./rebuild";
@@ -27,11 +28,11 @@ export async function runSearchSender(signal: AbortSignal, from: Outlet = outlet
     try {
       const lock = await takeSenderLock(from.db);
       if (lock) await sendWhileLocked(from, lock, signal, () => (wait = backOffMs.first));
-      else await pause(pollMs, signal);
+      else await rest(pollMs, signal);
     } catch (error) {
       if (signal.aborted) return;
       log().warn({ err: error, againInMs: wait }, "search sender");
-      await pause(wait, signal);
+      await rest(wait, signal);
       wait = Math.min(2 * wait, backOffMs.most);
     }
   }
@@ -97,17 +98,4 @@ export async function takeTurn(from: Outlet, now = new Date()): Promise<Turn> {
 /** Whether the index was filled under our settings; one that a write to a restarted service made has none. */
 async function isOurs({ db, client }: Outlet): Promise<boolean> {
   return (await searchState(db)).settingsSha256 === indexDigest() && (await hasOurSettings(client(), DESIGNS_INDEX));
-}
-
-function pause(ms: number, signal: AbortSignal): Promise<void> {
-  return new Promise((resolve) => {
-    const timer = setTimeout(done, ms);
-    function done(): void {
-      clearTimeout(timer);
-      signal.removeEventListener("abort", done);
-      resolve();
-    }
-    signal.addEventListener("abort", done);
-    if (signal.aborted) done();
-  });
 }
