@@ -6,16 +6,19 @@ import { Select, TextArea } from "@/components/ui/field";
 import { useAddRun } from "@/lib/client/bench";
 import { readPastedBlock } from "@/lib/client/bench-paste";
 import { ApiError } from "@/lib/client/fetcher";
-import type { BenchSession } from "@/lib/contracts/bench-session";
+import type { BenchSession, BenchSubject } from "@/lib/contracts/bench-session";
 import { RefusedRows } from "./log-report";
 import { useDraft } from "./use-draft";
+
+const keyOf = ({ entryId, baselineUnitId }: BenchSubject): string => entryId ?? baselineUnitId ?? "";
 
 /** Several runs at once from a spreadsheet: a row a run. What can't be kept stays in the field, with its reason. */
 export function PasteForm({ session }: { session: BenchSession }) {
   const subjects = session.subjects.filter((subject) => subject.closed === null);
   const positions = session.positions.filter((position) => position.used);
   const { draft, type, clear } = useDraft(`bench paste ${session.id}`);
-  const [entryId, setEntryId] = useState("");
+  const [chosen, setChosen] = useState("");
+  const subject = subjects.find((each) => keyOf(each) === chosen) ?? subjects[0];
   const [positionId, setPositionId] = useState(positions[0]?.id ?? "");
   const [refused, setRefused] = useState<{ line: number; reason: string }[]>([]);
   const [kept, setKept] = useState<number>();
@@ -28,7 +31,11 @@ export function PasteForm({ session }: { session: BenchSession }) {
     let done = 0;
     for (const { line, ...run } of block.runs) {
       try {
-        await add.mutateAsync({ entryId: entryId || null, ...run });
+        await add.mutateAsync({
+          entryId: subject?.entryId ?? null,
+          baselineUnitId: subject?.baselineUnitId,
+          ...run,
+        });
         done += 1;
       } catch (error) {
         const { detail, fields } = error instanceof ApiError ? error : { detail: "not kept", fields: [] };
@@ -61,9 +68,9 @@ export function PasteForm({ session }: { session: BenchSession }) {
       <div className="flex flex-wrap gap-4">
         <Select
           label="Runs of"
-          value={entryId}
-          onChange={(event) => setEntryId(event.currentTarget.value)}
-          options={subjects.map((subject) => ({ value: subject.entryId ?? "", label: subject.name }))}
+          value={subject ? keyOf(subject) : ""}
+          onChange={(event) => setChosen(event.currentTarget.value)}
+          options={subjects.map((each) => ({ value: keyOf(each), label: each.name }))}
         />
         {positions.length > 1 ? (
           <Select

@@ -1,5 +1,6 @@
 import { Button } from "@/components/ui/button";
 import type { BenchSession, BenchSubject } from "@/lib/contracts/bench-session";
+import { sameSubject } from "@/lib/domain/bench/next-run";
 import { sameCell, speedWords, type Cell } from "./words";
 
 export type RunCellProps = {
@@ -14,7 +15,7 @@ export type RunCellProps = {
 /** One mount at one set speed: its state, and a press that opens it. */
 export function RunCell({ session, subject, cell, isNext, isChosen, onChoose }: RunCellProps) {
   const runs = session.runs.filter(
-    (run) => run.entryId === subject.entryId && run.state !== "discarded" && sameCell(run, cell),
+    (run) => sameSubject(run, subject) && run.state !== "discarded" && sameCell(run, cell),
   );
   const missing = subject.missing.some((each) => each.mount === cell.mountNumber && each.setSpeed === cell.setSpeed);
   const run = runs[0];

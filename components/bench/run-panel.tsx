@@ -5,6 +5,7 @@ import { Field } from "@/components/ui/field";
 import { Fold } from "@/components/ui/fold";
 import { useAddRun, useKeepReadings } from "@/lib/client/bench";
 import type { BenchRunView, BenchSession, BenchSubject } from "@/lib/contracts/bench-session";
+import { sameSubject } from "@/lib/domain/bench/next-run";
 import { LogForm } from "./log-form";
 import { ReadingList } from "./reading-list";
 import { readingFields, typedReadings } from "./reading-fields";
@@ -17,7 +18,7 @@ export type RunPanelProps = { session: BenchSession; subject: BenchSubject; cell
 
 /** One run: its readings, what is still to be typed, its logs, and whether it is done. */
 export function RunPanel({ session, subject, cell, onClose }: RunPanelProps) {
-  const runs = session.runs.filter((run) => run.entryId === subject.entryId && sameCell(run, cell));
+  const runs = session.runs.filter((run) => sameSubject(run, subject) && sameCell(run, cell));
   const run = runs.find((each) => each.state !== "discarded");
   const words = `mount ${cell.mountNumber} at ${speedWords(cell.setSpeed, session.protocol.setting)}`;
   const readings = session.readings.filter((each) => runs.some(({ id }) => id === each.runId));
@@ -63,7 +64,7 @@ function RunReadings({
   const standing = session.readings.filter((each) => each.runId === run?.id && run && each.supersededBy === null);
   const fields = readingFields(session, subject, standing);
   const { draft, type, clear } = useDraft(
-    `bench ${session.id} ${subject.entryId} ${cell.mountNumber} ${cell.setSpeed}`,
+    `bench ${session.id} ${subject.entryId ?? subject.baselineUnitId} ${cell.mountNumber} ${cell.setSpeed}`,
   );
   const { readings, names, wrong } = typedReadings(fields, draft);
   const add = useAddRun(session.id);
@@ -73,7 +74,11 @@ function RunReadings({
   const submit = () => {
     if (busy || Object.keys(wrong).length > 0) return;
     if (run) keep.mutate({ version: run.version, readings }, { onSuccess: clear });
-    else add.mutate({ entryId: subject.entryId, ...cell, readings }, { onSuccess: clear });
+    else
+      add.mutate(
+        { entryId: subject.entryId, baselineUnitId: subject.baselineUnitId, ...cell, readings },
+        { onSuccess: clear },
+      );
   };
   if (fields.length === 0) return null;
   return (

@@ -2,15 +2,15 @@ import Link from "next/link";
 import { Facts } from "@/components/ui/facts";
 import { Section } from "@/components/ui/sheet";
 import type { BenchSession } from "@/lib/contracts/bench-session";
-import type { NextRun } from "@/lib/domain/bench/next-run";
+import { sameSubject, type NextRun } from "@/lib/domain/bench/next-run";
 import { formatDateTime } from "@/lib/format/dates";
-import { speedWords } from "./words";
+import { purposeWords, speedWords } from "./words";
 
 /** Which session this is, on what and by which protocol, and what comes next. */
 export function SessionHead({ session, next }: { session: BenchSession; next: NextRun | undefined }) {
   const { protocol, bench, baseline, round, positions } = session;
   const used = positions.filter((position) => position.used).map((position) => position.name);
-  const nextName = session.subjects.find((subject) => subject.entryId === next?.entryId)?.name;
+  const nextName = next ? session.subjects.find((subject) => sameSubject(subject, next))?.name : undefined;
   const nextWords = next ? `${nextName}, mount ${next.mount} at ${speedWords(next.setSpeed, protocol.setting)}` : "";
   const held = session.holds.filter((hold) => hold.liftedAt === null).length;
   return (
@@ -18,7 +18,7 @@ export function SessionHead({ session, next }: { session: BenchSession; next: Ne
       id="session"
       level={1}
       title={`Session ${session.number}`}
-      note={round ? `${round.seasonTitle}, round ${round.number}` : undefined}
+      note={round ? `${round.seasonTitle}, round ${round.number}` : purposeWords[session.purpose]}
       aside={<Link href="/bench">Bench</Link>}
     >
       <p role="status" className="mb-4 text-lg font-bold">

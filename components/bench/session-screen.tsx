@@ -8,10 +8,12 @@ import type { BenchSession } from "@/lib/contracts/bench-session";
 import { nextRun } from "@/lib/domain/bench/next-run";
 import { BackgroundCheck } from "./background-check";
 import { CalibratorCheck } from "./calibrator-check";
+import { ControlSection } from "./control-section";
 import { EndSession } from "./end-session";
 import { FiguresTable } from "./figures-table";
 import { HoldsList } from "./holds-list";
 import { PasteForm } from "./paste-form";
+import { PurposeSection } from "./purpose-section";
 import { SessionHead } from "./session-head";
 import { SessionNote } from "./session-note";
 import { SubjectRuns, type Chosen } from "./subject-runs";
@@ -48,7 +50,7 @@ export function SessionScreen({ initial, ownId }: { initial: BenchSession; ownId
         <div className="grid grid-cols-1 gap-8">
           {session.subjects.map((subject) => (
             <SubjectRuns
-              key={subject.entryId ?? "baseline"}
+              key={subject.entryId ?? subject.baselineUnitId}
               session={session}
               subject={subject}
               next={next}
@@ -57,7 +59,9 @@ export function SessionScreen({ initial, ownId }: { initial: BenchSession; ownId
             />
           ))}
         </div>
-        {entries.length === 0 ? <p className="mt-4">No entry of this round is on the bench.</p> : null}
+        {entries.length === 0 && session.purpose === "round" ? (
+          <p className="mt-4">No entry of this round is on the bench.</p>
+        ) : null}
       </Section>
       {open ? (
         <Section id="paste" title="Paste from a spreadsheet" tone="bar">
@@ -67,6 +71,8 @@ export function SessionScreen({ initial, ownId }: { initial: BenchSession; ownId
       <Section id="figures" title="Figures so far" note="Corrected for background, against this session's baseline.">
         <FiguresTable session={session} />
       </Section>
+      <ControlSection session={session} />
+      <PurposeSection session={session} />
       <Section id="after" title="After the runs" tone="bar">
         <div className="grid gap-8 lg:grid-cols-2">
           <CalibratorCheck session={session} phase="after" />
@@ -77,7 +83,7 @@ export function SessionScreen({ initial, ownId }: { initial: BenchSession; ownId
         <EndSession session={session} />
         <HoldsList session={session} ownId={ownId} />
       </Section>
-      {open ? null : (
+      {open || session.purpose !== "round" ? null : (
         <Section id="to-review" title="To review" tone="bar">
           <ul className="grid gap-3">
             {entries.map((entry) => (

@@ -4,14 +4,12 @@ import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { ScrollRegion } from "@/components/ui/bars/scroll-region";
 import type { BenchSession, BenchSubject } from "@/lib/contracts/bench-session";
-import type { NextRun } from "@/lib/domain/bench/next-run";
+import { sameSubject, type NextRun, type SubjectKey } from "@/lib/domain/bench/next-run";
 import { RunCell } from "./run-cell";
 import { RunPanel } from "./run-panel";
 import { speedWords, type Cell } from "./words";
 
-export interface Chosen extends Cell {
-  entryId: string | null;
-}
+export interface Chosen extends Cell, SubjectKey {}
 
 export type SubjectRunsProps = {
   session: BenchSession;
@@ -25,7 +23,7 @@ export type SubjectRunsProps = {
 export function SubjectRuns({ session, subject, next, chosen, onChoose }: SubjectRunsProps) {
   const [extra, setExtra] = useState(0);
   const { protocol } = session;
-  const runs = session.runs.filter((run) => run.entryId === subject.entryId);
+  const runs = session.runs.filter((run) => sameSubject(run, subject));
   const numbers = [...runs.map((run) => run.mountNumber), ...subject.missing.map(({ mount }) => mount)];
   const last = Math.max(0, ...numbers);
   const mounts = [...new Set([...numbers, ...Array.from({ length: extra }, (_, i) => last + i + 1)])].sort(
@@ -33,7 +31,7 @@ export function SubjectRuns({ session, subject, next, chosen, onChoose }: Subjec
   );
   const speeds = [...protocol.setSpeeds].sort((a, b) => a - b);
   const isBaseline = subject.entryId === null;
-  const here = chosen?.entryId === subject.entryId ? chosen : null;
+  const here = chosen && sameSubject(chosen, subject) ? chosen : null;
   const left = subject.missing.reduce((sum, each) => sum + each.runs, 0);
   return (
     <div className={isBaseline ? "min-w-0 border-l-4 border-carbon pl-4" : "min-w-0"}>
@@ -69,9 +67,21 @@ export function SubjectRuns({ session, subject, next, chosen, onChoose }: Subjec
                       session={session}
                       subject={subject}
                       cell={{ setSpeed, mountNumber: mount }}
-                      isNext={next?.entryId === subject.entryId && next.mount === mount && next.setSpeed === setSpeed}
+                      isNext={
+                        next !== undefined &&
+                        sameSubject(next, subject) &&
+                        next.mount === mount &&
+                        next.setSpeed === setSpeed
+                      }
                       isChosen={here?.mountNumber === mount && here.setSpeed === setSpeed}
-                      onChoose={() => onChoose({ entryId: subject.entryId, setSpeed, mountNumber: mount })}
+                      onChoose={() =>
+                        onChoose({
+                          entryId: subject.entryId,
+                          baselineUnitId: subject.baselineUnitId,
+                          setSpeed,
+                          mountNumber: mount,
+                        })
+                      }
                     />
                   </td>
                 ))}
@@ -87,7 +97,7 @@ export function SubjectRuns({ session, subject, next, chosen, onChoose }: Subjec
       ) : null}
       {here ? (
         <RunPanel
-          key={`${here.entryId} ${here.mountNumber} ${here.setSpeed}`}
+          key={`${here.entryId ?? here.baselineUnitId} ${here.mountNumber} ${here.setSpeed}`}
           session={session}
           subject={subject}
           cell={here}

@@ -18,6 +18,13 @@ export const quantityWords: Readonly<Record<string, string>> = {
   humidity_percent: "Humidity",
 };
 
+/** What a session without a round is for. */
+export const purposeWords: Readonly<Record<BenchSession["purpose"], string>> = {
+  round: "for a round",
+  qualification: "qualification of the bench: ten remounts of the baseline",
+  bridge: "bridge between two baseline units",
+};
+
 export const stateWords = (state: string): string => state.replaceAll("_", " ");
 
 export interface Cell {

@@ -9,7 +9,9 @@ export interface SessionHead {
   budgetVersionId: string;
   baselineUnitId: string;
   roundId: string | null;
-  purpose: string;
+  purpose: "round" | "qualification" | "bridge";
+  /** The other unit of a bridging session. */
+  bridgeUnitId: string | null;
   operatorId: string;
   checklist: Record<string, boolean>;
   note: string;
@@ -28,6 +30,7 @@ const head = {
   baselineUnitId: "baseline_unit_id",
   roundId: "round_id",
   purpose: "purpose",
+  bridgeUnitId: "bridge_unit_id",
   operatorId: "operator_id",
   checklist: "checklist",
   note: "note",
@@ -73,7 +76,8 @@ export async function insertSession(
     | "roundId"
     | "operatorId"
     | "checklist"
-  > & { at: Date },
+  > &
+    Partial<Pick<SessionHead, "purpose" | "bridgeUnitId">> & { at: Date },
 ): Promise<string> {
   const [made]: { id: string }[] = await db("session")
     .insert({
@@ -83,6 +87,8 @@ export async function insertSession(
       budget_version_id: session.budgetVersionId,
       baseline_unit_id: session.baselineUnitId,
       round_id: session.roundId,
+      purpose: session.purpose ?? "round",
+      bridge_unit_id: session.bridgeUnitId ?? null,
       operator_id: session.operatorId,
       checklist: JSON.stringify(session.checklist),
       began_at: session.at,

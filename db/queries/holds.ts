@@ -11,6 +11,10 @@ export interface HoldRow {
   liftedBy: string | null;
   liftedAt: Date | null;
   liftNote: string | null;
+  /** Raised by the control charts. */
+  control: boolean;
+  /** The documented change that lifted it. */
+  breakId: string | null;
 }
 
 export async function insertHolds(
@@ -20,11 +24,13 @@ export async function insertHolds(
     findings,
     raisedBy,
     at,
+    control = false,
   }: {
     sessionId: string;
     findings: readonly { code: string; reason: string; whatToDo: string }[];
     raisedBy: string | null;
     at: Date;
+    control?: boolean;
   },
 ): Promise<void> {
   if (findings.length === 0) return;
@@ -36,6 +42,7 @@ export async function insertHolds(
       what_to_do: whatToDo,
       raised_by: raisedBy,
       raised_at: at,
+      control,
     })),
   );
 }
@@ -53,17 +60,25 @@ export async function holdsOfSession(db: Handle, { sessionId }: { sessionId: str
     liftedBy: "lifted_by",
     liftedAt: "lifted_at",
     liftNote: "lift_note",
+    control: "control",
+    breakId: "break_id",
   });
 }
 
 /** Lifts a hold that stands. @returns whether it stood */
 export async function liftHoldRow(
   db: Handle,
-  { holdId, liftedBy, liftNote, at }: { holdId: string; liftedBy: string; liftNote: string; at: Date },
+  {
+    holdId,
+    liftedBy,
+    liftNote,
+    at,
+    breakId = null,
+  }: { holdId: string; liftedBy: string; liftNote: string; at: Date; breakId?: string | null },
 ): Promise<boolean> {
   const lifted = await db("session_hold")
     .where({ id: holdId })
     .whereNull("lifted_at")
-    .update({ lifted_by: liftedBy, lifted_at: at, lift_note: liftNote });
+    .update({ lifted_by: liftedBy, lifted_at: at, lift_note: liftNote, break_id: breakId });
   return lifted === 1;
 }

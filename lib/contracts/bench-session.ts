@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { id, time } from "./base";
+import { controlCheck, qualificationView, unitBridge } from "./control";
 
 /** What the screen of one session reads. Handles stand for people as they are called today; null once erased. */
 const person = z.strictObject({ personId: id, handle: z.string().nullable() });
@@ -27,8 +28,9 @@ export type BenchReadingView = z.infer<typeof benchReading>;
 
 export const benchRun = z.strictObject({
   id,
-  /** Null for the baseline. */
+  /** Null for a baseline unit. */
   entryId: id.nullable(),
+  baselineUnitId: id.nullable(),
   setSpeed: z.number(),
   mountNumber: z.int(),
   repeatNumber: z.int(),
@@ -45,8 +47,9 @@ export type BenchRunView = z.infer<typeof benchRun>;
 const missingRun = z.strictObject({ setSpeed: z.number(), mount: z.int(), runs: z.int() });
 
 export const benchSubject = z.strictObject({
-  /** Null for the baseline. */
+  /** Null for a baseline unit. */
   entryId: id.nullable(),
+  baselineUnitId: id.nullable(),
   name: z.string(),
   state: z.string().nullable(),
   rotors: z.int(),
@@ -68,6 +71,8 @@ export const benchHold = z.strictObject({
   liftedBy: person.nullable(),
   liftedAt: time.nullable(),
   liftNote: z.string().nullable(),
+  /** Raised by the control charts: a documented change lifts it too. */
+  control: z.boolean(),
 });
 
 export const gateFinding = z.strictObject({ code: z.string(), reason: z.string(), whatToDo: z.string() });
@@ -104,6 +109,7 @@ export const benchSession = z.strictObject({
   id,
   number: z.int(),
   version: z.int(),
+  purpose: z.enum(["round", "qualification", "bridge"]),
   round: z.strictObject({ id, number: z.int(), seasonTitle: z.string(), state: z.string() }).nullable(),
   operator: person,
   beganAt: time,
@@ -149,6 +155,12 @@ export const benchSession = z.strictObject({
   figures: z.array(livePoint),
   /** What would hold the session if it ended now. */
   gates: z.array(gateFinding),
+  /** Where baseline and calibrator stand on their charts: so far, or as they were judged at the end. */
+  control: z.array(controlCheck),
+  /** Of a qualification session. */
+  qualification: qualificationView.nullable(),
+  /** Of a bridging session: how its own unit stands to the other. */
+  bridge: z.array(unitBridge).nullable(),
   /** Why a closed session's reading may be superseded now; null when it may not. */
   sentBack: z.boolean(),
 });

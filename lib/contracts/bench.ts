@@ -57,6 +57,8 @@ export type SessionReading = z.infer<typeof sessionReading>;
 /** A run: one mount at one set speed, of an entry's specimen or of the session's baseline, with its readings so far. */
 export const newRun = z.strictObject({
   entryId: id.nullable(),
+  /** The other unit of a bridging session; the session's own where it is left out. */
+  baselineUnitId: id.nullish(),
   setSpeed: z.number().positive(),
   mountNumber: z.int().min(1).max(20),
   repeatNumber: z.int().min(1).max(20).default(1),

@@ -2,14 +2,11 @@ import { appDb } from "@/db/client/handles";
 import { insertLogFile, insertLogRefusals, keepFile } from "@/db/queries/bench-logs";
 import { changeRun, insertReadings } from "@/db/queries/bench-runs";
 import { benchVersionOf, positionsOf, protocolOf } from "@/db/queries/bench-sessions";
-import { logBytesMax, type LogAnswer, type LogQuery } from "@/lib/contracts/bench-logs";
+import { logBytesMax, logPreview, type LogAnswer, type LogQuery } from "@/lib/contracts/bench-logs";
 import { ExpectedError } from "@/lib/domain/expected-error";
-import { analyseLog, type LogReport } from "@/lib/science/logs/analyse-log";
-import type { ReadLog } from "@/lib/science/logs/log-reader";
 import { storage } from "@/lib/services/storage/from-env";
 import { note, type Asked } from "../audit/audit";
 import { checkPlaces, checkReadings, checkTwice } from "./check-reading";
-import { logReading, type LogReading } from "./log-verdict";
 import { demandKept, demandRun, movedOn, standingOfRun } from "./runs";
 import { spoolLog, tooLarge, type SpooledLog } from "./spool-log";
 
@@ -33,13 +30,15 @@ export async function takeLog(
   const { sensor, ambient, level } = query;
   const named =
     query.kind === "level" ? { ...(level && { level }) } : { ...(sensor && { sensor }), ...(ambient && { ambient }) };
-  return spoolLog(request.body, named, async (spooled) => {
-    const report = analyseLog(spooled.log, protocol.epsilonK, protocol.ambientDriftMaxK);
-    const found = logReading(report, query.kind, protocol);
-    const kept = confirmed ? await keep(asked, query, spooled, report, found) : undefined;
+  const { epsilonK, ambientDriftMaxK, levelAverageS } = protocol;
+  const order = { kind: query.kind, choice: named, epsilonK, ambientDriftMaxK, levelAverageS };
+  return spoolLog(request.body, order, async (spooled) => {
+    const kept = confirmed ? await keep(asked, query, spooled) : undefined;
+    const { sha256, bytes, found } = spooled;
+    const { reading: _reading, ...said } = found;
     return {
-      ...answerOf(spooled, report),
-      unusable: "why" in found ? found.why : null,
+      ...{ sha256, bytes },
+      ...logPreview.parse(said),
       logFileId: kept?.logFileId ?? null,
       readingIds: kept?.readingIds ?? [],
       version: kept?.version ?? null,
@@ -65,9 +64,7 @@ function demandConfirmed(query: LogQuery): void {
 async function keep(
   asked: Asked,
   query: LogQuery,
-  { sha256, bytes, stream }: SpooledLog,
-  report: LogReport,
-  found: LogReading | { why: string },
+  { sha256, bytes, stream, found: report }: SpooledLog,
 ): Promise<{ logFileId: string; readingIds: string[]; version: number }> {
   const storageKey = `files/${sha256.slice(0, 2)}/${sha256}`;
   if (!(await storage().head(storageKey))) await storage().put(storageKey, stream(), bytes);
@@ -89,7 +86,8 @@ async function keep(
     });
     await insertLogRefusals(tx, { logFileId, refused: report.refused });
     await note(tx, asked, { action: "log.keep", subjectKind: "run", subjectId: run.id, after: { logFileId, sha256 } });
-    if ("why" in found) return { logFileId, readingIds: [], version: version + 1 };
+    const found = report.reading;
+    if (!found) return { logFileId, readingIds: [], version: version + 1 };
     const place = { positionId: found.quantity === "level_dba" ? positionId : null };
     const given = { quantity: found.quantity, value: found.value, source: "typed" as const, ...place };
     const standing = await standingOfRun(tx, session.id, run.id);
@@ -110,36 +108,4 @@ async function keep(
     ]);
     return { logFileId, readingIds, version: version + 1 };
   });
-}
-
-function answerOf({ sha256, bytes, log }: SpooledLog, report: LogReport) {
-  const { time, sensor, ambient, level } = log.chosen;
-  return {
-    ...{ sha256, bytes, rows: report.rows, intervalS: report.intervalS, columns: [...report.columns] },
-    chosen: {
-      time: time?.name ?? null,
-      sensor: sensor?.name ?? null,
-      ambient: ambient?.name ?? null,
-      level: level?.name ?? null,
-    },
-    preview: previewOf(log),
-    refused: [...report.refused],
-    refusedCount: report.refusedCount,
-    warnings: [...report.warnings],
-    temperature: report.temperature,
-    level: report.level,
-  };
-}
-
-function previewOf(log: ReadLog): LogAnswer["preview"] {
-  const at = (values: Float64Array | undefined, i: number): number | null => {
-    const value = values?.[i];
-    return value === undefined || Number.isNaN(value) ? null : value;
-  };
-  return Array.from({ length: Math.min(8, log.rows) }, (_, i) => ({
-    timeS: at(log.timeS, i),
-    sensorC: at(log.sensorC, i),
-    ambientC: at(log.ambientC, i),
-    levelDba: at(log.levelDb, i),
-  }));
 }

@@ -17,6 +17,7 @@ import { handlesOf } from "@/db/queries/people";
 import { latestSendBack } from "@/db/queries/review-causes";
 import { sessionRecords } from "@/db/queries/session-record";
 import type { BenchSession } from "@/lib/contracts/bench-session";
+import type { SessionRecord } from "@/lib/domain/results/session-record";
 import { sessionGates } from "@/lib/domain/bench/session-gates";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import type { Actor } from "@/lib/domain/accounts/actor";
@@ -24,8 +25,10 @@ import { demand } from "../permission";
 import { demandRoundWork } from "./bench-access";
 import { gateInput } from "./gate-input";
 import { livePoints } from "./live-points";
+import { purposeParts } from "./purpose-parts";
 import { readingView, runView, type Handles } from "./session-rows";
 import { sessionSubjects } from "./session-subjects";
+import { readSessionControl, storedSessionControl } from "../baselines/control-session";
 
 /** All that the screen of one session shows, as it stands now. @throws ExpectedError not_found, forbidden */
 export async function readSession(actor: Actor, { sessionId }: { sessionId: string }): Promise<BenchSession> {
@@ -47,6 +50,8 @@ export async function readSession(actor: Actor, { sessionId }: { sessionId: stri
     holdsOfSession(db, { sessionId }),
     session.roundId ? roundSetupHead(db, { roundId: session.roundId }) : Promise.resolve(null),
   ]);
+  const other = session.bridgeUnitId ? await baselineUnitOf(db, { baselineUnitId: session.bridgeUnitId }) : null;
+  const control = await controlOf(db, session, record);
   const people = await peopleOf(db, session, runs, readings, holds);
   const used = positions.filter(({ name }) => protocol.positions.includes(name));
   const { id: _protocol, positions: _names, ...protocolShown } = protocol;
@@ -54,6 +59,7 @@ export async function readSession(actor: Actor, { sessionId }: { sessionId: stri
     id: session.id,
     number: session.number,
     version: session.version,
+    purpose: session.purpose,
     round,
     operator: person(people, session.operatorId),
     beganAt: session.beganAt.toISOString(),
@@ -73,12 +79,12 @@ export async function readSession(actor: Actor, { sessionId }: { sessionId: stri
     baseline,
     protocol: protocolShown,
     positions: positions.map((each) => ({ ...each, used: protocol.positions.includes(each.name) })),
-    subjects: await sessionSubjects(db, { actor, session, protocol, baseline, runs }),
+    subjects: await sessionSubjects(db, { actor, session, protocol, baseline, other, runs }),
     runs: runs.map((run) => runView(run, readings, used, people)),
     readings: readings.map((each) => readingView(each, people)),
     backgrounds,
     logs: logs.map((log) => ({ ...log, at: log.at.toISOString() })),
-    holds: holds.map(({ sessionId: _session, raisedBy, liftedBy, ...hold }) => ({
+    holds: holds.map(({ sessionId: _session, breakId: _break, raisedBy, liftedBy, ...hold }) => ({
       ...hold,
       raisedBy: raisedBy ? person(people, raisedBy) : null,
       raisedAt: hold.raisedAt.toISOString(),
@@ -86,7 +92,9 @@ export async function readSession(actor: Actor, { sessionId }: { sessionId: stri
       liftedAt: hold.liftedAt?.toISOString() ?? null,
     })),
     figures: livePoints(record),
-    gates: session.endedAt ? [] : sessionGates(await gateInput(db, { sessionId })),
+    gates: session.endedAt ? [] : [...sessionGates(await gateInput(db, { sessionId })), ...control.findings],
+    control: control.checks.map((check) => ({ ...check, out: [...check.out] })),
+    ...(await purposeParts(db, session, record, protocol.setSpeeds)),
     sentBack: session.endedAt !== null && (await latestSendBack(db, { sessionId, runId: null })) !== undefined,
   };
 }
@@ -109,6 +117,10 @@ export async function readSessions(actor: Actor, { roundId, open }: { roundId?: 
     })),
   };
 }
+
+/** As far as it goes while the session is open; as it was judged once it is closed. */
+const controlOf = (db: Handle, session: SessionHead, record: SessionRecord) =>
+  session.endedAt ? storedSessionControl(db, { sessionId: session.id }) : readSessionControl(db, record);
 
 const person = (people: Handles, personId: string) => ({ personId, handle: people.get(personId) ?? null });
 

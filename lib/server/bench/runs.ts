@@ -84,7 +84,12 @@ export async function addRun(
     }
     if (entry && !entry.specimenId)
       throw new ExpectedError("moved_on", "No specimen of this entry has passed its spin-up.");
-    const subjectId = entry ? entry.specimenId : session.baselineUnitId;
+    const unitId = input.baselineUnitId ?? session.baselineUnitId;
+    if (unitId !== session.baselineUnitId && unitId !== session.bridgeUnitId)
+      throw new ExpectedError("malformed", "This session doesn't run that baseline unit.", [
+        { path: "baselineUnitId", message: "is no unit of this session" },
+      ]);
+    const subjectId = entry ? entry.specimenId : unitId;
     const there = (await runsOfSession(tx, { sessionId })).find(
       (run) =>
         (run.specimenId ?? run.baselineUnitId) === subjectId &&
@@ -102,7 +107,7 @@ export async function addRun(
       sessionId,
       entryId: entry?.entryId ?? null,
       specimenId: entry?.specimenId ?? null,
-      baselineUnitId: entry ? null : session.baselineUnitId,
+      baselineUnitId: entry ? null : unitId,
       setSpeed: input.setSpeed,
       mountNumber: input.mountNumber,
       repeatNumber: input.repeatNumber,

@@ -16,6 +16,7 @@ export function runView(
   return {
     id: run.id,
     entryId: run.entryId,
+    baselineUnitId: run.baselineUnitId,
     setSpeed: run.setSpeed,
     mountNumber: run.mountNumber,
     repeatNumber: run.repeatNumber,

@@ -5,6 +5,7 @@ import type { RunRow } from "@/db/queries/bench-runs";
 import type { ProtocolRow, SessionHead } from "@/db/queries/bench-sessions";
 import type { BenchSubject } from "@/lib/contracts/bench-session";
 import type { Person } from "@/lib/domain/accounts/actor";
+import { QUALIFYING_MOUNTS } from "@/lib/domain/baselines/qualify";
 import { missingRuns } from "@/lib/domain/bench/missing-runs";
 
 /**
@@ -18,12 +19,15 @@ export async function sessionSubjects(
     session,
     protocol,
     baseline,
+    other,
     runs,
   }: {
     actor: Person;
     session: SessionHead;
     protocol: ProtocolRow;
     baseline: { name: string; serial: string };
+    /** The other unit of a bridging session. */
+    other: { name: string; serial: string } | null;
     runs: readonly RunRow[];
   },
 ): Promise<BenchSubject[]> {
@@ -31,16 +35,22 @@ export async function sessionSubjects(
     runs
       .filter((run) => run.state === "done" && match(run))
       .map((run) => ({ setSpeed: run.setSpeed, mount: run.mountNumber }));
+  const turns = { round: 2, qualification: QUALIFYING_MOUNTS, bridge: Math.max(2, protocol.mounts) }[session.purpose];
+  const unit = { entryId: null, state: null, rotors: 1, specimenNumber: null, closed: null, sentBack: null };
   const first: BenchSubject = {
-    entryId: null,
+    ...unit,
+    baselineUnitId: session.baselineUnitId,
     name: `Baseline ${baseline.name} ${baseline.serial}`,
-    state: null,
-    rotors: 1,
-    specimenNumber: null,
-    closed: null,
-    sentBack: null,
-    missing: baselineMissing(protocol, session.baselineUnitId, runs),
+    missing: baselineMissing(protocol, session.baselineUnitId, runs, turns),
   };
+  if (session.bridgeUnitId && other) {
+    const { bridgeUnitId } = session;
+    const missing = missingRuns(
+      protocol,
+      doneOf((run) => run.baselineUnitId === bridgeUnitId),
+    );
+    return [first, { ...unit, baselineUnitId: bridgeUnitId, name: `Baseline ${other.name} ${other.serial}`, missing }];
+  }
   if (!session.roundId) return [first];
   const [entries, rows, owned] = await Promise.all([
     benchEntries(db, { roundId: session.roundId }),
@@ -54,6 +64,7 @@ export async function sessionSubjects(
     first,
     ...here.map((entry): BenchSubject => ({
       entryId: entry.entryId,
+      baselineUnitId: null,
       name: `${entry.designName} ${entry.letter}`,
       state: entry.state,
       rotors: entry.stages,
@@ -68,12 +79,12 @@ export async function sessionSubjects(
   ];
 }
 
-/** Its two turns; one more mount where an entry ran after what was to be the last. */
-function baselineMissing(protocol: ProtocolRow, baselineUnitId: string, runs: readonly RunRow[]) {
+/** Its turns; one more mount where something else ran after what was to be the last. */
+function baselineMissing(protocol: ProtocolRow, baselineUnitId: string, runs: readonly RunRow[], least: number) {
   const done = runs.filter((run) => run.state === "done");
   const own = done.filter((run) => run.baselineUnitId === baselineUnitId);
   const mounts = new Set(own.map((run) => run.mountNumber)).size;
-  const turns = Math.max(2, mounts);
+  const turns = Math.max(least, mounts);
   const taken = own.map((run) => ({ setSpeed: run.setSpeed, mount: run.mountNumber }));
   const missing = missingRuns({ ...protocol, mounts: turns, runsPerMount: 1 }, taken);
   const isLast = done.at(-1)?.baselineUnitId === baselineUnitId;

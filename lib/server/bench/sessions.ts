@@ -1,5 +1,5 @@
 import { appDb } from "@/db/client/handles";
-import { changeSession, endSessionRow, insertSession, listSessions, setupOf } from "@/db/queries/bench-sessions";
+import { changeSession, endSessionRow, insertSession, setupOf } from "@/db/queries/bench-sessions";
 import { insertHolds } from "@/db/queries/holds";
 import { moveRound } from "@/db/queries/moves";
 import { roundContext } from "@/db/queries/round-context";
@@ -9,10 +9,12 @@ import { ExpectedError } from "@/lib/domain/expected-error";
 import { sessionGates } from "@/lib/domain/bench/session-gates";
 import { note, type Asked } from "../audit/audit";
 import { demand } from "../permission";
+import { chartSession } from "../baselines/control-session";
+import { settleSession } from "../baselines/settle-session";
 import { computeSession } from "../results/compute-session";
 import { demandBench, demandRoundWork } from "./bench-access";
-import { checklistItems } from "./cautions";
 import { gateInput } from "./gate-input";
+import { demandNoOpenSession, demandTicked } from "./session-start";
 
 /**
  * Starts a session of a round on a bench; the round is being measured from then on. One session is open on a bench.
@@ -25,14 +27,7 @@ export async function startSession(
 ): Promise<{ sessionId: string }> {
   const { actor } = asked;
   demand(actor, "bench.read");
-  const missing = Object.keys(checklistItems).filter((item) => input.checklist[item] !== true);
-  if (missing.length > 0) {
-    throw new ExpectedError(
-      "malformed",
-      "Every caution is ticked before a session starts.",
-      missing.map((item) => ({ path: `checklist.${item}`, message: "is not ticked" })),
-    );
-  }
+  demandTicked(input.checklist);
   return appDb().transaction(async (tx) => {
     await demandRoundWork(tx, asked, input.roundId);
     const round = await roundContext(tx, { roundId: input.roundId, lock: true });
@@ -50,8 +45,7 @@ export async function startSession(
         [{ path: "benchVersionId", message: "is not of the season, or the baseline unit is not" }],
       );
     }
-    const there = (await listSessions(tx, { open: true })).find((each) => each.benchId === setup.benchId);
-    if (there) throw new ExpectedError("moved_on", `Session ${there.number} is open on this bench: end it first.`);
+    await demandNoOpenSession(tx, setup.benchId);
     const sessionId = await insertSession(tx, {
       ...setup,
       benchVersionId: input.benchVersionId,
@@ -87,8 +81,9 @@ export async function editSession(
 }
 
 /**
- * Closes a session: its gates are tried, each finding holds it, and its figures are computed. A closed session takes
- * only readings that supersede others for a review or a correction.
+ * Closes a session: its gates are tried and its baseline and calibrator put on their charts, each finding holds it, and
+ * its figures are computed. What a qualification or a bridge gives is written down unless something holds it. A closed
+ * session takes only readings that supersede others for a review or a correction.
  * @returns what was found; empty when nothing holds it
  */
 export async function endSession(asked: Asked, { sessionId, at }: { sessionId: string; at: Date }) {
@@ -98,6 +93,8 @@ export async function endSession(asked: Asked, { sessionId, at }: { sessionId: s
     await endSessionRow(tx, { sessionId, at });
     await insertHolds(tx, { sessionId, findings, raisedBy: null, at });
     await computeSession(tx, sessionId);
+    findings.push(...(await chartSession(tx, { sessionId, at })));
+    await settleSession(tx, { sessionId, at });
     await note(tx, asked, { action: "session.end", subjectKind: "session", subjectId: sessionId, after: { findings } });
     return { findings };
   });

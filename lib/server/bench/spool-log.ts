@@ -4,43 +4,43 @@ import { mkdtemp, open, rm } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import type { Readable } from "node:stream";
-import { setImmediate as nextTurn } from "node:timers/promises";
 import { logBytesMax } from "@/lib/contracts/bench-logs";
 import { ExpectedError } from "@/lib/domain/expected-error";
-import type { LogChoice } from "@/lib/science/logs/choice";
-import { LogReader, type ReadLog } from "@/lib/science/logs/log-reader";
+import type { FoundLog, LogOrder } from "@/lib/domain/bench/read-log";
 import { Refusal } from "@/lib/science/refusal";
+import { runThread } from "../threads/run-thread";
+import type { LogThreadOrder } from "./read-log-thread";
 
 export interface SpooledLog {
   sha256: string;
   bytes: number;
-  log: ReadLog;
+  found: FoundLog;
   /** The bytes as they were received. */
   stream(): Readable;
 }
 
 export const tooLarge = () => new ExpectedError("too_large", "A log may have 64 MB. Cut it to the record of this run.");
 
-/** Pieces this long are read at once; between them other requests have their turn. */
-const pieceBytes = 1 << 16;
+const limits = { withinMs: 120_000, heapMaxMb: 512 };
 
 /**
- * Takes a log in as it comes: on disk as received, hashed, and read row by row in bounded memory. The copy on disk is
- * gone when `work` is done.
+ * Takes a log in as it comes, on disk as received and hashed, and reads it in a thread, so that no row and no analysis
+ * is worked on a request's own thread. The copy on disk is gone when `work` is done.
  * @throws ExpectedError too_large beyond 64 MB; malformed for what is no log, or a column that it doesn't have
  */
 export async function spoolLog<T>(
   body: ReadableStream<Uint8Array> | null,
-  choice: LogChoice,
+  order: LogOrder,
   work: (spooled: SpooledLog) => Promise<T>,
 ): Promise<T> {
   const folder = await mkdtemp(path.join(tmpdir(), "fanfold-log-"));
   try {
     const file = path.join(folder, "as-received");
-    const reader = new LogReader(choice);
-    const taken = await takeIn(body, file, (piece) => reader.push(piece));
-    const log = reader.finish();
-    return await work({ ...taken, log, stream: () => createReadStream(file) });
+    const taken = await takeIn(body, file);
+    const given: LogThreadOrder = { file, order };
+    // The thread is ours and runs the same code: what it gives is what the type says.
+    const found = (await runThread("lib/server/bench/read-log-thread.ts", given, limits)) as FoundLog;
+    return await work({ ...taken, found, stream: () => createReadStream(file) });
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
     const at = typeof error.at === "number" ? ` (line ${error.at})` : "";
@@ -55,7 +55,6 @@ export async function spoolLog<T>(
 async function takeIn(
   body: ReadableStream<Uint8Array> | null,
   file: string,
-  read: (piece: Uint8Array) => void,
 ): Promise<{ sha256: string; bytes: number }> {
   const hash = createHash("sha256");
   const handle = await open(file, "wx", 0o600);
@@ -66,10 +65,6 @@ async function takeIn(
       if (bytes > logBytesMax) throw tooLarge();
       hash.update(chunk);
       await handle.writeFile(chunk);
-      for (let from = 0; from < chunk.byteLength; from += pieceBytes) {
-        read(chunk.subarray(from, from + pieceBytes));
-        await nextTurn();
-      }
     }
   } finally {
     await handle.close();

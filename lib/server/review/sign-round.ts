@@ -31,8 +31,8 @@ export async function signRound(
   return db.transaction(async (tx) => {
     const round = await roundContext(tx, { roundId, lock: true });
     const reviewer = await demandSigner(tx, asked, roundId);
-    const [obstacle] = await roundObstacles(tx, round);
-    if (obstacle) throw new ExpectedError("moved_on", obstacle);
+    const obstacles = await roundObstacles(tx, round);
+    if (obstacles.length > 0) throw new ExpectedError("moved_on", obstacles.join(" "));
     const sha256 = await roundDigest(tx, round);
     if (expectedSha256 !== undefined && expectedSha256 !== sha256) {
       throw new ExpectedError("moved_on", "Something in the round changed since you opened it. Look at it again.");

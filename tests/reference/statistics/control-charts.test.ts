@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { calibratorHolds, chartPhases } from "@/lib/science/statistics/baseline-chart";
+import { calibratorHolds } from "@/lib/science/statistics/baseline-chart";
 import { ewma, ewmaLimits, individualsChart, movingRangeConstants } from "@/lib/science/statistics/control-chart";
 import { normalCdf } from "@/lib/science/statistics/distributions";
 import { createRandom } from "@/lib/science/statistics/random";
@@ -150,24 +150,5 @@ describe("control charts", () => {
     expect(list(v, "before_dB").map((before, i) => calibratorHolds(before, after[i] ?? NaN))).toEqual(
       v.expected.accept,
     );
-  });
-});
-
-describe("baseline phases", () => {
-  it("says nothing under two runs, calls limits trial under twenty, and holds each phase for itself", () => {
-    const steady = Array.from({ length: 24 }, (_, i) => 40 + 0.1 * ((i * 7) % 5));
-    const [few, trial, full] = chartPhases([
-      { values: [40] },
-      { values: steady.slice(0, 9) },
-      { values: [...steady, 45] },
-    ]);
-    expect(few?.kind).toBe("none");
-    expect(trial).toMatchObject({ kind: "trial", out: [] });
-    expect(full?.kind).toBe("limits");
-    expect(full?.out).toContainEqual({ index: 24, reason: "one beyond 3 sigma" });
-  });
-  it("holds a run of trial limits against the prediction from those before it", () => {
-    const [phase] = chartPhases([{ values: [40, 40.2, 39.9, 40.1, 43] }]);
-    expect(phase?.out).toEqual([{ index: 4, reason: "outside the trial limits" }]);
   });
 });

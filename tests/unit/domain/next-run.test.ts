@@ -7,15 +7,34 @@ const runs = (...mounts: number[]) => mounts.map((mount) => ({ setSpeed: 1100, m
 describe("the next run", () => {
   it("is the baseline's first, then the entries' in order, then the baseline's last", () => {
     const subjects = (baseline: number[], one: number[], two: number[]) => [
-      { entryId: null, missing: runs(...baseline) },
-      { entryId: "one", missing: runs(...one) },
-      { entryId: "two", missing: runs(...two) },
+      { entryId: null, baselineUnitId: "unit", missing: runs(...baseline) },
+      { entryId: "one", baselineUnitId: null, missing: runs(...one) },
+      { entryId: "two", baselineUnitId: null, missing: runs(...two) },
     ];
-    expect(nextRun(subjects([1, 2], [1, 2], [1]))).toEqual({ entryId: null, setSpeed: 1100, mount: 1 });
-    expect(nextRun(subjects([2], [2], [1]))).toEqual({ entryId: "one", setSpeed: 1100, mount: 2 });
-    expect(nextRun(subjects([2], [], [1]))).toEqual({ entryId: "two", setSpeed: 1100, mount: 1 });
-    expect(nextRun(subjects([2], [], []))).toEqual({ entryId: null, setSpeed: 1100, mount: 2 });
+    expect(nextRun(subjects([1, 2], [1, 2], [1]))).toEqual({
+      entryId: null,
+      baselineUnitId: "unit",
+      setSpeed: 1100,
+      mount: 1,
+    });
+    expect(nextRun(subjects([2], [2], [1]))).toEqual({
+      entryId: "one",
+      baselineUnitId: null,
+      setSpeed: 1100,
+      mount: 2,
+    });
+    expect(nextRun(subjects([2], [], [1]))).toEqual({ entryId: "two", baselineUnitId: null, setSpeed: 1100, mount: 1 });
+    expect(nextRun(subjects([2], [], []))).toEqual({ entryId: null, baselineUnitId: "unit", setSpeed: 1100, mount: 2 });
     expect(nextRun(subjects([], [], []))).toBeUndefined();
+  });
+  it("goes to the other unit of a bridge between the baseline's first and last", () => {
+    const units = (own: number[], other: number[]) => [
+      { entryId: null, baselineUnitId: "own", missing: runs(...own) },
+      { entryId: null, baselineUnitId: "other", missing: runs(...other) },
+    ];
+    expect(nextRun(units([1, 2], [1]))).toMatchObject({ baselineUnitId: "own", mount: 1 });
+    expect(nextRun(units([2], [1]))).toMatchObject({ baselineUnitId: "other", mount: 1 });
+    expect(nextRun(units([2], []))).toMatchObject({ baselineUnitId: "own", mount: 2 });
   });
 });
 
