@@ -1,10 +1,10 @@
 import Link from "next/link";
-import type { ReactNode } from "react";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsColumn, BarsRow } from "@/components/ui/bars/bars-model";
 import { indexAddress, type IndexAnswer, type IndexItem, type IndexQuery } from "@/lib/contracts/index-query";
 import { entryToken } from "@/lib/domain/designs/entry-token";
 import type { IndexColumn, ListFacts } from "./columns";
+import { entryName, markedWords, nameWords, type Piece } from "./entry-name";
 import { PickSlot } from "./pick-slot";
 
 export type DesignTableProps = {
@@ -13,9 +13,6 @@ export type DesignTableProps = {
   columns: readonly IndexColumn[];
   distanceMm: number | undefined;
 };
-
-/** "Heronwing B". */
-export const entryName = ({ name, letter }: Pick<IndexItem, "name" | "letter">) => `${name} ${letter}`;
 
 function headOf(column: IndexColumn, facts: ListFacts, query: IndexQuery): BarsColumn {
   const now = query.sort === column.sort;
@@ -35,28 +32,9 @@ function headOf(column: IndexColumn, facts: ListFacts, query: IndexQuery): BarsC
   };
 }
 
-type Piece = { text: string; hit: boolean };
+type Marks = Readonly<Record<string, readonly Piece[] | undefined>>;
 
-/** The name with what was typed marked in it, where the search service found it there. */
-function nameWords(item: IndexItem, pieces: readonly Piece[] | undefined): ReactNode {
-  if (!pieces || pieces.map((piece) => piece.text).join("") !== item.name) return entryName(item);
-  return (
-    <>
-      {pieces.map(({ text, hit }, index) =>
-        hit ? (
-          <mark key={index} className="bg-transparent text-inherit decoration-4">
-            {text}
-          </mark>
-        ) : (
-          text
-        ),
-      )}{" "}
-      {item.letter}
-    </>
-  );
-}
-
-function rowOf(item: IndexItem, columns: readonly IndexColumn[], pieces: readonly Piece[] | undefined): BarsRow {
+function rowOf(item: IndexItem, columns: readonly IndexColumn[], marks: Marks): BarsRow {
   const name = entryName(item);
   const token = entryToken(item);
   return {
@@ -67,13 +45,17 @@ function rowOf(item: IndexItem, columns: readonly IndexColumn[], pieces: readonl
         words: (
           <>
             <Link href={`/designs/${item.slug}`} className="sm:whitespace-nowrap">
-              {nameWords(item, pieces)}
+              {nameWords(item, marks.name)}
             </Link>
             {item.corrections > 0 ? <span className="small-print"> corrected</span> : null}
           </>
         ),
       },
       ...Object.fromEntries(columns.map((column) => [column.key, column.cell(item)])),
+      ...(marks.designer &&
+        columns.some(({ key }) => key === "designer") && {
+          designer: { words: markedWords(item.designers.join(", "), marks.designer) },
+        }),
     },
   };
 }
@@ -99,7 +81,7 @@ export function DesignTable({ answer, query, columns, distanceMm }: DesignTableP
         name,
         ...columns.map((column) => headOf(column, facts, query)),
       ]}
-      rows={answer.items.map((item) => rowOf(item, columns, answer.highlights?.[item.entryId]?.name))}
+      rows={answer.items.map((item) => rowOf(item, columns, answer.highlights?.[item.entryId] ?? {}))}
     />
   );
 }

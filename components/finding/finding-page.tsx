@@ -1,3 +1,5 @@
+import type { ReactNode } from "react";
+import type { DrawnTraitsAnswer } from "@/lib/contracts/compare";
 import { ClipBar } from "@/components/shell/clip-bar";
 import { LinkButton } from "@/components/ui/button";
 import { Pager } from "@/components/ui/pager";
@@ -16,6 +18,11 @@ import { columnWords, offeredColumns, shownColumns } from "./columns";
 import { ColumnsForm } from "./columns-form";
 import { ComparableNote } from "./comparable-note";
 import { DesignTable } from "./design-table";
+import { DrawingGrid } from "./drawing-grid";
+import { LimitedNotice } from "./limited-notice";
+import { sortChoices } from "./sort-choices";
+import { SortForm } from "./sort-form";
+import { ViewSwitch } from "./view-switch";
 import { KeepClips } from "./keep-clips";
 import { paramsWithout, sentenceNames } from "./address-parts";
 import { furtherParts, sentencePieces } from "./sentence-pieces";
@@ -29,10 +36,15 @@ export type FindingPageProps = {
   distanceMm: number | undefined;
   clipNames: Readonly<Record<string, string>>;
   open: string | undefined;
+  /** What is drawn in the drawings' view, by entry id. */
+  drawings: Readonly<Record<string, DrawnTraitsAnswer>>;
+  /** What saves the search as it stands. */
+  saver?: ReactNode;
 };
 
 /** The index: the sentence, the list that fits it on bars, and what is clipped. */
-export function FindingPage({ asked, answer, seasonTitles, distanceMm, clipNames, open }: FindingPageProps) {
+export function FindingPage(props: FindingPageProps) {
+  const { asked, answer, seasonTitles, distanceMm, clipNames, open, drawings, saver } = props;
   const query = settledQuery(asked, answer.comparableOnly);
   const input = { query, answer, seasonTitles, open };
   const offered = offeredColumns(answer.comparableOnly, (answer.histograms["loudness"] ?? []).length > 0);
@@ -64,12 +76,27 @@ export function FindingPage({ asked, answer, seasonTitles, distanceMm, clipNames
         />
       </Section>
       <Section id="list">
+        {answer.from === "database" ? <LimitedNotice query={query} /> : null}
         <ComparableNote answer={answer} asked={asked} />
+        {answer.items.length > 0 ? (
+          <div className="screen-only mb-4 flex flex-wrap items-end justify-between gap-x-8 gap-y-2">
+            <SortForm
+              choices={sortChoices(offered, distanceMm)}
+              now={`${query.descending ? "-" : ""}${query.sort}`}
+              kept={paramsWithout(asked, ["sort", "page"])}
+            />
+            <ViewSwitch asked={asked} />
+          </div>
+        ) : null}
         {answer.items.length === 0 ? (
           <NothingFits answer={answer} query={query} />
         ) : (
           <form action="/compare" method="get" aria-label="Entries to lay over the baseline">
-            <DesignTable answer={answer} query={query} columns={columns} distanceMm={distanceMm} />
+            {query.view === "drawings" ? (
+              <DrawingGrid items={answer.items} drawings={drawings} names={namesMarked(answer)} />
+            ) : (
+              <DesignTable answer={answer} query={query} columns={columns} distanceMm={distanceMm} />
+            )}
             <noscript>
               <button type="submit" className="button button-solid mt-3">
                 Lay over the baseline
@@ -85,17 +112,23 @@ export function FindingPage({ asked, answer, seasonTitles, distanceMm, clipNames
             nextHref={query.page < answer.pages ? pageHref(query.page + 1) : undefined}
           />
         ) : null}
-        <ColumnsForm
-          options={offered.map((column) => ({ key: column.key, label: columnWords(column, distanceMm) }))}
-          shown={columns.map((column) => column.key)}
-          kept={paramsWithout(asked, ["columns"])}
-        />
+        {query.view === "table" ? (
+          <ColumnsForm
+            options={offered.map((column) => ({ key: column.key, label: columnWords(column, distanceMm) }))}
+            shown={columns.map((column) => column.key)}
+            kept={paramsWithout(asked, ["columns"])}
+          />
+        ) : null}
+        {saver}
       </Section>
       <KeepClips />
       <ClipBar names={clipNames} />
     </>
   );
 }
+
+const namesMarked = ({ highlights = {} }: IndexAnswer) =>
+  Object.fromEntries(Object.entries(highlights).map(([entryId, fields]) => [entryId, fields.name]));
 
 function NothingFits({ answer, query }: { answer: IndexAnswer; query: IndexQuery }) {
   if (answer.total > 0) {

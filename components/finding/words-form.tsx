@@ -2,7 +2,7 @@
 
 import Link from "next/link";
 import { useRouter } from "next/navigation";
-import { useTransition, type FormEvent } from "react";
+import { useTransition, type FormEvent, type KeyboardEvent } from "react";
 import { Button } from "@/components/ui/button";
 
 export type WordsFormProps = {
@@ -11,6 +11,16 @@ export type WordsFormProps = {
   kept: readonly (readonly [string, string])[];
   withoutHref: string;
 };
+
+/** Down goes from the words into the list, Escape leaves them. */
+function intoList(event: KeyboardEvent<HTMLInputElement>): void {
+  if (event.key === "Escape" && event.currentTarget.value === "") event.currentTarget.blur();
+  if (event.key !== "ArrowDown") return;
+  const first = document.querySelector<HTMLElement>("#list tbody th a, #list [data-stop] a");
+  if (!first) return;
+  event.preventDefault();
+  first.focus();
+}
 
 /** Words to look for among what the sentence leaves. A plain form; where scripts run the list is changed in place. */
 export function WordsForm({ q, kept, withoutHref }: WordsFormProps) {
@@ -44,7 +54,16 @@ export function WordsForm({ q, kept, withoutHref }: WordsFormProps) {
           Words in name, designer or material
         </label>
         <span className="blank">
-          <input key={q} id="index-words" name="q" type="search" defaultValue={q} maxLength={200} autoComplete="off" />
+          <input
+            key={q}
+            id="index-words"
+            name="q"
+            type="search"
+            defaultValue={q}
+            maxLength={200}
+            autoComplete="off"
+            onKeyDown={intoList}
+          />
         </span>
       </div>
       <Button type="submit" small busy={pending}>

@@ -1,5 +1,10 @@
 import type { Metadata } from "next";
 import { FindingPage } from "@/components/finding/finding-page";
+import { searchName } from "@/components/finding/search-name";
+import { SaveSearch } from "@/components/saved/save-search";
+import { actorFromPage } from "@/lib/auth/actor";
+import { isPerson } from "@/lib/domain/accounts/actor";
+import { readSearches } from "@/lib/server/saved/searches";
 import { indexAddress, parseIndexQuery } from "@/lib/contracts/index-query";
 import { readIndex } from "@/lib/server/reading/read-index";
 
@@ -28,6 +33,15 @@ export default async function DesignsPage(asked: Asked) {
     .getAll("clip")
     .flatMap((list) => list.split(","))
     .slice(0, 8);
-  const read = await readIndex({ query, clips });
-  return <FindingPage {...read} asked={query} open={params.getAll("open").at(-1)} />;
+  const [read, actor] = await Promise.all([readIndex({ query, clips }), actorFromPage()]);
+  const saved = isPerson(actor) ? (await readSearches(actor)).items : null;
+  const address = indexAddress({ ...query, page: 1 });
+  return (
+    <FindingPage
+      {...read}
+      asked={query}
+      open={params.getAll("open").at(-1)}
+      saver={<SaveSearch saved={saved} address={address} name={searchName(query, read.seasonTitles)} />}
+    />
+  );
 }
