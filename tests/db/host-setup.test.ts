@@ -12,6 +12,7 @@ import { readHostRound } from "@/lib/server/seasons/read-round";
 import { addRoundEntries, planRound } from "@/lib/server/seasons/rounds";
 import { changeSeason, makeSeason, moveSeason, readHostSeason } from "@/lib/server/seasons/seasons";
 import { makePerson } from "../factories/people";
+import { qualifyBench } from "../factories/qualify-bench";
 import { setUpDatabase } from "../setup/database";
 
 const db = setUpDatabase();
@@ -20,6 +21,7 @@ let host: { actor: Person; requestId: null };
 let designer: { actor: Person; requestId: null };
 let season: ReturnType<typeof newSeason.parse>;
 let frameId: string;
+let positionId: string;
 
 beforeAll(async () => {
   host = { actor: await makePerson(db.owner, "keeper", "host"), requestId: null };
@@ -101,10 +103,10 @@ it("an empty database becomes a bench with protocol, baseline and budget by what
   ]);
   await benches.addBudgetPart(host, { budgetId: budget.id, part: part("level_dba", "dB") });
   await benches.addBudgetPart(host, { budgetId: budget.id, part: part("delta_t_k", "K") });
-  await benches.addPosition(host, {
+  ({ id: positionId } = await benches.addPosition(host, {
     benchVersionId: version.id,
     position: { name: "on axis", distanceMm: 100, angleDeg: 0 },
-  });
+  }));
 });
 
 describe("a season", () => {
@@ -127,6 +129,18 @@ describe("a season", () => {
     await expect(addRevision(designer, { slug, revision })).rejects.toMatchObject({ code: "moved_on" });
     const send = { slug, letter: "A", seasonId, at };
     await expect(sendIn(designer, send)).rejects.toThrow("takes no entries");
+    await expect(moveSeason(host, { seasonId, to: "opened", at })).rejects.toMatchObject({
+      code: "moved_on",
+      detail: expect.stringMatching(/North bench, version 1 is not qualified at 900, 1400 rpm.*10 baseline remounts/),
+    });
+    await qualifyBench({
+      by: host.actor,
+      ...season,
+      positionId,
+      setSpeeds: [900, 1400],
+      reads: ({ mount, setSpeed }) => ({ levelDba: setSpeed / 30 + (mount % 2) / 20, deltaTK: 60 - setSpeed / 100 }),
+      at,
+    });
     await moveSeason(host, { seasonId, to: "opened", at });
     await expect(sendIn(host, send)).rejects.toMatchObject({ code: "not_found" });
     ({ entryId } = await sendIn(designer, send));

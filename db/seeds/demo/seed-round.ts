@@ -3,7 +3,7 @@ import { v7 as uuidv7 } from "uuid";
 import type { Random } from "@/lib/science/statistics/random";
 import type { DemoBench } from "./seed-bench";
 import type { DemoSeason } from "./seed-seasons";
-import { seedSession, type DemoSubject } from "./seed-session";
+import { seedSession, type DemoSession, type DemoSubject } from "./seed-session";
 import type { DemoRevision, DemoRound } from "./world";
 
 export interface DemoRoundIds {
@@ -50,7 +50,9 @@ async function moveEntries(db: Knex, entries: readonly { id: string; owner: stri
 
 /**
  * Brings a round as far as its measurements go: entries sent in, accepted, printed, spun up, measured in sessions of
- * five, and put to review; the last session also runs `bridgeUnitId` where one is given. In a round that is being measured the last session stays open and its entries on the bench.
+ * five, and put to review; the last session also runs `bridgeUnitId` where one is given, and `shiftOf` says what had
+ * changed at the bench by a session, counted from 1. In a round that is being measured the last session stays open and
+ * its entries on the bench.
  */
 export async function seedRound(
   db: Knex,
@@ -59,7 +61,7 @@ export async function seedRound(
   cast: DemoCast,
   season: DemoSeason,
   round: DemoRound,
-  bridgeUnitId?: string,
+  { bridgeUnitId, shiftOf }: { bridgeUnitId?: string; shiftOf?: (session: number) => DemoSession["shift"] } = {},
 ): Promise<DemoRoundIds> {
   const host = id(cast.people, "alderkeeper");
   const operator = id(cast.people, "benchwright");
@@ -154,6 +156,7 @@ export async function seedRound(
         beganAt,
         subjects,
         closed,
+        shift: shiftOf?.(1 + from / entriesPerSession),
         bridgeUnitId: last ? bridgeUnitId : undefined,
       }),
     );

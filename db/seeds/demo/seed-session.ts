@@ -17,18 +17,22 @@ export interface DemoSubject {
 
 export interface DemoSession {
   season: DemoSeason;
-  roundId: string;
+  /** Null for a qualification: ten mounts of the baseline and nothing else. */
+  roundId: string | null;
   operatorId: string;
   beganAt: Date;
   subjects: readonly DemoSubject[];
   /** Another baseline unit that runs as well, before the last mount of the session's own. */
   bridgeUnitId?: string;
+  /** What changed at the bench, in everything read in the session: levels in dB, ΔT/P in K/W. */
+  shift?: { levelDb: number; resistanceKpw: number };
   /** False leaves the session open, with the baseline's last mount still to come. */
   closed: boolean;
 }
 
 const setSpeeds = [750, 1100, 1450, 1800];
 const mounts = 3;
+const qualifyingMounts = 10;
 const bridgeSeed = 7_002;
 /** The mount whose runs have a spectrum, at each set speed. */
 const spectraMount = 1;
@@ -46,6 +50,7 @@ interface Circumstances {
   operatorId: string;
   positions: readonly { id: string; name: string }[];
   levelOffsetDb: number;
+  resistanceShiftKpw: number;
   deltaTOffsetK: number;
   ambientC: number;
   minute: number;
@@ -99,7 +104,8 @@ function measureMount(random: Random, c: Circumstances, subject: DemoSubject, mo
     c.ambientC += 0.02 * random.normal();
     const speedRpm = Math.round(setSpeed * (1 + 0.002 * random.normal()));
     const powerW = round1(150 + 0.15 * random.normal());
-    const deltaTK = powerW * resistanceKPerW(subject.fan, speedRpm) + c.deltaTOffsetK + mountK + 0.08 * random.normal();
+    const resistance = resistanceKPerW(subject.fan, speedRpm) + c.resistanceShiftKpw;
+    const deltaTK = powerW * resistance + c.deltaTOffsetK + mountK + 0.08 * random.normal();
     const ambientC = round1(c.ambientC);
     draft.runs.push({
       id: runId,
@@ -185,7 +191,8 @@ async function insertChecks(db: Knex, random: Random, c: Circumstances, phase: "
 
 /**
  * A sitting at the bench: calibrator and background, the baseline's first two mounts, three mounts of each subject, the
- * baseline's last mount, calibrator and background again. @returns the session's id
+ * baseline's last mount, calibrator and background again. A qualification is ten mounts of the baseline. @returns the
+ * session's id
  */
 export async function seedSession(db: Knex, random: Random, bench: DemoBench, session: DemoSession): Promise<string> {
   const version = bench.versions[session.season.benchIndex];
@@ -199,6 +206,7 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
     budget_version_id: version.budgetId,
     baseline_unit_id: session.season.baselineUnitId,
     round_id: session.roundId,
+    purpose: session.roundId === null ? "qualification" : "round",
     operator_id: session.operatorId,
     began_at: session.beganAt,
     checklist: { guard: true, cut_out: true, ear_protection: true, paste: true },
@@ -207,7 +215,8 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
     sessionId,
     operatorId: session.operatorId,
     positions: version.positions,
-    levelOffsetDb: 0.2 * random.normal(),
+    levelOffsetDb: 0.2 * random.normal() + (session.shift?.levelDb ?? 0),
+    resistanceShiftKpw: session.shift?.resistanceKpw ?? 0,
     deltaTOffsetK: 0.1 * random.normal(),
     ambientC: 21.5 + random.uniform() * 2,
     minute: 5,
@@ -221,7 +230,8 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
   await insertChecks(db, random, c, "before");
   const draft: Draft = { runs: [], speeds: [], readings: [], spectra: [] };
   const baseline: DemoSubject = { fan: referenceFan, baselineUnitId: session.season.baselineUnitId };
-  for (const mount of [1, 2]) measureMount(random, c, baseline, mount, draft);
+  const first = session.roundId === null ? qualifyingMounts : 2;
+  for (let mount = 1; mount <= first; mount += 1) measureMount(random, c, baseline, mount, draft);
   for (const subject of session.subjects)
     for (let mount = 1; mount <= mounts; mount += 1) measureMount(random, c, subject, mount, draft);
   if (session.bridgeUnitId) {
@@ -230,7 +240,7 @@ export async function seedSession(db: Knex, random: Random, bench: DemoBench, se
     const aside = createRandom(bridgeSeed);
     for (let mount = 1; mount <= mounts; mount += 1) measureMount(aside, c, bridge, mount, draft);
   }
-  if (session.closed) measureMount(random, c, baseline, 3, draft);
+  if (session.closed && session.roundId !== null) measureMount(random, c, baseline, 3, draft);
   await insertDraft(db, draft);
   if (session.closed) {
     await insertChecks(db, random, c, "after");

@@ -1,19 +1,21 @@
 import { hash } from "@node-rs/argon2";
 import type { Handle } from "@/db/client/connect";
+import { shiftAt } from "@/db/seeds/demo/bench-story";
 import { seedBench } from "@/db/seeds/demo/seed-bench";
 import { seedDesigns } from "@/db/seeds/demo/seed-designs";
 import { demoPassword, seedPeople } from "@/db/seeds/demo/seed-people";
 import { seedRound, type DemoRoundIds } from "@/db/seeds/demo/seed-round";
-import { demoLevelsDba, seedSeasons } from "@/db/seeds/demo/seed-seasons";
+import { seedSeasons } from "@/db/seeds/demo/seed-seasons";
 import { drawWorld, type DemoSize } from "@/db/seeds/demo/world";
 import { setPublishAt } from "@/db/queries/schedule";
 import { moveRound } from "@/db/queries/moves";
 import type { Person } from "@/lib/domain/accounts/actor";
 import { createRandom } from "@/lib/science/statistics/random";
+import { bridgeSession } from "@/lib/server/baselines/settle-session";
 import { publishRound } from "@/lib/server/publishing/publish-round";
 import { computeSession } from "@/lib/server/results/compute-session";
 import { signRound } from "@/lib/server/review/sign-round";
-import { agreeBaselineValues, bridgeBaselines } from "./seed-baselines";
+import { chartDemoSession, qualifyDemoBench } from "./seed-control";
 
 const worldSeed = 20_240;
 const benchSeed = 7_001;
@@ -37,24 +39,31 @@ export async function seedDemo(db: Handle, size: DemoSize = demoSize): Promise<v
   const random = createRandom(benchSeed);
   const reviewer = actorOf(people, "secondlook", "operator");
   const host = actorOf(people, "alderkeeper", "host");
-  const agreed = new Set<string>();
+  const qualified = new Set<string>();
   for (const round of world.rounds) {
     const season = seasons[round.season - 1];
     if (!season) throw new Error(`the demo has no season ${round.season}`);
     const isLast = world.rounds.findLast((each) => each.season === round.season) === round;
     const nextUnitId = seasons[round.season]?.baselineUnitId;
     const bridgeUnitId = isLast && nextUnitId !== season.baselineUnitId ? nextUnitId : undefined;
-    const made = await seedRound(db, random, bench, { people, revisions }, season, round, bridgeUnitId);
-    for (const sessionId of made.sessionIds) await computeSession(db, sessionId);
+    const operatorId = people.get("benchwright") ?? "";
+    const ran = `${season.baselineUnitId} ${season.benchIndex}`;
+    if (!qualified.has(ran)) await qualifyDemoBench(db, { bench, season, operatorId, host, second: reviewer });
+    qualified.add(ran);
+    const where = { season: round.season, round: round.number };
+    const shiftOf = (session: number) => shiftAt({ ...where, session });
+    const made = await seedRound(db, random, bench, { people, revisions }, season, round, { bridgeUnitId, shiftOf });
+    for (const [i, sessionId] of made.sessionIds.entries()) {
+      await computeSession(db, sessionId);
+      const at = { ...where, session: i + 1 };
+      await chartDemoSession(db, { sessionId, where: at, host, second: reviewer });
+    }
     if (round.ends !== "published") continue;
     await signAndPublish(db, made, reviewer, host);
     const at = new Date(made.measuredAt.getTime() + publishedAfterDays * day);
-    const ran = `${season.baselineUnitId} ${season.benchIndex}`;
-    if (!agreed.has(ran)) await agreeBaselineValues(db, made.sessionIds, at);
-    agreed.add(ran);
     const lastSession = made.sessionIds.at(-1);
     if (bridgeUnitId && lastSession) {
-      await bridgeBaselines(db, { sessionId: lastSession, toUnitId: bridgeUnitId, levelsDba: demoLevelsDba, at });
+      await bridgeSession(db, { sessionId: lastSession, toUnitId: bridgeUnitId, at });
     }
   }
 }

@@ -29,10 +29,11 @@ export async function documentChange(
     allUnits,
     at,
   }: { benchVersionId: string; at: Date } & DocumentedChange,
+  db: Handle = appDb(),
 ): Promise<{ breakId: string; released: number[] }> {
   demand(asked.actor, "bench.manage");
   const { actor } = asked;
-  return appDb().transaction(async (tx) => {
+  return db.transaction(async (tx) => {
     const session = await sessionHead(tx, { sessionId: fromSessionId, lock: true });
     if (!session || session.benchVersionId !== benchVersionId) {
       throw new ExpectedError("malformed", "The change counts from a session of this bench version.", [

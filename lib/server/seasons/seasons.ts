@@ -16,6 +16,7 @@ import type { HostSeason, NewSeason, SeasonChange } from "@/lib/contracts/season
 import type { Actor } from "@/lib/domain/accounts/actor";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
+import { unqualifiedBenches } from "../baselines/settle-session";
 import { demand } from "../permission";
 
 const iso = (moment: Date | null): string | null => moment?.toISOString() ?? null;
@@ -120,7 +121,10 @@ function frozenParts(before: HostSeasonRow, season: SeasonChange): string[] {
   return parts.flatMap(([name, same]) => (same ? [] : [name]));
 }
 
-/** Opens a season, which is public from then on, or closes it. */
+/**
+ * Opens a season, which is public from then on, or closes it. It doesn't open on a bench that isn't qualified at every
+ * set speed of its protocol.
+ */
 export async function moveSeason(
   asked: Asked,
   { seasonId, to, at }: { seasonId: string; to: "opened" | "closed"; at: Date },
@@ -132,6 +136,8 @@ export async function moveSeason(
     if (to === "opened" && season.openedAt) throw new ExpectedError("moved_on", "The season is open already.");
     if (to === "closed" && !season.openedAt) throw new ExpectedError("moved_on", "The season was never opened.");
     if (to === "closed" && season.closedAt) throw new ExpectedError("moved_on", "The season is closed already.");
+    const unqualified = to === "opened" ? await unqualifiedBenches(tx, { seasonId }) : [];
+    if (unqualified.length > 0) throw new ExpectedError("moved_on", unqualified.join(" "));
     await stampSeason(tx, { seasonId, what: to, at });
     await note(tx, asked, { action: `season.${to}`, subjectKind: "season", subjectId: seasonId });
   });
