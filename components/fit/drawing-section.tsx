@@ -1,13 +1,18 @@
 import { FanDrawingView } from "@/components/drawing/fan-drawing-view";
+import { TurnView } from "@/components/turn/turn-view";
 import { buttonClass } from "@/components/ui/button-class";
 import { Section } from "@/components/ui/sheet";
 import { LoadingState } from "@/components/ui/states";
-import type { ModelState } from "@/lib/client/fit/use-model-reading";
+import type { ModelReadingActs, ModelState } from "@/lib/client/fit/use-model-reading";
 
-export type DrawingSectionProps = { name: string; drawn: Extract<ModelState, { step: "measured" }>["drawn"] };
+export type DrawingSectionProps = {
+  name: string;
+  drawn: Extract<ModelState, { step: "measured" }>["drawn"];
+  turn: ModelReadingActs["turn"];
+};
 
 /** The model as a line drawing with dimensions, to look at and to take along. */
-export function DrawingSection({ name, drawn }: DrawingSectionProps) {
+export function DrawingSection({ name, drawn, turn }: DrawingSectionProps) {
   const base = name.replace(/\.[^.]*$/, "");
   return (
     <Section
@@ -26,7 +31,14 @@ export function DrawingSection({ name, drawn }: DrawingSectionProps) {
         ) : null
       }
     >
-      {drawn ? <FanDrawingView drawing={drawn.drawing} /> : <LoadingState label="Drawing" />}
+      {drawn ? (
+        <div className="grid gap-4">
+          <FanDrawingView drawing={drawn.drawing} />
+          <TurnView label={drawn.drawing.front.title} load={turn} />
+        </div>
+      ) : (
+        <LoadingState label="Drawing" />
+      )}
     </Section>
   );
 }

@@ -118,7 +118,9 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
           onChange={(part) => setChosen((before) => ({ ...before, ...part }))}
         />
       </Section>
-      {state.step === "measured" ? <FitResults state={state} limits={limits} chosen={chosen} /> : null}
+      {state.step === "measured" ? (
+        <FitResults state={state} limits={limits} chosen={chosen} turn={reading.turn} />
+      ) : null}
     </>
   );
 }

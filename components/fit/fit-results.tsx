@@ -1,5 +1,5 @@
 import type { FitLimits } from "@/lib/contracts/fit-limits";
-import type { ModelState } from "@/lib/client/fit/use-model-reading";
+import type { ModelReadingActs, ModelState } from "@/lib/client/fit/use-model-reading";
 import { BalanceSection } from "./balance-section";
 import type { CompareWith } from "./compare-fields";
 import { CrossingsSection } from "./crossings-section";
@@ -12,10 +12,11 @@ export type FitResultsProps = {
   state: Extract<ModelState, { step: "measured" }>;
   limits: FitLimits;
   chosen: CompareWith;
+  turn: ModelReadingActs["turn"];
 };
 
 /** Everything read off a model, piece by piece. */
-export function FitResults({ state, limits, chosen }: FitResultsProps) {
+export function FitResults({ state, limits, chosen, turn }: FitResultsProps) {
   const { model, measured } = state;
   const frame = limits.frames.find((each) => each.key === chosen.frameKey);
   const season = limits.seasons.find((each) => each.slug === chosen.seasonSlug);
@@ -25,7 +26,7 @@ export function FitResults({ state, limits, chosen }: FitResultsProps) {
     <>
       <TraitsSection measured={measured} />
       {frame ? <FrameSection compared={state.compared} frame={frame} season={season} /> : null}
-      <DrawingSection name={model.name} drawn={state.drawn} />
+      <DrawingSection name={model.name} drawn={state.drawn} turn={turn} />
       {first && second ? (
         <CrossingsSection
           key={`${first.blades}-${second.blades}-${first.hand}-${second.hand}`}

@@ -1,4 +1,5 @@
 import { ClipBar } from "@/components/shell/clip-bar";
+import type { SheetDrawing } from "@/lib/contracts/drawing";
 import type { Sheet } from "@/lib/contracts/sheet";
 import { BudgetSection } from "./budget-section";
 import { CoolingSection } from "./cooling-section";
@@ -14,14 +15,21 @@ import { sheetNumber } from "./sheet-words";
 import { SpectrumSection, type SpectrumAsked } from "./spectrum-section";
 import { TakeOut } from "./take-out";
 
+export type SheetViewProps = {
+  sheet: Sheet;
+  /** Made from the mesh; null where none was read. */
+  drawn: SheetDrawing | null;
+  spectrum?: SpectrumAsked;
+};
+
 /** A design's sheet, piece by piece; a piece without data (spectrum, off axis, budget) is absent. */
-export function SheetView({ sheet, spectrum = {} }: { sheet: Sheet; spectrum?: SpectrumAsked }) {
+export function SheetView({ sheet, drawn, spectrum = {} }: SheetViewProps) {
   return (
     <article aria-labelledby="sheet-title">
       <SheetHead sheet={sheet} />
       <FourFigures sheet={sheet} />
       <CoolingSection sheet={sheet} />
-      <DrawingSection sheet={sheet} />
+      <DrawingSection sheet={sheet} drawn={drawn} />
       <ReadingsSection sheet={sheet} />
       <SpectrumSection sheet={sheet} asked={spectrum} />
       <OffAxis sheet={sheet} />

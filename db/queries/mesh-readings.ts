@@ -55,6 +55,17 @@ export async function modelFiles(
   return rows;
 }
 
+/** Where a model file is kept; undefined for one that is no mesh, or isn't there any more. */
+export async function storedModel(
+  db: Handle,
+  { fileId }: { fileId: string },
+): Promise<{ storageKey: string; bytes: number } | undefined> {
+  return db("file")
+    .where({ id: fileId, state: "read" })
+    .whereIn("kind", ["stl", "3mf"])
+    .first({ storageKey: "storage_key", bytes: "bytes" });
+}
+
 /** The newest reading of a revision's first model file that has one. */
 export async function readingOfRevision(
   db: Handle,

@@ -1,5 +1,5 @@
 import { closeDbs, ownerDb } from "@/db/client/handles";
-import { seedDemo } from "./demo/seed-demo";
+import { demoSize, seedDemo } from "./demo/seed-demo";
 
 /**
  * Fills the migrated, empty database of MIGRATE_DATABASE_URL with the demo and marks it. A process of its own, since it
@@ -7,7 +7,7 @@ import { seedDemo } from "./demo/seed-demo";
  */
 const owner = ownerDb();
 try {
-  await seedDemo(owner);
+  await seedDemo(owner, demoSize, true);
   await owner("demo_seed").insert({ version: 1 }).onConflict("only_one").ignore();
 } finally {
   await owner.destroy();

@@ -28,3 +28,11 @@ export type Thumbnail = z.infer<typeof thumbnailSchema>;
 /** What is kept of a mesh's drawing. */
 export const meshDrawing = z.object({ drawing: fanDrawingSchema, thumbnail: thumbnailSchema });
 export type MeshDrawing = z.infer<typeof meshDrawing>;
+
+/** A public entry's drawing with the model file that it is made of, which everybody may take. */
+export interface SheetDrawing {
+  readonly drawing: StoredFanDrawing;
+  readonly thumbnail: Thumbnail;
+  readonly readerVersion: string;
+  readonly model: { readonly attachmentId: string; readonly name: string; readonly bytes: number };
+}

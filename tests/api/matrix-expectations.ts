@@ -166,6 +166,10 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "GET /api/v1/traits": { path: () => "/api/v1/traits?trait=blades&by=inlet", expected: all(200) },
   "GET /api/v1/traits/csv": { path: () => "/api/v1/traits/csv?table=pairs", expected: all(200) },
   "PAGE /traits": { expected: all(200) },
+  "GET /api/v1/sheets/[slug]/picture.png": {
+    path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/picture.png`,
+    expected: all(200),
+  },
   "GET /api/v1/seasons": { expected: all(200) },
   "GET /api/v1/seasons/[slug]": { path: ({ seasonSlug }) => `/api/v1/seasons/${seasonSlug}`, expected: all(200) },
   "GET /api/v1/seasons/[slug]/kit": { path: kit(""), expected: all(200) },
@@ -494,6 +498,7 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   "PAGE /host/entries": { expected: asPage(hostOnly(200)) },
   "PAGE /host/benches": { expected: asPage(hostOnly(200)) },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/audit": { expected: asPage(hostOnly(200)) },
   "PAGE /bench": { expected: asPage(staff(200)) },
   "PAGE /bench/prints": { expected: asPage(staff(200)) },
   "PAGE /bench/sessions/[id]": {

@@ -9,6 +9,7 @@ import { seedSeasons } from "@/db/seeds/demo/seed-seasons";
 import { drawWorld, type DemoSize } from "@/db/seeds/demo/world";
 import { setPublishAt } from "@/db/queries/schedule";
 import { moveRound } from "@/db/queries/moves";
+import { seedFiles } from "./seed-files";
 import type { Person } from "@/lib/domain/accounts/actor";
 import { createRandom } from "@/lib/science/statistics/random";
 import { bridgeSession } from "@/lib/server/baselines/settle-session";
@@ -28,13 +29,15 @@ export const demoSize: DemoSize = { seasons: 4, roundsPerSeason: 6, entriesPerRo
 
 /**
  * Fills an empty, migrated database with the Alder Bench: raw readings from the toy model, and from there on the same
- * computing, signing and publishing as for everybody. The same size gives the same figures.
+ * computing, signing and publishing as for everybody. The same size gives the same figures. With files, some designs
+ * have models in the storage, and jobs wait to read them.
  */
-export async function seedDemo(db: Handle, size: DemoSize = demoSize): Promise<void> {
+export async function seedDemo(db: Handle, size: DemoSize = demoSize, withFiles = false): Promise<void> {
   const world = drawWorld(worldSeed, size);
   const people = await seedPeople(db, await hash(demoPassword));
   const bench = await seedBench(db);
   const revisions = await seedDesigns(db, world.designs, people, bench.frames);
+  if (withFiles) await seedFiles(db, world.designs, revisions, people, bench);
   const seasons = await seedSeasons(db, bench, size.seasons);
   const random = createRandom(benchSeed);
   const reviewer = actorOf(people, "secondlook", "operator");

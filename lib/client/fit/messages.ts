@@ -1,4 +1,5 @@
 import type { MeshAnalysis, RotorTraits } from "@/lib/science/geometry/analysis-types";
+import type { Turnable } from "@/lib/science/geometry/drawing/turnable";
 import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import type { ModelFormat } from "@/lib/science/geometry/model-file";
 import type { MeshWarning } from "@/lib/science/geometry/reading";
@@ -31,6 +32,8 @@ export type ModelMeasured = Omit<MeshAnalysis, "mesh">;
 export type WorkerRequest =
   | { readonly kind: "read"; readonly job: number; readonly file: File }
   | { readonly kind: "measure"; readonly job: number; readonly mmPerUnit: number }
+  /** Ready to be turned in 3D: the model that was measured, or a file. */
+  | { readonly kind: "turn"; readonly job: number; readonly file?: File }
   /** Against a frame, a season and its bench; only once the model is measured. */
   | { readonly kind: "compare"; readonly job: number; readonly ask: number; readonly around: Surroundings };
 
@@ -49,4 +52,5 @@ export type WorkerAnswer =
       readonly ask: number;
       readonly comparison: Comparison | undefined;
     }
+  | { readonly kind: "turnable"; readonly job: number; readonly model: Turnable }
   | { readonly kind: "refused"; readonly job: number; readonly code: string; readonly message: string };

@@ -3,6 +3,7 @@
 import type { FanDrawing } from "@/lib/science/geometry/drawing/drawn-view";
 import { useCallback, useEffect, useRef, useState } from "react";
 import type { Comparison, Surroundings } from "./compare-model";
+import { makeMeshWorker, type Turnable } from "./turnable";
 import type { ModelFile, ModelMeasured, WorkerAnswer, WorkerRequest } from "./messages";
 
 /** Where the reading of a model stands. */
@@ -38,9 +39,9 @@ export interface ModelReadingActs {
   cancel(): void;
   /** Compares the measured model; the answer comes as the state's `compared`. The latest question counts. */
   compare(around: Surroundings): void;
+  /** The measured model, ready to be turned in 3D. */
+  turn(): Promise<Turnable>;
 }
-
-const makeWorker = (): Worker => new Worker(new URL("../workers/mesh-reader.worker.ts", import.meta.url));
 
 /** Reads model files in a web worker of this page. It is started with the page, so that later nothing is fetched. */
 export function useModelReading(): ModelReadingActs {
@@ -49,6 +50,7 @@ export function useModelReading(): ModelReadingActs {
   const worker = useRef<Worker | undefined>(undefined);
   const job = useRef(0);
   const ask = useRef(0);
+  const turned = useRef<((model: Turnable) => void) | undefined>(undefined);
   const unit = useRef<number | undefined>(undefined);
   const now = useRef(state);
   const go = useCallback((next: ModelState) => {
@@ -101,6 +103,7 @@ export function useModelReading(): ModelReadingActs {
       if (message.kind === "compared" && at.step === "measured" && message.ask === ask.current) {
         go({ ...at, compared: { comparison: message.comparison } });
       }
+      if (message.kind === "turnable") turned.current?.(message.model);
       if (message.kind === "refused") {
         const name = "model" in at ? at.model.name : "name" in at ? at.name : "";
         go({ step: "refused", name, code: message.code, message: message.message });
@@ -111,7 +114,7 @@ export function useModelReading(): ModelReadingActs {
 
   const start = useCallback(() => {
     worker.current?.terminate();
-    worker.current = makeWorker();
+    worker.current = makeMeshWorker();
     worker.current.addEventListener("message", ({ data }: MessageEvent<WorkerAnswer>) => hear(data));
     worker.current.addEventListener("error", (event) => {
       hear({ kind: "refused", job: job.current, code: "failed", message: event.message || "The reader didn’t start." });
@@ -149,5 +152,14 @@ export function useModelReading(): ModelReadingActs {
     [send],
   );
 
-  return { state, ready, choose, measureIn, cancel, compare };
+  const turn = useCallback(
+    () =>
+      new Promise<Turnable>((resolve) => {
+        turned.current = resolve;
+        send({ kind: "turn", job: job.current });
+      }),
+    [send],
+  );
+
+  return { state, ready, choose, measureIn, cancel, compare, turn };
 }

@@ -2,6 +2,7 @@ import { compareModel, type Surroundings } from "@/lib/client/fit/compare-model"
 import { MEASURED_AT, type ModelMeasured, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
 import { fanDrawing } from "@/lib/science/geometry/drawing/fan-drawing";
+import { turnable } from "@/lib/science/geometry/drawing/turnable";
 import { drawingSvg } from "@/lib/science/geometry/drawing/svg-text";
 import { meshBounds, scaledMesh, type Mesh } from "@/lib/science/geometry/mesh";
 import { readModelFile } from "@/lib/science/geometry/model-file";
@@ -66,9 +67,19 @@ function compare(job: number, ask: number, around: Surroundings): void {
   answer({ kind: "compared", job, ask, comparison: compareModel(kept.judged.mesh, kept.judged.measured, around) });
 }
 
+async function turn(job: number, file: File | undefined): Promise<void> {
+  const mesh = file ? (await readModelFile(blobSource(file))).mesh : kept?.job === job ? kept.judged?.mesh : undefined;
+  if (!mesh) throw new Refusal("not-read", "The file is no longer there; choose it again.");
+  const model = turnable(mesh);
+  self.postMessage({ kind: "turnable", job, model } satisfies WorkerAnswer, {
+    transfer: [model.positions.buffer, model.triangles.buffer, model.edges.buffer],
+  });
+}
+
 async function work(request: WorkerRequest): Promise<void> {
   if (request.kind === "read") await read(request.job, request.file);
   if (request.kind === "measure") measure(request.job, request.mmPerUnit);
+  if (request.kind === "turn") await turn(request.job, request.file);
   if (request.kind === "compare") compare(request.job, request.ask, request.around);
 }
 

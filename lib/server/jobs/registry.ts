@@ -5,6 +5,7 @@ import { askForRebuild } from "@/db/queries/search-build";
 import { sweepThrottle } from "@/db/queries/throttle";
 import { readRecordingFile } from "../bench/read-recording";
 import { deliveryLoop } from "../deliveries/deliver";
+import { readStoredModel } from "../designs/read-stored-model";
 import { publishDueRounds } from "../publishing/schedule";
 import { compareIndex } from "../search/compare";
 import { runSearchSender } from "../search/sender";
@@ -27,6 +28,7 @@ interface Schedule<N extends QueueName> {
 /** What the worker does with each queue. A queue without a handler is left to another worker. */
 export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
   "file-read": ({ uploadId }) => readQuarantinedFile(uploadId, () => new Date()),
+  "model-read": ({ fileId }) => readStoredModel(fileId),
   "recording-read": ({ recordingId }) => readRecordingFile(recordingId, () => new Date()),
   "search-rebuild": () => askForRebuild(appDb()),
   "search-compare": async () => void (await compareIndex()),

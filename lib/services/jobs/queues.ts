@@ -12,6 +12,8 @@ interface QueueSettings {
 export const jobQueues = {
   /** A file in quarantine is hashed, read in bounded time and memory, and moved to its content address. */
   "file-read": { data: z.strictObject({ uploadId: z.uuid() }), retryLimit: 2, expireInSeconds: 300 },
+  /** A model that is kept already is read and drawn, in bounded time and memory. */
+  "model-read": { data: z.strictObject({ fileId: z.uuid() }), retryLimit: 2, expireInSeconds: 300 },
   /** A recording of the bench is read in a thread, in bounded time and memory. */
   "recording-read": { data: z.strictObject({ recordingId: z.uuid() }), retryLimit: 2, expireInSeconds: 300 },
   /** Publishes the rounds whose hour has come. Sent every minute by the clock. */

@@ -11,6 +11,9 @@ import { ExpectedError } from "@/lib/domain/expected-error";
 import { writeMeasured } from "@/lib/format/measured";
 import { formatLevel, formatLevelRange } from "@/lib/format/quantities";
 import { formatRank } from "@/lib/format/ranks";
+import { sharePictureAddress } from "@/lib/server/pictures/share-picture";
+import { SHARE_SIZE } from "@/lib/server/pictures/share-svg";
+import { readSheetDrawing } from "@/lib/server/reading/sheet-drawing";
 import { readSheetPage } from "@/lib/server/reading/sheet-page";
 
 type Found = { sheet: Sheet } | { gone: string };
@@ -50,10 +53,18 @@ export async function sheetMetadata(slug: string, entryId?: string, letter?: str
   const { sheet } = found;
   const title = `${sheet.name} ${sheet.letter}`;
   const description = inShort(sheet);
+  const picture = sharePictureAddress(sheet);
   return {
     title,
     description,
-    openGraph: { title, description, type: "article", siteName: "Fanfold" },
+    openGraph: {
+      title,
+      description,
+      type: "article",
+      siteName: "Fanfold",
+      images: [{ url: picture, ...SHARE_SIZE, alt: `${title}, the four figures and the fan from the front` }],
+    },
+    twitter: { card: "summary_large_image", images: [picture] },
     alternates: { canonical: `/designs/${sheet.slug}`, types: { "application/json": `/api/v1/sheets/${sheet.slug}` } },
   };
 }
@@ -71,7 +82,10 @@ export async function ShowSheet({
   spectrum?: SpectrumAsked;
 }) {
   const found = await findSheet(slug, entryId, letter);
-  if ("sheet" in found) return <SheetView sheet={found.sheet} spectrum={spectrum} />;
+  if ("sheet" in found) {
+    const drawn = await readSheetDrawing({ entryId: found.sheet.entryId });
+    return <SheetView sheet={found.sheet} drawn={drawn} spectrum={spectrum} />;
+  }
   return (
     <Section id="gone" title="This design was withdrawn" level={1}>
       <GoneState
