@@ -24,9 +24,8 @@ export type LogQuery = z.output<typeof logQuery>;
 
 const number = z.number().nullable();
 
-export const logAnswer = z.strictObject({
-  sha256: z.string(),
-  bytes: z.int(),
+/** What a log says, before it is kept: the same in the browser and from the server. */
+export const logPreview = z.strictObject({
   rows: z.int(),
   intervalS: number,
   columns: z.array(z.strictObject({ name: z.string(), quantity: z.string().nullable(), unit: z.string().nullable() })),
@@ -56,6 +55,12 @@ export const logAnswer = z.strictObject({
   level: z.strictObject({ laeqDba: number, sDb: number, n: z.int() }).nullable(),
   /** Why no reading comes of it, in words; null when one can be kept. */
   unusable: z.string().nullable(),
+});
+export type LogPreview = z.infer<typeof logPreview>;
+
+export const logAnswer = logPreview.extend({
+  sha256: z.string(),
+  bytes: z.int(),
   /** What was kept: the log's row also where no reading came of it. */
   logFileId: id.nullable(),
   readingIds: z.array(id),

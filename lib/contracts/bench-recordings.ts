@@ -44,6 +44,20 @@ export type NewRecording = z.output<typeof newRecording>;
 
 export const askedRecording = z.strictObject({ recordingId: id });
 
+const said = z.array(z.strictObject({ code: z.string(), message: z.string() }));
+const power = z.number();
+
+/** What later recordings read this one as: not rounded, so that a preview gives the server's digits. */
+export const givenRead = z.strictObject({
+  calibrator: z.strictObject({ unitLevelDb: z.number(), warnings: said }).nullable(),
+  background: z
+    .strictObject({
+      powers: z.strictObject({ z: power, c: power, a: power, bands: z.array(power.nullable()) }).nullable(),
+      warnings: said,
+    })
+    .nullable(),
+});
+
 /** One recording of a session: how far its reading is, what it says, whether it is kept and was listened to. */
 export const benchRecording = z.strictObject({
   id,
@@ -62,6 +76,7 @@ export const benchRecording = z.strictObject({
   refusal: z.strictObject({ code: z.string(), message: z.string(), at: z.string().nullable() }).nullable(),
   report: soundReport.nullable(),
   calibrator: calibratorReport.nullable(),
+  given: givenRead.nullable(),
   logFileId: id.nullable(),
   keptAt: time.nullable(),
   listenedBy: z.strictObject({ personId: id, handle: z.string().nullable() }).nullable(),
@@ -69,7 +84,23 @@ export const benchRecording = z.strictObject({
   createdAt: time,
 });
 export type BenchRecording = z.infer<typeof benchRecording>;
-export const benchRecordings = z.strictObject({ items: z.array(benchRecording) });
+
+/** What is known of a subject's rotors, which tones are predicted from. */
+export const recordingSubject = z.strictObject({
+  entryId: id,
+  /** Blades, rotor 1 first. */
+  blades: z.array(z.int()),
+  rotation: z.enum(["counter", "co"]).nullable(),
+  struts: z.int(),
+  inletStackMm: z.number(),
+});
+export type RecordingSubject = z.infer<typeof recordingSubject>;
+
+export const benchRecordings = z.strictObject({
+  items: z.array(benchRecording),
+  subjects: z.array(recordingSubject),
+});
+export type BenchRecordings = z.infer<typeof benchRecordings>;
 
 /** Keeps what was read, as readings; of a run, if it is still at `version`. */
 export const keepRecording = z.strictObject({ version: z.int().nullable().default(null) });

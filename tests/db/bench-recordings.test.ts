@@ -196,7 +196,8 @@ describe("a recording's bytes", () => {
     await tickListened(asked(room.second), { recordingId, now: later(10) });
     await tickListened(asked(room.operator), { recordingId, now: later(11) });
     expect((await findRecordingFile(room.host, { recordingId })).bytes).toBe(background.length);
-    const [said] = (await readRecordings(room.operator, { sessionId })).filter(({ id }) => id === recordingId);
+    const { items } = await readRecordings(room.operator, { sessionId });
+    const said = items.find(({ id }) => id === recordingId);
     expect(said).toMatchObject({ listenedBy: { personId: room.second.personId }, listenedAt: later(10).toISOString() });
     await expect(findRecordingFile(room.designer, { recordingId })).rejects.toMatchObject({ code: "forbidden" });
     const change = db

@@ -10,9 +10,15 @@ import {
   type RecordingAsked,
   type RecordingRow,
 } from "@/db/queries/recordings";
+import { rotorsOfRound } from "@/db/queries/bench-rotors";
 import { handlesOf } from "@/db/queries/people";
 import { uploadBy } from "@/db/queries/uploads";
-import { benchRecording, type BenchRecording, type NewRecording } from "@/lib/contracts/bench-recordings";
+import {
+  benchRecording,
+  type BenchRecording,
+  type BenchRecordings,
+  type NewRecording,
+} from "@/lib/contracts/bench-recordings";
 import type { Actor, Person } from "@/lib/domain/accounts/actor";
 import { passesOf, type RecordingCalibration } from "@/lib/domain/bench/read-recording";
 import { ExpectedError } from "@/lib/domain/expected-error";
@@ -183,10 +189,15 @@ export async function readRecording(actor: Actor, { recordingId }: { recordingId
   return view;
 }
 
-/** Recordings of a session, the oldest first. */
-export async function readRecordings(actor: Actor, { sessionId }: { sessionId: string }): Promise<BenchRecording[]> {
-  await demandBench(appDb(), { actor, requestId: null }, { sessionId });
-  return viewsOf(await recordingsOfSession(appDb(), { sessionId }));
+/** Recordings of a session, the oldest first, and what tones are predicted from: the rotors of its round's entries. */
+export async function readRecordings(actor: Actor, { sessionId }: { sessionId: string }): Promise<BenchRecordings> {
+  const { session } = await demandBench(appDb(), { actor, requestId: null }, { sessionId });
+  const { roundId } = session;
+  const [items, subjects] = await Promise.all([
+    recordingsOfSession(appDb(), { sessionId }).then(viewsOf),
+    roundId === null ? [] : rotorsOfRound(appDb(), { roundId }),
+  ]);
+  return { items, subjects };
 }
 
 async function viewsOf(rows: readonly RecordingRow[]): Promise<BenchRecording[]> {
@@ -200,6 +211,7 @@ async function viewsOf(rows: readonly RecordingRow[]): Promise<BenchRecording[]>
       ofBytes: passesOf(row.asked) * row.bytes,
       report: row.result?.report ?? null,
       calibrator: row.result?.calibrator ?? null,
+      given: row.result?.given ?? null,
       logFileId: row.logFileId,
       keptAt: row.keptAt?.toISOString() ?? null,
       listenedBy: row.listenedBy && { personId: row.listenedBy, handle: people.get(row.listenedBy) ?? null },

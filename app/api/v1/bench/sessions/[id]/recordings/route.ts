@@ -6,7 +6,7 @@ import { askRecording, readRecordings } from "@/lib/server/bench/recordings";
 
 /** Recordings of a session, each with how far its reading is. */
 export const GET = route({ access: "signed_in", params: idParams }, async ({ actor, params }) =>
-  benchRecordings.parse({ items: await readRecordings(actor, { sessionId: params.id }) }),
+  benchRecordings.parse(await readRecordings(actor, { sessionId: params.id })),
 );
 
 /** Asks for a recording that was sent to be read; a job reads it, so the answer is 202. */
