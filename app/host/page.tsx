@@ -36,6 +36,9 @@ export default async function HostPage() {
           <li>
             <Link href="/host/people">People</Link>
           </li>
+          <li>
+            <Link href="/host/audit">Audit log</Link>
+          </li>
         </ul>
       </Section>
       <Section id="rounds" title="Rounds before their hour">
