@@ -40,7 +40,10 @@ function AgreedTable({ group }: { group: Group }) {
         Unit {group.serial} on {group.bench}
       </h3>
       <p className="small-print mb-2">
-        Since {formatDate(first.from)}. {first.reason}
+        Since {formatDate(first.from)}. {first.reason}{" "}
+        {first.sessions.length > 0
+          ? `From ${first.sessions.length === 1 ? "session" : "sessions"} ${first.sessions.join(", ")}.`
+          : null}
       </p>
       <BarsTable
         caption={`Agreed values of unit ${group.serial} on ${group.bench}`}

@@ -15,6 +15,7 @@ export type ControlChartProps = {
   /** "Level at 1 450 rpm". */
   quantity: string;
   unit: string;
+  decimals?: number;
   caption?: ReactNode;
   summary?: string;
   fileName?: string;
@@ -29,9 +30,12 @@ function lineOf(points: readonly ControlPoint[], read: Read) {
 
 function controlData(points: readonly ControlPoint[], palette: Palette): Data {
   const bare = { showLine: true, pointRadius: 0, borderWidth: 1.25 };
+  const none: ControlPoint = { key: "", at: "", value: undefined };
+  const named = (read: Read) => read(points.at(-1) ?? none) !== undefined;
   const limit = (label: string | undefined, read: Read) => ({
     ...bare,
-    label,
+    // A line that has no end has no name there either.
+    label: named(read) ? label : undefined,
     borderColor: palette.soft,
     borderDash: [3, 3],
     stepped: "middle" as const,
@@ -46,7 +50,7 @@ function controlData(points: readonly ControlPoint[], palette: Palette): Data {
       { ...limit("centre", (point) => point.centre), borderDash: [] },
       {
         ...bare,
-        label: "weighted mean",
+        label: named((point) => point.ewma) ? "weighted mean" : undefined,
         borderColor: palette.leaf,
         borderWidth: 2.25,
         data: lineOf(points, (point) => point.ewma),
@@ -97,7 +101,7 @@ function breaks(points: readonly ControlPoint[], palette: Palette) {
 }
 
 /** Check runs on individuals limits with their weighted mean; breaks are drawn where something changed. */
-export function ControlChart({ points, quantity, unit, caption, summary, fileName }: ControlChartProps) {
+export function ControlChart({ points, quantity, unit, decimals, caption, summary, fileName }: ControlChartProps) {
   const palette = usePalette();
   const base = palette && axis(palette, "", false);
   const options: ChartOptions<"scatter"> | undefined = palette &&
@@ -122,9 +126,9 @@ export function ControlChart({ points, quantity, unit, caption, summary, fileNam
     };
   return (
     <ChartFrame
-      summary={summary ?? controlSummary(points, quantity, unit)}
+      summary={summary ?? controlSummary(points, quantity, unit, decimals)}
       caption={caption}
-      table={controlTable(points, quantity, unit)}
+      table={controlTable(points, quantity, unit, decimals)}
       fileName={fileName}
       height="middle"
     >

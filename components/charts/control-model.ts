@@ -18,11 +18,16 @@ export type ControlPoint = {
   ewmaUpper?: number;
   /** Something changed before this point: "new microphone". */
   breakBefore?: string;
+  /** What it broke, as it was judged; empty when it was in control. Left out: judged by the limits here. */
+  out?: string;
+  /** Said in the table beside it. */
+  note?: string;
 };
 
 /** Why a point is out of control, or undefined: outside its own limits, or its weighted mean outside those. */
 export function outOfControl(point: ControlPoint): string | undefined {
   const { value, lower, upper, ewma, ewmaLower, ewmaUpper } = point;
+  if (point.out !== undefined) return point.out === "" ? undefined : point.out;
   if (value !== undefined && upper !== undefined && value > upper) return "above the upper limit";
   if (value !== undefined && lower !== undefined && value < lower) return "below the lower limit";
   if (ewma !== undefined && ewmaUpper !== undefined && ewma > ewmaUpper) return "weighted mean above its limit";
@@ -31,13 +36,13 @@ export function outOfControl(point: ControlPoint): string | undefined {
 }
 
 /** One sentence for those who hear the chart. */
-export function controlSummary(points: readonly ControlPoint[], quantity: string, unit: string): string {
+export function controlSummary(points: readonly ControlPoint[], quantity: string, unit: string, decimals = 1): string {
   const known = points.flatMap((point) => (point.value === undefined ? [] : [point.value]));
   if (known.length === 0) return `${quantity}: no check runs yet.`;
   const out = points.filter((point) => outOfControl(point)).length;
   const breaks = points.filter((point) => point.breakBefore).length;
-  const low = formatNumber(Math.min(...known), { decimals: 1 });
-  const high = formatNumber(Math.max(...known), { decimals: 1 });
+  const low = formatNumber(Math.min(...known), { decimals });
+  const high = formatNumber(Math.max(...known), { decimals });
   return `${quantity} over ${known.length} check runs, ${low} to ${high} ${unit}; ${out} out of control, ${breaks} breaks.`;
 }
 
@@ -46,9 +51,10 @@ export function controlTable(
   points: readonly ControlPoint[],
   quantity: string,
   unit: string,
+  decimals = 2,
 ): { caption: string; columns: BarsColumn[]; rows: BarsRow[] } {
   const figure = (value: number | undefined, why = "not enough check runs yet") => ({
-    figure: { value, decimals: 2, why },
+    figure: { value, decimals, why },
   });
   return {
     caption: `${quantity}, the chart’s figures`,
@@ -61,7 +67,8 @@ export function controlTable(
       { key: "note", head: "Note" },
     ],
     rows: points.map((point) => {
-      const note = [point.breakBefore ? `break: ${point.breakBefore}` : null, outOfControl(point)].filter(Boolean);
+      const broke = point.breakBefore ? `break: ${point.breakBefore}` : null;
+      const note = [broke, outOfControl(point), point.note].filter(Boolean);
       return {
         key: point.key,
         tone: outOfControl(point) ? ("wrong" as const) : undefined,

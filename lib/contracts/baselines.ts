@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { slug, time } from "./base";
+import { breakKinds, controlCheck } from "./control";
 import { sheetPointSchema, statedSchema } from "./sheet";
 
 export const baselineParams = z.strictObject({ slug });
@@ -49,6 +50,8 @@ export const agreedValueSchema = z.strictObject({
   u: z.number(),
   from: time,
   reason: z.string(),
+  /** Numbers of the sessions that it comes from. */
+  sessions: z.array(z.int()),
 });
 export type AgreedValue = z.infer<typeof agreedValueSchema>;
 
@@ -67,24 +70,46 @@ export const bridgeSchema = z.strictObject({
 });
 export type BaselineBridge = z.infer<typeof bridgeSchema>;
 
-export const baselineCheckSchema = z.strictObject({
+const chartOf = {
   serial: z.string(),
   bench: z.string(),
   quantity: z.enum(["level_dba", "thermal_resistance_kpw", "calibrator_db"]),
   setSpeed: z.number().nullable(),
+};
+
+/** A session on a control chart, as it was judged; figures in the unit of the quantity. */
+export const baselineCheckSchema = z.strictObject({
+  ...controlCheck.shape,
+  ...chartOf,
+  microphoneDistanceMm: z.number(),
+  session: z.int(),
+  purpose: z.enum(["round", "qualification", "bridge"]),
   at: time,
-  value: z.number(),
-  ruleBroken: z.string().nullable(),
+  /** Why the charts held the session and why it went on; null where they didn't. */
+  holdReason: z.string().nullable(),
+  liftNote: z.string().nullable(),
+  published: z.boolean(),
+});
+export type BaselineCheck = z.infer<typeof baselineCheckSchema>;
+
+/** A stretch between documented changes (`trial` true), or limits that froze within it (`trial` false). */
+export const controlPhaseSchema = z.strictObject({
+  ...chartOf,
+  from: time,
+  reason: z.string(),
+  kind: z.enum(breakKinds).nullable(),
+  trial: z.boolean(),
   centre: z.number().nullable(),
   sigma: z.number().nullable(),
 });
-export type BaselineCheck = z.infer<typeof baselineCheckSchema>;
+export type ControlPhase = z.infer<typeof controlPhaseSchema>;
 
 export const baselineSchema = z.strictObject({
   ...baselineLineSchema.shape,
   agreed: z.array(agreedValueSchema),
   bridges: z.array(bridgeSchema),
   checks: z.array(baselineCheckSchema),
+  phases: z.array(controlPhaseSchema),
   sessions: z.array(baselineSessionSchema),
 });
 export type Baseline = z.infer<typeof baselineSchema>;

@@ -92,6 +92,8 @@ export interface AgreedRow {
   u: number;
   from: Date;
   reason: string;
+  /** Numbers of the sessions that it comes from, as far as they are public. */
+  sessions: number[];
 }
 
 const benchWords = "b.bench_name || ', version ' || b.number";
@@ -101,7 +103,9 @@ export async function shownAgreedValues(db: Handle, { unitIds }: { unitIds: read
   const { rows }: { rows: AgreedRow[] } = await db.raw(
     `select distinct on (v.baseline_unit_id, b.bench_id, b.number, v.quantity, v.set_speed) v.baseline_unit_id as "unitId",
        ${benchWords} as bench, b.microphone_distance_mm as "microphoneDistanceMm", v.quantity,
-       v.set_speed as "setSpeed", v.value, v.u, v.from_at as "from", v.reason
+       v.set_speed as "setSpeed", v.value, v.u, v.from_at as "from", v.reason,
+       coalesce((select jsonb_agg(s.number order by s.number) from shown.baseline_session s
+         where s.id = any (v.session_ids)), '[]') as sessions
      from shown.baseline_value v join shown.bench_version b on b.id = v.bench_version_id
      where v.baseline_unit_id = any (:unitIds::uuid[])
      order by v.baseline_unit_id, b.bench_id, b.number, v.quantity, v.set_speed, v.from_at desc`,
@@ -145,33 +149,4 @@ export async function shownBridges(db: Handle, { unitIds }: { unitIds: readonly 
       dof: "g.dof",
       sessions: db.raw("cardinality(g.session_ids)"),
     });
-}
-
-export interface ShownCheckRow {
-  unitId: string;
-  bench: string;
-  quantity: "level_dba" | "thermal_resistance_kpw" | "calibrator_db";
-  setSpeed: number | null;
-  at: Date;
-  value: number;
-  ruleBroken: string | null;
-  centre: number | null;
-  sigma: number | null;
-}
-
-/** Check runs of published sessions, the oldest first, each with the centre and sigma of the phase it fell into. */
-export async function shownChecks(db: Handle, { unitIds }: { unitIds: readonly string[] }): Promise<ShownCheckRow[]> {
-  const { rows }: { rows: ShownCheckRow[] } = await db.raw(
-    `select c.baseline_unit_id as "unitId", ${benchWords} as bench, c.quantity, c.set_speed as "setSpeed", c.at, c.value,
-       c.rule_broken as "ruleBroken", h.centre, h.sigma
-     from shown.baseline_check c join shown.bench_version b on b.id = c.bench_version_id
-     left join lateral (
-       select k.centre, k.sigma from shown.control_phase k
-       where k.baseline_unit_id = c.baseline_unit_id and k.bench_version_id = c.bench_version_id
-         and k.quantity = c.quantity and k.set_speed is not distinct from c.set_speed and k.from_at <= c.at
-       order by k.from_at desc limit 1) h on true
-     where c.baseline_unit_id = any (:unitIds::uuid[]) order by c.at, c.id`,
-    { unitIds: [...unitIds] },
-  );
-  return rows;
 }

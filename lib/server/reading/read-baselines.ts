@@ -1,17 +1,19 @@
 import { z } from "zod";
-import { publicDb } from "@/db/client/handles";
+import { appDb, publicDb } from "@/db/client/handles";
+import { chartChecks, chartPhases } from "@/db/queries/baseline-charts";
 import {
   shownAgreedValues,
   shownBaselines,
   shownBaselineSessions,
   shownBridges,
-  shownChecks,
   shownUnits,
   type ShownBaselineRow,
   type ShownUnitRow,
 } from "@/db/queries/shown/baselines";
-import type { Baseline, BaselineBridge, BaselineLine } from "@/lib/contracts/baselines";
+import { baselineCheckSchema, type Baseline, type BaselineBridge, type BaselineLine } from "@/lib/contracts/baselines";
 import { snapshotPointSchema } from "@/lib/contracts/publication";
+import { ANONYMOUS, type Actor } from "@/lib/domain/accounts/actor";
+import { may } from "@/lib/domain/accounts/policy";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { stated } from "@/lib/domain/results/stated";
 import { sheetPoint } from "./sheet-page";
@@ -42,19 +44,24 @@ export async function readBaselines(): Promise<{ items: BaselineLine[] }> {
 }
 
 /**
- * A baseline with its units, agreed values, bridges, check runs, and what published sessions read of it.
+ * A baseline with its units, agreed values, bridges, control charts, and what published sessions read of it. The charts
+ * show published sessions, and bench qualifications and bridges of open seasons; to the host every closed session.
  * @throws ExpectedError not_found when no open season counts it
  */
-export async function readBaseline({ slug }: { slug: string }): Promise<Baseline> {
+export async function readBaseline({ slug, actor = ANONYMOUS }: { slug: string; actor?: Actor }): Promise<Baseline> {
   const db = publicDb();
   const [baseline] = await shownBaselines(db, { slug });
   if (!baseline) throw new ExpectedError("not_found", "There is no public baseline at this address.");
   const units = await shownUnits(db, { baselineIds: [baseline.id] });
   const of = { unitIds: units.map((unit) => unit.id) };
-  const [agreed, bridges, checks, sessions] = await Promise.all([
+  const all = may(actor, "baseline.manage");
+  const charts = { ...of, all };
+  const chartDb = all ? appDb() : db;
+  const [agreed, bridges, checks, phases, sessions] = await Promise.all([
     shownAgreedValues(db, of),
     shownBridges(db, of),
-    shownChecks(db, of),
+    chartChecks(chartDb, charts),
+    chartPhases(chartDb, charts),
     shownBaselineSessions(db, of),
   ]);
   const serialOf = (unitId: string): string => units.find((unit) => unit.id === unitId)?.serial ?? "another baseline’s";
@@ -68,7 +75,10 @@ export async function readBaseline({ slug }: { slug: string }): Promise<Baseline
       const ends = { from: serialOf(fromUnit), to: serialOf(toUnit) };
       return [{ ...bridge, ...ends, kind, figure: stated({ value, u, dof }) }];
     }),
-    checks: checks.map(({ unitId, at, ...check }) => ({ ...check, serial: serialOf(unitId), at: iso(at) })),
+    checks: checks.map(({ unitId, at, chart, ...check }) =>
+      baselineCheckSchema.parse({ ...chart, ...check, serial: serialOf(unitId), at: iso(at) }),
+    ),
+    phases: phases.map(({ unitId, from, ...phase }) => ({ ...phase, serial: serialOf(unitId), from: iso(from) })),
     sessions: sessions.map(({ unitId, beganAt, points, ...session }) => ({
       ...session,
       serial: serialOf(unitId),

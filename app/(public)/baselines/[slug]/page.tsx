@@ -5,7 +5,9 @@ import { ChecksSection } from "@/components/baselines/checks-section";
 import { SessionsSection } from "@/components/baselines/sessions-section";
 import { UnitTable } from "@/components/baselines/unit-table";
 import { Section } from "@/components/ui/sheet";
+import { actorFromPage } from "@/lib/auth/actor";
 import { orPageState } from "@/lib/auth/page";
+import { may } from "@/lib/domain/accounts/policy";
 import { readBaseline } from "@/lib/server/reading/read-baselines";
 
 type Props = {
@@ -13,7 +15,10 @@ type Props = {
   searchParams: Promise<Record<string, string | string[] | undefined>>;
 };
 
-const find = cache((slug: string) => orPageState(readBaseline({ slug }), `/baselines/${slug}`));
+const find = cache(async (slug: string) => {
+  const actor = await actorFromPage();
+  return orPageState(readBaseline({ slug, actor }), `/baselines/${slug}`);
+});
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
   const { name, description, units } = await find((await params).slug);
@@ -22,7 +27,8 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 
 export default async function BaselinePage({ params, searchParams }: Props) {
   const baseline = await find((await params).slug);
-  const all = (await searchParams).sessions === "all";
+  const { sessions, chart } = await searchParams;
+  const actor = await actorFromPage();
   return (
     <>
       <Section
@@ -35,8 +41,13 @@ export default async function BaselinePage({ params, searchParams }: Props) {
         <UnitTable name={baseline.name} units={baseline.units} />
       </Section>
       <AgreedSection baseline={baseline} />
-      <ChecksSection checks={baseline.checks} />
-      <SessionsSection sessions={baseline.sessions} path={`/baselines/${baseline.slug}`} all={all} />
+      <ChecksSection
+        baseline={baseline}
+        path={`/baselines/${baseline.slug}`}
+        chosen={typeof chart === "string" ? chart : undefined}
+        all={may(actor, "baseline.manage")}
+      />
+      <SessionsSection sessions={baseline.sessions} path={`/baselines/${baseline.slug}`} all={sessions === "all"} />
     </>
   );
 }
