@@ -1,5 +1,6 @@
 import Link from "next/link";
 import { BarsTable } from "@/components/ui/bars/bars-table";
+import { Fold } from "@/components/ui/fold";
 import { EmptyState } from "@/components/ui/states";
 import type { AuditPage } from "@/lib/contracts/audit";
 import { formatDateTime } from "@/lib/format/dates";
@@ -22,7 +23,7 @@ export function AuditTable({ page, query, path }: { page: AuditPage; query: Narr
           { key: "who", head: "Who" },
           { key: "did", head: "Did" },
           { key: "what", head: "To what" },
-          { key: "change", head: "Before, after" },
+          { key: "change", head: "Change" },
         ]}
         rows={page.items.map((item) => ({
           key: String(item.auditId),
@@ -33,7 +34,7 @@ export function AuditTable({ page, query, path }: { page: AuditPage; query: Narr
             what: {
               words: (
                 <Link href={hrefOf(path, { subjectKind: item.subjectKind, subjectId: item.subjectId })}>
-                  {item.subjectKind.replaceAll("_", " ")} <code className="break-all">{item.subjectId}</code>
+                  {item.subjectKind.replaceAll("_", " ")} <code>…{item.subjectId.slice(-8)}</code>
                 </Link>
               ),
             },
@@ -50,22 +51,24 @@ export function AuditTable({ page, query, path }: { page: AuditPage; query: Narr
   );
 }
 
+/** Longer than this it folds, letters. */
+const shortMost = 90;
+
 function Change({ before, after }: { before: unknown; after: unknown }) {
   const parts = [
     { name: "before", value: before },
     { name: "after", value: after },
-  ].filter(({ value }) => value !== null);
-  return (
-    <dl>
-      {parts.map(({ name, value }) => (
-        <div key={name}>
-          <dt className="sr-only">{name}</dt>
-          <dd>
-            <code className="break-all">{JSON.stringify(value)}</code>
-          </dd>
-        </div>
-      ))}
-    </dl>
+  ].flatMap(({ name, value }) => (value === null ? [] : [{ name, text: JSON.stringify(value) }]));
+  return parts.map(({ name, text }) =>
+    text.length <= shortMost ? (
+      <p key={name}>
+        {name} <code className="break-all">{text}</code>
+      </p>
+    ) : (
+      <Fold key={name} title={name}>
+        <code className="break-all">{text}</code>
+      </Fold>
+    ),
   );
 }
 
