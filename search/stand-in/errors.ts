@@ -8,6 +8,7 @@ const STATUS_BY_CODE: Readonly<Record<string, number>> = {
   index_not_found: 404,
   document_not_found: 404,
   task_not_found: 404,
+  batch_not_found: 404,
   api_key_not_found: 404,
   api_key_already_exists: 409,
   index_already_exists: 409,

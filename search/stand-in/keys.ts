@@ -1,7 +1,9 @@
-import { createHash, createHmac, randomUUID, timingSafeEqual } from "node:crypto";
+import { createHmac, randomUUID } from "node:crypto";
 import { ServiceError } from "./errors";
 import { isRecord } from "./paths";
+import { isSameSecret } from "./secret";
 import { kind } from "./settings-check";
+import { coversIndex, readTenantToken, ruleFor } from "./tenant-token";
 
 export type ApiKey = {
   name: string | null;
@@ -14,8 +16,11 @@ export type ApiKey = {
   createdAt: string;
   updatedAt: string;
 };
-/** What a caller may do: `index` undefined asks for the action on no index in particular. */
-export type Caller = { allows: (action: string, index?: string) => boolean };
+/**
+ * What a caller may do: `index` undefined asks for the action on no index in particular. `filterFor` gives the filter
+ * that a token ties searches of an index to.
+ */
+export type Caller = { allows: (action: string, index?: string) => boolean; filterFor?: (index: string) => unknown };
 
 const AREAS: Readonly<Record<string, readonly string[]>> = {
   documents: ["add", "get", "delete"],
@@ -44,12 +49,6 @@ const ACTIONS = [
 ];
 const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/i;
 const INDEX_PATTERN = /^(\*|[A-Za-z0-9_-]+\*?)$/;
-
-/** Compares without telling by time how much was right. */
-export function isSameSecret(a: string, b: string): boolean {
-  const digest = (text: string): Buffer => createHash("sha256").update(text).digest();
-  return timingSafeEqual(digest(a), digest(b));
-}
 
 export class KeyRing {
   private readonly byUid = new Map<string, ApiKey>();
@@ -94,10 +93,17 @@ export class KeyRing {
     const secret = authorization.startsWith("Bearer ") ? authorization.slice(7) : "";
     if (isSameSecret(secret, this.masterKey)) return { allows: () => true };
     const key = [...this.byUid.values()].filter((each) => isSameSecret(secret, each.key))[0];
-    const isExpired = key?.expiresAt != null && Date.parse(key.expiresAt) <= nowMs;
-    if (key === undefined || isExpired) throw invalidKey();
+    if (key !== undefined) return callerOf(key, nowMs);
+    const token = readTenantToken(secret, (uid) => this.byUid.get(uid)?.key, nowMs);
+    const parent = token === undefined ? undefined : this.byUid.get(token.keyUid);
+    if (token === undefined || parent === undefined) throw invalidKey();
+    const { allows } = callerOf(parent, nowMs);
     return {
-      allows: (action, index) => grants(key.actions, action) && (index === undefined || covers(key.indexes, index)),
+      allows: (action, index) =>
+        action === "search" &&
+        allows(action, index) &&
+        (index === undefined || ruleFor(token.rules, index) !== undefined),
+      filterFor: (index) => ruleFor(token.rules, index)?.filter,
     };
   }
 
@@ -184,8 +190,10 @@ function grants(actions: readonly string[], wanted: string): boolean {
   );
 }
 
-function covers(patterns: readonly string[], index: string): boolean {
-  return patterns.some((each) => (each.endsWith("*") ? index.startsWith(each.slice(0, -1)) : each === index));
+function callerOf(key: ApiKey, nowMs: number): Caller {
+  if (key.expiresAt !== null && Date.parse(key.expiresAt) <= nowMs) throw invalidKey();
+  const covers = (index: string): boolean => key.indexes.some((pattern) => coversIndex(pattern, index));
+  return { allows: (action, index) => grants(key.actions, action) && (index === undefined || covers(index)) };
 }
 
 function checkFields(body: Record<string, unknown>, known: readonly string[]): void {

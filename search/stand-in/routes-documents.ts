@@ -7,6 +7,7 @@ import { accepted, contentTypeOf, indexUidOf, ok, readJson } from "./http";
 import type { Document } from "./paths";
 import { isRecord, project } from "./paths";
 import { rank, readSort } from "./rank";
+import { readDelimiter } from "./read-csv";
 import type { SearchIndex } from "./search-index";
 import { readCount, readFlag } from "./search-params";
 import { readDocuments, readIds } from "./write-documents";
@@ -28,11 +29,20 @@ export function documentRoutes(engine: Engine): Route[] {
   const base = "/indexes/:index/documents";
   const write = (mode: "replace" | "merge") => async (exchange: Exchange) => {
     const uid = indexUidOf(exchange, "documents.add");
-    const odd = [...exchange.query.keys()].find((name) => name !== "primaryKey");
-    if (odd !== undefined)
-      throw new ServiceError("bad_request", `Unknown parameter \`${odd}\`: expected one of \`primaryKey\``);
-    const type = contentTypeOf(exchange, ["application/json", "application/x-ndjson"]);
-    const documents = readDocuments(await exchange.text(), type);
+    const odd = [...exchange.query.keys()].find((name) => name !== "primaryKey" && name !== "csvDelimiter");
+    if (odd !== undefined) {
+      const list = "expected one of `primaryKey`, `csvDelimiter`";
+      throw new ServiceError("bad_request", `Unknown parameter \`${odd}\`: ${list}`);
+    }
+    const type = contentTypeOf(exchange, ["application/json", "application/x-ndjson", "text/csv"]);
+    const delimiter = exchange.query.get("csvDelimiter");
+    if (delimiter !== null && type !== "text/csv") {
+      throw new ServiceError(
+        "invalid_content_type",
+        `The Content-Type \`${type}\` does not support the use of a csv delimiter. The csv delimiter can only be used with the Content-Type \`text/csv\`.`,
+      );
+    }
+    const documents = readDocuments(await exchange.text(), type, readDelimiter(delimiter));
     return accepted(engine.addDocuments(uid, documents, mode, exchange.query.get("primaryKey")));
   };
   return [

@@ -3,12 +3,15 @@ import type { Engine } from "./engine";
 import { ServiceError, notSupported } from "./errors";
 import type { Exchange, Route } from "./http";
 import { checkUid, indexUidOf, ok, readJson } from "./http";
+import type { Caller } from "./keys";
 import { invalidKey } from "./keys";
 import { isRecord } from "./paths";
 import type { SearchOptions, TextCache } from "./search";
 import { facetSearch, search } from "./search";
+import type { SearchParams } from "./search-params";
 import { readFacetSearch, readSearch, readSearchAddress } from "./search-params";
 import { kind } from "./settings-check";
+import { bothFilters } from "./tenant-token";
 
 /** Routes that search. */
 export function searchRoutes(engine: Engine): Route[] {
@@ -25,7 +28,7 @@ export function searchRoutes(engine: Engine): Route[] {
       action: "search",
       handle: async (exchange) => {
         const uid = indexUidOf(exchange, "search");
-        const params = readSearch(await readJson(exchange, {}));
+        const params = tied(readSearch(await readJson(exchange, {})), exchange.caller, uid);
         return ok(search(engine.index(uid), params, options()));
       },
     },
@@ -34,8 +37,9 @@ export function searchRoutes(engine: Engine): Route[] {
       path: "/indexes/:index/search",
       action: "search",
       handle: (exchange) => {
-        const params = readSearch(readSearchAddress(exchange.query));
-        return ok(search(engine.index(indexUidOf(exchange, "search")), params, options()));
+        const uid = indexUidOf(exchange, "search");
+        const params = tied(readSearch(readSearchAddress(exchange.query)), exchange.caller, uid);
+        return ok(search(engine.index(uid), params, options()));
       },
     },
     {
@@ -44,7 +48,8 @@ export function searchRoutes(engine: Engine): Route[] {
       action: "search",
       handle: async (exchange) => {
         const uid = indexUidOf(exchange, "search");
-        return ok(facetSearch(engine.index(uid), readFacetSearch(await readJson(exchange)), options()));
+        const params = tied(readFacetSearch(await readJson(exchange)), exchange.caller, uid);
+        return ok(facetSearch(engine.index(uid), params, options()));
       },
     },
     {
@@ -59,6 +64,12 @@ export function searchRoutes(engine: Engine): Route[] {
       },
     },
   ];
+}
+
+/** The same search, held to the filter that the caller's token prescribes for this index. */
+function tied<T extends SearchParams>(params: T, caller: Caller, uid: string): T {
+  const rule = caller.filterFor?.(uid) ?? null;
+  return rule === null ? params : { ...params, filter: bothFilters(params.filter, rule) };
 }
 
 function readQueries(body: unknown): unknown[] {
@@ -97,5 +108,5 @@ function runQuery(engine: Engine, exchange: Exchange, query: unknown, options: S
     throw notSupported("Federated search (`federationOptions`)");
   const uid = checkUid(indexUid, ".indexUid");
   if (!exchange.caller.allows("search", uid)) throw invalidKey();
-  return { indexUid: uid, ...search(engine.index(uid), readSearch(body), options) };
+  return { indexUid: uid, ...search(engine.index(uid), tied(readSearch(body), exchange.caller, uid), options) };
 }

@@ -5,7 +5,7 @@ import { ok, readJson } from "./http";
 import { isRecord } from "./paths";
 import { readCount } from "./search-params";
 import { kind } from "./settings-check";
-import { listTasks, selectTasks } from "./task-query";
+import { describeBatch, listBatches, listTasks, selectTasks } from "./task-query";
 
 /** Version of the service whose interface is followed here. */
 const PACKAGE_VERSION = "1.50.0";
@@ -54,6 +54,23 @@ export function serverRoutes(engine: Engine): Route[] {
         const task = tasks.get(uid);
         if (task.indexUid === null || exchange.caller.allows("tasks.get", task.indexUid)) return ok(task);
         throw new ServiceError("task_not_found", `Task \`${uid}\` not found.`);
+      },
+    },
+    {
+      method: "GET",
+      path: "/batches",
+      action: "tasks.get",
+      handle: (exchange) => ok(listBatches(visibleTasks(exchange), exchange.query)),
+    },
+    {
+      method: "GET",
+      path: "/batches/:uid",
+      action: "tasks.get",
+      handle: (exchange) => {
+        const uid = readCount("uid", exchange.params.uid ?? "", "invalid_batch_uids");
+        const task = visibleTasks(exchange).find((each) => each.batchUid === uid);
+        if (task === undefined) throw new ServiceError("batch_not_found", `Batch \`${uid}\` not found.`);
+        return ok(describeBatch(task));
       },
     },
     {
@@ -154,8 +171,6 @@ const REFUSED: readonly [method: string, path: string, action: string][] = [
   ["PUT", "/indexes/:index/settings/foreign-keys", "settings.update"],
   ["DELETE", "/indexes/:index/settings/foreign-keys", "settings.update"],
   ["GET", "/tasks/:uid/documents", "tasks.get"],
-  ["GET", "/batches", "tasks.get"],
-  ["GET", "/batches/:uid", "tasks.get"],
   ["POST", "/dumps", "dumps.create"],
   ["POST", "/snapshots", "snapshots.create"],
   ["POST", "/export", "export"],

@@ -19,6 +19,7 @@ const TYPES = [
   "export",
   "upgradeDatabase",
   "indexCompaction",
+  "networkTopologyChange",
 ];
 const DATES = ["EnqueuedAt", "StartedAt", "FinishedAt"].flatMap((each) => [`before${each}`, `after${each}`]);
 const FILTERS = ["uids", "batchUids", "canceledBy", "types", "statuses", "indexUids", ...DATES];
@@ -79,8 +80,10 @@ function dateTest(name: string, text: string): (task: Task) => boolean {
   };
 }
 
+type TaskPage = { results: Task[]; total: number; limit: number; from: number | null; next: number | null };
+
 /** One page of tasks, newest first unless reversed. */
-export function listTasks(tasks: readonly Task[], query: URLSearchParams): Record<string, unknown> {
+export function listTasks(tasks: readonly Task[], query: URLSearchParams): TaskPage {
   const accepts = readFilters(query, ["limit", "from", "reverse"]);
   const limit = readCount("limit", query.get("limit") ?? "20", "invalid_task_limit");
   const fromText = query.get("from");
@@ -93,6 +96,34 @@ export function listTasks(tasks: readonly Task[], query: URLSearchParams): Recor
   const next = page.length > limit ? page[limit]?.uid : undefined;
   const results = page.slice(0, limit);
   return { results, total: accepted.length, limit, from: results[0]?.uid ?? null, next: next ?? null };
+}
+
+/** One page of batches: every task that was carried out is a batch of its own here. */
+export function listBatches(tasks: readonly Task[], query: URLSearchParams): Record<string, unknown> {
+  const { results, ...page } = listTasks(
+    tasks.filter((task) => task.batchUid !== null),
+    query,
+  );
+  return { results: results.map(describeBatch), ...page };
+}
+
+/** The batch that a task makes up alone, as the service writes a batch of one. */
+export function describeBatch(task: Task): Record<string, unknown> {
+  return {
+    uid: task.batchUid,
+    progress: null,
+    details: task.details ?? {},
+    stats: {
+      totalNbTasks: 1,
+      status: { [task.status]: 1 },
+      types: { [task.type]: 1 },
+      indexUids: task.indexUid === null ? {} : { [task.indexUid]: 1 },
+    },
+    duration: task.duration,
+    startedAt: task.startedAt,
+    finishedAt: task.finishedAt,
+    batchStrategy: `created batch containing only task with id ${task.uid} of type \`${task.type}\` that cannot be batched with any other task.`,
+  };
 }
 
 /** Numbers of the tasks that a cancelation or deletion names; without any filter it is refused. */

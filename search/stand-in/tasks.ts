@@ -37,8 +37,11 @@ export type EnqueuedTask = {
 /** What to do when a task's turn comes; it may fill in the details, and a refusal fails the task. */
 export type Work = (task: Task) => void;
 
-/** A task waits at least this long, so that callers that forget to wait see the state before it. */
-const DELAY_MS = 4;
+/**
+ * A task waits at least this long, so that callers that forget to wait see the state before it, and a wait of a
+ * millisecond runs out even on a busy machine. Shorter than the client's pause between two looks.
+ */
+const DELAY_MS = 15;
 /** Quiet time after the last task before `onIdle` is called, so that a run of tasks isn't slowed down by it. */
 const IDLE_MS = 150;
 

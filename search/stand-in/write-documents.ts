@@ -1,6 +1,7 @@
 import { ServiceError } from "./errors";
 import type { Document, Json } from "./paths";
 import { isRecord, valuesAt } from "./paths";
+import { readCsv } from "./read-csv";
 import type { SearchIndex } from "./search-index";
 
 const ID = /^[A-Za-z0-9_-]{1,511}$/;
@@ -92,10 +93,11 @@ export function readIds(body: unknown): string[] {
   });
 }
 
-/** Documents of an add request: one object, an array of objects, or one object a line. */
-export function readDocuments(text: string, contentType: string): Document[] {
-  const name = contentType === "application/x-ndjson" ? "ndjson" : "json";
+/** Documents of an add request: one object, an array of objects, one object a line, or a table. */
+export function readDocuments(text: string, contentType: string, delimiter: string): Document[] {
+  const name = contentType === "application/x-ndjson" ? "ndjson" : contentType === "text/csv" ? "csv" : "json";
   if (text.trim() === "") throw new ServiceError("missing_payload", `A ${name} payload is missing.`);
+  if (name === "csv") return readCsv(text, delimiter);
   const found: unknown[] = [];
   try {
     if (name === "ndjson") {

@@ -62,7 +62,6 @@ describe("what it doesn't do it refuses in the service's own form, and never ans
     ["POST", "/indexes/x/documents/edit", {}],
     ["POST", "/dumps", {}],
     ["GET", "/network", undefined],
-    ["GET", "/batches", undefined],
     ["POST", "/webhooks", {}],
   ])("%s %s", async (method, path, body) => {
     const answer = await ask(path, body, method);
