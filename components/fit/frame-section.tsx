@@ -62,7 +62,9 @@ export function FrameSection({ compared, frame, season }: FrameSectionProps) {
                 : []),
             ]}
           />
-          {season && season.keepOuts.length > 0 ? <KeepOutTable comparison={comparison} season={season} /> : null}
+          {season && comparison.keepOuts.length + comparison.notCompared.length > 0 ? (
+            <KeepOutTable comparison={comparison} season={season} />
+          ) : null}
         </>
       ) : null}
       <p className="small-print max-w-3xl">

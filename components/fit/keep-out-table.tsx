@@ -37,8 +37,8 @@ export function KeepOutTable({ comparison, season }: { comparison: Comparison; s
       <p className="small-print max-w-3xl">
         In cooler coordinates: 0 is where the fan’s axis meets the mounting face, z points away from the cooler, x and y
         are as in the file. Tolerances are not taken off here.
-        {season.meshKeepOuts.length > 0
-          ? ` ${listWords(season.meshKeepOuts)} is kept as a mesh and is compared when the model is sent in.`
+        {comparison.notCompared.length > 0
+          ? ` ${listWords(comparison.notCompared)} could not be fetched and is not compared: choose the season again.`
           : ""}
       </p>
     </div>

@@ -45,7 +45,8 @@ function Opened({ label, load, bytes }: TurnViewProps) {
   const first = useRef(load);
   useEffect(() => {
     const stop = new AbortController();
-    Promise.all([import("./turn-scene"), first.current({ onBytes: setGot, signal: stop.signal })])
+    const onBytes = (bytes: number) => void (stop.signal.aborted || setGot(bytes));
+    Promise.all([import("./turn-scene"), first.current({ onBytes, signal: stop.signal })])
       .then(([{ startScene }, model]) => stop.signal.aborted || setState({ step: "shown", model, startScene }))
       .catch((error: unknown) => {
         if (!stop.signal.aborted)

@@ -18,6 +18,12 @@ export interface FitKeepOut {
   readonly maxMm: readonly [number, number, number];
 }
 
+/** A keep-out solid that is fetched when a model is compared with it. */
+export interface FitMeshKeepOut {
+  readonly name: string;
+  readonly address: string;
+}
+
 /** What a season allows, and what stands around its bench's cooler. */
 export interface FitSeason {
   readonly slug: string;
@@ -29,8 +35,8 @@ export interface FitSeason {
   /** The bench that the season uses now, such as "alder, version 2"; null before one is named. */
   readonly benchName: string | null;
   readonly keepOuts: readonly FitKeepOut[];
-  /** Keep-out solids that are meshes: named, as a browser hasn't got them. */
-  readonly meshKeepOuts: readonly string[];
+  /** Keep-out solids that are meshes, each with the address of its STL in cooler coordinates. */
+  readonly meshKeepOuts: readonly FitMeshKeepOut[];
 }
 
 /** All that a model can be compared with, the newest season first. */

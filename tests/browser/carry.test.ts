@@ -24,6 +24,8 @@ const nine: RotorSpec = {
 describe("a model on the fit page", () => {
   it("is carried into a draft through signing in, confirmed there, and stands on the sheet once published", async () => {
     const { page, complaints } = await browser.open();
+    // The server reads the model in a thread beside everything else.
+    page.setDefaultTimeout(90_000);
     await page.goto("/fit");
     await page.locator("#fit [aria-busy=false]").waitFor();
     const sent: string[] = [];
@@ -58,6 +60,7 @@ describe("a model on the fit page", () => {
 
     await publishDraft({ slug: `carried-${tag}`, letter: "A" });
     const { page: reader } = await browser.open();
+    reader.setDefaultTimeout(90_000);
     const answer = await reader.goto(`/designs/carried-${tag}`);
     expect(answer?.status()).toBe(200);
     const sheet = await (await reader.request.get(`/api/v1/sheets/carried-${tag}`)).json();

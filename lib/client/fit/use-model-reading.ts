@@ -27,7 +27,7 @@ export type ModelState =
 
 export interface ModelReadingActs {
   readonly state: ModelState;
-  /** The reader is loaded: from now on nothing is fetched. A file chosen earlier waits for it. */
+  /** The reader is loaded: from now on only solids of a chosen season are fetched. A file chosen earlier waits for it. */
   readonly ready: boolean;
   /**
    * Reads a file and, where its unit is beyond doubt, measures it; with a unit given, mm, nothing is asked. Another

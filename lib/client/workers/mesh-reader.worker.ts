@@ -1,12 +1,13 @@
-import { compareModel, type Surroundings } from "@/lib/client/fit/compare-model";
+import { compareModel, type FetchedSolid, type Surroundings } from "@/lib/client/fit/compare-model";
 import { MEASURED_AT, type ModelMeasured, type WorkerAnswer, type WorkerRequest } from "@/lib/client/fit/messages";
+import type { FitMeshKeepOut } from "@/lib/contracts/fit-limits";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
 import { fanDrawing } from "@/lib/science/geometry/drawing/fan-drawing";
 import { turnable } from "@/lib/science/geometry/drawing/turnable";
 import { drawingSvg } from "@/lib/science/geometry/drawing/svg-text";
 import { meshBounds, scaledMesh, type Mesh } from "@/lib/science/geometry/mesh";
 import { readModelFile } from "@/lib/science/geometry/model-file";
-import type { ByteSource } from "@/lib/science/geometry/reading";
+import { memorySource, type ByteSource } from "@/lib/science/geometry/reading";
 import { guessUnit } from "@/lib/science/geometry/units";
 import { Refusal } from "@/lib/science/refusal";
 
@@ -62,9 +63,28 @@ function measure(job: number, mmPerUnit: number): void {
   answer({ kind: "drawn", job, drawing, svg: drawingSvg(drawing) });
 }
 
-function compare(job: number, ask: number, around: Surroundings): void {
+/** Keep-out meshes by address: what stands around a bench's cooler doesn't change while the page is open. */
+const solids = new Map<string, Mesh>();
+
+async function solidAt({ name, address }: FitMeshKeepOut): Promise<FetchedSolid> {
+  const known = solids.get(address);
+  if (known) return { name, mesh: known };
+  try {
+    const came = await fetch(address);
+    if (!came.ok) return { name, mesh: undefined };
+    const { mesh } = await readModelFile(memorySource(new Uint8Array(await came.arrayBuffer())));
+    solids.set(address, mesh);
+    return { name, mesh };
+  } catch {
+    return { name, mesh: undefined };
+  }
+}
+
+async function compare(job: number, ask: number, around: Surroundings): Promise<void> {
+  const fetched = await Promise.all((around.season?.meshKeepOuts ?? []).map(solidAt));
   if (kept?.job !== job || !kept.judged) return;
-  answer({ kind: "compared", job, ask, comparison: compareModel(kept.judged.mesh, kept.judged.measured, around) });
+  const { mesh, measured } = kept.judged;
+  answer({ kind: "compared", job, ask, comparison: compareModel(mesh, measured, around, fetched) });
 }
 
 async function turn(job: number, file: File | undefined): Promise<void> {
@@ -80,7 +100,7 @@ async function work(request: WorkerRequest): Promise<void> {
   if (request.kind === "read") await read(request.job, request.file);
   if (request.kind === "measure") measure(request.job, request.mmPerUnit);
   if (request.kind === "turn") await turn(request.job, request.file);
-  if (request.kind === "compare") compare(request.job, request.ask, request.around);
+  if (request.kind === "compare") await compare(request.job, request.ask, request.around);
 }
 
 function refuse(job: number, error: unknown): void {

@@ -27,7 +27,9 @@ export async function readFitLimits(): Promise<FitLimits> {
         ...season,
         benchName: benchName === null || benchNumber === null ? null : `${benchName}, version ${benchNumber}`,
         keepOuts: around.flatMap(box),
-        meshKeepOuts: around.filter((solid) => solid.shape === "mesh").map((solid) => solid.name),
+        meshKeepOuts: around
+          .filter((solid) => solid.shape === "mesh")
+          .map(({ id, name }) => ({ name, address: `/api/v1/seasons/${season.slug}/kit/keep-outs/${id}` })),
       };
     }),
   };
