@@ -32,9 +32,13 @@ export interface Design {
  * needs five entries and two values.
  */
 export function designOf(keys: readonly TraitKey[], entries: readonly StudyEntry[]): Design {
-  const complete = entries.filter((entry) => keys.every((key) => traitOf(key).of(entry) !== undefined));
+  const reads = keys.map((key) => traitOf(key).of);
+  const complete = entries.filter((entry) => reads.every((of) => of(entry) !== undefined));
   const rare = keys.flatMap((key) => (traitOf(key).kind === "choice" ? rareLevels(key, complete) : []));
-  const rows = complete.filter((entry) => !rare.some(({ trait, level }) => traitOf(trait).of(entry) === level));
+  const rows =
+    rare.length === 0
+      ? complete
+      : complete.filter((entry) => !rare.some(({ trait, level }) => traitOf(trait).of(entry) === level));
   const columns: DesignColumn[] = [];
   const refused: Design["refused"][number][] = rare.map((each) => ({
     ...each,
@@ -51,7 +55,7 @@ export function designOf(keys: readonly TraitKey[], entries: readonly StudyEntry
         key: trait,
         trait,
         step: traitOf(trait).step,
-        values: Float64Array.from(values, Number),
+        values: numbersOf(values, Number),
         n: rows.length,
       });
     else columns.push(...choiceColumns(trait, values));
@@ -59,10 +63,18 @@ export function designOf(keys: readonly TraitKey[], entries: readonly StudyEntry
   return { rows, columns, refused, leftOut: entries.length - rows.length };
 }
 
+function numbersOf(values: readonly unknown[], read: (value: unknown) => number): Float64Array {
+  const numbers = new Float64Array(values.length);
+  for (let i = 0; i < values.length; i++) numbers[i] = read(values[i]);
+  return numbers;
+}
+
 function countsOf(values: Iterable<unknown>): [string, number][] {
-  const counts = new Map<string, number>();
-  for (const value of values) counts.set(String(value), (counts.get(String(value)) ?? 0) + 1);
-  return [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
+  const counts = new Map<unknown, number>();
+  for (const value of values) counts.set(value, (counts.get(value) ?? 0) + 1);
+  return [...counts]
+    .map(([value, n]): [string, number] => [String(value), n])
+    .sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
 }
 
 function rareLevels(trait: TraitKey, entries: readonly StudyEntry[]) {
@@ -85,7 +97,7 @@ function choiceColumns(trait: TraitKey, values: readonly unknown[]): DesignColum
       level,
       reference,
       step: 1,
-      values: Float64Array.from(values, (value) => (value === level ? 1 : 0)),
+      values: numbersOf(values, (value) => (value === level ? 1 : 0)),
       n,
     }));
 }

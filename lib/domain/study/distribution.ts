@@ -1,7 +1,7 @@
-import { quantile } from "@/lib/science/statistics/descriptive";
+import { ascending, at, sortedQuantile } from "@/lib/science/statistics/descriptive";
 import { MINIMUM } from "@/lib/science/statistics/minimum-counts";
-import { medianInterval } from "@/lib/science/statistics/rank-tests";
-import { levelsOf } from "./levels";
+import { sortedMedianInterval } from "@/lib/science/statistics/rank-tests";
+import { placesOf } from "./levels";
 import { outcomeKeys, shownValue, type OutcomeKey } from "./outcomes";
 import type { StudyEntry } from "./study-entry";
 import type { TraitKey } from "./traits";
@@ -39,47 +39,93 @@ export interface Distribution {
 
 /** Spread of some values; a median from four on, its interval from six on (a wider count would be a guess). */
 export function spreadOf(values: readonly number[]): Spread {
-  const n = values.length;
-  if (n < MINIMUM.perGroup) return { n, values: [...values].sort((a, b) => a - b) };
-  const found = medianInterval(values);
+  return spreadOfSorted(ascending(values));
+}
+
+function spreadOfSorted(sorted: Float64Array): Spread {
+  const n = sorted.length;
+  if (n < MINIMUM.perGroup) return { n, values: [...sorted] };
+  const found = sortedMedianInterval(sorted);
   return {
     n,
     median: found?.median,
     low: found?.interval?.low,
     high: found?.interval?.high,
-    quartileLow: quantile(values, 0.25),
-    quartileHigh: quantile(values, 0.75),
+    quartileLow: sortedQuantile(sorted, 0.25),
+    quartileHigh: sortedQuantile(sorted, 0.75),
   };
 }
 
-const valuesOf = (outcome: OutcomeKey, entries: readonly StudyEntry[]) =>
-  entries.map((entry) => shownValue(outcome, entry)).filter((value) => value !== undefined);
+/** What entries reached of one outcome, as it is shown, in ascending order; and which entry each is of. */
+interface Reached {
+  readonly values: Float64Array;
+  readonly places: Uint32Array;
+}
+
+function reachedIn(outcome: OutcomeKey, entries: readonly StudyEntry[]): Reached {
+  const all = Float64Array.from(entries, (entry) => shownValue(outcome, entry) ?? Number.NaN);
+  const places = new Uint32Array(entries.length).map((_, i) => i).filter((i) => !Number.isNaN(at(all, i)));
+  places.sort((a, b) => at(all, a) - at(all, b));
+  return { values: Float64Array.from(places, (i) => at(all, i)), places };
+}
+
+/** The values of each level, still in order. */
+function splitByLevel({ values, places }: Reached, level: Int32Array, levels: number): Float64Array[] {
+  const counts = new Uint32Array(levels);
+  for (const i of places) if (at(level, i) >= 0) counts[at(level, i)] = at(counts, at(level, i)) + 1;
+  const split = Array.from(counts, (count) => new Float64Array(count));
+  counts.fill(0);
+  for (let k = 0; k < places.length; k++) {
+    const own = at(level, at(places, k));
+    const list = split[own];
+    if (!list) continue;
+    list[at(counts, own)] = at(values, k);
+    counts[own] = at(counts, own) + 1;
+  }
+  return split;
+}
 
 /** Outcomes over the levels of one trait. The entries must stand on one scale: one baseline unit. */
 export function distributionOf(trait: TraitKey, outcome: OutcomeKey, entries: readonly StudyEntry[]): Distribution {
-  const levels = levelsOf(trait, entries);
-  const bins = binsFor(valuesOf(outcome, entries));
-  return {
-    trait,
-    bins,
-    without: entries.length - levels.reduce((total, level) => total + level.entries.length, 0),
-    levels: levels.map(({ key, from, to, entries: of }) => {
-      const spreads = Object.fromEntries(outcomeKeys.map((each) => [each, spreadOf(valuesOf(each, of))]));
-      const values = valuesOf(outcome, of);
-      return {
-        key,
-        ...(from === undefined ? {} : { from, to }),
-        spreads: spreads as Record<OutcomeKey, Spread>,
-        ...(values.length < MINIMUM.perGroup ? {} : { counts: countIn(bins, values) }),
-      };
-    }),
-  };
+  const [only] = distributionsOf([trait], outcome, entries);
+  if (!only) throw new Error("one trait has one distribution");
+  return only;
+}
+
+/** The same of several traits: each outcome is put in order once. */
+export function distributionsOf(
+  keys: readonly TraitKey[],
+  outcome: OutcomeKey,
+  entries: readonly StudyEntry[],
+): Distribution[] {
+  const reached = outcomeKeys.map((key) => [key, reachedIn(key, entries)] as const);
+  const bins = binsFor(reached.find(([key]) => key === outcome)?.[1].values ?? new Float64Array(0));
+  return keys.map((trait) => {
+    const { levels, level } = placesOf(trait, entries);
+    const split = reached.map(([key, of]) => [key, splitByLevel(of, level, levels.length)] as const);
+    const asked = split.find(([key]) => key === outcome)?.[1] ?? [];
+    return {
+      trait,
+      bins,
+      without: level.reduce((total, place) => (place < 0 ? total + 1 : total), 0),
+      levels: levels.map((each, i) => {
+        const none = new Float64Array(0);
+        const spreads = Object.fromEntries(split.map(([key, lists]) => [key, spreadOfSorted(lists[i] ?? none)]));
+        const values = asked[i] ?? none;
+        return {
+          ...each,
+          spreads: spreads as Record<OutcomeKey, Spread>,
+          ...(values.length < MINIMUM.perGroup ? {} : { counts: countIn(bins, values) }),
+        };
+      }),
+    };
+  });
 }
 
 /** At most about twenty bins of a round width (1, 2 or 5 times a power of ten) that hold all values. */
-function binsFor(values: readonly number[]): Distribution["bins"] {
+function binsFor(values: Float64Array): Distribution["bins"] {
   if (values.length === 0) return { from: 0, width: 1, count: 0 };
-  const [low, high] = [Math.min(...extremes(values)), Math.max(...extremes(values))];
+  const [low, high] = [at(values, 0), at(values, values.length - 1)];
   const wanted = Math.max((high - low) / 20, 1e-3);
   const power = 10 ** Math.floor(Math.log10(wanted));
   const width = power * ([1, 2, 5, 10].find((factor) => factor * power >= wanted) ?? 10);
@@ -87,17 +133,9 @@ function binsFor(values: readonly number[]): Distribution["bins"] {
   return { from: round(first * width), width: round(width), count: Math.floor(high / width + 1e-9) - first + 1 };
 }
 
-/** The two ends of a list of any length, which Math.min(...) can't take. */
-function extremes(values: readonly number[]): [number, number] {
-  return values.reduce(([low, high], value) => [Math.min(low, value), Math.max(high, value)] as [number, number], [
-    Infinity,
-    -Infinity,
-  ] as [number, number]);
-}
-
 const round = (value: number) => Number(value.toFixed(9));
 
-function countIn({ from, width, count }: Distribution["bins"], values: readonly number[]): number[] {
+function countIn({ from, width, count }: Distribution["bins"], values: Float64Array): number[] {
   const counts = Array.from({ length: count }, () => 0);
   for (const value of values) {
     const bin = Math.min(count - 1, Math.max(0, Math.floor((value - from) / width + 1e-9)));

@@ -7,7 +7,7 @@ import { modelValue, shownEffect, type OutcomeKey } from "./outcomes";
 import { cellOf, type StudyEntry } from "./study-entry";
 import type { TraitKey } from "./traits";
 import { wildBootstrap } from "./wild-bootstrap";
-import { directionsOf, reversed, type Groups } from "./within-cells";
+import { directionsOf, groupsOf, reversed, type Groups } from "./within-cells";
 
 /** Effects whose inflation lies above this can't be told from the others (handbook's limit). */
 export const VIF_MAX = 10;
@@ -74,8 +74,8 @@ export function fitEffects(
   const y = Float64Array.from(rows, (entry) => modelValue(outcome, entry) ?? Number.NaN);
   const cells = rows.map(cellOf);
   const labels = rows.map((entry) => entry.designer);
-  const [cell, cluster] = [numbered(cells), numbered(labels)];
-  const baselines = numbered(rows.map((entry) => entry.baselineUnitId));
+  const [cell, cluster] = [groupsOf(cells), numbered(labels)];
+  const baselines = groupsOf(rows.map((entry) => entry.baselineUnitId));
   const { fitted, refused } = identified(design, y, cells, cell);
   const base = {
     n: rows.length,
@@ -101,16 +101,15 @@ export function fitEffects(
   const { fit, within } = fitted.fit;
   const wild = cluster.count < CLUSTERS_FOR_T;
   const t = fitted.columns.map((_, j) => at(fit.coefficients, j) / at(robust.errors, j));
-  const demeanedY = fit.residuals.map((e, i) => within.reduce((v, c, j) => v + at(c, i) * at(fit.coefficients, j), e));
   let draws: number | undefined;
   const effects = fitted.columns.map((column, j): Effect => {
     const error = at(robust.errors, j);
     if (!(error > 0)) return { ...said(column), why: "exact" };
-    const input = { columns: within, y: demeanedY, cell: cell.index, cells: cell.count, inverse: fit.inverse, t };
+    const { residuals, coefficients, inverse } = fit;
+    const input = { columns: within, residuals, coefficients, cell: cell.index, cells: cell.count, inverse, t };
     const drawn = wild
       ? wildBootstrap({ ...input, cluster: cluster.index, clusters: cluster.count }, j, seed)
       : undefined;
-    if (wild && !drawn) return { ...said(column), why: "too-few-rows" };
     draws = drawn?.draws;
     const reach = (drawn?.quantile ?? studentTQuantile(0.975, robust.dof)) * error;
     const [b, step] = [at(fit.coefficients, j), column.step];

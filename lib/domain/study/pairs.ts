@@ -1,6 +1,6 @@
 import { coverageFactor95, welchSatterthwaite } from "@/lib/science/statistics/uncertainty";
 import { modelUncertainty, modelValue, outcomes, shownEffect, type OutcomeKey } from "./outcomes";
-import { cellOf, type StudyEntry } from "./study-entry";
+import { sameCell, type StudyEntry } from "./study-entry";
 import { traitKeys, traitOf, type TraitKey, type TraitValue } from "./traits";
 
 /** A revision and the one it was made from. */
@@ -37,11 +37,13 @@ export interface PairCounts {
 }
 
 const joined = (a: StudyEntry, b: StudyEntry): Pair["together"] =>
-  cellOf(a) !== cellOf(b) ? "no" : a.roundNumber === b.roundNumber ? "round" : "cell";
+  !sameCell(a, b) ? "no" : a.roundNumber === b.roundNumber ? "round" : "cell";
 
 /** How near two entries were measured: the same round before the same cell, else the fewest seasons apart. */
-const distance = (a: StudyEntry, b: StudyEntry) =>
-  joined(a, b) === "round" ? 0 : joined(a, b) === "cell" ? 1 : 2 + Math.abs(a.seasonNumber - b.seasonNumber);
+function distance(a: StudyEntry, b: StudyEntry): number {
+  const has = joined(a, b);
+  return has === "round" ? 0 : has === "cell" ? 1 : 2 + Math.abs(a.seasonNumber - b.seasonNumber);
+}
 
 /**
  * Traits in which two models differ beyond tolerance. What follows from others (mass, print time), a stack's length
@@ -72,13 +74,15 @@ export function pairsOf(
   outcome: OutcomeKey,
 ): { pairs: Pair[]; counts: PairCounts } {
   const byRevision = new Map<string, StudyEntry[]>();
-  for (const entry of entries) byRevision.set(entry.revisionId, [...(byRevision.get(entry.revisionId) ?? []), entry]);
+  for (const entry of entries) {
+    const known = byRevision.get(entry.revisionId);
+    if (known) known.push(entry);
+    else byRevision.set(entry.revisionId, [entry]);
+  }
   const counts = { derivations: 0, severalTraits: 0, noTrait: 0, otherBaseline: 0, otherDesigner: 0, notReached: 0 };
   const pairs: Pair[] = [];
   for (const { revisionId, fromRevisionId } of derivations) {
-    const befores = byRevision.get(fromRevisionId) ?? [];
-    const choices = (byRevision.get(revisionId) ?? []).flatMap((to) => befores.map((from) => [from, to] as const));
-    const [nearest] = choices.sort((m, n) => distance(...m) - distance(...n));
+    const nearest = nearestOf(byRevision.get(fromRevisionId) ?? [], byRevision.get(revisionId) ?? []);
     if (!nearest) continue;
     counts.derivations++;
     const [from, to] = nearest;
@@ -87,6 +91,20 @@ export function pairsOf(
     else pairs.push(made);
   }
   return { pairs, counts };
+}
+
+/** Of all that were measured before and after, the two that lie nearest; of equals the first. */
+function nearestOf(befores: readonly StudyEntry[], afters: readonly StudyEntry[]) {
+  let nearest: readonly [StudyEntry, StudyEntry] | undefined;
+  let best = Infinity;
+  for (const to of afters)
+    for (const from of befores) {
+      const far = distance(from, to);
+      if (far >= best) continue;
+      best = far;
+      nearest = [from, to];
+    }
+  return nearest;
 }
 
 const worth = (value: TraitValue): string | number => value ?? "none";

@@ -47,5 +47,15 @@ export interface Uncertain {
  * season ran two, since figures against different units don't stand on one scale.
  */
 export function cellOf(entry: StudyEntry): string {
-  return [entry.seasonNumber, entry.benchVersionId, entry.protocolVersionId, entry.baselineUnitId].join(" ");
+  return `${entry.seasonNumber} ${entry.benchVersionId} ${entry.protocolVersionId} ${entry.baselineUnitId}`;
+}
+
+/** Whether two entries share their cell. */
+export function sameCell(a: StudyEntry, b: StudyEntry): boolean {
+  return (
+    a.seasonNumber === b.seasonNumber &&
+    a.benchVersionId === b.benchVersionId &&
+    a.protocolVersionId === b.protocolVersionId &&
+    a.baselineUnitId === b.baselineUnitId
+  );
 }

@@ -1,5 +1,5 @@
 import { benjaminiHochberg } from "@/lib/science/statistics/multiple-comparisons";
-import { distributionOf, spreadOf, type Distribution, type Spread } from "./distribution";
+import { distributionsOf, spreadOf, type Distribution, type Spread } from "./distribution";
 import { fitEffects, type EffectsFit } from "./effects";
 import { shownValue, type OutcomeKey } from "./outcomes";
 import { pairEffects, type PairEffect } from "./pair-effects";
@@ -77,7 +77,7 @@ export function study(
     pairCounts: { ...found.counts, pairs: own.length },
     chains: chainsOf(pairs),
     modelTraits,
-    distributions: shown.map((trait) => distributionOf(trait, outcome, oneScale)),
+    distributions: distributionsOf(shown, outcome, oneScale),
     otherBaseline: entries.length - oneScale.length,
   };
 }

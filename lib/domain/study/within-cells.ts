@@ -1,5 +1,7 @@
-import { at } from "@/lib/science/statistics/descriptive";
+import { rowsOf } from "@/lib/science/statistics/cell-effects";
+import { gather } from "@/lib/science/statistics/descriptive";
 import { fitLine, type LineFit } from "@/lib/science/statistics/line-fit";
+import { numbered } from "@/lib/science/statistics/robust-errors";
 import { MINIMUM } from "@/lib/science/statistics/minimum-counts";
 
 /** Which way an effect points over all entries together, and within each cell by itself. */
@@ -13,10 +15,17 @@ export interface Directions {
   readonly up: number;
 }
 
-/** Which group each row is of, 0..count − 1. */
+/** Which group each row is of, 0..count − 1; and the rows of each group. */
 export interface Groups {
   readonly index: Int32Array;
   readonly count: number;
+  readonly rows: readonly (readonly number[])[];
+}
+
+/** Groups by label, in order of appearance. */
+export function groupsOf(labels: readonly string[]): Groups {
+  const { index, count } = numbered(labels);
+  return { index, count, rows: rowsOf(index, count) };
 }
 
 /**
@@ -34,13 +43,8 @@ export function directionsOf(x: ArrayLike<number>, y: ArrayLike<number>, cells: 
 }
 
 /** The line of every group in which x varies. */
-function linesOf(x: ArrayLike<number>, y: ArrayLike<number>, { index, count }: Groups): LineFit[] {
-  const rows = Array.from({ length: count }, (): number[] => []);
-  index.forEach((place, i) => rows[place]?.push(i));
-  return rows.flatMap((list) => {
-    const pick = (values: ArrayLike<number>) => Float64Array.from(list, (i) => at(values, i));
-    return fitLine(pick(x), pick(y)) ?? [];
-  });
+function linesOf(x: ArrayLike<number>, y: ArrayLike<number>, { rows }: Groups): LineFit[] {
+  return rows.flatMap((places) => fitLine(gather(x, places), gather(y, places)) ?? []);
 }
 
 /** One slope for groups with a level each: the groups' slopes weighed by their Σ(x − x̄)². */

@@ -1,4 +1,4 @@
-import { at, mean } from "./descriptive";
+import { at, gather, mean } from "./descriptive";
 import { leastSquares, type LeastSquares, type NoFit } from "./least-squares";
 import { numbered } from "./robust-errors";
 
@@ -26,12 +26,13 @@ export function fitWithinCells(
   cells: readonly string[],
 ): CellFit | NoFit {
   const { index, count } = numbered(cells);
-  const within = columns.map((column) => lessCellMeans(column, index, count));
-  const informative = columns.map((column) => varyingCells(column, index, count));
+  const rows = rowsOf(index, count);
+  const within = columns.map((column) => lessCellMeans(column, rows));
+  const informative = columns.map((column) => varyingCells(column, rows));
   const unseen = informative.indexOf(0);
   if (unseen >= 0) return { refused: "dependent-column", column: unseen };
   if (y.length - columns.length - count < DOF_MIN) return { refused: "too-few-rows" };
-  const fit = leastSquares(within, lessCellMeans(y, index, count), false);
+  const fit = leastSquares(within, lessCellMeans(y, rows), false);
   if ("refused" in fit) return fit;
   const dof = fit.dof - count;
   const scale = Math.sqrt(fit.dof / dof);
@@ -44,21 +45,22 @@ export function fitWithinCells(
   };
 }
 
-function rowsOf(index: Int32Array, count: number): number[][] {
+/** The rows of each group, ascending. */
+export function rowsOf(index: Int32Array, count: number): number[][] {
   const rows = Array.from({ length: count }, (): number[] => []);
-  index.forEach((cell, i) => rows[cell]?.push(i));
+  for (let i = 0; i < index.length; i++) rows[at(index, i)]?.push(i);
   return rows;
 }
 
-function lessCellMeans(values: ArrayLike<number>, index: Int32Array, count: number): Float64Array {
-  const result = Float64Array.from(values);
-  for (const rows of rowsOf(index, count)) {
-    const centre = mean(rows.map((i) => at(values, i))) ?? 0;
+function lessCellMeans(values: ArrayLike<number>, cells: readonly (readonly number[])[]): Float64Array {
+  const result = new Float64Array(values.length);
+  for (const rows of cells) {
+    const centre = mean(gather(values, rows)) ?? 0;
     for (const i of rows) result[i] = at(values, i) - centre;
   }
   return result;
 }
 
-function varyingCells(values: ArrayLike<number>, index: Int32Array, count: number): number {
-  return rowsOf(index, count).filter((rows) => rows.some((i) => at(values, i) !== at(values, rows[0] ?? i))).length;
+function varyingCells(values: ArrayLike<number>, cells: readonly (readonly number[])[]): number {
+  return cells.filter((rows) => rows.some((i) => at(values, i) !== at(values, rows[0] ?? i))).length;
 }

@@ -46,6 +46,13 @@ export function ascending(values: ArrayLike<number>): Float64Array {
   return Float64Array.from(values).sort();
 }
 
+/** The elements at some places, in their order. */
+export function gather(values: ArrayLike<number>, places: readonly number[]): Float64Array {
+  const picked = new Float64Array(places.length);
+  for (let i = 0; i < places.length; i++) picked[i] = at(values, at(places, i));
+  return picked;
+}
+
 /** Median (mean of the middle two for an even count), unit of the values; undefined for none. */
 export function median(values: ArrayLike<number>): number | undefined {
   return quantile(values, 0.5);
@@ -57,7 +64,12 @@ export function median(values: ArrayLike<number>): number | undefined {
  */
 export function quantile(values: ArrayLike<number>, p: number): number | undefined {
   if (values.length === 0 || !(p >= 0 && p <= 1)) return undefined;
-  const sorted = ascending(values);
+  return sortedQuantile(ascending(values), p);
+}
+
+/** The same of values that are in ascending order already. */
+export function sortedQuantile(sorted: Float64Array, p: number): number | undefined {
+  if (sorted.length === 0 || !(p >= 0 && p <= 1)) return undefined;
   const position = (sorted.length - 1) * p;
   const below = Math.floor(position);
   const low = at(sorted, below);

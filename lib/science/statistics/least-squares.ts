@@ -56,7 +56,8 @@ export function leastSquares(
     const v = new Float64Array(n);
     for (let i = k; i < n; i++) v[i] = at(column, i);
     v[k] = at(v, k) + (at(v, k) < 0 ? -below : below);
-    for (const other of [...a.slice(k), right]) reflect(v, other, k);
+    const square = dot(v, v, k);
+    for (const other of [...a.slice(k), right]) reflect(v, square, other, k);
     reflectors.push(v);
   }
   const inverseR = invertUpper(a, p);
@@ -65,7 +66,10 @@ export function leastSquares(
     for (let j = i; j < p; j++) coefficients[i] = at(coefficients, i) + at(inverseR[i] ?? [], j) * at(right, j);
   const residuals = new Float64Array(n);
   for (let i = p; i < n; i++) residuals[i] = at(right, i);
-  for (let k = p - 1; k >= 0; k--) reflect(reflectors[k] ?? residuals, residuals, k);
+  for (let k = p - 1; k >= 0; k--) {
+    const v = reflectors[k] ?? residuals;
+    reflect(v, dot(v, v, k), residuals, k);
+  }
   return summarise(columns, y, hasConstant, coefficients, residuals, inverseR, dot(right, right, p));
 }
 
@@ -75,8 +79,9 @@ function dot(x: ArrayLike<number>, y: ArrayLike<number>, from: number): number {
   return total;
 }
 
-function reflect(v: Float64Array, x: Float64Array, from: number): void {
-  const share = (2 * dot(v, x, from)) / dot(v, v, from);
+/** `square` is v·v from there on. */
+function reflect(v: Float64Array, square: number, x: Float64Array, from: number): void {
+  const share = (2 * dot(v, x, from)) / square;
   for (let i = from; i < x.length; i++) x[i] = at(x, i) - share * at(v, i);
 }
 
@@ -111,17 +116,11 @@ function summarise(
   const total = hasConstant ? (squaredDeviations(y) ?? 0) : sum(Array.from(y, (value) => value * value));
   const effects = p - (hasConstant ? 1 : 0);
   const f = rss === 0 ? Infinity : (total - rss) / effects / variance;
-  const leverages = Float64Array.from({ length: n }, (_, i) => {
-    const projected = inverse.map((_row, j) =>
-      columns.reduce((part, column, k) => part + at(column, i) * at(inverseR[k] ?? [], j), 0),
-    );
-    return projected.reduce((part, value) => part + value * value, 0);
-  });
   return {
     coefficients,
     standardErrors: Float64Array.from(inverse, (row, i) => Math.sqrt(variance * at(row, i))),
     residuals,
-    leverages,
+    leverages: leveragesOf(columns, inverseR, n),
     inverse,
     rss,
     residualSd: Math.sqrt(variance),
@@ -130,4 +129,23 @@ function summarise(
     f,
     fP: effects === 0 ? Number.NaN : fUpper(Math.max(0, f), effects, dof),
   };
+}
+
+/** Squares of XR⁻¹'s rows, column by column; R⁻¹ is upper triangular. */
+function leveragesOf(
+  columns: readonly ArrayLike<number>[],
+  inverseR: readonly Float64Array[],
+  n: number,
+): Float64Array {
+  const leverages = new Float64Array(n);
+  const projected = new Float64Array(n);
+  for (let j = 0; j < columns.length; j++) {
+    projected.fill(0);
+    for (let k = 0; k <= j; k++) {
+      const [column, weight] = [columns[k] ?? projected, at(inverseR[k] ?? [], j)];
+      for (let i = 0; i < n; i++) projected[i] = at(projected, i) + at(column, i) * weight;
+    }
+    for (let i = 0; i < n; i++) leverages[i] = at(leverages, i) + at(projected, i) ** 2;
+  }
+  return leverages;
 }

@@ -1,4 +1,4 @@
-import { ascending, at, median } from "./descriptive";
+import { ascending, at, median, sortedQuantile } from "./descriptive";
 import { chiSquareUpper } from "./chi-square-and-f";
 import { normalCdf, normalQuantile } from "./distributions";
 
@@ -103,17 +103,21 @@ export function hodgesLehmann(x: ArrayLike<number>, y: ArrayLike<number>) {
  * Statistics, 3.2; citation from memory). The interval needs six values; undefined below. Undefined for none.
  */
 export function medianInterval(values: ArrayLike<number>) {
-  const sorted = ascending(values);
-  const centre = median(values);
+  return sortedMedianInterval(ascending(values));
+}
+
+/** The same of values that are in ascending order already. */
+export function sortedMedianInterval(sorted: Float64Array) {
+  const centre = sortedQuantile(sorted, 0.5);
   if (centre === undefined) return undefined;
   const n = sorted.length;
-  const shares = new Float64Array(n + 1);
-  let logShare = -n * Math.LN2;
-  for (let k = 0; k <= n; k++) {
-    shares[k] = Math.exp(logShare);
+  let [logShare, below, k] = [-n * Math.LN2, 0, 0];
+  for (; k <= n; k++) {
+    below += Math.exp(logShare);
+    if (below > 0.025) break;
     logShare += Math.log((n - k) / (k + 1));
   }
-  return { median: centre, interval: intervalAt(sorted, countBelow(shares, 0.025)) };
+  return { median: centre, interval: intervalAt(sorted, k) };
 }
 
 /** How many of the smallest outcomes together stay within the tail. */

@@ -25,7 +25,9 @@ function clusterScores(
   const scores = Array.from({ length: count }, () => new Float64Array(columns.length));
   for (let i = 0; i < residuals.length; i++) {
     const score = scores[at(cluster, i)];
-    if (score) columns.forEach((column, k) => (score[k] = at(score, k) + at(column, i) * at(residuals, i)));
+    if (!score) continue;
+    const residual = at(residuals, i);
+    for (let k = 0; k < columns.length; k++) score[k] = at(score, k) + at(columns[k] ?? [], i) * residual;
   }
   return scores;
 }
@@ -33,11 +35,16 @@ function clusterScores(
 /** Numbers labels 0, 1, 2 … in order of appearance. */
 export function numbered(labels: readonly string[]): { index: Int32Array; count: number } {
   const seen = new Map<string, number>();
-  const index = Int32Array.from(labels, (label) => {
-    const known = seen.get(label) ?? seen.size;
-    seen.set(label, known);
-    return known;
-  });
+  const index = new Int32Array(labels.length);
+  for (let i = 0; i < labels.length; i++) {
+    const label = labels[i] ?? "";
+    let known = seen.get(label);
+    if (known === undefined) {
+      known = seen.size;
+      seen.set(label, known);
+    }
+    index[i] = known;
+  }
   return { index, count: seen.size };
 }
 

@@ -99,8 +99,17 @@ export function coverageDof(dof: number): number {
  * Below one degree of freedom truncation would give none, so the fraction itself is used. NaN for dof ≤ 0.
  */
 export function coverageFactor95(dof: number): number {
-  return studentTQuantile(0.975, coverageDof(dof));
+  const whole = coverageDof(dof);
+  const known = factors[whole];
+  if (known !== undefined) return known;
+  const factor = studentTQuantile(0.975, whole);
+  if (Number.isInteger(whole) && whole > 0 && whole <= factorsKept) factors[whole] = factor;
+  return factor;
 }
+
+/** Factors once found, by their whole degrees of freedom: a study asks for the same few tens of thousands of times. */
+const factors: number[] = [];
+const factorsKept = 4096;
 
 /** Expanded uncertainty U = k·u at 95 % (JCGM 100:2008, 6.2 and G.6.4), unit of u. */
 export function expand95(u: number, dof: number): { k: number; expanded: number } {

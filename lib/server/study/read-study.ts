@@ -7,7 +7,8 @@ import { studyAnswerSchema, studyChoicesSchema, type StudyAnswer, type StudyChoi
 import { outcomeKeys } from "@/lib/domain/study/outcomes";
 import { log } from "../log";
 import { choicesFrom } from "./choices";
-import { computeStudy, oneView, studyKey, type StudyFound } from "./compute-study";
+import { oneView, studyKey, type StudyFound } from "./compute-study";
+import { computeStudyInThread } from "./in-thread";
 
 /** With more entries than this an answer from before the newest publication is shown while the new one is worked out. */
 const waitUpTo = 5_000;
@@ -19,7 +20,7 @@ function workedOut(question: StudyQuestion): Promise<StudyFound & { generation: 
   const key = studyKey(question);
   const known = underway.get(key);
   if (known) return known;
-  const work = computeStudy(question).finally(() => underway.delete(key));
+  const work = computeStudyInThread(question).finally(() => underway.delete(key));
   underway.set(key, work);
   return work;
 }
@@ -83,7 +84,7 @@ export async function refreshStudies(): Promise<number> {
       storedStudy(publicDb(), { question: studyKey(question) }),
     ]);
     if (stored && stored.generation >= generation) continue;
-    await computeStudy(question);
+    await computeStudyInThread(question);
     refreshed++;
   }
   return refreshed;

@@ -50,14 +50,19 @@ function startScript(file: string): string {
   return `import("tsx/esm/api").then(({ register }) => { register(); return import(${JSON.stringify(address)}); });`;
 }
 
-function start(file: string, order: unknown, control: ThreadControl): Promise<unknown> {
-  const { onProgress, signal, withinMs, heapMaxMb } = control;
-  const thread = new Worker(startScript(file), {
+/** Starts a module of the house in a thread; whoever starts it ends it. */
+export function startThread(file: string, order: unknown, heapMaxMb: number): Worker {
+  return new Worker(startScript(file), {
     eval: true,
     workerData: order,
     execArgv: [],
     resourceLimits: { maxOldGenerationSizeMb: heapMaxMb },
   });
+}
+
+function start(file: string, order: unknown, control: ThreadControl): Promise<unknown> {
+  const { onProgress, signal, withinMs, heapMaxMb } = control;
+  const thread = startThread(file, order, heapMaxMb);
   return new Promise<unknown>((resolve, reject) => {
     const cancel = (): void => reject(new Refusal("cancelled", "Reading was cancelled."));
     const timer = setTimeout(() => reject(tooSlow(withinMs)), withinMs);
