@@ -15,6 +15,7 @@ import { nameOf } from "./names";
 import { PointsSection } from "./points-section";
 import { RanksSection } from "./ranks-section";
 import { RatioSection } from "./ratio-section";
+import { SpectraSection } from "./spectra-section";
 import { TakeAway } from "./take-away";
 import { TraitsSection } from "./traits-section";
 
@@ -29,6 +30,8 @@ export type ComparePageProps = {
   tooMany: number;
   /** ΔT that the other reading is asked at, K. */
   askedDeltaTK?: number;
+  /** Set speed of the spectra. */
+  askedSpeed?: number;
   /** Instead of the names, where somebody named it; and what stands under it. */
   title?: string;
   intro?: ReactNode;
@@ -86,6 +89,12 @@ export function ComparePage(props: ComparePageProps) {
       ) : (
         <RatioSection heads={heads} laid={laid} comparability={comparability} />
       )}
+      <SpectraSection
+        heads={heads}
+        comparability={comparability}
+        askedSpeed={props.askedSpeed}
+        askedLevelDba={props.askedLevelDba}
+      />
       <DrawingsSection heads={heads} />
       <TraitsSection heads={heads} traits={traits} />
       <RanksSection heads={heads} />

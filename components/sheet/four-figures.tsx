@@ -104,8 +104,8 @@ export function FourFigures({ sheet }: { sheet: Sheet }) {
         coolingLabel,
         { value: cooling.differenceDb.value, uncertainty: cooling.differenceDb.u95, signed: true },
         "dB",
-        "#cooling",
-        `at the baseline’s ΔT at ${at}`,
+        sheet.budgets ? "#budget-equal-cooling" : "#cooling",
+        `at the baseline’s ΔT at ${at}; how sure`,
       )
     : {
         label: coolingLabel,

@@ -50,6 +50,11 @@ export function PrintSection({ sheet }: { sheet: Sheet }) {
       </div>
       {sheet.files.length > 0 ? (
         <div className="mt-6">
+          <p className="mb-3">
+            To download is to take on the licence, {licenceWords(sheet.revision.licence)}, and the risk: a figure here
+            clears no print of yours. A rotor that bursts or sheds a blade hurts; guard it, stand out of its plane,
+            raise the speed in steps.
+          </p>
           <BarsTable
             caption="Files of this revision"
             showCaption
@@ -62,9 +67,17 @@ export function PrintSection({ sheet }: { sheet: Sheet }) {
               { key: "state", head: "State" },
             ]}
             rows={sheet.files.map((file) => ({
-              key: file.fileId,
+              key: file.attachmentId,
               cells: {
-                name: { words: file.name },
+                name: {
+                  words: file.takenDown ? (
+                    file.name
+                  ) : (
+                    <a href={`/api/v1/files/${file.attachmentId}`} download>
+                      {file.name}
+                    </a>
+                  ),
+                },
                 role: { words: file.role.replace("_", " ") },
                 bytes: { words: formatBytes(file.bytes) },
                 sha: { words: <span className="figures break-all">{file.sha256}</span> },

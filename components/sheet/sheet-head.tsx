@@ -1,5 +1,6 @@
 import Link from "next/link";
 import type { Sheet } from "@/lib/contracts/sheet";
+import { traitOf } from "@/lib/domain/designs/traits";
 import { formatDate, machineTime } from "@/lib/format/dates";
 import { formatNumber } from "@/lib/format/numbers";
 import { listWords } from "@/lib/format/words";
@@ -16,6 +17,12 @@ import {
   sheetNumber,
   stageWords,
 } from "./sheet-words";
+
+/** A trait's key as people call it; a key that no trait has stands as it is. */
+const traitWords = (key: string): string => {
+  const label = traitOf(key)?.label ?? key.replaceAll("_", " ");
+  return label.charAt(0).toLowerCase() + label.slice(1);
+};
 
 function traitFacts({ traits, revision }: Sheet): Fact[] {
   const { rotors } = traits;
@@ -87,7 +94,7 @@ export function SheetHead({ sheet }: { sheet: Sheet }) {
       <p className="small-print">
         {sheet.traits.readFromMesh.length === 0
           ? "Traits are as declared; none was read off a mesh."
-          : `Read off the mesh: ${listWords(sheet.traits.readFromMesh)}. The rest is as declared.`}
+          : `Read off the mesh: ${listWords(sheet.traits.readFromMesh.map(traitWords))}. The rest is as declared.`}
       </p>
     </Section>
   );

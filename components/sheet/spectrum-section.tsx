@@ -1,6 +1,8 @@
-import Link from "next/link";
 import { SpectrumChart } from "@/components/charts/spectrum-chart";
+import { chartBands, markedTones } from "@/components/charts/spectrum-marks";
 import { spectrumSummary } from "@/components/charts/spectrum-model";
+import { TonesTable } from "@/components/tables/tones-table";
+import { ChoiceLinks } from "@/components/ui/choice-links";
 import { Facts, type Fact } from "@/components/ui/facts";
 import { Fold } from "@/components/ui/fold";
 import { Missing } from "@/components/ui/missing";
@@ -9,10 +11,11 @@ import type { Sheet } from "@/lib/contracts/sheet";
 import type { SheetSpectrum } from "@/lib/contracts/sheet-spectra";
 import { formatNumber } from "@/lib/format/numbers";
 import { bandUnit, formatLevel } from "@/lib/format/quantities";
+import { prominentSentence } from "@/lib/format/tones";
 import { countWords } from "@/lib/format/words";
 import { millimetres, stackReadsHigh } from "./sheet-words";
-import { PredictionsTable, TonesTable } from "./spectrum-tones";
-import { chartBands, chosenSpectrum, markedTones, prominentSentence } from "./spectrum-words";
+import { PredictionsTable } from "./predictions-table";
+import { chosenSpectrum } from "./spectrum-words";
 
 /** What the address asks of the spectrum: a set speed, a microphone position. */
 export type SpectrumAsked = { speed?: number; position?: string };
@@ -23,26 +26,6 @@ const loudnessWords = (loudness: SheetSpectrum["loudness"]) =>
   ) : (
     <Missing why="a band that the method needs was not measured" />
   );
-
-function Choice({ label, items }: { label: string; items: { words: string; href: string; shown: boolean }[] }) {
-  if (items.length < 2) return null;
-  return (
-    <nav aria-label={label} className="screen-only mb-3 flex flex-wrap items-baseline gap-x-5 gap-y-1">
-      <span className="small-print">{label}</span>
-      {items.map(({ words, href, shown }) => (
-        <Link
-          key={href}
-          href={href}
-          scroll={false}
-          aria-current={shown ? "true" : undefined}
-          className={shown ? "tab font-bold" : "tab"}
-        >
-          {words}
-        </Link>
-      ))}
-    </nav>
-  );
-}
 
 function facts(sheet: Sheet, shown: SheetSpectrum, baseline: SheetSpectrum | undefined): Fact[] {
   const distance = sheet.bench.microphoneDistanceMm;
@@ -73,10 +56,10 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
   const setUnit = sheet.protocol.setting === "rpm" ? "rpm" : "% drive";
   const speed = `${formatNumber(shown.setSpeed)} ${setUnit}`;
   const stages = sheet.traits.stages;
-  const tones = markedTones(shown, stages);
-  const bands = chartBands(shown);
+  const tones = markedTones(shown.tones, stages);
+  const bands = chartBands(shown.bands);
   const baselineName = sheet.baseline ? `baseline ${sheet.baseline.serial}` : "baseline";
-  const line = baseline && { key: "baseline", name: baselineName, bands: chartBands(baseline) };
+  const line = baseline && { key: "baseline", name: baselineName, bands: chartBands(baseline.bands) };
   const corrected = shown.backgroundIds.length > 0;
   const hrefOf = (next: SpectrumAsked) => {
     const query = new URLSearchParams({ entry: sheet.entryId, speed: String(next.speed ?? shown.setSpeed) });
@@ -85,7 +68,7 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
   };
   return (
     <Section id="spectrum" title="Spectrum" note={`${shown.position}, at ${speed}`}>
-      <Choice
+      <ChoiceLinks
         label="Set speed"
         items={speeds.map((each) => ({
           words: `${formatNumber(each)} ${setUnit}`,
@@ -93,7 +76,7 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
           shown: each === shown.setSpeed,
         }))}
       />
-      <Choice
+      <ChoiceLinks
         label="Microphone position"
         items={positions.map((each) => ({
           words: each,
@@ -110,8 +93,9 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
         summary={`At ${speed}: ${spectrumSummary(bands, tones, unit, line)}`}
         caption={
           <>
-            {prominentSentence(shown, stages)} Bars that hold a predicted blade-passing tone are solid, rotor
-            interaction hatched{line ? `; dashed with squares: ${baselineName}` : ""}. Levels are unweighted,{" "}
+            {prominentSentence(shown.tones, stages)} A bar is solid where a tone found in it fits blade passing, hatched
+            where it fits rotor interaction hatched{line ? `; dashed with squares: ${baselineName}` : ""}. Levels are
+            unweighted,{" "}
             {corrected
               ? "with the background taken out; a pale bar is an upper bound, the background was too near."
               : "as read: no background spectrum was measured."}
@@ -132,7 +116,7 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
       {shown.tones.length > 0 ? (
         <>
           <h3 className="mt-6 mb-2">Tones found</h3>
-          <TonesTable spectrum={shown} stages={stages} unit={unit} caption={`Tones found at ${speed}`} />
+          <TonesTable tones={shown.tones} stages={stages} unit={unit} caption={`Tones found at ${speed}`} />
           <p className="small-print mt-2">
             Tone-to-noise and prominence ratio after ECMA-418-1:2024, not background-corrected; either can make a tone
             prominent. A tone fits a prediction within one line or 0.5 % of its frequency, whichever is more.
@@ -148,7 +132,7 @@ export function SpectrumSection({ sheet, asked }: { sheet: Sheet; asked: Spectru
       ) : null}
       {baseline && baseline.tones.length > 0 ? (
         <Fold title={`Tones of ${baselineName} at this speed`}>
-          <TonesTable spectrum={baseline} stages={1} unit={unit} caption={`Tones of ${baselineName} at ${speed}`} />
+          <TonesTable tones={baseline.tones} stages={1} unit={unit} caption={`Tones of ${baselineName} at ${speed}`} />
         </Fold>
       ) : null}
     </Section>

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { setSpeedSpectrumSchema } from "./publication";
 
 /** Most that can be laid over a baseline at once: more lines than that nobody tells apart. */
 export const compareMost = 4;
@@ -109,6 +110,12 @@ export const comparedHeadSchema = z.strictObject({
   /** What a drawing from the traits is made of. */
   drawnFrom: drawnTraitsSchema,
   ranks: z.array(comparedRankSchema),
+  /** Rotors in all, for naming tones. */
+  stages: z.int(),
+  /** At the protocol's positions, with the own session's baseline; null where none was measured. */
+  spectra: z
+    .strictObject({ entry: z.array(setSpeedSpectrumSchema), baseline: z.array(setSpeedSpectrumSchema) })
+    .nullable(),
 });
 export type ComparedHead = z.infer<typeof comparedHeadSchema>;
 

@@ -23,6 +23,40 @@ export const budgetLineSchema = z.strictObject({
 });
 export type BudgetLine = z.infer<typeof budgetLineSchema>;
 
+/** A part of the bench's budget as it stood, in its own unit (dB or K, relative for a gain). */
+export const budgetPartSchema = z.strictObject({
+  quantity: z.enum(["level", "delta_t"]),
+  kind: z.enum(["own_run", "own_mount", "shared_offset", "shared_gain"]),
+  name: z.string(),
+  evaluation: z.enum(["A", "B"]),
+  u: z.number(),
+  dof: z.number().positive().nullable(),
+  source: z.string(),
+});
+
+/** Figures beside the headline difference whose budget is kept; at a set speed but for the one at equal cooling. */
+export const budgetedFigures = [
+  "equal-cooling",
+  "level",
+  "delta-t",
+  "level-difference",
+  "delta-t-difference",
+  "resistance-ratio",
+] as const;
+
+/** Budgets of the other figures; lines name their parts by quantity and kind, so that each part stands once. */
+export const budgetsSchema = z.strictObject({
+  parts: z.array(budgetPartSchema),
+  figures: z.array(
+    z.strictObject({
+      figure: z.enum(budgetedFigures),
+      setSpeed: z.number().nullable(),
+      lines: z.array(budgetLineSchema.omit({ parts: true })),
+    }),
+  ),
+});
+export type Budgets = z.infer<typeof budgetsSchema>;
+
 /** One set speed of a subject: levels in dB(A) at the bench's microphone, ΔT in K, resistance in K/W. */
 export const snapshotPointSchema = z.strictObject({
   setSpeed: z.number(),
@@ -156,7 +190,9 @@ export const snapshotSchema = z.strictObject({
   budget: z.array(budgetLineSchema),
   notes: z.array(z.strictObject({ code: z.string(), message: z.string() })),
   leftOutRuns: z.array(z.strictObject({ runId: z.uuid(), why: z.string() })),
-  /** Left out of the digest's JSON where there is none, so that what was published before keeps its digest. */
+  /** Absent where no spectrum stands, so that what was published before keeps its digest. */
   spectra: spectraSchema.optional(),
+  /** Budgets of the other figures; absent in what was published before they were kept. */
+  budgets: budgetsSchema.optional(),
 });
 export type Snapshot = z.infer<typeof snapshotSchema>;

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { time } from "./base";
-import { budgetLineSchema, notReachedWhy } from "./publication";
+import { budgetLineSchema, budgetsSchema, notReachedWhy } from "./publication";
 import { sheetSpectraSchema } from "./sheet-spectra";
 
 /** A figure with its standard uncertainty, degrees of freedom (null: known), coverage factor and 95 % half-width. */
@@ -153,6 +153,8 @@ export const sheetSchema = z.strictObject({
   baselinePoints: z.array(sheetPointSchema),
   against: z.array(sheetAgainstSchema),
   budget: z.array(budgetLineSchema),
+  /** Of the other figures; null in what was published before they were kept. */
+  budgets: budgetsSchema.nullable(),
   /** Null where no spectrum was measured. */
   spectra: sheetSpectraSchema.nullable(),
   notes: z.array(z.strictObject({ code: z.string(), message: z.string() })),
@@ -170,6 +172,8 @@ export const sheetSchema = z.strictObject({
   ),
   files: z.array(
     z.strictObject({
+      /** What the file's address ends in: /api/v1/files/ATTACHMENT. */
+      attachmentId: z.uuid(),
       fileId: z.uuid(),
       name: z.string(),
       role: z.string(),

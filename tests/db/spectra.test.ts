@@ -93,6 +93,18 @@ it("is seen at review, signed, frozen and found again from what stands", async (
   expect(await recomputePublications(db.owner)).toMatchObject({ same: 2, differing: [] });
   const row = await db.public("shown.publication").where({ round_id: roundId }).first("snapshot", "entry_id");
   const frozen = snapshotSchema.parse(row?.snapshot).spectra;
+  // Every figure's budget adds up to the whole of its variance (JCGM 100:2008, 5.1.2), and to the figure's own u.
+  const whole = snapshotSchema.parse(row?.snapshot);
+  expect(whole.budgets?.figures.length).toBe((whole.equalCooling ? 1 : 0) + 5 * whole.points.length);
+  for (const { figure, setSpeed, lines } of whole.budgets?.figures ?? []) {
+    expect(lines.reduce((sum, line) => sum + line.share, 0)).toBeCloseTo(1, 6);
+    const point = whole.points.find((each) => each.setSpeed === setSpeed);
+    const u = figure === "level" ? point?.level.u : figure === "delta-t" ? point?.deltaT.u : undefined;
+    if (u !== undefined) expect(Math.hypot(...lines.map((line) => line.u))).toBeCloseTo(u, 6);
+    // A session's offset is the same for both, so that it's gone from a difference (JCGM 100:2008, F.1.2.3).
+    const offset = lines.find((line) => line.kind === "shared_offset" && figure === "delta-t-difference");
+    if (offset) expect(offset.cancels).toBe("fully");
+  }
   const full = frozen?.entry.find((each) => each.setSpeed === 1800);
   const listed = await db.owner("published_entry").where({ entry_id: row?.entry_id }).first("*");
   expect(listed?.loudness_sone).toBe(full?.loudness?.sone);

@@ -25,9 +25,11 @@ async function readAsked({ searchParams }: Asked) {
   const named = [...new Set([...list(params.entries), ...list(params.clip)])].slice(0, 3 * compareMost);
   const level = figureOf(params.level);
   const deltaTK = figureOf(params.dt);
+  const asked = Array.isArray(params.speed) ? undefined : params.speed;
+  const speed = asked && /^\d{1,5}(\.\d{1,3})?$/.test(asked) ? Number(asked) : undefined;
   const written = Array.isArray(params.entries) ? undefined : params.entries;
   const { entries: found, missing } = await findEntries({ named });
-  return { named, level, deltaTK, opensSave: params.save !== undefined, written, found, missing };
+  return { named, level, deltaTK, speed, opensSave: params.save !== undefined, written, found, missing };
 }
 
 export async function generateMetadata(asked: Asked): Promise<Metadata> {
@@ -37,7 +39,7 @@ export async function generateMetadata(asked: Asked): Promise<Metadata> {
 }
 
 export default async function Page(asked: Asked) {
-  const { named, level, deltaTK, opensSave, written, found, missing } = await readAsked(asked);
+  const { named, level, deltaTK, speed, opensSave, written, found, missing } = await readAsked(asked);
   if (found.length === 0) return <NothingPicked unknown={named.length > 0} />;
   const tokens = found.map((entry) => entry.token);
   // Ids, picks and other spellings move to the one address that people can read; what was left out is said first.
@@ -55,6 +57,7 @@ export default async function Page(asked: Asked) {
       comparability={sheet.comparability}
       askedLevelDba={level}
       askedDeltaTK={deltaTK}
+      askedSpeed={speed}
       missing={missing}
       tooMany={Math.max(0, found.length - compareMost)}
       saver={

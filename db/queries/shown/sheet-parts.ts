@@ -16,6 +16,16 @@ export async function shownWithdrawals(db: Handle, { slug }: { slug: string }): 
     .select({ entryId: "entry_id", reason: "reason", at: "at", name: "design_name", letter: "revision_letter" });
 }
 
+/** Whether all that was ever public of the design at an address was withdrawn, so that only a stub is left. */
+export async function nothingLeftOf(db: Handle, { slug }: { slug: string }): Promise<boolean> {
+  const { rows }: { rows: { gone: boolean }[] } = await db.raw(
+    `select exists (select 1 from shown.withdrawal where design_slug = :slug)
+       and not exists (select 1 from shown.entry where design_slug = :slug) as gone`,
+    { slug },
+  );
+  return rows[0]?.gone ?? false;
+}
+
 export interface ShownProtocolRow {
   name: string;
   version: number;
@@ -122,6 +132,7 @@ export async function shownSpecimens(
 }
 
 export interface AttachmentRow {
+  attachmentId: string;
   fileId: string;
   name: string;
   role: string;
@@ -134,6 +145,7 @@ export interface AttachmentRow {
 /** Files of a public revision in their order; those taken down keep name, hash, date and reason. */
 export async function shownAttachments(db: Handle, { revisionId }: { revisionId: string }): Promise<AttachmentRow[]> {
   return db("shown.attachment").where({ revision_id: revisionId }).orderBy(["ordinal", "id"]).select({
+    attachmentId: "id",
     fileId: "file_id",
     name: "name",
     role: "role",

@@ -46,6 +46,7 @@ export async function recomputePublications(db: Handle): Promise<RecomputeReport
         sessionId: snapshot.sessionId,
       },
       microphoneDistanceMm: distances.get(snapshot.benchVersionId) ?? Number.NaN,
+      withBudgets: snapshot.budgets !== undefined,
       makers: snapshot.spectra?.makers ?? { entry: null, baseline: null },
     });
     if (digestOf(again) === row.sha256) report.same += 1;

@@ -1,6 +1,5 @@
 import {
   snapshotSchema,
-  type BudgetLine,
   type EqualNoise,
   type Figure,
   type Snapshot,
@@ -8,7 +7,6 @@ import {
   type Spectra,
 } from "@/lib/contracts/publication";
 import type { RoundContext, RoundEntryRow } from "@/db/queries/round-context";
-import { budgetLines } from "@/lib/domain/results/budget";
 import { effectiveDof, standardUncertainty, type Effect } from "@/lib/domain/results/effects";
 import { equalCooling, equalNoise, reached } from "@/lib/domain/results/methods/v1/equal-noise";
 import { readDeltaT, risesWithLevel } from "@/lib/domain/results/methods/v1/cooling-curve";
@@ -23,6 +21,8 @@ import {
 import type { SessionRecord } from "@/lib/domain/results/session-record";
 import type { SessionSpectra } from "@/lib/domain/results/session-spectra";
 
+import { figureBudgets, headlineBudget } from "./snapshot-budgets";
+
 /** What surrounds an entry's figures in its snapshot. */
 export interface SnapshotContext {
   round: RoundContext;
@@ -30,6 +30,8 @@ export interface SnapshotContext {
   microphoneDistanceMm: number;
   /** What the tones are predicted from; frozen beside the spectra. */
   makers: Spectra["makers"];
+  /** False where a snapshot is made again that was published before budgets of all figures were kept. */
+  withBudgets?: boolean;
 }
 
 /** A session with its figures, those of each other microphone position alone, and its spectra. */
@@ -63,7 +65,7 @@ export function figureOf(value: number, effects: readonly Effect[], factor = 1):
  */
 export function buildSnapshot(
   session: ComputedSession,
-  { round, entry, microphoneDistanceMm, makers }: SnapshotContext,
+  { round, entry, microphoneDistanceMm, makers, withBudgets = true }: SnapshotContext,
 ): Snapshot {
   const { record, figures } = session;
   const own = figures.entries.find(({ subject }) => subject.entryId === entry.entryId);
@@ -121,7 +123,7 @@ export function buildSnapshot(
       ? { levelDba: round.headlineDba, differenceDb: figureOf(cooling.differenceDb, cooling.effects) }
       : null,
     budget: reached(headline)
-      ? budgetOf(
+      ? headlineBudget(
           record,
           headline.differenceEffects,
           (own.curve && readDeltaT(own.curve, round.headlineDba)?.effects) ?? [],
@@ -131,6 +133,7 @@ export function buildSnapshot(
     leftOutRuns: figures.leftOut.filter(({ runId }) =>
       record.runs.some((run) => run.runId === runId && run.entryId === entry.entryId),
     ),
+    ...(withBudgets && { budgets: figureBudgets(record, own, cooling) }),
     ...(spectra && {
       spectra: { version: 1, makers, entry: spectra, baseline: session.spectra.get(record.baselineUnitId) ?? [] },
     }),
@@ -163,26 +166,6 @@ function pointsOf(session: ComputedSession, figures: SubjectFigures): SnapshotPo
       }),
     };
   });
-}
-
-/** The lines of the headline difference's budget, largest first, with the bench's own parts behind each. */
-function budgetOf(record: SessionRecord, effects: readonly Effect[], alone: readonly Effect[]): BudgetLine[] {
-  const ownerOf = (owner: string): BudgetLine["of"] =>
-    owner.startsWith("baseline ") ? "baseline" : owner.startsWith("entry ") ? "entry" : "session";
-  return budgetLines(effects, alone).map((line) => ({
-    quantity: line.quantity,
-    kind: line.kind,
-    of: ownerOf(line.owner),
-    u: roundResult(line.u),
-    share: roundResult(line.share),
-    dof: dofOrNull(line.dof),
-    cancels: line.cancels,
-    parts: record.budget
-      .filter(
-        (part) => part.quantity === (line.quantity === "level" ? "level_dba" : "delta_t_k") && part.kind === line.kind,
-      )
-      .map(({ name, evaluation, u, source }) => ({ name, evaluation, u, source })),
-  }));
 }
 
 function notesOf(own: SubjectFigures, record: SessionRecord): Snapshot["notes"] {

@@ -47,6 +47,8 @@ function answerAt(sheet: CompareSheet, levelDba: number | undefined): CompareAns
       const { id: _id, deltaTK, differenceK, baselineDeltaTK, ...ratios } = figure;
       return {
         ...entry,
+        // Levels of bands and tones and loudness are absolute.
+        spectra: oneAxis ? entry.spectra : null,
         points: oneAxis ? pointsWithIntervals(own) : [],
         baselinePoints: oneAxis ? pointsWithIntervals(own.baseline) : [],
         atLevel: oneAxis ? { ...ratios, deltaTK, differenceK, baselineDeltaTK } : ratios,

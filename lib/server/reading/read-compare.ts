@@ -96,6 +96,8 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
       printNotes: revision.print_notes,
       licence: revision.licence,
       drawnFrom: drawnTraits(trait, rotors),
+      stages: trait.stages,
+      spectra: comparedSpectra(snapshot),
       ranks: (ranksOf.get(item.entryId) ?? []).map((row) => ({
         rule: row.ruleName,
         of: row.roundId === null ? "season" : "round",
@@ -117,6 +119,13 @@ export async function readCompare({ entryIds }: { entryIds: readonly string[] })
     ),
     laid: await measuredPoints(complete.map(({ snapshot }) => snapshot)),
   };
+}
+
+/** Spectra at the protocol's positions alone: others never stand for the level. */
+function comparedSpectra({ spectra }: Snapshot): ComparedHead["spectra"] {
+  const ofProtocol = (each: { ofProtocol: boolean }) => each.ofProtocol;
+  const entry = spectra?.entry.filter(ofProtocol) ?? [];
+  return entry.length === 0 ? null : { entry, baseline: spectra?.baseline.filter(ofProtocol) ?? [] };
 }
 
 /** The points of these entries alone and of their sessions' baselines; what else a session ran stays inside. */

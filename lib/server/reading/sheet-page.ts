@@ -152,6 +152,7 @@ function figuresOf(snapshot: Snapshot) {
       resistanceRatio: stated(each.resistanceRatio),
     })),
     budget: snapshot.budget,
+    budgets: snapshot.budgets ?? null,
     spectra: sheetSpectra(snapshot),
     notes: snapshot.notes,
     leftOutRuns: snapshot.leftOutRuns,

@@ -1,6 +1,7 @@
 import { describe, expect, test } from "vitest";
 import { sheetSchema } from "@/lib/contracts/sheet";
 import { snapshotSchema } from "@/lib/contracts/publication";
+import { isWithdrawnSheet } from "@/lib/server/reading/withdrawn";
 import { readSheetPage, readRawRunsPage } from "@/lib/server/reading/sheet-page";
 import { readingsCsv } from "@/lib/server/reading/readings-csv";
 import { setUpSmallDemo } from "./seeded-demo";
@@ -127,4 +128,10 @@ test("a withdrawn design leaves a stub with the reason and no figure", async () 
     detail: expect.stringContaining("Asked for by its designer."),
   });
   await expect(readRawRunsPage({ slug })).rejects.toMatchObject({ code: "gone" });
+  // RFC 9110, 15.5.11: 410 where access is gone for good. A design with anything public left is no stub.
+  expect(await isWithdrawnSheet(`/designs/${slug}`)).toBe(true);
+  expect(await isWithdrawnSheet(`/designs/${slug}/A`)).toBe(true);
+  const other = all.find((each) => each.slug !== slug)?.slug ?? "";
+  expect(await isWithdrawnSheet(`/designs/${other}`)).toBe(false);
+  expect(await isWithdrawnSheet("/designs")).toBe(false);
 });

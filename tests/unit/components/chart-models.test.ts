@@ -1,7 +1,9 @@
 import { describe, expect, it } from "vitest";
 import { controlSummary, controlTable, outOfControl } from "@/components/charts/control-model";
 import { coolingSummary, coolingTable, deltaTQuantity } from "@/components/charts/cooling-model";
-import { bandName, bandOf, tonesByBand } from "@/components/charts/spectrum-model";
+import { chartBands, markedTones } from "@/components/charts/spectrum-marks";
+import { bandName, bandOf, spectrumSummary, spectrumTable, tonesByBand } from "@/components/charts/spectrum-model";
+import { prominentSentence, prominentWords, toneName } from "@/lib/format/tones";
 
 const nominal = [31.5, 40, 50, 63, 80, 100, 125, 160, 200, 250, 315, 400, 500, 630, 800, 1000, 1250, 1600];
 const bands = nominal.map((nominalHz) => ({ nominalHz, levelDb: 30 }));
@@ -32,6 +34,67 @@ describe("tones fall into the band that holds them", () => {
 
   it("names bands as people do", () => {
     expect([31.5, 800, 1000, 1250].map(bandName)).toEqual(["31.5", "800", "1k", "1.25k"]);
+  });
+});
+
+describe("the spectrum's words and table", () => {
+  const tone = (frequencyHz: number, m1: number, m2: number, prominent: boolean | null) => ({
+    frequencyHz,
+    levelDb: 40,
+    toneToNoiseDb: 9,
+    prominenceDb: 9,
+    prominent,
+    match: {
+      kind: m1 === 0 || m2 === 0 ? ("blade-passing" as const) : ("interaction" as const),
+      rotor: m2 === 0 ? (1 as const) : m1 === 0 ? (2 as const) : null,
+      m1,
+      m2,
+      strutModes: null,
+      residualHz: 0.2,
+      alsoMatches: [],
+    },
+  });
+
+  it("name tones by what makes them: m·B·n/60 of a stage, or m₁f₁ + m₂f₂ (kinematics)", () => {
+    const named = (m1: number, m2: number, stages = 2) => toneName(tone(1, m1, m2, false).match, stages);
+    expect(named(1, 0, 1)).toBe("blade passing");
+    expect(named(0, 3)).toBe("blade passing, stage 2, 3 ×");
+    expect(named(1, 2)).toBe("rotor interaction 1 f₁ + 2 f₂");
+    expect(named(-1, 2)).toBe("rotor interaction 2 f₂ − 1 f₁");
+  });
+
+  it("mark tones that fit a prediction, and name the prominent ones and each stage's first", () => {
+    const marked = markedTones([tone(210, 1, 0, false), tone(420, 2, 0, false), tone(510, 1, 2, true)], 2);
+    expect(marked.map(({ kind, named }) => [kind, named])).toEqual([
+      ["blade-passing", true],
+      ["blade-passing", false],
+      ["interaction", true],
+    ]);
+    expect(markedTones([{ ...tone(300, 1, 0, true), match: null }], 1)).toEqual([]);
+  });
+
+  it("tell what is prominent, and never call a tone below 89.1 Hz not prominent (ECMA-418-1:2024, clause 8)", () => {
+    expect(prominentWords(tone(80, 1, 0, null))).toContain("89.1 Hz");
+    expect(prominentWords(tone(300, 1, 0, false))).toBe("no");
+    expect(prominentSentence([tone(80, 1, 0, null)], 1)).toBe("No tone is prominent.");
+    expect(prominentSentence([tone(210, 1, 0, true)], 1)).toContain("210 Hz blade passing");
+  });
+
+  it("carry every band of both, a bound as one, and say which band is loudest", () => {
+    const own = chartBands([
+      { nominalHz: 100, levelDb: 30, correctedDb: 28, upperBound: true },
+      { nominalHz: 125, levelDb: 45, correctedDb: 45, upperBound: false },
+      { nominalHz: 160, levelDb: null, correctedDb: null, upperBound: null },
+    ]);
+    const line = { key: "baseline", name: "baseline", bands: [{ nominalHz: 100, levelDb: 33 }] };
+    const { rows } = spectrumTable(own, [], "dB @ 100 mm", line);
+    expect(rows[0]?.cells.level).toMatchObject({ figure: { value: 28, bound: "upper" } });
+    expect(rows[0]?.cells.baseline).toMatchObject({ figure: { value: 33 } });
+    expect(rows[1]?.cells.baseline).toMatchObject({ figure: { value: undefined, why: "not measured" } });
+    expect(rows[2]?.cells.level).toMatchObject({ figure: { value: undefined, why: "not measured" } });
+    const said = spectrumSummary(own, [], "dB @ 100 mm", line);
+    expect(said).toContain("125 Hz with 45.0 dB @ 100 mm");
+    expect(said).toContain("of baseline it is 100 Hz with 33.0");
   });
 });
 

@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import Link from "next/link";
 import { ReadingsTable } from "@/components/review/readings-table";
 import { PointsTable } from "@/components/review/points-table";
+import { SpectraList } from "@/components/review/spectra-list";
 import { Fold } from "@/components/ui/fold";
 import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";
@@ -35,6 +36,11 @@ export default async function ReviewEntryPage({ params }: { params: Promise<{ ro
         aside={<Link href={`/review/${roundId}`}>Back to the round</Link>}
       >
         {entry.snapshot ? <PointsTable snapshot={entry.snapshot} /> : <p>No figures: {entry.whyNone}.</p>}
+        {entry.snapshot?.spectra ? (
+          <div className="mt-6">
+            <SpectraList snapshot={entry.snapshot} />
+          </div>
+        ) : null}
       </Section>
       {parts.map((part) => (
         <Section key={part.id} id={part.id} title={part.title}>
