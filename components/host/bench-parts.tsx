@@ -1,3 +1,4 @@
+import Link from "next/link";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Facts } from "@/components/ui/facts";
 import { Fold } from "@/components/ui/fold";
@@ -36,6 +37,9 @@ export function BenchSetupPart({ bench }: { bench: Bench }) {
 function VersionPart({ version }: { version: Version }) {
   return (
     <div className="grid gap-4">
+      <p>
+        <Link href={`/host/benches/${version.id}`}>Qualification, documented changes and budgets of this version</Link>
+      </p>
       <Facts
         facts={[
           { label: "Cooler", value: version.cooler },

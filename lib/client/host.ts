@@ -1,7 +1,10 @@
 import { useMutation, useQuery, useQueryClient, type UseMutationResult } from "@tanstack/react-query";
+import type { z } from "zod";
+import { startedSession } from "@/lib/contracts/bench-session";
+import type { startBenchSession } from "@/lib/contracts/control";
 import { levelsTrial, type LevelsTrial } from "@/lib/contracts/seasons-admin";
 import { useWrite } from "./act";
-import { getJson, send, withQuery, type ApiError } from "./fetcher";
+import { getJson, send, sendJson, withQuery, type ApiError } from "./fetcher";
 import { hostKeys } from "./query-keys";
 
 const at = (path: string) => `/api/v1/host/${path}`;
@@ -11,6 +14,12 @@ export const useAddBenchVersion = (benchId: string) =>
   useWrite("POST", at(`benches/${benchId}/versions`), hostKeys.all);
 export const useAddPosition = (id: string) => useWrite("POST", at(`bench-versions/${id}/positions`), hostKeys.all);
 export const useAddBudget = (id: string) => useWrite("POST", at(`bench-versions/${id}/budgets`), hostKeys.all);
+export const useDocumentChange = (id: string) => useWrite("POST", at(`bench-versions/${id}/changes`), hostKeys.all);
+
+export const useStartBenchSession = (id: string) =>
+  useMutation<z.infer<typeof startedSession>, ApiError, z.input<typeof startBenchSession>>({
+    mutationFn: (body) => sendJson(startedSession, at(`bench-versions/${id}/sessions`), { method: "POST", body }),
+  });
 export const useAddBudgetPart = (budgetId: string) => useWrite("POST", at(`budgets/${budgetId}/parts`), hostKeys.all);
 export const useAddProtocol = () => useWrite("POST", at("protocols"), hostKeys.all);
 export const useAddProtocolVersion = (id: string) => useWrite("POST", at(`protocols/${id}/versions`), hostKeys.all);

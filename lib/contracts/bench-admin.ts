@@ -24,7 +24,6 @@ export const newPosition = z.strictObject({
   distanceMm: z.number().positive().max(5000),
   angleDeg: z.number().min(-180).max(180),
 });
-export const newBudget = z.strictObject({ note: text(1000) });
 /** A standard uncertainty in dB or K; relative for a shared gain. */
 export const newBudgetPart = z.strictObject({
   quantity: z.enum(["level_dba", "delta_t_k"]),
@@ -37,6 +36,9 @@ export const newBudgetPart = z.strictObject({
   source: words(500),
   kind: z.enum(["own_run", "own_mount", "shared_offset", "shared_gain"]),
 });
+
+/** A budget version, with its parts where they are written down at once. */
+export const newBudget = z.strictObject({ note: text(1000), parts: z.array(newBudgetPart).max(60).default([]) });
 
 export const newProtocol = z.strictObject({ slug, name: words(120) });
 export const newProtocolVersion = z.strictObject({

@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { id } from "./base";
+import { id, time } from "./base";
 
 export const breakKinds = ["unit", "bench", "service", "other"] as const;
 
@@ -88,3 +88,36 @@ export const startBenchSession = z
     message: "is given for a bridge, and for nothing else",
   });
 export type StartBenchSession = z.output<typeof startBenchSession>;
+
+/** What the host sees of a bench version: qualification, sessions, documented changes. */
+export const benchControl = z.strictObject({
+  bench: z.string(),
+  /** Set speeds at which it is qualified. */
+  qualifiedSpeeds: z.array(z.number()),
+  sessions: z.array(
+    z.strictObject({
+      id,
+      number: z.int(),
+      purpose: z.enum(["round", "qualification", "bridge"]),
+      serial: z.string(),
+      beganAt: time,
+      endedAt: time.nullable(),
+      /** Holds that stand. */
+      held: z.int(),
+      /** Its baseline or calibrator was out of control. */
+      out: z.boolean(),
+    }),
+  ),
+  changes: z.array(
+    z.strictObject({
+      from: time,
+      kind: z.enum(breakKinds),
+      reason: z.string(),
+      /** Null for every unit on the bench version. */
+      serial: z.string().nullable(),
+      by: z.string().nullable(),
+    }),
+  ),
+  checklist: z.array(z.strictObject({ key: z.string(), words: z.string() })),
+});
+export type BenchControl = z.infer<typeof benchControl>;

@@ -497,6 +497,10 @@ export const matrix: Readonly<Record<string, MatrixRow>> = {
   },
   "PAGE /host/entries": { expected: asPage(hostOnly(200)) },
   "PAGE /host/benches": { expected: asPage(hostOnly(200)) },
+  "PAGE /host/benches/[id]": {
+    path: ({ benchVersionId }) => `/host/benches/${benchVersionId}`,
+    expected: asPage(hostOnly(200)),
+  },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
   "PAGE /host/audit": { expected: asPage(hostOnly(200)) },
   "PAGE /bench": { expected: asPage(staff(200)) },

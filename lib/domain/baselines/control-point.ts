@@ -86,7 +86,7 @@ export function controlPoint(
     before: earlier.length,
     movingRange: last ? Math.abs(value - last.value) : null,
   };
-  return { ...base, ...(frozen ? held(counted, value, frozen) : trial(counted, value, series, floor)) };
+  return { ...base, ...(frozen ? held(counted, value, frozen, floor) : trial(counted, value, series, floor)) };
 }
 
 const rangeLimit = (sigma: number): number => {
@@ -100,9 +100,13 @@ function averages(counted: readonly number[], value: number, { centre, sigma }: 
   return { ewma: all[all.length - 1] ?? null, ewmaLower: lower, ewmaUpper: upper };
 }
 
-function held(counted: readonly number[], value: number, limits: Limits) {
+function held(counted: readonly number[], value: number, limits: Limits, floor: number) {
   const { centre, sigma } = limits;
-  const z = [...counted, value].map((each) => (each - centre) / sigma);
+  // Half a display's step from the centre is on it, and ends a run on one side: else a figure that a display can only
+  // round one way would run there for ever.
+  const halfStep = (floor * Math.sqrt(12)) / 2;
+  const toZ = (each: number) => (Math.abs(each - centre) <= halfStep + 1e-12 ? 0 : (each - centre) / sigma);
+  const z = [...counted, value].map(toZ);
   const weighted = averages(counted, value, limits);
   const out: string[] = BASELINE_RULES.filter((rule) => completes(rule, z, z.length - 1));
   if (weighted.ewma !== null && (weighted.ewma < weighted.ewmaLower || weighted.ewma > weighted.ewmaUpper))

@@ -55,21 +55,42 @@ export const addPosition = (
   params: { benchVersionId: string; position: z.output<typeof admin.newPosition> },
 ) => add(asked, "microphone_position", params, (tx) => insertPosition(tx, params));
 
-export const addBudget = (asked: Asked, params: { benchVersionId: string; note: string }) =>
-  add(asked, "budget_version", params, (tx, person) => insertBudget(tx, { ...params, byPerson: person.personId }));
+/** @throws ExpectedError malformed for a part whose unit isn't its own, or two parts of one name */
+export async function addBudget(
+  asked: Asked,
+  {
+    benchVersionId,
+    note: words,
+    parts = [],
+  }: { benchVersionId: string; note: string; parts?: z.output<typeof admin.newBudget>["parts"] },
+): Promise<{ id: string }> {
+  const names = parts.map((part) => `${part.quantity} ${part.name}`);
+  parts.forEach((part, i) => {
+    checkUnit(part, `parts[${i}].unit`);
+    if (names.indexOf(names[i] ?? "") === i) return;
+    throw new ExpectedError("malformed", `There are two parts called ${part.name}.`, [
+      { path: `parts[${i}].name`, message: "is another part's name" },
+    ]);
+  });
+  return add(asked, "budget_version", { benchVersionId, note: words, parts }, async (tx, person) => {
+    const id = await insertBudget(tx, { benchVersionId, note: words, byPerson: person.personId });
+    if (id !== undefined) for (const part of parts) await insertBudgetPart(tx, { budgetId: id, part });
+    return id;
+  });
+}
+
+function checkUnit({ kind, quantity, unit }: z.output<typeof admin.newBudgetPart>, path: string): void {
+  const wanted = kind === "shared_gain" ? "relative" : quantity === "level_dba" ? "dB" : "K";
+  if (unit === wanted) return;
+  throw new ExpectedError("malformed", `The unit of this part is ${wanted}.`, [{ path, message: `is not ${wanted}` }]);
+}
 
 /** @throws ExpectedError malformed for a gain that isn't relative, or a unit that isn't the quantity's */
 export async function addBudgetPart(
   asked: Asked,
   params: { budgetId: string; part: z.output<typeof admin.newBudgetPart> },
 ): Promise<{ id: string }> {
-  const { kind, quantity, unit } = params.part;
-  const wanted = kind === "shared_gain" ? "relative" : quantity === "level_dba" ? "dB" : "K";
-  if (unit !== wanted) {
-    throw new ExpectedError("malformed", `The unit of this part is ${wanted}.`, [
-      { path: "unit", message: `is not ${wanted}` },
-    ]);
-  }
+  checkUnit(params.part, "unit");
   return add(asked, "budget_part", params, (tx) => insertBudgetPart(tx, params));
 }
 

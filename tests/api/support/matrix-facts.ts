@@ -12,6 +12,7 @@ export interface MatrixFacts {
   /** Of the bench of that season. */
   keepOutId: string;
   benchId: string;
+  benchVersionId: string;
   roundInReviewId: string;
   entryInReviewId: string;
   roundInWorkId: string;
@@ -40,6 +41,7 @@ const questions: Record<keyof MatrixFacts, string> = {
   keepOutId: `select k.id as value from keep_out k join season_bench b on b.bench_version_id = k.bench_version_id
     join season s on s.id = b.season_id order by s.slug, k.name limit 1`,
   benchId: `select id as value from bench limit 1`,
+  benchVersionId: `select bench_version_id as value from season_bench order by bench_version_id limit 1`,
   roundInReviewId: `select id as value from round where state = 'in_review' limit 1`,
   entryInReviewId: `select re.entry_id as value from round_entry re join round n on n.id = re.round_id
     where n.state = 'in_review' and re.taken_out_at is null order by re.entry_id limit 1`,

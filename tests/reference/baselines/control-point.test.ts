@@ -64,7 +64,9 @@ describe("a session's value on its chart", () => {
     expect(at([], 40.59)).toMatchObject({ kind: "frozen", out: [] });
     expect(at([], 40.61).out).toContain("one beyond 3 sigma");
     expect(at([40, 40.45], 40.45).out).toContain("two of three beyond 2 sigma on one side");
-    expect(at(Array<number>(8).fill(40.05), 40.05).out).toEqual(["nine on one side"]);
+    expect(at(Array<number>(8).fill(40.07), 40.07).out).toEqual(["nine on one side"]);
+    // Within half a display's step of 0.1 of the centre: on it, so that no run is seen in what the display rounds.
+    expect(at(Array<number>(8).fill(40.04), 40.04).out).toEqual([]);
     // EWMA, λ = 0.2: 1.4 σ ever since rises to (1 − 0.8^n)·1.4 σ, past 2.962·σ/3 = 0.987 σ from n = 6 on.
     const risen = at([39.9, ...Array<number>(7).fill(40.28)], 40.28);
     expect(risen.out).toContain("weighted mean outside its limits");
