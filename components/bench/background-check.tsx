@@ -10,6 +10,7 @@ import { useKeepSessionReading } from "@/lib/client/bench";
 import type { BenchSession } from "@/lib/contracts/bench-session";
 import { HeatedTimer } from "./heated-timer";
 import { ReadingList } from "./reading-list";
+import { RecordingDesk } from "./recording-desk";
 import { Refusal } from "./refusal";
 
 /** The level with the fan stopped; with the heater on, at most 30 s under a thermal cut-out, timed here. */
@@ -106,6 +107,7 @@ export function BackgroundCheck({ session }: { session: BenchSession }) {
           <Refusal error={keep.error} fields={false} />
         </form>
       ) : null}
+      <RecordingDesk session={session} place={{ purpose: "background" }} />
     </div>
   );
 }

@@ -2,10 +2,12 @@
 
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
+import { Notice } from "@/components/ui/notice";
 import { NumberField } from "@/components/ui/number-field";
 import { useKeepSessionReading } from "@/lib/client/bench";
 import type { BenchSession } from "@/lib/contracts/bench-session";
 import { ReadingList } from "./reading-list";
+import { RecordingDesk } from "./recording-desk";
 import { Refusal } from "./refusal";
 
 /** The calibrator, read at each position before the first run or after the last. */
@@ -26,8 +28,42 @@ export function CalibratorCheck({ session, phase }: { session: BenchSession; pha
               <CalibratorField key={position.id} session={session} phase={phase} position={position} />
             ))
         : null}
+      <Drift session={session} phase={phase} />
+      <RecordingDesk session={session} place={{ purpose: "calibration", phase }} />
     </div>
   );
+}
+
+/** How far the calibrator moved over the session, by position. */
+function Drift({ session, phase }: { session: BenchSession; phase: "before" | "after" }) {
+  if (phase === "before") return null;
+  const latest = (positionId: string, at: "before" | "after") =>
+    session.readings.findLast(
+      (each) =>
+        each.quantity === "calibrator_db" &&
+        each.phase === at &&
+        each.positionId === positionId &&
+        each.supersededBy === null,
+    )?.value;
+  const limit = session.protocol.calibratorDriftMaxDb;
+  const drifts = session.positions.flatMap(({ id, name }) => {
+    const [before, after] = [latest(id, "before"), latest(id, "after")];
+    return before === undefined || after === undefined ? [] : [{ id, name, driftDb: after - before }];
+  });
+  return drifts.map(({ id, name, driftDb }) => {
+    const words = `${name}: it moved by ${driftDb < 0 ? "−" : "+"}${Math.abs(driftDb).toFixed(2)} dB`;
+    return Math.abs(driftDb) > limit + 1e-9 ? (
+      <Notice key={id} kind="wrong" title="the calibrator drifted">
+        <p>
+          {words}; the limit is {limit} dB. Find the cause before the session ends.
+        </p>
+      </Notice>
+    ) : (
+      <p key={id}>
+        {words}, within {limit} dB.
+      </p>
+    );
+  });
 }
 
 function CalibratorField({

@@ -3,8 +3,12 @@
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/field";
+import { Notice } from "@/components/ui/notice";
+import { Progress } from "@/components/ui/progress";
 import { Slot, SlotGroup } from "@/components/ui/slot";
 import { useSendLog } from "@/lib/client/bench";
+import type { FoundLog } from "@/lib/client/bench-reader/messages";
+import { useBenchReader } from "@/lib/client/bench-reader/use-bench-reader";
 import type { LogAnswer } from "@/lib/contracts/bench-logs";
 import type { BenchRunView, BenchSession } from "@/lib/contracts/bench-session";
 import { LogReport } from "./log-report";
@@ -12,39 +16,62 @@ import { Refusal } from "./refusal";
 
 type Kind = "temperature" | "level";
 
-/** A CSV log for a run: read first, its columns confirmed, then kept as received. */
+const megabytes = (bytes: number): string => `${(bytes / 1_000_000).toFixed(1)} MB`;
+type Columns = Readonly<Partial<Record<"sensor" | "ambient" | "level", string>>>;
+
+/** A CSV log for a run: read in this browser first, its columns confirmed, then sent and kept as received. */
 export function LogForm({ session, run }: { session: BenchSession; run: BenchRunView }) {
   const [file, setFile] = useState<File>();
   const [kind, setKind] = useState<Kind>("temperature");
-  const [columns, setColumns] = useState<Record<string, string>>({});
+  /** What was chosen here; what was recognised stands beside it in the preview. */
+  const [chosen, setChosen] = useState<Columns>({});
   const [positionId, setPositionId] = useState(session.positions[0]?.id ?? "");
-  const [answer, setAnswer] = useState<LogAnswer>();
+  const [kept, setKept] = useState<LogAnswer>();
+  const reader = useBenchReader("log");
   const sendLog = useSendLog(session.id);
+  const { state } = reader;
 
-  const press = (commit: "no" | "yes", chosen: Record<string, string>) => {
-    if (!file || sendLog.isPending) return;
-    const confirmed = kind === "level" ? { level: chosen.level } : { sensor: chosen.sensor, ambient: chosen.ambient };
-    const place = kind === "level" && commit === "yes" ? { positionId } : {};
-    const query = { runId: run.id, kind, name: file.name, commit, version: run.version, ...confirmed, ...place };
-    sendLog.mutate({ file, query }, { onSuccess: (given) => take(given) });
+  const read = (choice: Columns) => {
+    if (!file) return;
+    setKept(undefined);
+    const { epsilonK, ambientDriftMaxK, levelAverageS } = session.protocol;
+    reader.read(file, { kind, choice: choiceOf(kind, choice), epsilonK, ambientDriftMaxK, levelAverageS });
   };
-  const take = (given: LogAnswer) => {
-    setAnswer(given);
-    const { sensor, ambient, level } = given.chosen;
-    setColumns({ ...(sensor && { sensor }), ...(ambient && { ambient }), ...(level && { level }) });
+  const keep = () => {
+    if (!file || sendLog.isPending) return;
+    const place = kind === "level" ? { positionId } : {};
+    const { version, id: runId } = run;
+    const query = { runId, kind, name: file.name, commit: "yes", version, ...choiceOf(kind, columns), ...place };
+    sendLog.mutate(
+      { file, query },
+      {
+        onSuccess: (answer) => {
+          setKept(answer);
+          reader.clear();
+        },
+      },
+    );
   };
   const again = () => {
-    setAnswer(undefined);
-    setColumns({});
+    setKept(undefined);
+    setSeen(undefined);
+    setChosen({});
+    reader.clear();
     sendLog.reset();
   };
-  const choose = (role: string, name: string) => {
-    const chosen = { ...columns, [role]: name };
-    setColumns(chosen);
-    press("no", chosen);
+  const choose = (role: keyof Columns, name: string) => {
+    const next = { ...columns, [role]: name };
+    setChosen(next);
+    read(next);
   };
-  const roles = kind === "level" ? ["level"] : ["sensor", "ambient"];
-  const kept = answer?.logFileId != null;
+  const [seen, setSeen] = useState<FoundLog>();
+  const now = state.step === "found" ? state.found.found : undefined;
+  if (now && now !== seen) setSeen(now);
+  // While it is read again with other columns, what was found before stays on screen.
+  const found = now ?? (state.step === "reading" ? seen : undefined);
+  const columns: Columns = { ...(found && recognised(found.chosen)), ...chosen };
+  const answer = kept ?? (found && { ...found, logFileId: null, readingIds: [] });
+  const roles: readonly (keyof Columns)[] = kind === "level" ? ["level"] : ["sensor", "ambient"];
   return (
     <div className="grid gap-4">
       <div className="flex flex-wrap items-end gap-x-6 gap-y-3">
@@ -74,12 +101,29 @@ export function LogForm({ session, run }: { session: BenchSession; run: BenchRun
             />
           ))}
         </SlotGroup>
-        <Button busy={sendLog.isPending} busyWords="Reading …" disabled={!file} onClick={() => press("no", {})}>
+        <Button busy={state.step === "reading"} busyWords="Reading …" disabled={!file} onClick={() => read({})}>
           Read the log
         </Button>
       </div>
+      {state.step === "reading" ? (
+        <Progress
+          label="Reading in this browser"
+          done={state.done}
+          of={state.of}
+          words={`${megabytes(state.done)} of ${megabytes(state.of)} read`}
+          onCancel={reader.clear}
+        />
+      ) : null}
+      {state.step === "refused" ? (
+        <Notice kind="wrong" title="this log can’t be read" live="alert">
+          <p>
+            {state.refused.message}
+            {state.refused.at ? ` (at ${state.refused.at})` : ""}. Nothing was sent.
+          </p>
+        </Notice>
+      ) : null}
       <Refusal error={sendLog.error} />
-      {answer && !kept ? (
+      {found ? (
         <div className="flex flex-wrap items-end gap-4">
           {roles.map((role) => (
             <Select
@@ -89,7 +133,7 @@ export function LogForm({ session, run }: { session: BenchSession; run: BenchRun
               onChange={(event) => choose(role, event.currentTarget.value)}
               options={[
                 { value: "", label: "not recognised: choose", disabled: true },
-                ...answer.columns.map((column) => ({
+                ...found.columns.map((column) => ({
                   value: column.name,
                   label: column.unit ? `${column.name} [${column.unit}]` : column.name,
                 })),
@@ -109,7 +153,7 @@ export function LogForm({ session, run }: { session: BenchSession; run: BenchRun
             busy={sendLog.isPending}
             busyWords="Keeping …"
             disabled={roles.some((role) => !columns[role])}
-            onClick={() => press("yes", columns)}
+            onClick={keep}
           >
             Columns are right: keep the log
           </Button>
@@ -119,3 +163,12 @@ export function LogForm({ session, run }: { session: BenchSession; run: BenchRun
     </div>
   );
 }
+
+const choiceOf = (kind: Kind, { sensor, ambient, level }: Columns): Columns =>
+  kind === "level" ? { ...(level && { level }) } : { ...(sensor && { sensor }), ...(ambient && { ambient }) };
+
+const recognised = ({ sensor, ambient, level }: LogAnswer["chosen"]): Columns => ({
+  ...(sensor && { sensor }),
+  ...(ambient && { ambient }),
+  ...(level && { level }),
+});

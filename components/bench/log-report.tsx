@@ -2,11 +2,15 @@ import { Fold } from "@/components/ui/fold";
 import { Notice } from "@/components/ui/notice";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { LogAnswer } from "@/lib/contracts/bench-logs";
+import type { FoundLog } from "@/lib/client/bench-reader/messages";
+
+/** A log as read here, or as the server answered when it was kept. */
+export type ShownLog = (Omit<FoundLog, "reading"> | LogAnswer) & Pick<LogAnswer, "logFileId" | "readingIds">;
 
 const whole = (value: number | null): string => (value === null ? "an unknown time" : `${Math.round(value)} s`);
 
 /** What a log says: its first rows, each refused row with line and reason, and whether a reading comes of it. */
-export function LogReport({ answer, kind }: { answer: LogAnswer; kind: "temperature" | "level" }) {
+export function LogReport({ answer, kind }: { answer: ShownLog; kind: "temperature" | "level" }) {
   const { temperature, level, refused, refusedCount, warnings } = answer;
   const verdict =
     kind === "temperature" && temperature && temperature.deltaTK !== null

@@ -27,7 +27,11 @@ export function ReadingList({ readings, session }: { readings: readonly BenchRea
           <li key={reading.id} className="flex flex-wrap items-baseline gap-x-3">
             <span>{name}</span>
             <span className={gone ? "line-through" : "font-bold"}>
-              <Value value={reading.value} decimals={reading.source === "log" ? 2 : 1} unit={reading.unit} />
+              <Value
+                value={reading.value}
+                decimals={reading.source === "log" || reading.quantity === "calibrator_db" ? 2 : 1}
+                unit={reading.unit}
+              />
             </span>
             <span className="docket">
               {reading.source}, {reading.takenBy.handle ?? "an erased account"}, {formatTime(reading.takenAt)}

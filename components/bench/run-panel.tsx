@@ -9,6 +9,7 @@ import { sameSubject } from "@/lib/domain/bench/next-run";
 import { LogForm } from "./log-form";
 import { ReadingList } from "./reading-list";
 import { readingFields, typedReadings } from "./reading-fields";
+import { RecordingDesk } from "./recording-desk";
 import { Refusal } from "./refusal";
 import { RunStateForm } from "./run-state-form";
 import { useDraft } from "./use-draft";
@@ -42,6 +43,7 @@ export function RunPanel({ session, subject, cell, onClose }: RunPanelProps) {
       ) : null}
       <ReadingList readings={readings} session={session} />
       {writable ? <RunReadings session={session} subject={subject} cell={cell} run={run} words={words} /> : null}
+      {run ? <RecordingDesk session={session} place={{ purpose: "run", run }} /> : null}
       {writable && run ? (
         <>
           <Fold title="Bring a log (CSV)">
