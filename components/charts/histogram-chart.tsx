@@ -6,7 +6,7 @@ import { Bar } from "react-chartjs-2";
 import { formatRange } from "@/lib/format/quantities";
 import type { HistogramBin } from "@/components/ui/small-histogram";
 import { ChartFrame } from "./chart-frame";
-import { usePalette } from "./palette";
+import { usePalette, type Palette } from "./palette";
 import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
 
@@ -18,7 +18,36 @@ export type HistogramChartProps = {
   decimals?: number;
   caption?: ReactNode;
   fileName?: string;
+  /** Single values to be found among the rest, each with its name. */
+  marks?: readonly { value: number; name: string }[];
 };
+
+/** Lines across the bars; on an axis of bins a value lies by its bin's place. */
+function markLines(bins: readonly HistogramBin[], marks: NonNullable<HistogramChartProps["marks"]>, palette: Palette) {
+  const [first] = bins;
+  if (!first) return {};
+  return Object.fromEntries(
+    marks.map(({ value, name }, index) => [
+      `mark${index}`,
+      {
+        type: "line" as const,
+        scaleID: "x",
+        value: (value - first.from) / (first.to - first.from) - 0.5,
+        borderColor: palette.ink,
+        borderWidth: 2,
+        label: {
+          display: true,
+          content: name,
+          position: "end" as const,
+          yAdjust: 18 * (index % 3),
+          backgroundColor: palette.paper,
+          color: palette.ink,
+          font: { family: palette.figures, size: 12, weight: "bold" as const },
+        },
+      },
+    ]),
+  );
+}
 
 /** How many lie where: bars without gaps, counts up the side. */
 export function HistogramChart(props: HistogramChartProps) {
@@ -31,6 +60,7 @@ export function HistogramChart(props: HistogramChartProps) {
   const options: ChartOptions<"bar"> | undefined = palette &&
     base && {
       ...commonOptions(palette),
+      plugins: { annotation: { annotations: markLines(bins, props.marks ?? [], palette) } },
       scales: {
         x: axis(palette, `${quantity}, ${unit}`, false),
         y: { ...base, beginAtZero: true, ticks: { ...base.ticks, precision: 0 } },

@@ -9,18 +9,21 @@ export interface StudyScope {
   rotations: readonly string[];
   /** Season slugs; none: all. */
   seasons: readonly string[];
+  /** These alone; all where it is left out. */
+  entryIds?: readonly string[];
 }
 
 /** Whoever owned a design first is its cluster; former members share a word, so their designs stay apart. */
 const designer = `case when designers[1] is null or designers[1] = 'former member' then design_id::text else designers[1] end`;
 
-function within(db: Handle, { frames, rotations, seasons }: StudyScope): Knex.QueryBuilder {
+function within(db: Handle, { frames, rotations, seasons, entryIds }: StudyScope): Knex.QueryBuilder {
   const query = db("shown.entry");
   if (frames.length > 0)
     void query.whereRaw("(frame_key = any (?::text[]) or split_part(frame_key, 'x', 1) = any (?::text[]))", [
       [...frames],
       [...frames],
     ]);
+  if (entryIds) void query.whereIn("entry_id", [...entryIds]);
   if (rotations.length > 0) void query.whereIn("rotation", [...rotations]);
   if (seasons.length > 0) void query.whereIn("season_slug", [...seasons]);
   return query;

@@ -122,6 +122,13 @@ export function distributionsOf(
   });
 }
 
+/** How values are spread, in round bins of one width. */
+export function histogramOf(values: readonly number[]): { from: number; width: number; counts: number[] } {
+  const sorted = ascending(values);
+  const bins = binsFor(sorted);
+  return { from: bins.from, width: bins.width, counts: countIn(bins, sorted) };
+}
+
 /** At most about twenty bins of a round width (1, 2 or 5 times a power of ten) that hold all values. */
 function binsFor(values: Float64Array): Distribution["bins"] {
   if (values.length === 0) return { from: 0, width: 1, count: 0 };

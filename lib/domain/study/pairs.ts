@@ -115,25 +115,41 @@ function pairFrom(from: StudyEntry, to: StudyEntry, outcome: OutcomeKey): Pair |
   if (more.length > 0) return "severalTraits";
   if (from.designer !== to.designer) return "otherDesigner";
   if (from.baselineUnitId !== to.baselineUnitId) return "otherBaseline";
-  const [before, after] = [modelValue(outcome, from), modelValue(outcome, to)];
-  const figures = [outcomes[outcome].of(from), outcomes[outcome].of(to)].flatMap((figure) => figure ?? []);
-  if (before === undefined || after === undefined) return "notReached";
-  const parts = figures.map((figure) => ({ u: modelUncertainty(outcome, figure), dof: figure.dof ?? Infinity }));
-  const u = Math.hypot(...parts.map((part) => part.u));
-  const k = u > 0 ? coverageFactor95(welchSatterthwaite(parts)) : 0;
-  const change = shownEffect(outcome, after - before);
+  const between = changeBetween(from, to, outcome);
+  if (!between) return "notReached";
   return {
     trait,
     fromEntryId: from.entryId,
     toEntryId: to.entryId,
     fromValue: worth(traitOf(trait).of(from)),
     toValue: worth(traitOf(trait).of(to)),
+    ...between,
+    designer: to.designer,
+  };
+}
+
+/**
+ * How a figure changed from one entry to another against one baseline unit, later against earlier, with the half-width of its
+ * 95 % interval (sessions taken as independent). Undefined where one of them didn't reach it.
+ */
+export function changeBetween(
+  from: StudyEntry,
+  to: StudyEntry,
+  outcome: OutcomeKey,
+): Pick<Pair, "change" | "delta" | "expanded" | "together"> | undefined {
+  const [before, after] = [modelValue(outcome, from), modelValue(outcome, to)];
+  const figures = [outcomes[outcome].of(from), outcomes[outcome].of(to)].flatMap((figure) => figure ?? []);
+  if (before === undefined || after === undefined) return undefined;
+  const parts = figures.map((figure) => ({ u: modelUncertainty(outcome, figure), dof: figure.dof ?? Infinity }));
+  const u = Math.hypot(...parts.map((part) => part.u));
+  const k = u > 0 ? coverageFactor95(welchSatterthwaite(parts)) : 0;
+  const change = shownEffect(outcome, after - before);
+  return {
     change,
     delta: after - before,
     // The wider side of the interval, which for a ratio is the upper one.
     expanded: shownEffect(outcome, after - before + k * u) - change,
     together: joined(from, to),
-    designer: to.designer,
   };
 }
 

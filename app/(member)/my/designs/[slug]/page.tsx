@@ -31,7 +31,14 @@ export default async function MyDesignPage({ params }: { params: Promise<{ slug:
         title={design.name}
         level={1}
         note={design.summary}
-        aside={design.isPublic ? <Link href={`/designs/${design.slug}`}>Its sheet</Link> : null}
+        aside={
+          design.isPublic ? (
+            <span className="flex flex-wrap gap-x-5">
+              <Link href={`/designs/${design.slug}`}>Its sheet</Link>
+              <Link href={`${path}/field`}>In its field</Link>
+            </span>
+          ) : null
+        }
       >
         <OwnEntries design={design} />
       </Section>
