@@ -8,8 +8,14 @@ export interface StoredPublication {
   entryId: string;
   snapshot: unknown;
   sha256: string;
+  /** Its session was made up by a demo's fill, and holds no readings. */
+  filled: boolean;
   round: RoundContext;
 }
+
+/** A fill's mark holds only while nothing was ever measured in the session: it can't hide a reading. */
+const filled = `exists (select 1 from filled_session f where f.session_id = s.session_id
+           and not exists (select 1 from reading d where d.session_id = s.session_id))`;
 
 /** Every publication that the world sees now, session by session, in pages by a stable key. */
 export async function* currentPublications(db: Handle, pageSize = 200): AsyncGenerator<StoredPublication> {
@@ -18,7 +24,8 @@ export async function* currentPublications(db: Handle, pageSize = 200): AsyncGen
   for (;;) {
     const { rows }: { rows: (Omit<StoredPublication, "round"> & { sessionId: string; roundId: string })[] } =
       await db.raw(
-        `select b.id, b.entry_id as "entryId", b.snapshot, b.sha256, b.round_id as "roundId", s.session_id as "sessionId"
+        `select b.id, b.entry_id as "entryId", b.snapshot, b.sha256, b.round_id as "roundId", s.session_id as "sessionId",
+         ${filled} as filled
        from published_entry p join publication b on b.id = p.publication_id join publication_session s on s.publication_id = b.id
        where (s.session_id, b.id) > (:sessionId, :id) order by s.session_id, b.id limit :pageSize`,
         { ...after, pageSize },
@@ -55,6 +62,16 @@ export async function newestStandings(db: Handle): Promise<StoredStanding[]> {
      order by t.season_id, t.round_id, t.rule_version_id, t.number desc`,
   );
   return rows;
+}
+
+/** Whether a standing rests on filled sessions alone, so that there are no readings to draw it from again. */
+export async function standingIsFilled(db: Handle, { standingId }: { standingId: string }): Promise<boolean> {
+  const { rows }: { rows: { filled: boolean | null }[] } = await db.raw(
+    `select bool_and(${filled}) as filled from standing_row r join published_entry p on p.entry_id = r.entry_id
+       join publication_session s on s.publication_id = p.publication_id where r.standing_id = :standingId`,
+    { standingId },
+  );
+  return rows[0]?.filled ?? false;
 }
 
 /** Which entries stand in a standing, each with the session that its publication rests on. */

@@ -1,5 +1,11 @@
 import type { Handle } from "@/db/client/connect";
-import { currentPublications, newestStandings, standingEntries, storedStandingRows } from "@/db/queries/recompute";
+import {
+  currentPublications,
+  newestStandings,
+  standingEntries,
+  standingIsFilled,
+  storedStandingRows,
+} from "@/db/queries/recompute";
 import { microphoneDistances } from "@/db/queries/publishing";
 import { snapshotSchema } from "@/lib/contracts/publication";
 import { digestOf } from "./digest";
@@ -10,15 +16,21 @@ import { standingInput, standingRows } from "./standing";
 export interface RecomputeReport {
   what: "publications" | "standings";
   same: number;
+  /** Made up by a demo's fill, without readings: nothing to recompute. */
+  filled: number;
   /** What differs, by id and what was compared. */
   differing: string[];
 }
 
 /** Builds every current publication's snapshot again from the readings that stand and compares SHA-256. */
 export async function recomputePublications(db: Handle): Promise<RecomputeReport> {
-  const report: RecomputeReport = { what: "publications", same: 0, differing: [] };
+  const report: RecomputeReport = { what: "publications", same: 0, filled: 0, differing: [] };
   let session: ComputedSession | undefined;
   for await (const row of currentPublications(db)) {
+    if (row.filled) {
+      report.filled += 1;
+      continue;
+    }
     const snapshot = snapshotSchema.parse(row.snapshot);
     if (session?.record.sessionId !== snapshot.sessionId) {
       const sessions = await computedSessions(db, { sessionIds: [snapshot.sessionId] });
@@ -57,8 +69,12 @@ export async function recomputePublications(db: Handle): Promise<RecomputeReport
 
 /** Draws the newest standing of every season, round and rule again from its stored seed and compares every row. */
 export async function recomputeStandings(db: Handle): Promise<RecomputeReport> {
-  const report: RecomputeReport = { what: "standings", same: 0, differing: [] };
+  const report: RecomputeReport = { what: "standings", same: 0, filled: 0, differing: [] };
   for (const standing of await newestStandings(db)) {
+    if (await standingIsFilled(db, { standingId: standing.id })) {
+      report.filled += 1;
+      continue;
+    }
     const entries = await standingEntries(db, { standingId: standing.id });
     const input = await standingInput(db, { ...standing, entries, rule: standing.rule });
     const again = standingRows(input);

@@ -26,7 +26,7 @@ const restingTriggers = [
 /**
  * Adds that many invented, published entries to a database that holds the demo, as its owner: seasons of four hundred,
  * a season a transaction. The same database and number give the same rows. They have snapshots and ranks but no
- * readings, so they can't be recomputed. The search index is left to be filled anew.
+ * readings, so they can't be recomputed: their sessions are named in filled_session. The search index is left to be filled anew.
  */
 export async function fillField(
   owner: Handle,

@@ -81,6 +81,7 @@ export function seasonRows(random: Random, bench: FieldBench, written: Written, 
       },
       ...{ began_at: new Date(at.getTime() - 2 * day), ended_at: new Date(at.getTime() - 2 * day + day / 4) },
     });
+    add("filled_session", { session_id: sessionId, at });
     const inRound: Row[] = [];
     for (const { design, revision } of round.entries) {
       const ids = designRows(add, id, bench, written, { design, revision, at: season.opensAt });
@@ -125,7 +126,17 @@ export function seasonRows(random: Random, bench: FieldBench, written: Written, 
 }
 
 export const tables = [
-  ...(["season", "season_bench", "season_baseline", "round", "session", "design", "design_owner", "revision"] as const),
+  ...([
+    "season",
+    "season_bench",
+    "season_baseline",
+    "round",
+    "session",
+    "filled_session",
+    "design",
+    "design_owner",
+    "revision",
+  ] as const),
   ...(["revision_trait", "rotor", "derivation", "entry", "round_entry", "publication", "publication_session"] as const),
   ...(["published_entry", "standing", "standing_row"] as const),
 ] as const;
