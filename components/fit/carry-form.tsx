@@ -7,6 +7,7 @@ import type { ActField, ActValues } from "@/components/ui/act/act-values";
 import { Select } from "@/components/ui/field";
 import { Progress } from "@/components/ui/progress";
 import type { RotorTraits } from "@/lib/client/fit/messages";
+import { forgetKeptModel } from "@/lib/client/fit/kept-model";
 import { useCarrying } from "@/lib/client/fit/use-carrying";
 import type { CarryChoices, CarryDesign } from "@/lib/contracts/carry";
 import { licences, materials } from "@/lib/contracts/own-designs";
@@ -95,6 +96,7 @@ export function CarryForm({ model, rotors, frameKey, choices }: CarryFormProps) 
               {
                 onSuccess: (made) => {
                   onSuccess();
+                  void forgetKeptModel();
                   router.push(`/my/designs/${made.slug}/revisions/${made.letter}`);
                 },
               },

@@ -5,7 +5,7 @@ import { Button } from "@/components/ui/button";
 import { Progress } from "@/components/ui/progress";
 import { Section } from "@/components/ui/sheet";
 import { ErrorState } from "@/components/ui/states";
-import { takeKeptModel } from "@/lib/client/fit/kept-model";
+import { forgetKeptModel, keptModel } from "@/lib/client/fit/kept-model";
 import type { CarryChoices } from "@/lib/contracts/carry";
 import type { FitLimits } from "@/lib/contracts/fit-limits";
 import { useModelReading, type ModelReadingActs } from "@/lib/client/fit/use-model-reading";
@@ -76,7 +76,7 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
     if (measured && frame) compare({ frame, season, turned });
   }, [measured, limits, frameKey, seasonSlug, turned, compare]);
   useEffect(() => {
-    takeKeptModel()
+    keptModel()
       .then((kept) => {
         if (!kept) return;
         setFile(kept.file);
@@ -89,7 +89,13 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
   const chooseFile = (given: File) => {
     setFile(given);
     setCarrying(false);
+    void forgetKeptModel();
     choose(given);
+  };
+  const putAway = () => {
+    setFile(undefined);
+    void forgetKeptModel();
+    reading.cancel();
   };
   return (
     <>
@@ -101,7 +107,7 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
         className="grid gap-5"
       >
         <DropModel onFile={chooseFile} ready={ready} again={state.step !== "none"} />
-        <Reading {...reading} />
+        <Reading {...reading} cancel={putAway} />
         {state.step === "measured" && file ? (
           <CarryOn
             model={{ file, mmPerUnit: state.mmPerUnit }}

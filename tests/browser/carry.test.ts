@@ -40,6 +40,7 @@ describe("a model on the fit page", () => {
     await page.getByLabel("Password").fill(demoPassword);
     await page.getByRole("button", { name: "Sign in", exact: true }).click();
 
+    await page.waitForURL("**/fit");
     // The same model is there again, and nothing has left the browser yet.
     await page.getByText("triangles read and measured").waitFor();
     expect(sent).toEqual([]);

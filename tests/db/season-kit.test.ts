@@ -2,9 +2,15 @@ import { execFileSync, spawnSync } from "node:child_process";
 import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
+import { Readable } from "node:stream";
 import { PDFDocument } from "pdf-lib";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
+import { fileOfContent } from "@/db/queries/uploads";
+import { toyFinStack } from "@/db/seeds/demo/toy-mesh";
+import { adoptEnvironment } from "@/lib/env/env";
+import { writeBinaryStl } from "@/lib/science/geometry/stl-write";
+import { contentOf, keepContent } from "@/lib/server/uploads/content";
 import { kitSvg } from "@/lib/server/kit/kit-drawing";
 import { kitPdf } from "@/lib/server/kit/kit-pdf";
 import { kitSolidsStl, kitSolidStl } from "@/lib/server/kit/kit-solids";
@@ -71,6 +77,31 @@ describe("a season's keep-out solids as STL", () => {
       boxes.length,
     );
     expect(name).toBe("season-1-keep-outs.stl");
+  });
+});
+
+describe("a keep-out solid that is kept as a mesh", () => {
+  it("comes in cooler coordinates as it was kept, beside the boxes", async () => {
+    adoptEnvironment({ DATA_DIR: folder });
+    const bytes = Buffer.from(writeBinaryStl(toyFinStack(10), "fins"));
+    const content = await contentOf(async () => Readable.from([bytes]), bytes.length);
+    const { sha256, kind } = content;
+    const storageKey = await keepContent(content);
+    const receivedFrom = (await db.owner("person").first("id")).id;
+    const file = { sha256, kind, storageKey, receivedFrom, bytes: bytes.length };
+    const fileId = await fileOfContent(db.owner, file);
+    const { bench_version_id } = await db.owner("keep_out").where({ id: boxes[0]?.id }).first();
+    const row = { bench_version_id, name: "Fin stack", shape: "mesh", file_id: fileId };
+    const [made] = await db.owner("keep_out").insert(row).returning("id");
+    // Ten plates of 124 mm × 0.5 mm × 48 mm.
+    const fins = 10 * 124 * 0.5 * 48;
+    await expectVolume((await kitSolidStl({ slug, id: made.id })).bytes, fins, 10);
+    await db
+      .owner("file")
+      .where({ id: fileId })
+      .update({ state: "taken_down", reason: "a test", taken_down_at: new Date() });
+    await expect(kitSolidStl({ slug, id: made.id })).rejects.toMatchObject({ code: "gone" });
+    await db.owner("keep_out").where({ id: made.id }).delete();
   });
 });
 

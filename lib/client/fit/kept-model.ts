@@ -41,20 +41,27 @@ export async function keepModel(model: KeptModel): Promise<void> {
   await within((store) => void store.put(row));
 }
 
-/** The model that this tab kept, once; what other tabs left behind an hour ago goes with it. */
-export async function takeKeptModel(): Promise<KeptModel | undefined> {
+/** The model that this tab keeps, until it is forgotten; what other tabs left behind an hour ago goes. */
+export async function keptModel(): Promise<KeptModel | undefined> {
   const tab = sessionStorage.getItem(tabKey);
   if (tab === null) return undefined;
-  sessionStorage.removeItem(tabKey);
   let found: Row | undefined;
   await within((store) => {
     const all = store.getAll();
     all.onsuccess = () => {
       for (const row of all.result as Row[]) {
         if (row.tab === tab) found = row;
-        if (row.tab === tab || Date.now() - row.at > keptForMs) store.delete(row.tab);
+        else if (Date.now() - row.at > keptForMs) store.delete(row.tab);
       }
     };
   });
   return found && { file: found.file, mmPerUnit: found.mmPerUnit };
+}
+
+/** Forgets it: the model was carried on, put away, or another one is looked at. */
+export async function forgetKeptModel(): Promise<void> {
+  const tab = sessionStorage.getItem(tabKey);
+  if (tab === null) return;
+  sessionStorage.removeItem(tabKey);
+  await within((store) => void store.delete(tab));
 }

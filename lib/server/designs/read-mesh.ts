@@ -1,9 +1,10 @@
-import { Worker } from "node:worker_threads";
+import type { Worker } from "node:worker_threads";
 import { meshDrawing, type MeshDrawing } from "@/lib/contracts/drawing";
 import { meshReadingResult, type MeshReadingResult } from "@/lib/contracts/mesh-reading";
 import type { Mesh } from "@/lib/science/geometry/mesh";
 import type { ReadingLimits } from "@/lib/science/geometry/reading";
 import { Refusal } from "@/lib/science/refusal";
+import { startThread } from "../threads/run-thread";
 
 export interface ThreadOrder {
   file: string;
@@ -44,24 +45,12 @@ export interface MeshReadingControl {
 /** Time that reading and measuring one file may take, in ms: within the job's own limit of 300 s. */
 export const meshTimeMaxMs = 180_000;
 const modelBytesMax = 300_000_000;
-/** A thread doesn't inherit what lets its process run TypeScript, so it sets that up itself. */
-const startThread = `
-  import("tsx/esm/api").then(({ register }) => {
-    register();
-    return import(${JSON.stringify(new URL("./read-mesh-thread.ts", import.meta.url).href)});
-  });
-`;
 /** Heap of the thread in MB; typed arrays lie outside it and are bounded by the limits on bytes and triangles. */
 const heapMaxMb = 1_024;
 
 /** Starts the thread that reads one file; whoever starts it ends it. */
 export function startMeshThread(order: ThreadOrder): Worker {
-  return new Worker(startThread, {
-    eval: true,
-    workerData: order,
-    execArgv: [],
-    resourceLimits: { maxOldGenerationSizeMb: heapMaxMb },
-  });
+  return startThread("lib/server/designs/read-mesh-thread.ts", order, heapMaxMb);
 }
 
 /**
