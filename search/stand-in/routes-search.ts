@@ -1,6 +1,8 @@
 import { randomUUID } from "node:crypto";
 import type { Engine } from "./engine";
-import { ServiceError, notSupported } from "./errors";
+import { ServiceError } from "./errors";
+import type { FederatedQuery, Federation } from "./federation";
+import { checkFederated, federate, readFederation, readWeight } from "./federation";
 import type { Exchange, Route } from "./http";
 import { checkUid, indexUidOf, ok, readJson } from "./http";
 import type { Caller } from "./keys";
@@ -57,9 +59,14 @@ export function searchRoutes(engine: Engine): Route[] {
       path: "/multi-search",
       action: "search",
       handle: async (exchange) => {
-        const queries = readQueries(await readJson(exchange));
-        const texts: TextCache = new Map();
-        const results = queries.map((query, i) => inside(i, () => runQuery(engine, exchange, query, options(texts))));
+        const { queries, federation } = readMultiSearch(await readJson(exchange));
+        const shared = options(new Map());
+        const read = queries.map((query, i) => inside(i, () => readQuery(engine, exchange, query, i, federation)));
+        if (federation !== undefined) return ok(federate(read, federation, shared));
+        const results = read.map(({ index, params }, i) => ({
+          indexUid: index.uid,
+          ...inside(i, () => search(index, params, shared)),
+        }));
         return ok({ results });
       },
     },
@@ -72,22 +79,21 @@ function tied<T extends SearchParams>(params: T, caller: Caller, uid: string): T
   return rule === null ? params : { ...params, filter: bothFilters(params.filter, rule) };
 }
 
-function readQueries(body: unknown): unknown[] {
+function readMultiSearch(body: unknown): { queries: unknown[]; federation: Federation | undefined } {
   if (!isRecord(body))
     throw new ServiceError("bad_request", `Invalid value type: expected an object, but found ${kind(body)}`);
   const odd = Object.keys(body).find((field) => field !== "queries" && field !== "federation");
   if (odd !== undefined) {
     throw new ServiceError("bad_request", `Unknown field \`${odd}\`: expected one of \`queries\`, \`federation\``);
   }
-  if (body.federation !== undefined && body.federation !== null) throw notSupported("Federated search (`federation`)");
   if (body.queries === undefined) throw new ServiceError("bad_request", "Missing field `queries`");
-  if (!Array.isArray(body.queries)) {
-    throw new ServiceError(
-      "bad_request",
-      `Invalid value type at \`.queries\`: expected an array, but found ${kind(body.queries)}`,
-    );
-  }
-  return body.queries as unknown[];
+  const wrong = (at: string, expected: string, found: unknown): ServiceError =>
+    new ServiceError("bad_request", `Invalid value type at \`${at}\`: expected ${expected}, but found ${kind(found)}`);
+  const { queries, federation } = body;
+  if (!Array.isArray(queries)) throw wrong(".queries", "an array", queries);
+  if (federation === undefined || federation === null) return { queries, federation: undefined };
+  if (!isRecord(federation)) throw wrong(".federation", "an object", federation);
+  return { queries, federation: readFederation(federation) };
 }
 
 /** A refusal of one query refuses the request and says which query it was. */
@@ -99,14 +105,27 @@ function inside<T>(position: number, run: () => T): T {
   }
 }
 
-function runQuery(engine: Engine, exchange: Exchange, query: unknown, options: SearchOptions): Record<string, unknown> {
+function readQuery(
+  engine: Engine,
+  exchange: Exchange,
+  query: unknown,
+  position: number,
+  federation: Federation | undefined,
+): FederatedQuery {
   if (!isRecord(query))
     throw new ServiceError("bad_request", `Invalid value type: expected an object, but found ${kind(query)}`);
   const { indexUid, federationOptions, ...body } = query;
   if (indexUid === undefined) throw new ServiceError("missing_index_uid", "Missing field `indexUid`");
-  if (federationOptions !== undefined && federationOptions !== null)
-    throw notSupported("Federated search (`federationOptions`)");
+  if (federation === undefined && federationOptions !== undefined && federationOptions !== null) {
+    throw new ServiceError(
+      "invalid_multi_search_federation_options",
+      `Using \`federationOptions\` is not allowed in a non-federated search.\n - Hint: remove \`federationOptions\` from query #${position} or add \`federation\` to the request.`,
+    );
+  }
   const uid = checkUid(indexUid, ".indexUid");
   if (!exchange.caller.allows("search", uid)) throw invalidKey();
-  return { indexUid: uid, ...search(engine.index(uid), tied(readSearch(body), exchange.caller, uid), options) };
+  const params = tied(readSearch(body), exchange.caller, uid);
+  const read = { index: engine.index(uid), params, weight: readWeight(federationOptions) };
+  if (federation !== undefined) checkFederated(read, body, position);
+  return read;
 }

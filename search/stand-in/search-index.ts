@@ -186,7 +186,6 @@ export class SearchIndex {
       );
     }
     const isAsked = (path: string): boolean => searchOn === null || searchOn.some((each) => matchesPattern(each, path));
-    const order = searchableAttributes.includes("*") ? this.words().attributes : undefined;
     return {
       typo: {
         enabled: typoTolerance.enabled,
@@ -204,11 +203,7 @@ export class SearchIndex {
         ]),
       ),
       allowPrefix: prefixSearch === "indexingTime",
-      rankOfAttribute: (path) => {
-        const rank = this.searchRank(path);
-        if (rank < 0 || !isAsked(path)) return -1;
-        return order === undefined ? rank : order.indexOf(path);
-      },
+      rankOfAttribute: (path) => (isAsked(path) ? this.searchRank(path) : -1),
     };
   }
 

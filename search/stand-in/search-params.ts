@@ -24,9 +24,12 @@ export type SearchParams = {
   showMatchesPosition: boolean;
   retrieveVectors: boolean;
   distinct: string | null;
+  showRankingScore: boolean;
+  showRankingScoreDetails: boolean;
+  rankingScoreThreshold: number | null;
 };
 
-type Shape = "string" | "count" | "flag" | "strings" | "filter" | "locales" | "refused";
+type Shape = "string" | "count" | "flag" | "strings" | "filter" | "locales" | "share" | "refused";
 
 /** Every parameter of a search, by the shape of its value; `refused` ones are the service's, not this server's. */
 const SHAPES: Readonly<Record<string, Shape>> = {
@@ -43,8 +46,8 @@ const SHAPES: Readonly<Record<string, Shape>> = {
   cropLength: "count",
   attributesToHighlight: "strings",
   showMatchesPosition: "flag",
-  showRankingScore: "refused",
-  showRankingScoreDetails: "refused",
+  showRankingScore: "flag",
+  showRankingScoreDetails: "flag",
   showPerformanceDetails: "refused",
   useNetwork: "refused",
   filter: "filter",
@@ -57,7 +60,7 @@ const SHAPES: Readonly<Record<string, Shape>> = {
   matchingStrategy: "string",
   attributesToSearchOn: "strings",
   hybrid: "refused",
-  rankingScoreThreshold: "refused",
+  rankingScoreThreshold: "share",
   locales: "locales",
   personalize: "refused",
 };
@@ -117,6 +120,9 @@ export function readSearch(body: unknown, extra: Readonly<Record<string, Shape>>
     showMatchesPosition: body.showMatchesPosition === true,
     retrieveVectors: body.retrieveVectors === true,
     distinct: typeof body.distinct === "string" ? body.distinct : null,
+    showRankingScore: body.showRankingScore === true,
+    showRankingScoreDetails: body.showRankingScoreDetails === true,
+    rankingScoreThreshold: typeof body.rankingScoreThreshold === "number" ? body.rankingScoreThreshold : null,
   };
 }
 
@@ -159,6 +165,14 @@ function checkShape(name: string, value: unknown, shape: Shape): void {
       if (!Array.isArray(value)) wrong("an array", value);
       else value.forEach((item: unknown, i) => typeof item === "string" || wrong("a string", item, `[${i}]`));
       break;
+    case "share":
+      if (typeof value !== "number") wrong("a number", value);
+      else if (value < 0 || value > 1)
+        throw new ServiceError(
+          code,
+          `Invalid value at \`.${name}\`: the value of \`${name}\` is invalid, expected a float between \`0.0\` and \`1.0\`.`,
+        );
+      break;
     case "refused":
       if (value !== false) throw notSupported(`The search parameter \`${name}\``, code);
       break;
@@ -181,6 +195,7 @@ export function readSearchAddress(query: URLSearchParams): Record<string, unknow
     else if (shape === "flag" || (shape === "refused" && text === "false"))
       body[name] = readFlag(name, text, searchCode(name));
     else if (shape === "strings" || shape === "locales") body[name] = text === "" ? [] : text.split(",");
+    else if (shape === "share") body[name] = Number(text);
     else if (shape === "filter" && text.trimStart().startsWith("[")) body[name] = parseOr(text);
     else body[name] = text;
   }

@@ -1,4 +1,4 @@
-import { ServiceError } from "./errors";
+import { ServiceError, notSupported } from "./errors";
 import { countFacets, searchFacet } from "./facets";
 import { parseFilter } from "./filter-parse";
 import { runFilter } from "./filter-run";
@@ -6,6 +6,8 @@ import { formatDocument, matchPositions } from "./format";
 import type { Document } from "./paths";
 import { project } from "./paths";
 import { distinctOf, rank, readSort } from "./rank";
+import type { HitScore } from "./score";
+import { scorerOf } from "./score";
 import type { SearchIndex } from "./search-index";
 import type { FacetSearchParams, SearchParams } from "./search-params";
 import type { TextMatch } from "./text-match";
@@ -15,12 +17,59 @@ import { matchText } from "./text-match";
 export type TextCache = Map<string, TextMatch | undefined>;
 export type SearchOptions = { allowContains: boolean; texts: TextCache; now: () => number; requestUid: string };
 
-/** Runs one search and gives the answer's body. */
-export function search(index: SearchIndex, params: SearchParams, options: SearchOptions): Record<string, unknown> {
-  const start = options.now();
+/** The documents that a search finds, in order; with their scores when it asks for any. */
+export type Found = {
+  ordered: Int32Array;
+  /** The same documents, ascending. */
+  candidates: Int32Array;
+  match: TextMatch | undefined;
+  scores: ReadonlyMap<number, HitScore> | undefined;
+};
+
+/** Finds and orders the documents of a search, at least the first `wanted`. */
+export function find(index: SearchIndex, params: SearchParams, options: SearchOptions, wanted: number): Found {
   const sort = readSort(params.sort, index);
   const distinct = readDistinct(index, params.distinct);
   const { match, candidates: all } = selectCandidates(index, params, options);
+  if (asksForScores(params)) return findScored(index, params, match, all, distinct);
+  if (distinct === null) {
+    return { ordered: rank(all, index, match, sort, wanted), candidates: all, match, scores: undefined };
+  }
+  const ordered = distinctOf(rank(all, index, match, sort, all.length), index.column(distinct));
+  return { ordered, candidates: ordered.slice().sort(), match, scores: undefined };
+}
+
+function asksForScores(params: SearchParams): boolean {
+  return params.showRankingScore || params.showRankingScoreDetails || params.rankingScoreThreshold !== null;
+}
+
+/** Where nothing but words orders the documents, their scores do; those below the threshold are left out. */
+function findScored(
+  index: SearchIndex,
+  params: SearchParams,
+  match: TextMatch | undefined,
+  all: Int32Array,
+  distinct: string | null,
+): Found {
+  const sort = readSort(params.sort, index);
+  const isSorted = sort.length > 0 || index.settings.rankingRules.some((rule) => rule.includes(":"));
+  if (isSorted && params.showRankingScoreDetails) {
+    throw notSupported("Score details of a sorted search", "invalid_search_show_ranking_score_details");
+  }
+  const score = scorerOf(index, params, match);
+  const scores = new Map(Array.from(all, (slot) => [slot, score(slot)] as const));
+  const figure = (slot: number): number => scores.get(slot)?.score ?? 0;
+  const least = params.rankingScoreThreshold ?? 0;
+  const kept = all.filter((slot) => figure(slot) >= least);
+  let ordered = rank(kept, index, match, sort, kept.length);
+  if (!isSorted) ordered = ordered.sort((a, b) => figure(b) - figure(a) || a - b);
+  if (distinct !== null) ordered = distinctOf(ordered, index.column(distinct));
+  return { ordered, candidates: ordered.slice().sort(), match, scores };
+}
+
+/** Runs one search and gives the answer's body. */
+export function search(index: SearchIndex, params: SearchParams, options: SearchOptions): Record<string, unknown> {
+  const start = options.now();
   const isPaged = params.page !== null || params.hitsPerPage !== null;
   const page = params.page ?? 1;
   const hitsPerPage = params.hitsPerPage ?? 20;
@@ -28,19 +77,13 @@ export function search(index: SearchIndex, params: SearchParams, options: Search
   const first = Math.min(isPaged ? Math.max(0, page - 1) * hitsPerPage : params.offset, maxTotalHits);
   const asked = isPaged ? (page === 0 ? 0 : hitsPerPage) : params.limit;
   const end = Math.min(first + asked, maxTotalHits);
-  let candidates = all;
-  let ordered: Int32Array;
-  if (distinct === null) ordered = rank(all, index, match, sort, end);
-  else {
-    ordered = distinctOf(rank(all, index, match, sort, all.length), index.column(distinct));
-    candidates = ordered.slice().sort();
-  }
-  const hits = Array.from(ordered.slice(first, end), (slot) => makeHit(index, slot, params, match));
-  const total = Math.min(candidates.length, maxTotalHits);
+  const found = find(index, params, options, end);
+  const hits = Array.from(found.ordered.slice(first, end), (slot) => makeHit(index, slot, params, found));
+  const total = Math.min(found.candidates.length, maxTotalHits);
   const paging = isPaged
     ? { hitsPerPage, page, totalPages: hitsPerPage === 0 ? 0 : Math.ceil(total / hitsPerPage), totalHits: total }
     : { limit: params.limit, offset: params.offset, estimatedTotalHits: total };
-  const facets = params.facets === null ? {} : countFacets(index, candidates, params.facets);
+  const facets = params.facets === null ? {} : countFacets(index, found.candidates, params.facets);
   return {
     hits,
     query: params.q ?? "",
@@ -127,10 +170,12 @@ function readDistinct(index: SearchIndex, asked: string | null): string | null {
   );
 }
 
-function makeHit(index: SearchIndex, slot: number, params: SearchParams, match: TextMatch | undefined): Document {
+/** One hit as it is shown. */
+export function makeHit(index: SearchIndex, slot: number, params: SearchParams, found: Found): Document {
   const displayed = project(index.documents[slot] ?? {}, index.settings.displayedAttributes);
   const hit: Record<string, unknown> = { ...project(displayed, params.attributesToRetrieve) };
-  const shown = match?.shown ?? [];
+  const shown = found.match?.shown ?? [];
+  const score = found.scores?.get(slot);
   if (params.retrieveVectors) hit._vectors = {};
   if (params.attributesToHighlight.length > 0 || params.attributesToCrop.length > 0) {
     const format = {
@@ -144,5 +189,7 @@ function makeHit(index: SearchIndex, slot: number, params: SearchParams, match: 
     hit._formatted = formatDocument(displayed, params.attributesToRetrieve, format, shown);
   }
   if (params.showMatchesPosition) hit._matchesPosition = matchPositions(displayed, shown);
+  if (params.showRankingScore && score !== undefined) hit._rankingScore = score.score;
+  if (params.showRankingScoreDetails && score !== undefined) hit._rankingScoreDetails = score.details;
   return hit as Document;
 }

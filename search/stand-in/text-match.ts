@@ -115,7 +115,8 @@ function matchTerm(
   return match;
 }
 
-function typosAllowed(word: string, rules: TypoRules): 0 | 1 | 2 {
+/** How many edits a word of this length may have. */
+export function typosAllowed(word: string, rules: TypoRules): 0 | 1 | 2 {
   if (!rules.enabled || rules.disableOnWords.has(word)) return 0;
   if (rules.disableOnNumbers && /^\p{N}+$/u.test(word)) return 0;
   const length = Array.from(word).length;

@@ -27,6 +27,14 @@ export function tokenise(text: string): Token[] {
   return tokens;
 }
 
+/** Marks that end a phrase: Latin, Armenian, Arabic, Indic and East Asian ones; a full stop or comma only with a space. */
+const PHRASE_END = /[.,] |[!:;?¡§¶¿՜՝՞։،؛؟۔।॥…※‼‽⁇⁈⁉、。！，．：；？｡､]/u;
+
+/** Whether what stands between two words parts them further than a space does. */
+export function endsPhrase(between: string): boolean {
+  return PHRASE_END.test(between);
+}
+
 /** The words of a text in normal form and in order, without their places. */
 export function wordsOf(text: string): string[] {
   const words: string[] = [];

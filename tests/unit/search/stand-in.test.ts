@@ -42,9 +42,9 @@ describe("the stand-in keeps to its place", () => {
 
 describe("what it doesn't do it refuses in the service's own form, and never answers wrongly", () => {
   test.each<[string, Record<string, unknown>]>([
-    ["scores", { showRankingScore: true }],
-    ["score details", { showRankingScoreDetails: true }],
-    ["score thresholds", { rankingScoreThreshold: 0.5 }],
+    ["scores of several words", { q: "slow mill", showRankingScore: true }],
+    ["score details of a phrase", { q: '"slow"', showRankingScoreDetails: true }],
+    ["score thresholds of several words", { q: "slow mill", rankingScoreThreshold: 0.5 }],
     ["vectors", { vector: [1] }],
     ["hybrid search", { hybrid: { embedder: "default" } }],
     ["geographic sort", { sort: ["_geoPoint(1, 2):asc"] }],
@@ -68,9 +68,10 @@ describe("what it doesn't do it refuses in the service's own form, and never ans
     expect([answer.status, ((await answer.json()) as { code: string }).code]).toEqual([400, "feature_not_enabled"]);
   });
 
-  test("federated search, synonyms of several words, embedders, features", async () => {
+  test("federated search by anything but scores, synonyms of several words, embedders, features", async () => {
     for (const [path, body, method] of [
-      ["/multi-search", { federation: {}, queries: [] }, "POST"],
+      ["/multi-search", { federation: {}, queries: [{ indexUid: "refusals", q: "slow", distinct: "kind" }] }, "POST"],
+      ["/multi-search", { federation: { page: 1 }, queries: [] }, "POST"],
       ["/indexes/x/settings", { synonyms: { "slow mill": ["heronwing"] } }, "PATCH"],
       ["/indexes/x/settings", { embedders: { default: { source: "userProvided" } } }, "PATCH"],
       ["/experimental-features", { metrics: true }, "PATCH"],
