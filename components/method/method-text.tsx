@@ -1,87 +1,24 @@
 import { Section } from "@/components/ui/sheet";
 import { CautionList } from "@/components/ui/notice";
-import { Formula, type FormulaProps } from "./formula";
+import { distanceErrorWords } from "@/lib/format/microphone";
+import { Formula } from "./formula";
+import type { FormulaKey } from "./formula-data";
+import { PropertiesTried } from "./properties-tried";
+import counts from "./reference-checks.json";
 
-const sound: readonly FormulaProps[] = [
-  {
-    name: "Mean of levels",
-    formula: "L = 10 lg[(1/n) Σ 10^(Lᵢ/10)]",
-    source: "Energy mean: ISO 3744:2010, Eq. (12).",
-  },
-  {
-    name: "Background taken out",
-    formula: "L = L′ − K₁, K₁ = −10 lg(1 − 10^(−ΔL/10)), ΔL = L′ − L_background",
-    children:
-      "Engineering grade: no correction above 15 dB, a correction from 6 to 15 dB; below 6 dB K₁ is held at its value at 6 dB and the level is an upper bound, written ≤. Survey grade: the same with 10 and 3 dB.",
-    source: "ISO 3744:2010, 8.2.3 (engineering); ISO 3746:2010, 8.3.3 (survey).",
-  },
-  {
-    name: "A-weighting",
-    formula: "closed form with the unrounded normalisation",
-    source: "IEC 61672-1:2013, Annex E.",
-  },
+const sound: readonly FormulaKey[] = [
+  "calibration",
+  "weighting",
+  "thirdOctaves",
+  "energyMean",
+  "background",
+  "tones",
+  "predictedTones",
+  "loudness",
 ];
-
-const heat: readonly FormulaProps[] = [
-  {
-    name: "Temperature rise",
-    formula: "ΔT = T_sensor − T_ambient, sample by sample",
-    source: "Definition; a slow drift of the ambient cancels so.",
-  },
-  {
-    name: "Steady state",
-    formula: "residual = τ × slope",
-    children:
-      "A run counts once what is left to rise or fall is within the protocol’s limit; what the gate leaves enters the budget as a rectangular half-width.",
-    source: "House rule, derived for this bench; the half-width: JCGM 100:2008, 4.3.7.",
-  },
-  { name: "Thermal resistance", formula: "R = ΔT / P, K/W", source: "Definition." },
-];
-
-const sure: readonly FormulaProps[] = [
-  {
-    name: "Combined standard uncertainty",
-    formula: "u² = Σ (cᵢ uᵢ)²",
-    children:
-      "Type A from repeats and remounts, type B from certificates, resolution and checks. A part that a design and its baseline share acts on their difference only, so the offset of the meter cancels and its gain nearly does.",
-    source: "JCGM 100:2008, 5.1.2 and F.1.2.3.",
-  },
-  {
-    name: "Effective degrees of freedom",
-    formula: "ν = u⁴ / Σ [(cᵢ uᵢ)⁴ / νᵢ]",
-    source: "Welch–Satterthwaite: JCGM 100:2008, G.4.1.",
-  },
-  {
-    name: "Interval on the pages",
-    formula: "value ± U, U = k·u at 95 % coverage, k from Student’s t at ν",
-    source: "JCGM 100:2008, 6.3 and G.6.4. k is not 2 by habit.",
-  },
-];
-
-const compared: readonly FormulaProps[] = [
-  {
-    name: "Equal noise",
-    formula: "ratio(L) = (ΔT/P)(L) ÷ (ΔT/P of the session’s baseline)(L)",
-    children:
-      "Both curves run through the measured points and keep their monotony. They are read within the range of both and never beyond it. ΔT against the baseline in K is (ratio − 1) × the baseline’s ΔT at that level. Where the baseline’s curve rests on a bound, the level counts as not reached.",
-    source:
-      "Interpolant: F. N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17 (1980) 238; slopes: F. N. Fritsch and J. Butland, SIAM J. Sci. Stat. Comput. 5 (1984) 300. Reading at equal level: house rule.",
-  },
-  {
-    name: "Score",
-    formula: "mean over the season’s declared levels of ratio(L); lower is better",
-    children:
-      "Who doesn’t reach every declared level, or whose baseline doesn’t, is listed as not ranked, with the reason. A season may choose another rule; rules are versions and freeze at the first reading.",
-    source: "House rule, no source.",
-  },
-  {
-    name: "Rank range",
-    formula: "2.5 % to 97.5 % of the rank over seeded simulated rounds",
-    children:
-      "All entries of a session share the draw of its baseline in each simulated round. Ties that the data can’t separate are called so: pairs by t, adjusted over all pairs.",
-    source: "Adjustment: S. Holm, Scand. J. Stat. 6 (1979) 65. Simulation: in the manner of JCGM 101:2008.",
-  },
-];
+const heat: readonly FormulaKey[] = ["resistance", "steadyState", "airDensity"];
+const sure: readonly FormulaKey[] = ["combined", "degreesOfFreedom", "againstBaseline", "controlCharts"];
+const compared: readonly FormulaKey[] = ["equalNoise", "score", "rankRange", "letters"];
 
 const cautions = [
   "A printed rotor can burst or shed a blade: guard, eye protection, stand out of its plane, raise the speed in steps, stop on vibration.",
@@ -91,11 +28,11 @@ const cautions = [
   "Mains wiring is licensed work: follow local codes.",
 ];
 
-function Formulas({ items }: { items: readonly FormulaProps[] }) {
+function Formulas({ of }: { of: readonly FormulaKey[] }) {
   return (
     <div className="grid gap-5">
-      {items.map((each) => (
-        <Formula key={each.name} {...each} />
+      {of.map((key) => (
+        <Formula key={key} of={key} />
       ))}
     </div>
   );
@@ -119,20 +56,27 @@ export function MethodText() {
             and run at every set speed. A session whose calibrator or baseline is out is held until another person lifts
             the hold.
           </p>
+          <p>
+            A season opens on a bench that ten remounts of its baseline have qualified. Behind each formula below stands
+            the number of reference checks that every test run holds it to: published values, worked examples of
+            standards, other programs, closed forms; {counts.total} in all. The numbers are counted from the tests, not
+            typed.
+          </p>
         </div>
       </Section>
       <Section id="sound" title="Sound">
-        <Formulas items={sound} />
+        <Formulas of={sound} />
       </Section>
       <Section id="heat" title="Heat">
-        <Formulas items={heat} />
+        <Formulas of={heat} />
       </Section>
       <Section id="uncertainty" title="How sure">
-        <Formulas items={sure} />
+        <Formulas of={sure} />
       </Section>
       <Section id="compared" title="Compared and scored">
-        <Formulas items={compared} />
+        <Formulas of={compared} />
       </Section>
+      <PropertiesTried />
       <Section id="limits" title="What it does not say">
         <ul className="grid max-w-3xl list-[square] gap-2 pl-5">
           <li>
@@ -148,6 +92,11 @@ export function MethodText() {
           <li>
             An inlet stack of a fifth or more of the microphone’s distance may read high on axis (house rule, no
             source). The sheet shows the off-axis reading beside it where the bench has one, and never corrects for it.
+          </li>
+          <li>
+            A microphone 5 mm too far from 100 mm would read{" "}
+            {formatNumber(-distanceErrorDb(0.1, 0.105), { decimals: 2 })} dB low in a free field: the jig fixes it, and
+            what is left is shared by a design and its baseline.
           </li>
           <li>A level says nothing of how a fan sounds: tones are another matter.</li>
         </ul>
