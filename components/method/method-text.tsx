@@ -94,9 +94,8 @@ export function MethodText() {
             source). The sheet shows the off-axis reading beside it where the bench has one, and never corrects for it.
           </li>
           <li>
-            A microphone 5 mm too far from 100 mm would read{" "}
-            {formatNumber(-distanceErrorDb(0.1, 0.105), { decimals: 2 })} dB low in a free field: the jig fixes it, and
-            what is left is shared by a design and its baseline.
+            A microphone 5 mm too far from 100 mm would read {distanceErrorWords(100, 105)} in a free field: the jig
+            fixes it, and what is left is shared by a design and its baseline.
           </li>
           <li>A level says nothing of how a fan sounds: tones are another matter.</li>
         </ul>
