@@ -17,7 +17,9 @@ export type RecordingReportProps = {
 
 /** What a recording says: levels, what was left out, tones against predictions, loudness, warnings. */
 export function RecordingReport({ report, calibrator, distanceMm }: RecordingReportProps) {
-  const { disturbed, usedS, durationS, background, loudness, speedsRpm, warnings, tones } = report;
+  const { disturbed, usedS, durationS, background, loudness, speedsRpm, tones } = report;
+  // A calibrator needs 2 s, which its own warning says.
+  const warnings = report.warnings.filter(({ code }) => !(calibrator && code === "short"));
   const unit = `dB(A) @ ${distanceMm} mm`;
   const why = "digital silence";
   const left = disturbed.length === 0 ? "No second was left out." : `Left out: ${stretchWords(disturbed)}.`;
@@ -45,9 +47,13 @@ export function RecordingReport({ report, calibrator, distanceMm }: RecordingRep
                 },
               ]
             : []),
-          { label: "C-weighted", value: <Value value={report.levelCDb} decimals={1} unit="dB(C)" why={why} /> },
-          { label: "Unweighted", value: <Value value={report.levelZDb} decimals={1} unit="dB" why={why} /> },
-          ...(loudness
+          ...(calibrator
+            ? []
+            : [
+                { label: "C-weighted", value: <Value value={report.levelCDb} decimals={1} unit="dB(C)" why={why} /> },
+                { label: "Unweighted", value: <Value value={report.levelZDb} decimals={1} unit="dB" why={why} /> },
+              ]),
+          ...(loudness && !calibrator
             ? [
                 {
                   label: "Loudness at the microphone",

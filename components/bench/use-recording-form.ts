@@ -61,13 +61,11 @@ export function useRecordingForm(session: BenchSession, known: BenchRecordings, 
   const used = session.positions.filter((each) => place.purpose === "run" || each.used);
   const firstPosition = (used.find((each) => each.used) ?? used[0])?.id ?? "";
   const calibrators = (positionId: string) => keptOf(known.items, "calibration", positionId);
-  const fitting = (positionId: string) => ({
+  /** What fits as things stand, until a person chooses otherwise: a calibrator may be kept meanwhile. */
+  const fitting = (positionId: string): RecordingChoice => ({
     positionId,
     calibration: calibrators(positionId).find((each) => each.phase === "before")?.id ?? "full-scale",
     backgroundId: keptOf(known.items, "background", positionId)[0]?.id ?? "",
-  });
-  const [choice, setChoice] = useState<RecordingChoice>(() => ({
-    ...fitting(firstPosition),
     channel: "",
     fullScaleDb: undefined,
     calibratorDb: session.bench.calibratorLevelDb,
@@ -76,9 +74,21 @@ export function useRecordingForm(session: BenchSession, known: BenchRecordings, 
       place.purpose === "run"
         ? rotorsOf(session, known.subjects, place.run)
         : { blades: "", rpm: "", rotation: "", struts: "" },
-  }));
-  const change = (changed: Partial<RecordingChoice>) =>
-    setChoice((now) => ({ ...now, ...(changed.positionId !== undefined && fitting(changed.positionId)), ...changed }));
+  });
+  const [chosen, setChosen] = useState<Partial<RecordingChoice>>({});
+  const choice = { ...fitting(chosen.positionId ?? firstPosition), ...chosen };
+  const change = ({ positionId, ...changed }: Partial<RecordingChoice>) =>
+    setChosen(({ calibration, backgroundId, ...now }) =>
+      // What tells the level and the background are of one position.
+      positionId === undefined
+        ? {
+            ...now,
+            ...(calibration !== undefined && { calibration }),
+            ...(backgroundId !== undefined && { backgroundId }),
+            ...changed,
+          }
+        : { ...now, ...changed, positionId },
+    );
   const { asked, wrong } = askedFor(place, choice, known, session.protocol.backgroundGrade);
   return { choice, change, positions: used, calibrators: calibrators(choice.positionId), asked, wrong };
 }
