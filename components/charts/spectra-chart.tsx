@@ -4,7 +4,7 @@ import type { ChartData, ChartOptions } from "chart.js";
 import type { ReactNode } from "react";
 import { Line } from "react-chartjs-2";
 import { ChartFrame } from "./chart-frame";
-import { endLabels } from "./end-labels";
+import { keyHeight, lineKey } from "./line-key";
 import { usePalette, type Palette } from "./palette";
 import { axis, commonOptions, figureAxis, paperUnder } from "./paper";
 import "./register";
@@ -40,15 +40,14 @@ function lineSet(line: SpectrumLine, style: SeriesStyle, palette: Palette): Data
   };
 }
 
-/** Third-octave spectra of several fans over each other, the baseline dashed; names at the ends. */
+/** Third-octave spectra of several fans over each other, the baseline dashed; names over them. */
 export function SpectraChart({ lines, baseline, unit, caption, summary, fileName }: SpectraChartProps) {
   const palette = usePalette();
   const all = baseline ? [...lines, baseline] : lines;
   const bands = all[0]?.bands ?? [];
   const options: ChartOptions<"line"> | undefined = palette && {
     ...commonOptions(palette),
-    // Room at the end for the names.
-    layout: { padding: { top: 16, right: 24 } },
+    layout: { padding: ({ chart }) => ({ top: keyHeight(chart, all.length) }) },
     scales: {
       x: { ...axis(palette, "one-third-octave band, Hz", false) },
       y: { ...figureAxis(palette, unit, true) },
@@ -77,7 +76,7 @@ export function SpectraChart({ lines, baseline, unit, caption, summary, fileName
             }}
             data={data}
             options={options}
-            plugins={[paperUnder, endLabels]}
+            plugins={[paperUnder, lineKey]}
           />
         ) : null
       }

@@ -54,7 +54,7 @@ export const ranges = {
     unit: "dB",
     step: 0.5,
   },
-  loudness: { column: "loudness_sone", u: null, label: "Loudness", unit: "sone", step: 0.5 },
+  loudness: { column: "loudness_sone", u: null, label: "Loudness at the microphone", unit: "sone", step: 0.5 },
   gap: { column: "tip_gap_mm", u: null, label: "Tip gap", unit: "mm", step: 0.1 },
   solidity: { column: "solidity_mid", u: null, label: "Solidity at mid-span", unit: "", step: 0.05 },
   pitch: { column: "pitch_mid_deg", u: null, label: "Pitch at mid-span", unit: "°", step: 1 },

@@ -28,13 +28,13 @@ export function prominentWords({ prominent, frequencyHz }: Pick<ReportedTone, "p
   return frequencyHz < TONE_RANGE_HZ.from ? `not assessable below ${TONE_RANGE_HZ.from} Hz` : "not assessable";
 }
 
-/** "Two tones are prominent: 210 Hz blade passing and …". `stages`: rotors in all. */
+/** "2 tones are prominent: 210 Hz (blade passing) and …". `stages`: rotors in all. */
 export function prominentSentence(tones: readonly ReportedTone[], stages: number): string {
   const prominent = tones.filter((tone) => tone.prominent === true);
   if (prominent.length === 0) return "No tone is prominent.";
   const names = prominent.map(
     (tone) =>
-      `${formatNumber(tone.frequencyHz)} Hz ${tone.match ? toneName(tone.match, stages) : "(no prediction fits)"}`,
+      `${formatNumber(tone.frequencyHz)} Hz (${tone.match ? toneName(tone.match, stages) : "no prediction fits"})`,
   );
   return `${countWords(names.length, "tone")} ${names.length > 1 ? "are" : "is"} prominent: ${listWords(names)}.`;
 }

@@ -77,7 +77,7 @@ describe("the spectrum's words and table", () => {
     expect(prominentWords(tone(80, 1, 0, null))).toContain("89.1 Hz");
     expect(prominentWords(tone(300, 1, 0, false))).toBe("no");
     expect(prominentSentence([tone(80, 1, 0, null)], 1)).toBe("No tone is prominent.");
-    expect(prominentSentence([tone(210, 1, 0, true)], 1)).toContain("210 Hz blade passing");
+    expect(prominentSentence([tone(210, 1, 0, true)], 1)).toContain("210 Hz (blade passing)");
   });
 
   it("carry every band of both, a bound as one, and say which band is loudest", () => {
