@@ -38,7 +38,7 @@ function markLines(bins: readonly HistogramBin[], marks: NonNullable<HistogramCh
         label: {
           display: true,
           content: name,
-          position: "end" as const,
+          position: "start" as const,
           yAdjust: 18 * (index % 3),
           backgroundColor: palette.paper,
           color: palette.ink,

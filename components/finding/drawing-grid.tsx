@@ -62,7 +62,8 @@ export function DrawingGrid({ items, drawings, names }: DrawingGridProps) {
 function Thumb({ item, traits, reach }: { item: IndexItem; traits: DrawnTraitsAnswer | undefined; reach: number }) {
   const front = traits && drawingOf(traits)?.front;
   if (!front) return <p className="small-print grid aspect-square place-items-center">not enough declared to draw</p>;
-  const [size, bare] = [2 * reach, { dimensions: "", centres: "", words: [] }];
+  // Its lines follow the height of its words: heavier than on a sheet, since it is small.
+  const [size, bare] = [2 * reach, { dimensions: "", centres: "", words: [], textMm: reach / 4 }];
   const view = { ...front, ...bare, minX: -reach, minY: -reach, width: size, height: size };
   return <ViewSvg view={{ ...view, title: `${entryName(item)}, front` }} width="100%" />;
 }
