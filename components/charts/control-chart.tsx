@@ -100,6 +100,18 @@ function breaks(points: readonly ControlPoint[], palette: Palette) {
   );
 }
 
+/** The axis is as long as the points and the limits near them need: the first trial limits of a phase may lie far out. */
+function drawnRange(points: readonly ControlPoint[]): { min?: number; max?: number } {
+  const values = points.flatMap(({ value }) => value ?? []);
+  const [low, high] = [Math.min(...values), Math.max(...values)];
+  const reach = high - low;
+  if (!(reach > 0)) return {};
+  const near = points
+    .flatMap(({ lower, upper }) => [lower ?? low, upper ?? high])
+    .filter((limit) => limit >= low - reach && limit <= high + reach);
+  return { min: Math.min(low, ...near) - 0.12 * reach, max: Math.max(high, ...near) + 0.12 * reach };
+}
+
 /** Check runs on individuals limits with their weighted mean; breaks are drawn where something changed. */
 export function ControlChart({ points, quantity, unit, decimals, caption, summary, fileName }: ControlChartProps) {
   const palette = usePalette();
@@ -113,12 +125,12 @@ export function ControlChart({ points, quantity, unit, decimals, caption, summar
           min: -0.5,
           max: points.length - 0.5,
           afterBuildTicks: (scale) => {
-            const every = Math.max(1, Math.ceil(points.length / Math.max(2, Math.floor(scale.width / 110))));
+            const every = Math.max(1, Math.ceil(points.length / Math.max(1, Math.floor(scale.width / 150))));
             scale.ticks = points.flatMap((_, value) => (value % every === 0 ? [{ value }] : []));
           },
           ticks: { ...base.ticks, autoSkip: false, callback: (value) => points[Number(value)]?.at ?? "" },
         },
-        y: { ...figureAxis(palette, unit, true), grace: "12%" },
+        y: { ...figureAxis(palette, unit, true), ...drawnRange(points) },
       },
       // Room over the chart for breaks, and at its end for the names of the lines.
       layout: { padding: { right: 112, top: points.some((point) => point.breakBefore) ? 44 : 8 } },
