@@ -1,16 +1,12 @@
-import path from "node:path";
-import { serverAccount } from "@/db/cluster/account";
-import { knownUrls } from "@/db/cluster/cluster";
-import { chooseDataFolder } from "@/db/cluster/folder";
 import { closeDbs, ownerDb } from "@/db/client/handles";
 import { askForRebuild, searchBuild, searchState } from "@/db/queries/search-build";
 import type { Handle } from "@/db/client/connect";
-import { env } from "@/lib/env/env";
+import { env, requiredEnv } from "@/lib/env/env";
 import { indexDigest } from "@/search/document";
 import { fillField } from "./demo/fill/fill-field";
 import { holdsDemo } from "./launch/demo-seed";
-import { demoDatabase } from "./launch/local-services";
 import { isLoopback } from "./launch/loopback";
+import { adoptRunningDemo } from "./launch/running-demo";
 
 /**
  * `npm run demo -- --designs N`: fills the local demo up to N published entries, invented and the same every time, and
@@ -24,18 +20,6 @@ function wantedDesigns(args: readonly string[]): number {
   if (name !== "--designs" || rest.length > 0 || !Number.isInteger(wanted) || wanted < 1 || wanted > designsMax)
     throw new Error(`usage: npm run demo -- --designs N, with N from 1 to ${designsMax}`);
   return wanted;
-}
-
-/** The owner's address of the demo: as set, or that of `npm start` in this clone. */
-function demoUrl(): string {
-  const settings = env();
-  if (settings.MIGRATE_DATABASE_URL !== undefined) return settings.MIGRATE_DATABASE_URL;
-  if (settings.DATABASE_URL !== undefined)
-    throw new Error("DATABASE_URL is set without MIGRATE_DATABASE_URL: the demo is filled as the schema's owner.");
-  const root = path.resolve(import.meta.dirname, "../..");
-  const urls = knownUrls(chooseDataFolder(root, serverAccount(), settings.DATA_DIR).folder, demoDatabase);
-  if (!urls) throw new Error("There is no demo yet. Run npm start, leave it running, and try again.");
-  return urls.owner;
 }
 
 async function demandDemo(url: string, owner: Handle): Promise<void> {
@@ -63,7 +47,8 @@ async function untilIndexed(owner: Handle): Promise<void> {
 
 async function main(): Promise<void> {
   const wanted = wantedDesigns(process.argv.slice(2));
-  const url = demoUrl();
+  if (env().MIGRATE_DATABASE_URL === undefined) adoptRunningDemo();
+  const url = requiredEnv("MIGRATE_DATABASE_URL");
   const owner = ownerDb(url);
   try {
     await demandDemo(url, owner);

@@ -1,8 +1,9 @@
 import { migrateDown, migrateUp, pendingMigrations } from "@/db/client/migrator";
 import { roleNames } from "@/db/cluster/roles";
 import { ownerDb } from "@/db/client/handles";
-import { requiredEnv } from "@/lib/env/env";
+import { env, requiredEnv } from "@/lib/env/env";
 import { installJobs } from "@/lib/services/jobs/install";
+import { adoptRunningDemo } from "./launch/running-demo";
 
 /**
  * Brings a database up to date: the product's tables, then the job queues'.
@@ -19,6 +20,7 @@ export function migrateEverything(ownerUrl: string): Promise<string[]> {
 }
 
 async function main(order: string): Promise<void> {
+  if (env().MIGRATE_DATABASE_URL === undefined) adoptRunningDemo();
   const url = requiredEnv("MIGRATE_DATABASE_URL");
   if (order === "up") return report("Applied", await migrateEverything(url));
   if (order === "down") return report("Taken back", await migrateDown(url, false));

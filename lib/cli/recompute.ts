@@ -2,15 +2,17 @@ import { appDb, closeDbs } from "@/db/client/handles";
 import { READER_VERSION } from "@/lib/science/geometry/reader-version";
 import { recomputeGeometry } from "@/lib/server/designs/recompute-geometry";
 import { recomputePublications, recomputeStandings } from "@/lib/server/publishing/recompute";
+import { adoptRunningDemo } from "./launch/running-demo";
 
 /**
  * `npm run recompute`: computes every current publication and the newest standings again from the raw readings and
- * compares digests with what was published. Exit status 1 where one differs. What \`npm run demo\` filled in has no readings
- * and is counted apart. `recompute -- standings` alone, or
- * `recompute -- publications`. `recompute -- geometry` reads every stored model again by the reader as it is now and
- * tells what changed; a change between versions of the reader is no fault, one within a version is.
+ * compares digests with what was published. Exit status 1 where one differs. What `npm run demo` filled in has no
+ * readings and is counted apart. `recompute -- standings` or `recompute -- publications` does one alone.
+ * `recompute -- geometry` reads every stored model again by the reader as it is now and tells what changed; a change
+ * between versions of the reader is no fault, one within a version is.
  */
 async function main(): Promise<number> {
+  adoptRunningDemo();
   const what = process.argv[2] ?? "all";
   if (what === "geometry") return geometry();
   if (!["all", "publications", "standings"].includes(what)) {

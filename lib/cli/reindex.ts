@@ -1,5 +1,6 @@
 import { closeDbs } from "@/db/client/handles";
 import { reindex, type ReindexProgress } from "@/lib/server/search/reindex";
+import { adoptRunningDemo } from "./launch/running-demo";
 
 /** `npm run reindex`: fills the search index anew while readers go on searching the old one, and says how far it is. */
 let said = "";
@@ -12,6 +13,7 @@ function tell({ sent, total, byWorker }: ReindexProgress): void {
 }
 
 try {
+  adoptRunningDemo();
   await reindex(tell);
   process.stdout.write("The index is filled anew and readers search it.\n");
 } catch (error) {

@@ -4,14 +4,23 @@ import { z } from "zod";
 import { signal, until } from "@/db/cluster/processes";
 import { processIdentity } from "./process-identity";
 
+const fileName = "launcher.json";
 const processSchema = z.object({ pid: z.int().min(2), identity: z.string(), name: z.string() });
-const schema = z.object({ launcher: processSchema, address: z.string(), children: z.array(processSchema) });
+const schema = z.object({
+  launcher: processSchema,
+  address: z.string(),
+  children: z.array(processSchema),
+  /** The local services' addresses and keys, for commands run beside. */
+  environment: z.record(z.string(), z.string()).optional(),
+});
 type Ledger = z.infer<typeof schema>;
 
 /** Who runs from a data folder, kept in a file, so that what a killed launcher left behind is found and ended. */
 export interface LaunchLedger {
   /** Adds a child that leads a process group of its own. */
   add(pid: number, name: string): void;
+  /** Tells commands run beside where the local services are, until it closes. */
+  tell(environment: Record<string, string>): void;
   close(): void;
 }
 
@@ -26,7 +35,7 @@ export class AlreadyRunningError extends Error {
  * @throws AlreadyRunningError when a living launcher has it
  */
 export async function openLedger(folder: string, address: string): Promise<LaunchLedger> {
-  const file = path.join(folder, "launcher.json");
+  const file = path.join(folder, fileName);
   const before = read(file);
   if (before && before.launcher.pid !== process.pid && isSame(before.launcher)) {
     throw new AlreadyRunningError(
@@ -42,8 +51,18 @@ export async function openLedger(folder: string, address: string): Promise<Launc
       ledger.children.push({ pid, identity: processIdentity(pid) ?? "", name });
       write(file, ledger);
     },
+    tell(environment) {
+      ledger.environment = environment;
+      write(file, ledger);
+    },
     close: () => rmSync(file, { force: true }),
   };
+}
+
+/** What the launcher that serves from this data folder told; undefined where none lives, or it is not so far yet. */
+export function toldBy(folder: string): Record<string, string> | undefined {
+  const found = read(path.join(folder, fileName));
+  return found && isSame(found.launcher) ? found.environment : undefined;
 }
 
 function isSame(each: { pid: number; identity: string }): boolean {

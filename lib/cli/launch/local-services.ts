@@ -70,6 +70,7 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
     });
     ends.push(search.ended.then(() => "The search stand-in ended."));
   }
+  ledger.tell(environment);
   return { environment, broken: Promise.race(ends) };
 }
 
