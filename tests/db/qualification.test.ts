@@ -129,7 +129,10 @@ describe("a bridging session", () => {
     expect(rows[2]?.u).toBeCloseTo(rel / 0.96, 9);
     const session = benchSession.parse(await readSession(room.host, { sessionId }));
     expect(session.subjects.map(({ baselineUnitId }) => baselineUnitId)).toEqual([room.baselineUnitId, other]);
-    const pairs = await bridges(db.app, { levelDba: 46 });
+    const made = new Date(rows[0]?.created_at);
+    // A standing drawn before it doesn't know it.
+    expect(await bridges(db.app, { levelDba: 46, asOf: new Date(made.getTime() - 1) })).toEqual([]);
+    const pairs = await bridges(db.app, { levelDba: 46, asOf: made });
     const there = pairs.find((pair) => pair.fromUnit === room.baselineUnitId);
     const back = pairs.find((pair) => pair.fromUnit === other);
     expect(there?.toUnit).toBe(other);

@@ -63,7 +63,8 @@ export async function seedDemo(db: Handle, size: DemoSize = demoSize, withFiles 
     }
     if (round.ends !== "published") continue;
     await signAndPublish(db, made, reviewer, host);
-    const at = new Date(made.measuredAt.getTime() + publishedAfterDays * day);
+    // The day after: the standings of the hour itself were drawn without it.
+    const at = new Date(made.measuredAt.getTime() + (publishedAfterDays + 1) * day);
     const lastSession = made.sessionIds.at(-1);
     if (bridgeUnitId && lastSession) {
       await bridgeSession(db, { sessionId: lastSession, toUnitId: bridgeUnitId, at });

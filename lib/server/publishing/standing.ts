@@ -66,7 +66,7 @@ export async function standingInput(db: Handle, request: StandingRequest): Promi
     seed: request.seed,
     draws: request.draws,
     baselineUnit: await seasonBaselineUnit(db, { seasonId: request.seasonId }),
-    bridges: await bridges(db, { levelDba: request.headlineDba }),
+    bridges: await bridges(db, { levelDba: request.headlineDba, asOf: request.asOf }),
   };
 }
 
