@@ -48,7 +48,9 @@ export function SessionNote({ session }: { session: BenchSession }) {
             <p>
               {log.name}{" "}
               <span className="docket">
-                ({log.kind}, run {ordinal}): {log.rowsRead} rows
+                ({log.kind}
+                {ordinal === undefined ? "" : `, run ${ordinal}`}): {log.rowsRead}{" "}
+                {log.kind === "recording" ? "samples" : "rows"}
               </span>
             </p>
             {log.refusedCount > 0 ? <RefusedRows refused={log.refused} count={log.refusedCount} /> : null}
