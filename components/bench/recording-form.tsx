@@ -43,12 +43,13 @@ export function RecordingForm({
   };
   const { state } = reader;
   return (
-    <div className="grid min-w-0 gap-4">
+    <div className="grid min-w-0 grid-cols-1 gap-4">
       <label className="grid gap-1">
         <span className="field-label">Recording (WAV)</span>
         <input
           key={round}
           type="file"
+          className="max-w-full"
           accept=".wav,audio/wav,audio/vnd.wave"
           onChange={(event) => {
             setFile(event.currentTarget.files?.[0]);
