@@ -1,4 +1,4 @@
-import { signedOut, signInAs, type DemoPerson, type Session } from "../../setup/session";
+import { signedOut, signInAs, type DemoPerson } from "../../setup/session";
 
 export type Reader = DemoPerson | "signed out";
 
@@ -66,16 +66,19 @@ export async function pageAddresses(patterns: readonly string[], depth = 4): Pro
   const found = new Map<string, PageAddress[]>();
   for (const [as, hubs] of starts) {
     const session = as === "signed out" ? signedOut() : await signInAs(as);
-    let paths: string[] = [...hubs];
+    let paths: readonly string[] = hubs;
     for (let step = 0; step < depth && paths.length > 0; step += 1) {
-      const fresh = paths.filter((path) => {
+      const links: string[] = [];
+      for (const path of new Set(paths)) {
         const pattern = patternOf(path, patterns);
         const known = found.get(pattern ?? "") ?? [];
-        const taken = pattern === undefined || known.length >= readOfEach || known.some((each) => each.path === path);
-        if (!taken) found.set(pattern, [...known, { pattern, path, as }]);
-        return !taken;
-      });
-      paths = [...new Set((await Promise.all(fresh.map((path) => linksOn(path, session)))).flat())];
+        if (pattern === undefined || known.length >= readOfEach || known.some((each) => each.path === path)) continue;
+        const answer = await session.fetch(path);
+        // Who is sent to sign in hasn't reached it.
+        if (answer.status === 200) found.set(pattern, [...known, { pattern, path, as }]);
+        links.push(...linksIn(await answer.text()));
+      }
+      paths = links;
     }
   }
   return [...found.values()].flatMap(([first]) => first ?? []);
@@ -88,8 +91,5 @@ function patternOf(path: string, patterns: readonly string[]): string | undefine
   return patterns.find((pattern) => pattern === pathname) ?? patterns.find(matches);
 }
 
-async function linksOn(path: string, session: Session): Promise<string[]> {
-  const answer = await session.fetch(path);
-  const html = await answer.text();
-  return [...html.matchAll(/href="(\/[^"#]*)/g)].map(([, href = ""]) => href.replaceAll("&amp;", "&"));
-}
+const linksIn = (html: string): string[] =>
+  [...html.matchAll(/href="(\/[^"#]*)/g)].map(([, href = ""]) => href.replaceAll("&amp;", "&"));
