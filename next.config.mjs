@@ -6,7 +6,17 @@ const nextConfig = {
   typescript: { ignoreBuildErrors: true },
   // Bodies beyond what proxy.ts passes on are cut off without a word: above the largest that a route takes (64 MB).
   experimental: { authInterrupts: true, proxyClientMaxBodySize: "66mb" },
-  serverExternalPackages: ["knex", "pg", "pg-boss", "@node-rs/argon2", "sharp", "fontkit", "pino", "smtp-server", "nodemailer"],
+  serverExternalPackages: [
+    "knex",
+    "pg",
+    "pg-boss",
+    "@node-rs/argon2",
+    "sharp",
+    "fontkit",
+    "pino",
+    "smtp-server",
+    "nodemailer",
+  ],
 };
 
 export default nextConfig;

@@ -9,7 +9,8 @@ async function focused(page: Page) {
   return page.evaluate(() => {
     const on = document.activeElement;
     if (!(on instanceof HTMLElement) || on === document.body) return { name: "", seen: true };
-    const name = on.getAttribute("aria-label") ?? (on.labels?.[0]?.innerText || on.innerText || on.title).trim();
+    const label = on instanceof HTMLInputElement || on instanceof HTMLSelectElement ? on.labels?.[0]?.innerText : "";
+    const name = on.getAttribute("aria-label") ?? (label || on.innerText || on.title).trim();
     const marks = [on, on.parentElement, on.closest(".blank, label")].flatMap((each) => (each ? [each] : []));
     const outlined = marks.some((each) => getComputedStyle(each).outlineStyle !== "none");
     const box = on.getBoundingClientRect();

@@ -86,5 +86,7 @@ export async function shownKeepOutFile(
   db: Handle,
   { keepOutId }: { keepOutId: string },
 ): Promise<{ storageKey: string; bytes: number } | undefined> {
-  return db("shown.keep_out_file").where({ keep_out_id: keepOutId }).first({ storageKey: "storage_key", bytes: "bytes" });
+  return db("shown.keep_out_file")
+    .where({ keep_out_id: keepOutId })
+    .first({ storageKey: "storage_key", bytes: "bytes" });
 }
