@@ -60,6 +60,7 @@ describe.each([{ width: 1280 }, { width: 390 }])("a builder with a keyboard alon
     await tabTo(page, /^Lay over the baseline/);
     await page.keyboard.press("Enter");
     await arrive(page, "/compare");
+    await page.getByRole("link", { name: "Sign in to save this comparison" }).waitFor();
 
     await tabTo(page, /^Sign in to save this comparison/);
     const asked = new URL(page.url()).searchParams.get("entries");
