@@ -64,22 +64,25 @@ export function LayOverView({ heads, input, levelDba, deltaTK }: LayOverViewProp
   const first = laid[0];
   return (
     <div className="grid gap-x-10 gap-y-6 lg:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
-      <CoolingChart
-        series={laid.map((entry) => seriesOf(entry.id, name(entry.id), entry))}
-        baseline={first && seriesOf("baseline", "Baseline", first.baseline)}
-        distanceMm={distanceMm}
-        equalNoiseDba={level}
-        fileName={`compare-${heads.map((head) => head.token).join("-")}`}
-        caption={
-          <>
-            Lower and further left is better. Error bars: 95 % coverage both ways, for the one printed copy measured;
-            remounts are in, copy-to-copy spread is not.
-            {sessions.length > 1
-              ? ` The baseline drawn is the one run beside ${name(sessions[0]?.id ?? "")}; each entry’s figures use the baseline of its own session.`
-              : null}
-          </>
-        }
-      />
+      {/* Stays beside the sliders while they are read down. */}
+      <div className="min-w-0 self-start lg:sticky lg:top-4">
+        <CoolingChart
+          series={laid.map((entry) => seriesOf(entry.id, name(entry.id), entry))}
+          baseline={first && seriesOf("baseline", "Baseline", first.baseline)}
+          distanceMm={distanceMm}
+          equalNoiseDba={level}
+          fileName={`compare-${heads.map((head) => head.token).join("-")}`}
+          caption={
+            <>
+              Lower and further left is better. Error bars: 95 % coverage both ways, for the one printed copy measured;
+              remounts are in, copy-to-copy spread is not.
+              {sessions.length > 1
+                ? ` The baseline drawn is the one run beside ${name(sessions[0]?.id ?? "")}; each entry’s figures use the baseline of its own session.`
+                : null}
+            </>
+          }
+        />
+      </div>
       <div className="grid content-start gap-4">
         <h2>At equal noise</h2>
         {ends ? (
