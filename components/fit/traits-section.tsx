@@ -50,9 +50,37 @@ function rotorRows(rotors: readonly RotorTraits[]): BarsRow[] {
   }));
 }
 
+const sureWords = (confidence: number | null): string => `${Math.round(100 * (confidence ?? 0))} % sure`;
+
+/** Struts, inlet stack and spacer, where they are in the file. */
+function StandingParts({ measured: { struts, strutsConfidence, inletStack, spacer } }: { measured: ModelMeasured }) {
+  if (struts === null && !inletStack && !spacer) {
+    return <p className="small-print max-w-3xl">Nothing that stands still is in the file.</p>;
+  }
+  return (
+    <FigureBlock
+      figures={[
+        ...(struts === null ? [] : [{ label: "Struts", value: String(struts), note: sureWords(strutsConfidence) }]),
+        ...(inletStack
+          ? [
+              {
+                label: "Inlet stack",
+                value: mm(inletStack.lengthMm),
+                note: `mm, ${inletStack.kind}, ${sureWords(inletStack.confidence)}`,
+              },
+            ]
+          : []),
+        ...(spacer
+          ? [{ label: "Spacer", value: mm(spacer.lengthMm), note: `mm, ${sureWords(spacer.confidence)}` }]
+          : []),
+      ]}
+    />
+  );
+}
+
 /** What was read off the mesh, each rotor with how sure it is. */
 export function TraitsSection({ measured }: { measured: ModelMeasured }) {
-  const { rotors, spacingsMm, struts } = measured;
+  const { rotors, spacingsMm } = measured;
   const [first] = rotors;
   if (!first) {
     return (
@@ -116,10 +144,8 @@ export function TraitsSection({ measured }: { measured: ModelMeasured }) {
         Pitch is from the plane of rotation. “Sure” is the share of cylinders through the blades that agree on their
         number. {spacingsMm.map((gap) => (gap < 0 ? `${minusSign}${mm(-gap)}` : mm(gap))).join(" and ")}
         {spacingsMm.length > 0 ? " mm between the rotors along the axis. " : ""}
-        {struts === null
-          ? "Nothing that stands still is in the file."
-          : `${countWords(struts, "strut")} beside the rotors.`}
       </p>
+      <StandingParts measured={measured} />
     </Section>
   );
 }

@@ -9,6 +9,17 @@ import type { RevisionFiles } from "@/lib/contracts/revision-files";
 import { TraitConfirmation } from "./trait-confirmation";
 import { purposeWords, UploadField } from "./upload-field";
 
+/** How sure the reader is of what it found, in whole percent; empty where it found nothing to be sure of. */
+function sureWords({ confidence, sure }: NonNullable<RevisionFiles["reading"]>): string {
+  const parts = [
+    ["rotors", confidence],
+    ["struts", sure.struts],
+    ["inlet stack", sure.inletStack],
+    ["spacer", sure.spacer],
+  ] as const;
+  return parts.flatMap(([what, share]) => (share === null ? [] : [`${what} ${Math.round(100 * share)} %`])).join(", ");
+}
+
 /** Files of a revision of one's own, sending one, and the traits that its model tells. */
 export function RevisionDesk({ slug, first }: { slug: string; first: RevisionFiles }) {
   const { data: revision = first } = useRevisionFiles(slug, first.letter, first);
@@ -59,6 +70,9 @@ export function RevisionDesk({ slug, first }: { slug: string; first: RevisionFil
               ))}
             </ul>
           </Notice>
+        ) : null}
+        {reading && sureWords(reading) !== "" ? (
+          <p className="mb-4">How sure the reader is: {sureWords(reading)}.</p>
         ) : null}
         {revision.sentIn ? (
           <p>They hold as they were confirmed.</p>

@@ -1,5 +1,6 @@
 "use client";
 
+import { inletStacks } from "@/lib/contracts/own-designs";
 import type { TraitLine } from "@/lib/contracts/revision-files";
 import { valueWords, type TraitWords } from "./trait-words";
 
@@ -18,7 +19,7 @@ type TraitRowProps = {
   onChange: (draft: TraitDraft) => void;
 };
 
-const options = { flag: ["no", "yes"], hand: ["left", "right"] } as const;
+const options = { flag: ["no", "yes"], hand: ["left", "right"], stack: inletStacks } as const;
 
 /** One trait: what was read, what is declared, and which holds. */
 export function TraitRow({ name, words, line, draft, error, onChange }: TraitRowProps) {

@@ -3,7 +3,7 @@ import type { RotorTraitName, TraitValue, WholeChoices } from "@/lib/contracts/r
 interface TraitWords {
   label: string;
   unit: string;
-  kind: "number" | "flag" | "hand";
+  kind: "number" | "flag" | "hand" | "stack";
 }
 
 const number = (label: string, unit = ""): TraitWords => ({ label, unit, kind: "number" });
@@ -26,6 +26,8 @@ export const rotorWords: Readonly<Record<RotorTraitName, TraitWords>> = {
 export const wholeWords: Readonly<Record<keyof WholeChoices, TraitWords>> = {
   spacerMm: number("Spacer between stages", "mm"),
   struts: number("Struts"),
+  inletStack: { label: "Inlet stack", unit: "", kind: "stack" },
+  inletStackMm: number("Inlet stack length", "mm"),
 };
 
 /** A value as a person reads it; an en dash where there is none. */
@@ -38,7 +40,7 @@ export function valueWords(value: TraitValue, { unit }: TraitWords): string {
 /** A typed text as the trait's value: empty is null, a decimal comma counts; undefined for what is no number. */
 export function typedValue(text: string, { kind }: TraitWords): TraitValue | undefined {
   if (text.trim() === "") return null;
-  if (kind === "hand") return text;
+  if (kind === "hand" || kind === "stack") return text;
   if (kind === "flag") return text === "yes";
   const value = Number(text.trim().replace(",", "."));
   return Number.isFinite(value) ? value : undefined;

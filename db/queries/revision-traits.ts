@@ -10,7 +10,7 @@ export interface DraftRevision {
   letter: string;
   sentIn: boolean;
   material: string;
-  whole: { spacerMm: number; struts: number; declared: Values; holds: Holds };
+  whole: { spacerMm: number; struts: number; inletStack: string; inletStackMm: number; declared: Values; holds: Holds };
   rotors: { position: number; held: Values; declared: Values; holds: Holds }[];
 }
 
@@ -45,10 +45,11 @@ export async function ownRevision(
     .first({
       ...{ revisionId: "r.id", designId: "d.id", designName: "d.name", letter: "r.letter", sentInAt: "r.sent_in_at" },
       ...{ material: "t.material", spacerMm: "t.spacer_mm", struts: "t.struts" },
+      ...{ inletStack: "t.inlet_stack", inletStackMm: "t.inlet_stack_mm" },
       ...{ declared: "t.traits_declared", holds: "t.holds" },
     });
   if (!row) return undefined;
-  const { sentInAt, spacerMm, struts, declared, holds, ...rest } = row;
+  const { sentInAt, spacerMm, struts, inletStack, inletStackMm, declared, holds, ...rest } = row;
   const rotors = await db("rotor")
     .where({ revision_id: row.revisionId })
     .orderBy("position")
@@ -56,7 +57,7 @@ export async function ownRevision(
   return {
     ...rest,
     sentIn: sentInAt !== null,
-    whole: { spacerMm, struts, declared, holds },
+    whole: { spacerMm, struts, inletStack, inletStackMm, declared, holds },
     rotors: rotors.map(({ position, declared: said, holds: which, ...held }) => ({
       ...{ position, held, declared: said, holds: which },
     })),
@@ -82,6 +83,8 @@ export async function keepTraits(
       counter_rotating: db.raw("counter_rotating and ? >= 2", [rotors.length]),
       spacer_mm: whole.held.spacerMm,
       struts: whole.held.struts,
+      inlet_stack: whole.held.inletStack ?? db.ref("inlet_stack"),
+      inlet_stack_mm: whole.held.inletStackMm ?? db.ref("inlet_stack_mm"),
       traits_read: JSON.stringify(whole.read),
       traits_declared: JSON.stringify(whole.declared),
       holds: JSON.stringify(whole.holds),

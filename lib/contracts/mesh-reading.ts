@@ -44,6 +44,13 @@ export const meshReadingResult = z.looseObject({
   stages: z.int(),
   spacingsMm: z.array(number),
   struts: z.int().nullable(),
+  /** Read from version 2 of the reader on. */
+  strutsConfidence: number.nullable().default(null),
+  inletStack: z
+    .object({ kind: z.enum(["straight", "bellmouth", "cone"]), lengthMm: number, confidence: number })
+    .nullable()
+    .default(null),
+  spacer: z.object({ lengthMm: number, confidence: number }).nullable().default(null),
   warnings: z.array(z.object({ code: z.string(), message: z.string() })),
 });
 export type MeshReadingResult = z.infer<typeof meshReadingResult>;

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { id, slug } from "./base";
+import { inletStacks } from "./own-designs";
 import { purposeNames } from "./uploads";
 
 export const revisionParams = z.strictObject({ slug, letter: z.string().regex(/^[A-Z]{1,2}$/, "is no revision") });
@@ -34,6 +35,9 @@ export const rotorTraitNames = Object.keys(rotorChoices.shape) as RotorTraitName
 export const wholeChoices = z.strictObject({
   spacerMm: choice(z.number().min(0).max(200)),
   struts: choice(z.int().min(0).max(40)),
+  /** Kind and length of the inlet stack go together; left out, both stay as they are. */
+  inletStack: choice(z.enum(inletStacks)).optional(),
+  inletStackMm: choice(z.number().min(0).max(300)).optional(),
 });
 export type WholeChoices = z.infer<typeof wholeChoices>;
 export const wholeTraitNames = Object.keys(wholeChoices.shape) as (keyof WholeChoices)[];
@@ -83,6 +87,12 @@ export const revisionFiles = z.strictObject({
       watertight: z.boolean(),
       /** 0–1, the lowest of its rotors; null without one. */
       confidence: z.number().nullable(),
+      /** 0–1 of what stands still, where it is in the file. */
+      sure: z.strictObject({
+        struts: z.number().nullable(),
+        inletStack: z.number().nullable(),
+        spacer: z.number().nullable(),
+      }),
       warnings: z.array(z.strictObject({ code: z.string(), message: z.string() })),
     })
     .nullable(),

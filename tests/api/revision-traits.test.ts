@@ -3,7 +3,7 @@ import { afterAll, beforeAll, describe, expect, inject, it } from "vitest";
 import { connect } from "@/db/client/connect";
 import { revisionFiles, rotorTraitNames, type RevisionFiles } from "@/lib/contracts/revision-files";
 import { generateRotor } from "@/lib/science/geometry/rotor-generator";
-import { binaryStl, boxMesh, insideOut, withoutTriangles } from "../factories/rotor-mesh";
+import { binaryStl, boxMesh, insideOut, together, tubeMesh, withoutTriangles } from "../factories/rotor-mesh";
 import { draftRevision } from "../setup/draft-revision";
 import { signInAs, type Session } from "../setup/session";
 import { begin, outcome, sendByTus } from "../setup/uploading";
@@ -115,5 +115,28 @@ describe("a model that can't be measured", () => {
     expect([state, progress.measured]).toEqual(["read", false]);
     const served = await designer.fetch(`/api/v1/files/${attachmentId}`);
     expect([served.status, served.headers.get("content-type")]).toEqual([200, "model/step"]);
+  });
+});
+
+describe("what stands still beside a rotor", () => {
+  it("is read, and an inlet stack holds with its kind and length together", async () => {
+    const rotor = generateRotor({ ...drawn, helixPitchMm: 90, chordMm: 22, thicknessMm: 2 });
+    expect((await send(binaryStl(together(rotor, tubeMesh(58, 61, 16, 41, 160))), "stack.stl")).state).toBe("read");
+    const { reading, whole: lines } = await files();
+    expect(reading?.sure.inletStack).toBeGreaterThan(0.7);
+    expect(lines.inletStack).toMatchObject({ read: "straight", declared: "none" });
+    expect(Number(lines.inletStackMm?.read)).toBeCloseTo(25, 1);
+    const put = (inlet: object) =>
+      designer.send("PUT", address("traits"), {
+        ...{ attachmentId: reading?.attachmentId, whole: { ...whole, ...inlet }, rotors: [allRead()] },
+      });
+    const torn = await put({ inletStack: { from: "read" }, inletStackMm: { from: "declared", value: 0 } });
+    expect(await torn.json()).toMatchObject({ code: "malformed", fields: [{ path: "whole.inletStackMm" }] });
+    expect((await put({ inletStack: { from: "read" }, inletStackMm: { from: "read" } })).status).toBe(204);
+    const trait = await owner("revision_trait").where({ revision_id: draft.revisionId }).first();
+    expect([trait.inlet_stack, trait.holds.inlet_stack, trait.holds.inlet_stack_length]).toEqual([
+      ...["straight", "read", "read"],
+    ]);
+    expect(trait.inlet_stack_mm).toBeCloseTo(25, 1);
   });
 });

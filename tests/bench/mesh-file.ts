@@ -6,10 +6,19 @@ const ACROSS = 500;
 /** Number of triangles in the file. */
 export const MESH_TRIANGLES = 2 * AROUND * ACROSS;
 
-/** Writes a wavy torus of a million triangles as a binary STL, in order or shuffled (seeded); returns its bytes. */
-export function writeMesh(file: string, shuffled: boolean): number {
-  const order = Uint32Array.from({ length: MESH_TRIANGLES }, (_, i) => i);
-  if (shuffled) shuffle(order);
+/**
+ * How the triangles of a grid come to lie in the file: strip by strip, both halves of each square together; all first
+ * halves before all second ones, as array programs write grids; or shuffled (seeded).
+ */
+export type MeshOrder = "strips" | "halves" | "shuffled";
+
+/** Writes a wavy torus of a million triangles as a binary STL in one of the orders; returns its bytes. */
+export function writeMesh(file: string, written: MeshOrder): number {
+  const half = MESH_TRIANGLES / 2;
+  const order = Uint32Array.from({ length: MESH_TRIANGLES }, (_, i) =>
+    written === "halves" ? 2 * (i % half) + Math.floor(i / half) : i,
+  );
+  if (written === "shuffled") shuffle(order);
   const bytes = new Uint8Array(84 + 50 * MESH_TRIANGLES);
   const view = new DataView(bytes.buffer);
   view.setUint32(80, MESH_TRIANGLES, true);

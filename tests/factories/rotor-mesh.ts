@@ -62,6 +62,26 @@ export function tubeMesh(inner: number, outer: number, from: number, to: number,
   return meshOf(vertices, faces);
 }
 
+/** A body of revolution about z through a closed profile of (radius, height), anticlockwise in the r–z plane. */
+export function revolvedMesh(profile: readonly (readonly [number, number])[], facets: number): Mesh {
+  const n = profile.length;
+  const vertices = Array.from({ length: facets }, (_, k) => {
+    const [c, s] = [Math.cos((2 * Math.PI * k) / facets), Math.sin((2 * Math.PI * k) / facets)];
+    return profile.map(([r, z]) => [r * c, r * s, z]);
+  }).flat();
+  const at = (k: number, i: number) => n * (k % facets) + (i % n);
+  const faces = Array.from({ length: facets }, (_, k) =>
+    profile.flatMap((_point, i) => {
+      const [a, b, c, d] = [at(k, i), at(k + 1, i), at(k + 1, i + 1), at(k, i + 1)];
+      return [
+        [a, b, c],
+        [a, c, d],
+      ];
+    }),
+  ).flat();
+  return meshOf(vertices, faces);
+}
+
 /** Turned about an axis through the origin (length 1, angle in rad, right-handed), then shifted. */
 export function moved(mesh: Mesh, axis: Vec3, angleRad: number, shift: Vec3): Mesh {
   const [c, s] = [Math.cos(angleRad), Math.sin(angleRad)];

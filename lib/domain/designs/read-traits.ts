@@ -1,3 +1,5 @@
+type InletKind = "straight" | "bellmouth" | "cone";
+
 /** The parts of a mesh reading that traits are made of; masses are at 1 g/cm³. */
 export interface ReadingForTraits {
   readonly rotors: readonly {
@@ -14,6 +16,8 @@ export interface ReadingForTraits {
   }[];
   readonly spacingsMm: readonly number[];
   readonly struts: number | null;
+  readonly inletStack: { readonly kind: InletKind; readonly lengthMm: number } | null;
+  readonly spacer: { readonly lengthMm: number } | null;
 }
 
 /** A rotor's traits that a mesh can tell; null where this one doesn't. */
@@ -36,6 +40,8 @@ export interface TraitsRead {
   rotors: RotorRead[];
   spacerMm: number | null;
   struts: number | null;
+  inletStack: InletKind | null;
+  inletStackMm: number | null;
 }
 
 /** A gap between blades counts as another than equal from this share of it on (house limit, as the reader's warning has it). */
@@ -68,9 +74,13 @@ export function traitsRead(reading: ReadingForTraits, densityGCm3: number | unde
         massG: densityGCm3 === undefined || rotor.massG === null ? null : rounded(rotor.massG * densityGCm3, 1),
       };
     }),
-    // Rotors that reach into each other have no spacer between them.
-    spacerMm: reading.rotors.length < 2 || gap === undefined ? null : Math.max(0, rounded(gap, 2) ?? 0),
+    // A spacer in the file is told by itself, else the gap is; rotors that reach into each other have none.
+    spacerMm:
+      rounded(reading.spacer?.lengthMm, 2) ??
+      (reading.rotors.length < 2 || gap === undefined ? null : Math.max(0, rounded(gap, 2) ?? 0)),
     struts: reading.struts,
+    inletStack: reading.inletStack?.kind ?? null,
+    inletStackMm: rounded(reading.inletStack?.lengthMm, 2),
   };
 }
 

@@ -9,9 +9,11 @@ import { fitInFrame } from "./frame-fit";
 import { massProperties, shellIntegrals, addIntegrals, type SolidIntegrals } from "./mass-properties";
 import { diagonalMm, meshBounds, middleOf, type Mesh, type Vec3 } from "./mesh";
 import { shellOverlaps } from "./overlaps";
+import { outerRadius } from "./polar";
 import { radiiTo, type FoundRow } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
 import { SHELLS_MAX, shellReport, withShellsTurned, type ShellReport } from "./shells";
+import { readDucts } from "./standing-parts";
 import { countStruts } from "./struts";
 import { Refusal } from "@/lib/science/refusal";
 import { evenAngles, excessIntegrals, sumIntegrals, zoneIntegrals } from "./union";
@@ -65,7 +67,7 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const { integrals } = shellIntegrals(upright.mesh, shellOf, shells, [0, 0, 0]);
   const blades = finding?.search.rows[0]?.row.blades ?? 1;
   const excess = (own: Int32Array): SolidIntegrals =>
-    excessIntegrals(upright.mesh, own, radiusOf(upright.mesh, own), evenAngles(blades));
+    excessIntegrals(upright.mesh, own, outerRadius(upright.mesh, own), evenAngles(blades));
   const whole =
     watertight && !soup
       ? lessExcess(sumIntegrals(integrals), overlapLines > 0 ? excess(shellOf) : undefined)
@@ -93,6 +95,7 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
     finding,
     hollow: mass === undefined && watertight && !soup,
   });
+  const struts = finding && countStruts(finding);
   return {
     triangles: meshIn.triangles.length / 3,
     shells: edges.shellCount,
@@ -111,7 +114,9 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
     rotors,
     stages: rotors.length,
     spacingsMm: rotors.slice(1).map((rotor, i) => rotor.fromMm - (rotors[i]?.toMm ?? 0)),
-    struts: finding ? countStruts(finding) : null,
+    struts: struts?.count ?? null,
+    strutsConfidence: struts?.confidence ?? null,
+    ...(finding ? readDucts(finding, rotors) : { inletStack: null, spacer: null }),
     fit: options.frame && swept.length > 0 ? fitInFrame(swept, options.frame) : null,
     warnings,
     mesh,
@@ -121,18 +126,8 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
 const lessExcess = (sum: SolidIntegrals, excess: SolidIntegrals | undefined): SolidIntegrals =>
   excess ? addIntegrals(sum, excess, -1) : sum;
 
-function radiusOf(mesh: Mesh, shellOf: Int32Array): number {
-  let most = 0;
-  for (let i = 0; i < mesh.triangles.length; i++) {
-    if ((shellOf[(i / 3) | 0] ?? -1) < 0) continue;
-    const start = 3 * (mesh.triangles[i] ?? 0);
-    most = Math.max(most, Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0));
-  }
-  return most;
-}
-
 function probe(mesh: Mesh, shellOf: Int32Array, shells: number, tiny: number): ReturnType<typeof shellOverlaps> {
-  const grid = { radiiMm: radiiTo(radiusOf(mesh, shellOf), PROBE.radii), angles: PROBE.angles };
+  const grid = { radiiMm: radiiTo(outerRadius(mesh, shellOf), PROBE.radii), angles: PROBE.angles };
   return shellOverlaps(castColumns(mesh, shellOf, grid), shells, tiny);
 }
 
@@ -164,7 +159,7 @@ function measureRow(finding: AxisFinding, found: FoundRow, context: MassContext)
   const { row, group } = found;
   const alone = search.rows.filter((other) => other.group === group).length === 1 && Number.isFinite(group.fromZMm);
   const own = context.shellOf.map((shell) => (group.shells.has(shell) ? shell : -1));
-  const outer = radiusOf(mesh, own);
+  const outer = outerRadius(mesh, own);
   if (alone) {
     const sum = sumIntegrals(context.integrals.filter((_, shell) => group.shells.has(shell)));
     const solid = context.watertight

@@ -4,6 +4,7 @@ import type { FrameFit } from "./frame-fit";
 import type { FrameSpec } from "./frames";
 import type { Bounds, Mesh, Vec3 } from "./mesh";
 import type { MeshWarning } from "./reading";
+import type { InletStack, Spacer } from "./standing-parts";
 import type { Correction } from "@/lib/science/mechanics/balance";
 
 /** What a person may say about a file before it is analysed. */
@@ -70,6 +71,11 @@ export interface MeshAnalysis {
   readonly spacingsMm: number[];
   /** Struts seen beside the rotors; null where nothing stands still in the file. */
   readonly struts: number | null;
+  /** 0–1; null where there is no count. */
+  readonly strutsConfidence: number | null;
+  /** Null where the file has no such part of its own. */
+  readonly inletStack: InletStack | null;
+  readonly spacer: Spacer | null;
   readonly fit: FrameFit | null;
   readonly warnings: MeshWarning[];
   /** The mesh as judged: outward, copies taken apart. For drawings and swept volumes. */

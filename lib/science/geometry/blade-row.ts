@@ -3,8 +3,8 @@ import { median } from "@/lib/science/statistics/descriptive";
 import { cylinderFindings, leader, type CylinderFindings } from "./blade-count";
 import { castColumns } from "./columns";
 import { solidStretches } from "./column-solids";
-import type { Faces } from "./faces";
 import type { Mesh } from "./mesh";
+import { polarOf, radialSpans } from "./polar";
 import { rowTable, type RowTable } from "./row-table";
 import { wallRadius } from "./wall-radius";
 
@@ -47,10 +47,9 @@ export interface BladeRow {
   readonly otherCounts: number[];
 }
 
-/** A mesh in the frame of the axis, and which of its triangles turn. */
+/** A mesh in the frame of the axis, and which of its triangles turn: those of other shells have −1. */
 export interface TurningPart {
   readonly mesh: Mesh;
-  readonly faces: Faces;
   readonly shellOf: Int32Array;
   readonly include: (shell: number) => boolean;
   readonly tinyMm: number;
@@ -113,22 +112,24 @@ function edgeRadius(
     if (!isFull[index]) break;
     edge = (fine[index] ?? edge) + (facing * (high - low)) / REFINE_STEPS / 2;
   }
-  return wallRadius(part.mesh, part.faces, { nearMm: edge, fromZMm: zone.from, toZMm: zone.to, facing }) ?? edge;
+  return wallRadius(part.mesh, part.shellOf, { nearMm: edge, fromZMm: zone.from, toZMm: zone.to, facing }) ?? edge;
 }
 
 /** Largest radius of the turning vertices between two heights. */
 function outermost(part: TurningPart, reach: { from: number; to: number }): number | undefined {
   const { positions, triangles } = part.mesh;
-  let most: number | undefined;
-  for (let i = 0; i < triangles.length; i++) {
-    if (!part.include(part.shellOf[(i / 3) | 0] ?? -1)) continue;
-    const start = 3 * (triangles[i] ?? 0);
-    const z = positions[start + 2] ?? 0;
-    if (z < reach.from || z > reach.to) continue;
-    const r = Math.hypot(positions[start] ?? 0, positions[start + 1] ?? 0);
-    if (most === undefined || r > most) most = r;
+  const { radiusMm } = polarOf(positions);
+  let most = -1;
+  const { outerMm } = radialSpans(part.mesh);
+  for (let t = 0; t < outerMm.length; t++) {
+    if ((outerMm[t] ?? 0) <= most || (part.shellOf[t] ?? -1) < 0) continue;
+    for (let i = 3 * t; i < 3 * t + 3; i++) {
+      const v = triangles[i] ?? 0;
+      const z = positions[3 * v + 2] ?? 0;
+      if (z >= reach.from && z <= reach.to) most = Math.max(most, radiusMm[v] ?? 0);
+    }
   }
-  return most;
+  return most < 0 ? undefined : most;
 }
 
 function stationFindings(

@@ -1,4 +1,5 @@
 import type { Mesh } from "./mesh";
+import { polarOf, radialSpans } from "./polar";
 
 /** Lines parallel to z at radii r and angles θ about the z axis: line number = radius number × angles + angle number. */
 export interface ColumnGrid {
@@ -24,6 +25,7 @@ export class TooManyCrossings extends Error {}
 
 /** Points tried in one cast: a fan of a million triangles needs some ten million. */
 const WORK_MAX = 200_000_000;
+const FIRST_STEPS = 1024;
 const CROSSINGS_MAX = 12_000_000;
 
 /** Irrational, so that lines don't go through vertices of models with round angles. */
@@ -103,20 +105,27 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
   const step = (2 * Math.PI) / angles;
   const cos = Float64Array.from({ length: angles }, (_, k) => Math.cos((k + PHASE) * step));
   const sin = Float64Array.from({ length: angles }, (_, k) => Math.sin((k + PHASE) * step));
-  const vertices = p.length / 3;
-  const radius = new Float64Array(vertices);
-  for (let v = 0; v < vertices; v++) radius[v] = Math.sqrt((p[3 * v] ?? 0) ** 2 + (p[3 * v + 1] ?? 0) ** 2);
+  const { radiusMm: radius, angleRad: turn } = polarOf(p);
   const sides = new EdgeSides();
   let work = 0;
+  const { innerMm, outerMm } = radialSpans(mesh);
   const innermost = radiiMm[0] ?? Infinity;
+  const outermost = radiiMm[radiiMm.length - 1] ?? -1;
+  const firstFrom = firstRadii(radiiMm);
+  const scale = FIRST_STEPS / outermost;
   for (let t = 0; t < triangles.length / 3; t++) {
     const shell = shellOf[t] ?? -1;
     if (shell < 0) continue;
+    const reach = outerMm[t] ?? 0;
+    const nearest = innerMm[t] ?? 0;
+    if (reach < innermost || nearest > outermost) continue;
+    let from = nearest > 0 ? (firstFrom[(nearest * scale) | 0] ?? 0) : 0;
+    while ((radiiMm[from] ?? Infinity) < nearest) from++;
+    if ((radiiMm[from] ?? Infinity) > reach) continue;
     const a = triangles[3 * t] ?? 0;
     const b = triangles[3 * t + 1] ?? 0;
     const c = triangles[3 * t + 2] ?? 0;
     const outer = Math.max(radius[a] ?? 0, radius[b] ?? 0, radius[c] ?? 0);
-    if (outer < innermost) continue;
     const ax = p[3 * a] ?? 0;
     const ay = p[3 * a + 1] ?? 0;
     const bx = p[3 * b] ?? 0;
@@ -133,14 +142,14 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
     const inner = around
       ? 0
       : Math.min(segmentRadius(ax, ay, bx, by), segmentRadius(bx, by, cx, cy), segmentRadius(cx, cy, ax, ay));
-    let from = lowerBound(radiiMm, inner);
+    while ((radiiMm[from] ?? Infinity) < inner) from++;
     if (!((radiiMm[from] ?? Infinity) <= outer)) continue;
     let kFrom = 0;
     let kTo = angles - 1;
     if (!around) {
-      const ta = Math.atan2(ay, ax);
-      const tb = near(Math.atan2(by, bx), ta);
-      const tc = near(Math.atan2(cy, cx), ta);
+      const ta = turn[a] ?? 0;
+      const tb = near(turn[b] ?? 0, ta);
+      const tc = near(turn[c] ?? 0, ta);
       kFrom = Math.ceil(Math.min(ta, tb, tc) / step - PHASE - 1e-9);
       kTo = Math.floor(Math.max(ta, tb, tc) / step - PHASE + 1e-9);
       if (kTo < kFrom) continue;
@@ -178,15 +187,16 @@ function near(angle: number, reference: number): number {
   return reference - angle > Math.PI ? angle + 2 * Math.PI : angle;
 }
 
-/** First index whose value is not below `value`. */
-function lowerBound(values: Float64Array, value: number): number {
-  let [low, high] = [0, values.length];
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if ((values[middle] ?? 0) < value) low = middle + 1;
-    else high = middle;
+/** For equal steps up to the last radius: the first radius that a distance in the step may have to look at. */
+function firstRadii(radiiMm: Float64Array): Int32Array {
+  const last = radiiMm[radiiMm.length - 1] ?? 0;
+  const out = new Int32Array(FIRST_STEPS + 1);
+  let from = 0;
+  for (let step = 0; step <= FIRST_STEPS; step++) {
+    while ((radiiMm[from] ?? Infinity) < (step / FIRST_STEPS) * last * (1 - 1e-12)) from++;
+    out[step] = from;
   }
-  return low;
+  return out;
 }
 
 function sorted(found: Crossings, grid: ColumnGrid): Columns {

@@ -1,4 +1,5 @@
 import { pairAroundEdge, type EdgeUse } from "./crowded-edges";
+import { closedShells, joinShells, shellRoot } from "./closed-shells";
 import type { Mesh, Vec3 } from "./mesh";
 import { vertexAt } from "./mesh";
 
@@ -34,17 +35,6 @@ const CROWD_MAX = 64;
 /** Half-edges looked through for pairing: bounds the time that a hub of a hundred thousand crowded edges takes. */
 const PAIRING_WORK_MAX = 50_000_000;
 
-function find(parents: Int32Array, triangle: number): number {
-  let t = triangle;
-  for (;;) {
-    const parent = parents[t] ?? t;
-    if (parent === t) return t;
-    const grand = parents[parent] ?? parent;
-    parents[t] = grand;
-    t = grand;
-  }
-}
-
 /** The triangles at the edge between `v` and `other`, from the run of half-edges of the lower one, `v`. */
 function usesOf(triangles: Uint32Array, sorted: SortedHalfEdges, from: number, to: number, other: number): EdgeUse[] {
   const out: EdgeUse[] = [];
@@ -58,13 +48,6 @@ function usesOf(triangles: Uint32Array, sorted: SortedHalfEdges, from: number, t
     out.push({ triangle, forward, opposite: triangles[3 * triangle + ((corner + (forward ? 1 : 2)) % 3)] ?? 0 });
   }
   return out;
-}
-
-/** Joins the shells of two triangles. */
-function join(parents: Int32Array, s: number, t: number): void {
-  const a = find(parents, s);
-  const b = find(parents, t);
-  if (a !== b) parents[Math.max(a, b)] = Math.min(a, b);
 }
 
 /** Half-edges sorted by their lower vertex: where each vertex's run starts, and what each half-edge is. */
@@ -129,6 +112,11 @@ export function edgeReport(mesh: Mesh): EdgeReport {
     parents[t] = degenerate ? -1 : t;
     if (degenerate) degenerateTriangles++;
   }
+  if (closedShells(triangles, parents, vertices)) {
+    const { shellOf, shellCount } = numberShells(parents);
+    const sound = { openEdges: 0, misorientedEdges: 0, nonManifoldEdges: 0, places: [] };
+    return { ...sound, edges: (3 * (count - degenerateTriangles)) / 2, degenerateTriangles, shellOf, shellCount };
+  }
   const sorted = sortHalfEdges(triangles, parents, vertices);
   const { starts, codes, owners } = sorted;
   // For the higher vertex of each edge of a run: lower vertex + 1, uses forward, uses backward, first and last owner.
@@ -165,7 +153,7 @@ export function edgeReport(mesh: Mesh): EdgeReport {
       const record = 5 * other;
       const f = tally[record + 1] ?? 0;
       const b = tally[record + 2] ?? 0;
-      if (f + b === 2) join(parents, tally[record + 3] ?? 0, tally[record + 4] ?? 0);
+      if (f + b === 2) joinShells(parents, tally[record + 3] ?? 0, tally[record + 4] ?? 0);
       if (f === 1 && b === 1) continue;
       const rest = Math.abs(f - b);
       if (rest % 2 === 1) {
@@ -182,7 +170,8 @@ export function edgeReport(mesh: Mesh): EdgeReport {
         pairingWork += to - from;
         if (pairingWork > PAIRING_WORK_MAX) continue;
         const uses = usesOf(triangles, sorted, from, to, other);
-        if (uses.length <= CROWD_MAX) for (const [a, c] of pairAroundEdge(mesh, v, other, uses)) join(parents, a, c);
+        if (uses.length <= CROWD_MAX)
+          for (const [a, c] of pairAroundEdge(mesh, v, other, uses)) joinShells(parents, a, c);
       }
     }
   }
@@ -194,7 +183,7 @@ export function edgeReport(mesh: Mesh): EdgeReport {
 function numberShells(parents: Int32Array): { shellOf: Int32Array; shellCount: number } {
   let shellCount = 0;
   // Roots are the lowest triangle of their shell, so a root comes before its members.
-  for (let t = 0; t < parents.length; t++) if (parents[t] !== -1) parents[t] = find(parents, t);
+  for (let t = 0; t < parents.length; t++) if (parents[t] !== -1) parents[t] = shellRoot(parents, t);
   for (let t = 0; t < parents.length; t++) {
     const root = parents[t] ?? -1;
     if (root === -1) continue;

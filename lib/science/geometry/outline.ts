@@ -1,32 +1,45 @@
 import type { Mesh } from "./mesh";
+import { polarOf } from "./polar";
 
 const BINS = 360;
+const FLOOR_EVERY = 2048;
 
 /** Largest radius of some triangles in each degree about z, mm; 0 where there is none. */
 export function outline(mesh: Mesh, includes: (triangle: number) => boolean): Float64Array {
   const out = new Float64Array(BINS);
   const { positions: p, triangles } = mesh;
+  const { radiusMm, angleRad } = polarOf(p);
+  // No edge below the lowest degree so far says anything; it is looked up anew now and then.
+  let [floor, since] = [0, 0];
   for (let i = 0; i < triangles.length; i++) {
-    if (!includes((i / 3) | 0)) continue;
     const v = triangles[i] ?? 0;
     const w = triangles[i % 3 === 2 ? i - 2 : i + 1] ?? 0;
     // Every inner edge is seen from both sides; once is enough.
     if (v > w) continue;
-    edgeInto(out, p[3 * v] ?? 0, p[3 * v + 1] ?? 0, p[3 * w] ?? 0, p[3 * w + 1] ?? 0);
+    if ((radiusMm[v] ?? 0) <= floor && (radiusMm[w] ?? 0) <= floor) continue;
+    if (!includes((i / 3) | 0)) continue;
+    edgeInto(out, p, v, w, angleRad[v] ?? 0, angleRad[w] ?? 0);
+    if (++since % FLOOR_EVERY === 0) floor = out.reduce((least, radius) => Math.min(least, radius), Infinity);
   }
   return out;
 }
 
-function edgeInto(out: Float64Array, ax: number, ay: number, bx: number, by: number): void {
+function edgeInto(out: Float64Array, p: Float64Array, v: number, w: number, from: number, to: number): void {
   const step = (2 * Math.PI) / BINS;
-  const from = Math.atan2(ay, ax);
-  let turn = Math.atan2(by, bx) - from;
+  let turn = to - from;
   if (turn > Math.PI) turn -= 2 * Math.PI;
   if (turn < -Math.PI) turn += 2 * Math.PI;
-  const [low, high] = turn >= 0 ? [from, from + turn] : [from + turn, from];
+  const low = turn >= 0 ? from : from + turn;
+  const high = turn >= 0 ? from + turn : from;
+  if (Math.ceil(low / step) > Math.floor(high / step)) return;
+  const ax = p[3 * v] ?? 0;
+  const ay = p[3 * v + 1] ?? 0;
+  const bx = p[3 * w] ?? 0;
+  const by = p[3 * w + 1] ?? 0;
   const cross = ax * by - ay * bx;
   for (let k = Math.ceil(low / step); k <= Math.floor(high / step); k++) {
-    const [cos, sin] = [Math.cos(k * step), Math.sin(k * step)];
+    const cos = Math.cos(k * step);
+    const sin = Math.sin(k * step);
     const across = cos * (by - ay) - sin * (bx - ax);
     const radius = across === 0 ? Math.hypot(ax, ay) : Math.abs(cross / across);
     const bin = ((k % BINS) + BINS) % BINS;

@@ -2,9 +2,9 @@ import { bladeBands, radialProfile } from "./blade-bands";
 import { bladeRow, type BladeRow, type TurningPart } from "./blade-row";
 import { castColumns, type Columns } from "./columns";
 import { solidStretches } from "./column-solids";
-import { facesOf } from "./faces";
 import type { Mesh } from "./mesh";
 import { shellOverlaps, type OverlapReport } from "./overlaps";
+import { outerRadius } from "./polar";
 import { rowTable } from "./row-table";
 import { splitParts, type PartSplit, type TurningGroup } from "./turning-parts";
 
@@ -44,16 +44,6 @@ export function radiiTo(outerMm: number, count: number): Float64Array {
   return Float64Array.from({ length: count }, (_, i) => ((i + 0.5) / count) * outerMm);
 }
 
-function outerRadius(mesh: Mesh, shellOf: Int32Array): number {
-  let most = 0;
-  for (let i = 0; i < mesh.triangles.length; i++) {
-    if ((shellOf[(i / 3) | 0] ?? -1) < 0) continue;
-    const start = 3 * (mesh.triangles[i] ?? 0);
-    most = Math.max(most, Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0));
-  }
-  return most;
-}
-
 /**
  * Looks for rows of blades about the z axis of a mesh. Rows come in order along z. `tinyMm` is the length below which
  * solids touch rather than overlap. A file in which nothing but a frame is found is searched as a whole, in case rotor
@@ -70,15 +60,14 @@ export function searchRotors(
   const columns = castColumns(mesh, shellOf, { radiiMm: radiiTo(outer, grid.radii), angles: grid.angles });
   const overlaps = shellOverlaps(columns, shells, tinyMm);
   const split = splitParts(mesh, shellOf, columns, overlaps.bodyOf, overlaps.bodyCount, tinyMm);
-  const faces = facesOf(mesh);
   const rows = split.groups.flatMap((group) => {
     const everything = split.groups.length === 1 && split.standing.size === 0;
-    return rowsOfGroup(mesh, shellOf, faces, group, grid, tinyMm, everything ? columns : undefined);
+    return rowsOfGroup(mesh, shellOf, group, grid, tinyMm, everything ? columns : undefined);
   });
   if (rows.length === 0 && split.standing.size > 0) {
     const all = Array.from({ length: shells }, (_, shell) => shell);
     const whole: TurningGroup = { shells: new Set(all), fromZMm: -Infinity, toZMm: Infinity };
-    const found = rowsOfGroup(mesh, shellOf, faces, whole, grid, tinyMm).filter(
+    const found = rowsOfGroup(mesh, shellOf, whole, grid, tinyMm).filter(
       ({ row }) => !row.shroud && row.sweptRadiusMm < 0.9 * outer,
     );
     rows.push(...found);
@@ -90,7 +79,6 @@ export function searchRotors(
 function rowsOfGroup(
   mesh: Mesh,
   shellOf: Int32Array,
-  faces: TurningPart["faces"],
   group: TurningGroup,
   grid: SearchGrid,
   tinyMm: number,
@@ -108,7 +96,7 @@ function rowsOfGroup(
   }
   if (!(high > low)) return [];
   const table = rowTable(solids, low, high, grid.rows);
-  const part: TurningPart = { mesh, faces: facesWithin(mesh, faces, own), shellOf: own, include, tinyMm };
+  const part: TurningPart = { mesh, shellOf: own, include, tinyMm };
   const found = bladeBands(table).flatMap((band) => {
     const profile = radialProfile(table, band);
     const row = profile && bladeRow(part, table, band, profile, grid.angles);
@@ -117,13 +105,4 @@ function rowsOfGroup(
   // Stubs on the same shaft (blade roots past the hub's end, set screws, spokes) are no rotor of their own.
   const widest = Math.max(0, ...found.map(({ row }) => row.tipRadiusMm));
   return found.filter(({ row }) => row.tipRadiusMm > STUB_SHARE * widest);
-}
-
-/** The faces with those of other parts taken out by giving them no area and no normal. */
-function facesWithin(mesh: Mesh, faces: TurningPart["faces"], own: Int32Array): TurningPart["faces"] {
-  return {
-    ...faces,
-    areasMm2: faces.areasMm2.map((area, t) => ((own[t] ?? -1) < 0 ? 0 : area)),
-    normals: faces.normals.map((value, i) => ((own[(i / 3) | 0] ?? -1) < 0 ? 0 : value)),
-  };
 }

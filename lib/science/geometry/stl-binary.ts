@@ -1,7 +1,7 @@
+import { BitWeld } from "./bit-weld";
 import { Refusal } from "@/lib/science/refusal";
 import type { Mesh } from "./mesh";
 import type { ByteSource, MeshWarning, ReadingWatch } from "./reading";
-import { VertexWeld } from "./weld";
 
 /** Bytes before the first triangle: an 80-byte header and the count. */
 export const STL_HEADER_BYTES = 84;
@@ -10,6 +10,9 @@ export const STL_RECORD_BYTES = 50;
 const RECORDS_PER_CHUNK = 10_000;
 /** Stored normals are only looked at in a sample. */
 const NORMALS_EVERY = 8;
+/** Bits of −0, and of the exponent that only infinities and NaN fill (IEEE 754-2019, 3.4, binary32). */
+const NEGATIVE_ZERO = 0x80000000 | 0;
+const EXPONENT = 0x7f800000;
 
 /** Length in bytes of a binary STL of so many triangles (Library of Congress FDD fdd000505). */
 export function binaryStlBytes(triangles: number): number {
@@ -30,9 +33,9 @@ export interface StlReading {
  */
 export async function readBinaryStl(source: ByteSource, triangles: number, watch: ReadingWatch): Promise<StlReading> {
   if (triangles > watch.limits.trianglesMax) watch.refuseTriangles(triangles);
-  const weld = new VertexWeld(0.52 * triangles);
+  const weld = new BitWeld(0.52 * triangles);
   const out = new Uint32Array(3 * triangles);
-  const words = new Uint32Array(12);
+  const words = new Int32Array(12);
   const floats = new Float32Array(words.buffer);
   let against = 0;
   for (let first = 0; first < triangles; first += RECORDS_PER_CHUNK) {
@@ -45,24 +48,22 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
     const halves = new Uint16Array(aligned.buffer, aligned.byteOffset, length / 2);
     for (let record = 0; record < count; record++) {
       let half = 25 * record;
-      for (let i = 0; i < 12; i++, half += 2) words[i] = (halves[half] ?? 0) | ((halves[half + 1] ?? 0) << 16);
-      if (!verticesFinite(floats))
-        throw new Refusal("not-finite", "A vertex is not a finite number.", first + record + 1);
+      let finite = true;
+      for (let i = 0; i < 12; i++, half += 2) {
+        const word = (halves[half] ?? 0) | ((halves[half + 1] ?? 0) << 16);
+        words[i] = word === NEGATIVE_ZERO ? 0 : word;
+        if (i > 2 && (word & EXPONENT) === EXPONENT) finite = false;
+      }
+      if (!finite) throw new Refusal("not-finite", "A vertex is not a finite number.", first + record + 1);
       const to = 3 * (first + record);
-      out[to] = weld.add(floats[3] ?? 0, floats[4] ?? 0, floats[5] ?? 0);
-      out[to + 1] = weld.add(floats[6] ?? 0, floats[7] ?? 0, floats[8] ?? 0);
-      out[to + 2] = weld.add(floats[9] ?? 0, floats[10] ?? 0, floats[11] ?? 0);
+      out[to] = weld.add(words[3] ?? 0, words[4] ?? 0, words[5] ?? 0);
+      out[to + 1] = weld.add(words[6] ?? 0, words[7] ?? 0, words[8] ?? 0);
+      out[to + 2] = weld.add(words[9] ?? 0, words[10] ?? 0, words[11] ?? 0);
       if (record % NORMALS_EVERY === 0 && normalIsAgainst(floats)) against++;
     }
   }
   watch.step(triangles, triangles);
   return { mesh: { positions: weld.finish(), triangles: out }, normalsAgainst: NORMALS_EVERY * against, warnings: [] };
-}
-
-/** A sum of nine 32-bit floats is finite in double precision unless one of them isn't. */
-function verticesFinite(f: Float32Array): boolean {
-  const low = (f[3] ?? 0) + (f[4] ?? 0) + (f[5] ?? 0) + (f[6] ?? 0);
-  return Number.isFinite(low + (f[7] ?? 0) + (f[8] ?? 0) + (f[9] ?? 0) + (f[10] ?? 0) + (f[11] ?? 0));
 }
 
 /** True when the stored normal (floats 0–2) points against the winding of the vertices (floats 3–11). */

@@ -2,6 +2,7 @@ import type { Columns } from "./columns";
 import { solidStretches } from "./column-solids";
 import type { Mesh } from "./mesh";
 import { isSquareOutline, outline } from "./outline";
+import { polarOf } from "./polar";
 import { rowTable } from "./row-table";
 
 /** Shells that turn together. */
@@ -76,16 +77,17 @@ function measureBodies(mesh: Mesh, shellOf: Int32Array, bodyOf: Int32Array, body
     innerRing: Infinity,
   }));
   bodyOf.forEach((body, shell) => bodies[body]?.shells.push(shell));
+  const { radiusMm } = polarOf(mesh.positions);
   for (let i = 0; i < mesh.triangles.length; i++) {
     const body = bodies[bodyOf[shellOf[(i / 3) | 0] ?? -1] ?? -1];
     if (!body) continue;
-    const start = 3 * (mesh.triangles[i] ?? 0);
-    const z = mesh.positions[start + 2] ?? 0;
-    body.fromZ = Math.min(body.fromZ, z);
-    body.toZ = Math.max(body.toZ, z);
-    const radius = Math.hypot(mesh.positions[start] ?? 0, mesh.positions[start + 1] ?? 0);
-    body.outer = Math.max(body.outer, radius);
-    body.inner = Math.min(body.inner, radius);
+    const v = mesh.triangles[i] ?? 0;
+    const z = mesh.positions[3 * v + 2] ?? 0;
+    if (z < body.fromZ) body.fromZ = z;
+    if (z > body.toZ) body.toZ = z;
+    const radius = radiusMm[v] ?? 0;
+    if (radius > body.outer) body.outer = radius;
+    if (radius < body.inner) body.inner = radius;
   }
   return bodies;
 }

@@ -1,5 +1,5 @@
-import type { Faces } from "./faces";
 import type { Mesh } from "./mesh";
+import { polarOf, radialSpans } from "./polar";
 
 const SECTORS = 12;
 const SECTORS_NEEDED = 7;
@@ -17,30 +17,28 @@ export interface WallSearch {
 
 /**
  * Radius of the circle on which the vertices of a round wall lie, within −1 % to +4 % of the radius looked for;
- * undefined where no wall goes around. A model's nominal diameter is that of its vertices, not of its facets' middles.
+ * undefined where no wall goes around. `shellOf` −1 leaves a triangle out. A model's nominal diameter is that of its vertices, not of its facets' middles.
  */
-export function wallRadius(mesh: Mesh, faces: Faces, search: WallSearch): number | undefined {
+export function wallRadius(mesh: Mesh, shellOf: Int32Array, search: WallSearch): number | undefined {
   const [low, high] = [0.99 * search.nearMm, 1.04 * search.nearMm];
   const sectors = new Uint16Array(BINS);
   const sums = new Float64Array(BINS);
   const counts = new Int32Array(BINS);
-  for (let t = 0; t < faces.areasMm2.length; t++) {
-    const [mx, my, mz] = [
-      faces.middlesMm[3 * t] ?? 0,
-      faces.middlesMm[3 * t + 1] ?? 0,
-      faces.middlesMm[3 * t + 2] ?? 0,
-    ];
-    const r = Math.sqrt(mx * mx + my * my);
-    if (r < 0.93 * low || r > high || mz < search.fromZMm || mz > search.toZMm) continue;
-    const radial = ((faces.normals[3 * t] ?? 0) * mx + (faces.normals[3 * t + 1] ?? 0) * my) / r;
-    if (radial * search.facing < 0.9) continue;
-    for (let corner = 0; corner < 3; corner++) {
-      const v = mesh.triangles[3 * t + corner] ?? 0;
-      const [x, y] = [mesh.positions[3 * v] ?? 0, mesh.positions[3 * v + 1] ?? 0];
-      const radius = Math.sqrt(x * x + y * y);
+  const { positions: p, triangles } = mesh;
+  const { radiusMm, angleRad } = polarOf(p);
+  const { innerMm, outerMm } = radialSpans(mesh);
+  for (let t = 0; t < shellOf.length; t++) {
+    // A corner has to lie near the wall for its triangle to say anything.
+    if ((outerMm[t] ?? 0) < low || (innerMm[t] ?? 0) > high || (shellOf[t] ?? -1) < 0) continue;
+    const a = triangles[3 * t] ?? 0;
+    const b = triangles[3 * t + 1] ?? 0;
+    const c = triangles[3 * t + 2] ?? 0;
+    if (!standsAsWall(p, a, b, c, search, low, high)) continue;
+    for (const v of [a, b, c]) {
+      const radius = radiusMm[v] ?? 0;
       const bin = Math.floor(((radius - low) / (high - low)) * BINS);
       if (bin < 0 || bin >= BINS) continue;
-      const sector = Math.floor((Math.atan2(y, x) / (2 * Math.PI) + 1) * SECTORS) % SECTORS;
+      const sector = Math.floor(((angleRad[v] ?? 0) / (2 * Math.PI) + 1) * SECTORS) % SECTORS;
       sectors[bin] = (sectors[bin] ?? 0) | (1 << sector);
       sums[bin] = (sums[bin] ?? 0) + radius;
       counts[bin] = (counts[bin] ?? 0) + 1;
@@ -59,6 +57,38 @@ export function wallRadius(mesh: Mesh, faces: Faces, search: WallSearch): number
     best = ((sums[bin] ?? 0) + (sums[bin + 1] ?? 0)) / count;
   }
   return best;
+}
+
+/** True for a triangle between the heights and about at the radius whose normal points along the radius as looked for. */
+function standsAsWall(
+  p: Float64Array,
+  a: number,
+  b: number,
+  c: number,
+  search: WallSearch,
+  low: number,
+  high: number,
+): boolean {
+  const ax = p[3 * a] ?? 0;
+  const ay = p[3 * a + 1] ?? 0;
+  const az = p[3 * a + 2] ?? 0;
+  const ux = (p[3 * b] ?? 0) - ax;
+  const uy = (p[3 * b + 1] ?? 0) - ay;
+  const uz = (p[3 * b + 2] ?? 0) - az;
+  const vx = (p[3 * c] ?? 0) - ax;
+  const vy = (p[3 * c + 1] ?? 0) - ay;
+  const vz = (p[3 * c + 2] ?? 0) - az;
+  const z = az + (uz + vz) / 3;
+  if (z < search.fromZMm || z > search.toZMm) return false;
+  const x = ax + (ux + vx) / 3;
+  const y = ay + (uy + vy) / 3;
+  const r = Math.sqrt(x * x + y * y);
+  if (r < 0.93 * low || r > high) return false;
+  const nx = uy * vz - uz * vy;
+  const ny = uz * vx - ux * vz;
+  const nz = ux * vy - uy * vx;
+  const length = Math.sqrt(nx * nx + ny * ny + nz * nz);
+  return length > 0 && ((nx * x + ny * y) / (length * r)) * search.facing >= 0.9;
 }
 
 function bits(mask: number): number {

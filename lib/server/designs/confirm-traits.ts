@@ -22,11 +22,11 @@ export async function confirmRevisionTraits(asked: Asked, name: RevisionName, in
       throw new ExpectedError("moved_on", "Another file was read meanwhile. Look at its values, then confirm again.");
     }
     const faults: FieldProblem[] = [];
-    const { spacerMm, struts } = reading.traits;
+    const { rotors: seen, ...seenOfWhole } = reading.traits;
     const before = { ...revision.whole.declared };
-    const whole = settle(wholeTraitNames, input.whole, { spacerMm, struts }, before, "whole", faults);
+    const whole = settle(wholeTraitNames, input.whole, { ...seenOfWhole }, before, "whole", faults);
     const rotors = input.rotors.map((choices, n) => {
-      const read: Values = { ...reading.traits.rotors[n] };
+      const read: Values = { ...seen[n] };
       return settle(rotorTraitNames, choices, read, revision.rotors[n]?.declared ?? {}, `rotors[${n}]`, faults);
     });
     for (const [n, { held }] of rotors.entries()) {
@@ -34,6 +34,10 @@ export async function confirmRevisionTraits(asked: Asked, name: RevisionName, in
       if (typeof hub === "number" && typeof tip === "number" && hub >= tip)
         faults.push({ path: `rotors[${n}].hubDiameterMm`, message: "is no smaller than the tip's" });
     }
+    const kind = whole.held.inletStack ?? revision.whole.inletStack;
+    const lengthMm = whole.held.inletStackMm ?? revision.whole.inletStackMm;
+    if ((kind === "none") !== (lengthMm === 0))
+      faults.push({ path: "whole.inletStackMm", message: "is 0 without an inlet stack, and above 0 with one" });
     if (faults.length > 0) throw new ExpectedError("malformed", "Some traits can't hold as confirmed.", faults);
     await keepTraits(tx, { revisionId: revision.revisionId, whole, rotors });
     const { revisionId: subjectId } = revision;

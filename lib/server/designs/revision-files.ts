@@ -61,7 +61,12 @@ function readingHead({
 }: NonNullable<Awaited<ReturnType<typeof readingFor>>>) {
   const { unit, triangles, watertight, warnings, rotors } = result;
   const confidence = rotors.length === 0 ? null : Math.min(...rotors.map((rotor) => rotor.confidence));
-  return { attachmentId, name, readerVersion, unit, triangles, watertight, confidence, warnings };
+  const sure = {
+    struts: result.strutsConfidence,
+    inletStack: result.inletStack?.confidence ?? null,
+    spacer: result.spacer?.confidence ?? null,
+  };
+  return { attachmentId, name, readerVersion, unit, triangles, watertight, confidence, sure, warnings };
 }
 
 function traitLines({ whole, rotors }: DraftRevision, read: TraitsRead | undefined) {
@@ -70,6 +75,8 @@ function traitLines({ whole, rotors }: DraftRevision, read: TraitsRead | undefin
     whole: {
       spacerMm: line("spacerMm", read?.spacerMm, whole.spacerMm, whole),
       struts: line("struts", read?.struts, whole.struts, whole),
+      inletStack: line("inletStack", read?.inletStack, whole.inletStack, whole),
+      inletStackMm: line("inletStackMm", read?.inletStackMm, whole.inletStackMm, whole),
     },
     rotors: Array.from({ length: count }, (_, n) => {
       const [seen, kept] = [read?.rotors[n], rotors[n]];
@@ -94,5 +101,6 @@ function line(
 
 /** The trait's name in the vocabulary, which is what stands in `holds`: `hubDiameterMm` is `hub_diameter`. */
 export function traitKeyOf(name: string): string {
+  if (name === "inletStackMm") return "inlet_stack_length";
   return name.replace(/(Mm|Deg|G)$/, "").replace(/[A-Z]/g, (letter) => `_${letter.toLowerCase()}`);
 }
