@@ -52,16 +52,17 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const { report, turned } = soup ? { report: first, turned: 0 } : turnedOutward(first, middle, tiny);
   const { mesh, edges } = report;
   // Copies take no part in anything but the counts: the union has each place once.
-  const shellOf = edges.shellOf.map((shell) =>
-    soup ? Math.min(shell, 0) : report.copyOf[shell] === undefined ? shell : -1,
-  );
+  const copied = report.copyOf.some((copy) => copy !== undefined);
+  const shellOf =
+    soup || copied
+      ? edges.shellOf.map((shell) => (soup ? Math.min(shell, 0) : report.copyOf[shell] === undefined ? shell : -1))
+      : edges.shellOf;
   const shells = soup ? 1 : edges.shellCount;
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
   const finding = soup ? undefined : findAxis(mesh, shellOf, shells, tiny, options.axis && FILE_AXES[options.axis]);
   const upright = finding ?? boxUpright(mesh, middle);
   const overlapLines =
     finding?.search.overlaps.overlapLines ?? (soup ? 0 : probe(upright.mesh, shellOf, shells, tiny).overlapLines);
-  const copied = report.copyOf.some((copy) => copy !== undefined);
   const overlap = copied || overlapLines > 0;
   const density = options.densityGCm3 ?? DENSITY_DEFAULT_GCM3;
   const { integrals } = shellIntegrals(upright.mesh, shellOf, shells, [0, 0, 0]);
