@@ -59,8 +59,9 @@ function truth(fan: ToyFan, level: number): number {
 
 test("the bridge between the two units covers the ratio that the toy model was given", async () => {
   const { bridges } = await readBaseline({ slug: "alder-reference-seven" });
-  expect(bridges.map((bridge) => bridge.levelDba)).toEqual([40, 46, 52]);
-  for (const { levelDba: level, figure, from, to } of bridges) {
+  const atLevels = bridges.filter((bridge) => bridge.levelDba !== null);
+  expect(atLevels.map((bridge) => bridge.levelDba)).toEqual([40, 46, 52]);
+  for (const { levelDba: level, figure, from, to } of atLevels) {
     expect([from, to]).toEqual(["ARS-01", "ARS-02"]);
     const expected = truth(referenceFan, level ?? 0) / truth(secondReferenceFan, level ?? 0);
     expect(Math.abs(figure.value - expected)).toBeLessThan(1.5 * figure.u95);
