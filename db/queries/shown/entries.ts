@@ -154,7 +154,7 @@ export async function countEntries(
         db.raw("count(distinct (bench_version_id, protocol_version_id, baseline_unit_id))::int as comparables"),
       )
       .first<{ total: number; comparables: number } | undefined>(),
-    db("shown.entry").count<{ count: number }[]>("* as count"),
+    db("shown.total").first<{ entries: number } | undefined>("entries"),
   ]);
-  return { total: matches?.total ?? 0, comparables: matches?.comparables ?? 0, ofAll: Number(all[0]?.count ?? 0) };
+  return { total: matches?.total ?? 0, comparables: matches?.comparables ?? 0, ofAll: all?.entries ?? 0 };
 }

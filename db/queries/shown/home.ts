@@ -2,12 +2,8 @@ import type { Handle } from "../../client/connect";
 
 /** How many designs, entries and seasons are public. */
 export async function shownCounts(db: Handle): Promise<{ designs: number; entries: number; seasons: number }> {
-  const row = await db("shown.entry")
-    .select(
-      db.raw("count(distinct design_id)::int as designs"),
-      db.raw("count(*)::int as entries"),
-      db.raw("count(distinct season_id)::int as seasons"),
-    )
+  const row = await db("shown.total")
+    .select("designs", "entries", "seasons")
     .first<{ designs: number; entries: number; seasons: number } | undefined>();
   return row ?? { designs: 0, entries: 0, seasons: 0 };
 }

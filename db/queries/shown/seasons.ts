@@ -44,6 +44,7 @@ const seasonColumns = {
 /** Seasons that have opened, the newest first, or the one with this address. */
 export async function shownSeasons(db: Handle, { slug }: { slug?: string } = {}): Promise<SeasonRow[]> {
   return db("shown.season as s")
+    .leftJoin("shown.season_count as c", "c.season_id", "s.id")
     .modify((query) => void (slug !== undefined && query.where("s.slug", slug)))
     .orderBy("s.number", "desc")
     .select(
@@ -53,7 +54,7 @@ export async function shownSeasons(db: Handle, { slug }: { slug?: string } = {})
           from shown.season_bench sb join shown.bench_version v on v.id = sb.bench_version_id
           where sb.season_id = s.id) as "microphoneDistanceMm"`,
       ),
-      db.raw("(select count(*)::int from shown.entry e where e.season_id = s.id) as entries"),
+      db.raw("coalesce(c.entries, 0) as entries"),
       db.raw("(select count(*)::int from shown.round r where r.season_id = s.id) as rounds"),
     );
 }

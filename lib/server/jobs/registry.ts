@@ -39,13 +39,15 @@ export const jobHandlers: { [N in QueueName]?: JobHandler<N> } = {
   "publish-due": async () => {
     const { published, refused } = await publishDueRounds(new Date());
     if (published.length > 0 || refused.length > 0) log().info({ published, refused }, "rounds whose hour has come");
-    if (published.length > 0) await refreshStudies();
   },
+  // By the clock, and not with publishing: a worker that is killed between the two leaves no stale study behind.
+  "study-refresh": async () => void (await refreshStudies()),
 };
 
 /** What is sent by the clock, however many workers run. */
 export const jobSchedules: Schedule<QueueName>[] = [
   { queue: "publish-due", cron: "* * * * *", data: {} },
+  { queue: "study-refresh", cron: "* * * * *", data: {} },
   { queue: "search-compare", cron: "40 3 * * *", data: {} },
   { queue: "sweep", cron: "17 * * * *", data: {} },
 ];

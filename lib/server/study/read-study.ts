@@ -72,10 +72,11 @@ export async function readStudyChoices(): Promise<StudyChoices> {
 }
 
 /**
- * For the worker: works out anew what everybody is shown first (every trait, each figure), where the public has changed
- * since. Gives the number of answers that were worked out.
+ * For the worker: works out anew what everybody is shown first (the choices; every trait, each figure), where the public
+ * has changed since. Gives the number of answers that were worked out.
  */
 export async function refreshStudies(): Promise<number> {
+  await readStudyChoices();
   let refreshed = 0;
   for (const figure of outcomeKeys) {
     const question = { ...parseStudyQuestion(new URLSearchParams()), figure };

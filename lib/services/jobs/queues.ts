@@ -22,6 +22,8 @@ export const jobQueues = {
   "search-compare": { data: z.strictObject({}), retryLimit: 1, expireInSeconds: 1_800 },
   /** Fills the search index anew from the database. */
   "search-rebuild": { data: z.strictObject({}), retryLimit: 1, expireInSeconds: 60 },
+  /** Works out the trait studies that everybody is shown first, where what is public has changed. Sent every minute. */
+  "study-refresh": { data: z.strictObject({}), retryLimit: 0, expireInSeconds: 1_800 },
   /** Deletes what has run out: tokens, rate windows, idempotency keys, abandoned uploads. Sent hourly by the clock. */
   sweep: { data: z.strictObject({}), retryLimit: 0, expireInSeconds: 300 },
 } as const satisfies Record<string, QueueSettings>;
