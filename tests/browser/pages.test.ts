@@ -1,8 +1,8 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { routesOfTree } from "../api/support/matrix-routes";
-import { setUpBrowser } from "../setup/browser";
+import { setUpBrowser, type Opened } from "../setup/browser";
 import { scrollsSidewaysBy, wrongsByAxe } from "./support/axe";
-import { filledPages, filledPatterns, pageAddresses, type PageAddress } from "./support/page-addresses";
+import { filledPages, filledPatterns, pageAddresses, type PageAddress, type Reader } from "./support/page-addresses";
 
 const browser = setUpBrowser();
 const patterns = routesOfTree()
@@ -21,7 +21,10 @@ beforeAll(async () => {
  * directions, tables excepted. One load: theme and width change under the page, as they do under people.
  */
 async function wrongsOf({ path, as }: PageAddress): Promise<string[]> {
-  const { page, context, complaints } = await browser.open({ as: as === "signed out" ? undefined : as });
+  const { page, complaints } = await pageOf(as);
+  complaints.length = 0;
+  await page.setViewportSize({ width: 1280, height: 900 });
+  await page.emulateMedia({ colorScheme: "light" });
   const answer = await page.goto(path);
   await page.waitForLoadState("networkidle");
   const said = answer?.status() === 200 ? [] : [`answered ${answer?.status() ?? "nothing"}`];
@@ -30,10 +33,21 @@ async function wrongsOf({ path, as }: PageAddress): Promise<string[]> {
   await page.emulateMedia({ colorScheme: "dark" });
   said.push(...(await wrongsByAxe(page, ["color-contrast"])).map((each) => `in dark, ${each}`));
   await page.setViewportSize({ width: 320, height: 900 });
+  // Charts take their new width a moment later.
+  const fits = () => document.documentElement.scrollWidth <= document.documentElement.clientWidth;
+  await page.waitForFunction(fits, undefined, { timeout: 5_000 }).catch(() => undefined);
   const by = await scrollsSidewaysBy(page);
   if (by > 0) said.push(`scrolls sideways by ${by} px at 320 px`);
-  await context.close();
   return [...said, ...complaints].map((each) => `${path}: ${each}`);
+}
+
+const opened = new Map<Reader, Opened>();
+
+/** One page a reader, which goes from address to address. */
+async function pageOf(as: Reader): Promise<Opened> {
+  const known = opened.get(as) ?? (await browser.open({ as: as === "signed out" ? undefined : as }));
+  opened.set(as, known);
+  return known;
 }
 
 describe("every page of the tree", () => {
