@@ -1,3 +1,4 @@
+import { setTimeout as after } from "node:timers/promises";
 import { appDb, closeDbs } from "@/db/client/handles";
 
 /** Writes rows of the read model in one transaction, as publishing does, and stops before it commits or commits. */
@@ -5,7 +6,8 @@ const commits = process.argv[2] === "commit";
 await appDb().transaction(async (tx) => {
   await tx.raw("insert into published_entry select * from kept");
   process.stdout.write("written\n");
-  if (!commits) await tx.raw("select pg_sleep(600)");
+  // Idle, not asleep in the server: a backend at work doesn't notice that its client was killed.
+  if (!commits) await after(600_000);
 });
 process.stdout.write("committed\n");
 await closeDbs();
