@@ -96,7 +96,7 @@ export function AgreedSection({ baseline }: { baseline: Baseline }) {
           title="Agreed values"
           note="by unit and bench version; a new value never overwrites an old one"
         >
-          <div className="grid grid-cols-1 gap-8">
+          <div className="grid gap-8">
             {found.map((group) => (
               <AgreedTable key={group.key} group={group} />
             ))}

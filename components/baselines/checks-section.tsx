@@ -57,7 +57,7 @@ export function ChecksSection({ baseline, path, chosen, all }: ChecksSectionProp
         path={path}
       />
       <p className="my-4 max-w-3xl">{seriesSummary(series)}</p>
-      <div className="grid grid-cols-1 gap-8">
+      <div className="grid gap-8">
         <div>
           <h3 className="mb-2">Session by session</h3>
           <ControlChart

@@ -15,7 +15,7 @@ export function HoldsList({ session, ownId }: { session: BenchSession; ownId: st
   const hold = useHoldSession(session.id);
   const [reason, setReason] = useState("");
   return (
-    <div className="mt-6 grid grid-cols-1 gap-5">
+    <div className="mt-6 grid gap-5">
       {session.holds.map((each) => (
         <HoldItem key={each.id} session={session} hold={each} ownId={ownId} />
       ))}

@@ -14,7 +14,7 @@ type Form = ReturnType<typeof useRecordingForm>;
 export function RecordingFields({ form, place, known }: { form: Form; place: RecordingPlace; known: BenchRecordings }) {
   const { choice, change, positions, wrong } = form;
   return (
-    <div className="grid grid-cols-1 gap-3 sm:grid-cols-2 lg:grid-cols-3">
+    <div className="grid gap-3 sm:grid-cols-2 lg:grid-cols-3">
       {positions.length > 1 ? (
         <Select
           label="Microphone position"

@@ -43,8 +43,8 @@ export function RecordingForm({
   };
   const { state } = reader;
   return (
-    <div className="grid min-w-0 grid-cols-1 gap-4">
-      <label className="grid grid-cols-1 gap-1">
+    <div className="grid min-w-0 gap-4">
+      <label className="grid gap-1">
         <span className="field-label">Recording (WAV)</span>
         <input
           key={round}

@@ -47,7 +47,7 @@ export function SessionScreen({ initial, ownId }: { initial: BenchSession; ownId
         </div>
       </Section>
       <Section id="runs" title="Runs" note="Baseline first and last; choose a run to type, paste or bring its log.">
-        <div className="grid grid-cols-1 gap-8">
+        <div className="grid gap-8">
           {session.subjects.map((subject) => (
             <SubjectRuns
               key={subject.entryId ?? subject.baselineUnitId}

@@ -36,7 +36,7 @@ export function BenchSetupPart({ bench }: { bench: Bench }) {
 
 function VersionPart({ version }: { version: Version }) {
   return (
-    <div className="grid grid-cols-1 gap-4">
+    <div className="grid gap-4">
       <p>
         <Link href={`/host/benches/${version.id}`}>Qualification, documented changes and budgets of this version</Link>
       </p>

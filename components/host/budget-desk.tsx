@@ -20,14 +20,14 @@ export function BudgetDesk({ benchVersionId, budgets }: { benchVersionId: string
   const newest = budgets.at(-1);
   const [drafts, setDrafts] = useState<PartDraft[]>();
   return (
-    <div className="grid grid-cols-1 gap-4">
+    <div className="grid gap-4">
       {budgets.length === 0 ? <p>No budget yet: write the first one below.</p> : null}
       {budgets.map((budget, i) => {
         const before = budgets[i - 1];
         const name = `Budget ${budget.number}${budget.frozenAt ? `, frozen ${formatDate(budget.frozenAt)}` : ""}`;
         return (
           <Fold key={budget.id} title={name}>
-            <div className="grid grid-cols-1 gap-4">
+            <div className="grid gap-4">
               {budget.note ? <p>{budget.note}</p> : null}
               <PartsTable caption={name} parts={budget.parts} />
               <BudgetTotals parts={budget.parts} before={before?.parts} />
@@ -79,7 +79,7 @@ function BudgetEditor({ benchVersionId, before, drafts, onChange, onClose }: Edi
   return (
     <form
       aria-label="A new budget version"
-      className="grid grid-cols-1 gap-5 border border-rule p-4"
+      className="grid gap-5 border border-rule p-4"
       onSubmit={(event) => {
         event.preventDefault();
         if (save.isPending || wrong > 0) return;
@@ -110,7 +110,7 @@ function BudgetEditor({ benchVersionId, before, drafts, onChange, onClose }: Edi
           Add a part
         </Button>
       </p>
-      <div aria-live="polite" className="grid grid-cols-1 gap-4">
+      <div aria-live="polite" className="grid gap-4">
         <h4>What it would do</h4>
         <BudgetTotals parts={parts} before={before?.parts} />
         {before ? <BudgetChanges before={before.parts} after={parts} since={`budget ${before.number}`} /> : null}
