@@ -1,25 +1,14 @@
 import { randomBytes } from "node:crypto";
 import { describe, expect, it } from "vitest";
-import { generateRotor, type RotorSpec } from "@/lib/science/geometry/rotor-generator";
+import { generateRotor } from "@/lib/science/geometry/rotor-generator";
 import { demoPassword } from "@/db/seeds/demo/seed-people";
 import { writeBinaryStl } from "@/lib/science/geometry/stl-write";
+import { nineBlades as nine } from "../factories/nine-blades";
 import { setUpBrowser } from "../setup/browser";
 import { publishDraft } from "./support/publish-draft";
 
 const browser = setUpBrowser();
 const tag = randomBytes(3).toString("hex");
-
-/** As the generator is told, so the traits must be: 9 blades, left-handed, tip 110 mm, hub 40 mm. */
-const nine: RotorSpec = {
-  blades: 9,
-  hand: "left",
-  helixPitchMm: 110,
-  chordMm: 24,
-  thicknessMm: 2,
-  hubRadiusMm: 20,
-  tipRadiusMm: 55,
-  hubDepthMm: 22,
-};
 
 describe("a model on the fit page", () => {
   it("is carried into a draft through signing in, confirmed there, and stands on the sheet once published", async () => {

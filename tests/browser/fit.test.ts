@@ -1,24 +1,12 @@
-import { readFileSync } from "node:fs";
-import { createRequire } from "node:module";
 import type { Page } from "playwright-core";
 import { describe, expect, it } from "vitest";
 import { generateRotor, generateRotors, type RotorSpec } from "@/lib/science/geometry/rotor-generator";
+import { nineBlades as nine } from "../factories/nine-blades";
 import { binaryStl } from "../factories/rotor-mesh";
 import { setUpBrowser } from "../setup/browser";
+import { scrollsSidewaysBy, wrongsByAxe } from "./support/axe";
 
 const browser = setUpBrowser();
-const axeFile = createRequire(import.meta.url).resolve("axe-core/axe.min.js");
-
-const nine: RotorSpec = {
-  blades: 9,
-  hand: "left",
-  helixPitchMm: 110,
-  chordMm: 24,
-  thicknessMm: 2,
-  hubRadiusMm: 20,
-  tipRadiusMm: 55,
-  hubDepthMm: 22,
-};
 
 const file = (name: string, bytes: Uint8Array) => ({ name, mimeType: "model/stl", buffer: Buffer.from(bytes) });
 const rotorFile = (...specs: RotorSpec[]) => file("rotor.stl", binaryStl(generateRotors(specs)));
@@ -40,17 +28,6 @@ const give = (page: Page, model: ReturnType<typeof file>) => page.getByLabel("Mo
 const measured = (page: Page) => page.getByText("triangles read and measured").waitFor();
 const firstRow = (page: Page) =>
   page.getByRole("table", { name: "Rotors in order along the axis" }).locator("tbody tr").first();
-
-async function wrongs(page: Page): Promise<string[]> {
-  // Evaluated, not loaded as a script: the page's policy lets in no script but its own.
-  await page.evaluate(readFileSync(axeFile, "utf8"));
-  return page.evaluate(async () => {
-    const { axe } = window as unknown as {
-      axe: { run(): Promise<{ violations: { id: string; nodes: { html: string }[] }[] }> };
-    };
-    return (await axe.run()).violations.map((each) => `${each.id}: ${each.nodes[0]?.html ?? ""}`);
-  });
-}
 
 describe("a model that is dropped on the page", () => {
   it("is read beside it: blades, hand and diameters, its drawing, and nothing asked of the network", async () => {
@@ -132,11 +109,8 @@ describe("the page with a model on it", () => {
       await measured(page);
       await page.getByRole("img", { name: /Side view/ }).waitFor();
       await page.getByText(/Keep-out solids of/).waitFor();
-      expect(await wrongs(page)).toEqual([]);
-      const wide = await page.evaluate(
-        () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
-      );
-      expect(wide).toBe(0);
+      expect(await wrongsByAxe(page)).toEqual([]);
+      expect(await scrollsSidewaysBy(page)).toBe(0);
       expect((await page.locator("main").innerText()).toLowerCase()).not.toMatch(/\bsafe\b/);
     });
   }

@@ -2,6 +2,7 @@ import { readFileSync } from "node:fs";
 import { parse } from "csv-parse/sync";
 import { describe, expect, it } from "vitest";
 import { setUpBrowser } from "../setup/browser";
+import { scrollsSidewaysBy } from "./support/axe";
 
 const browser = setUpBrowser();
 
@@ -21,10 +22,7 @@ describe.each([{ width: 1280 }, { width: 360 }])("a designer at $width px", ({ w
     await page.locator("#spread h3", { hasText: "Tip gap" }).waitFor();
 
     // Sideways only tables scroll.
-    const beyond = await page.evaluate(
-      () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
-    );
-    expect(beyond).toBeLessThanOrEqual(0);
+    expect(await scrollsSidewaysBy(page)).toBeLessThanOrEqual(0);
 
     await page.locator("#effects summary", { hasText: "The same figures as a table" }).first().click();
     const row = page.locator("#effects .chart table tbody tr", { hasText: "Tip gap, +0.1 mm" });
