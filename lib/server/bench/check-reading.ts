@@ -2,6 +2,9 @@ import type { BenchVersionRow, ProtocolRow } from "@/db/queries/bench-sessions";
 import type { ReadingInput } from "@/lib/contracts/bench";
 import { ExpectedError, type FieldProblem } from "@/lib/domain/expected-error";
 
+/** What a reading is checked by; where it came from says nothing of what it can be. */
+export type GivenReading = Omit<ReadingInput, "source">;
+
 const spans = {
   level_dba: [0, 140, "dB(A)"],
   power_w: [0.1, 2000, "W"],
@@ -15,7 +18,7 @@ const spans = {
  * @throws ExpectedError impossible (422) naming every field
  */
 export function checkReadings(
-  readings: readonly ReadingInput[],
+  readings: readonly GivenReading[],
   bench: BenchVersionRow,
   standing: readonly { quantity: string; value: number }[] = [],
 ): void {
@@ -44,7 +47,7 @@ export function checkReadings(
 
 /** The same for one value by itself: the field is `value`. */
 export function checkValue(
-  reading: ReadingInput,
+  reading: GivenReading,
   bench: BenchVersionRow,
   standing: readonly { quantity: string; value: number }[],
 ): void {
@@ -60,7 +63,7 @@ export function checkValue(
   }
 }
 
-function whyImpossible({ quantity, value }: ReadingInput, bench: BenchVersionRow): string | undefined {
+function whyImpossible({ quantity, value }: GivenReading, bench: BenchVersionRow): string | undefined {
   if (!Number.isFinite(value)) return "is no number";
   if (quantity === "delta_t_k") return value > 0 ? undefined : "is not above 0 K: with the heat on ΔT is above 0 K";
   if (quantity === "sensor_c" || quantity === "ambient_c") {
@@ -80,7 +83,7 @@ export function checkSetSpeed(setSpeed: number, protocol: ProtocolRow): void {
 }
 
 /** Levels need a position, speeds a rotor; positions must be of the bench. @throws ExpectedError malformed */
-export function checkPlaces(readings: readonly ReadingInput[], positionIds: readonly string[]): void {
+export function checkPlaces(readings: readonly GivenReading[], positionIds: readonly string[]): void {
   const fields = readings.flatMap((reading, i): FieldProblem[] => {
     if (reading.quantity === "level_dba" && !positionIds.includes(reading.positionId ?? "")) {
       return [{ path: `readings[${i}].positionId`, message: "is no microphone position of this bench" }];
@@ -98,7 +101,7 @@ const placeOf = ({ quantity, positionId, rotorPosition }: Place): string =>
   `${quantity} ${quantity === "level_dba" ? positionId : ""} ${quantity === "speed_rpm" ? rotorPosition : ""}`;
 
 /** A run has one standing reading of a kind and place: the next one supersedes it. @throws ExpectedError already_there */
-export function checkTwice(readings: readonly ReadingInput[], standing: readonly Place[]): void {
+export function checkTwice(readings: readonly GivenReading[], standing: readonly Place[]): void {
   const seen = new Set(standing.map(placeOf));
   const fields = readings.flatMap((reading, i): FieldProblem[] => {
     const place = placeOf(reading);

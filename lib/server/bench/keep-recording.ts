@@ -3,7 +3,7 @@ import type { Handle } from "@/db/client/connect";
 import { insertBackground, insertCalibration } from "@/db/queries/bench-checks";
 import { insertLogFile } from "@/db/queries/bench-logs";
 import { changeRun, insertReadings } from "@/db/queries/bench-runs";
-import { benchVersionOf, positionsOf, type SessionHead } from "@/db/queries/bench-sessions";
+import { benchVersionOf, type SessionHead } from "@/db/queries/bench-sessions";
 import { keepRecordingAs, type RecordingRow } from "@/db/queries/recordings";
 import { insertSpectra, standingSpectra } from "@/db/queries/spectra";
 import type { Person } from "@/lib/domain/accounts/actor";
@@ -11,9 +11,8 @@ import type { RecordingResult } from "@/lib/domain/bench/read-recording";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { SOUND_READER_VERSION } from "@/lib/science/acoustics/reader-version";
 import { note, type Asked } from "../audit/audit";
-import { checkPlaces, checkReadings, checkTwice } from "./check-reading";
 import { demandRecording } from "./recordings";
-import { demandKept, demandRun, movedOn, standingOfRun } from "./runs";
+import { checkRunReadings, demandKept, demandRun, movedOn } from "./runs";
 import { checkSessionValue } from "./session-readings";
 
 export interface Kept {
@@ -131,18 +130,11 @@ async function keepLevel(tx: Handle, { row, result, session, person, logFileId }
   const { positionId } = row;
   const runId = row.runId ?? "";
   const { usedS, durationS, correctedDba, disturbed, warnings } = result.report;
-  const given = { quantity: "level_dba" as const, value: levelOf(result), positionId, source: "typed" as const };
-  const standing = await standingOfRun(tx, session.id, runId);
-  const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
-  checkPlaces(
-    [given],
-    positions.map((each) => each.id),
-  );
-  checkTwice([given], standing);
-  checkReadings([given], await benchVersionOf(tx, { benchVersionId: session.benchVersionId }), standing);
+  const level = { quantity: "level_dba" as const, value: levelOf(result), positionId };
+  await checkRunReadings(tx, { session, runId, readings: [level] });
   return insertReadings(tx, [
     {
-      ...{ sessionId: session.id, runId, positionId, quantity: "level_dba", value: given.value, unit: "dB(A)" },
+      ...{ sessionId: session.id, runId, ...level, unit: "dB(A)" },
       ...{ source: "recording", logFileId, takenBy: person.personId },
       detail: {
         usedS,

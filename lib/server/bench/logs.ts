@@ -1,13 +1,12 @@
 import { appDb } from "@/db/client/handles";
 import { insertLogFile, insertLogRefusals, keepFile } from "@/db/queries/bench-logs";
 import { changeRun, insertReadings } from "@/db/queries/bench-runs";
-import { benchVersionOf, positionsOf, protocolOf } from "@/db/queries/bench-sessions";
+import { protocolOf } from "@/db/queries/bench-sessions";
 import { logBytesMax, logPreview, type LogAnswer, type LogQuery } from "@/lib/contracts/bench-logs";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { storage } from "@/lib/services/storage/from-env";
 import { note, type Asked } from "../audit/audit";
-import { checkPlaces, checkReadings, checkTwice } from "./check-reading";
-import { demandKept, demandRun, movedOn, standingOfRun } from "./runs";
+import { checkRunReadings, demandKept, demandRun, movedOn } from "./runs";
 import { spoolLog, tooLarge, type SpooledLog } from "./spool-log";
 
 /**
@@ -88,19 +87,11 @@ async function keep(
     await note(tx, asked, { action: "log.keep", subjectKind: "run", subjectId: run.id, after: { logFileId, sha256 } });
     const found = report.reading;
     if (!found) return { logFileId, readingIds: [], version: version + 1 };
-    const place = { positionId: found.quantity === "level_dba" ? positionId : null };
-    const given = { quantity: found.quantity, value: found.value, source: "typed" as const, ...place };
-    const standing = await standingOfRun(tx, session.id, run.id);
-    const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
-    checkPlaces(
-      [given],
-      positions.map((each) => each.id),
-    );
-    checkTwice([given], standing);
-    checkReadings([given], await benchVersionOf(tx, { benchVersionId: session.benchVersionId }), standing);
+    const reading = { ...found, positionId: found.quantity === "level_dba" ? (positionId ?? null) : null };
+    await checkRunReadings(tx, { session, runId: run.id, readings: [reading] });
     const readingIds = await insertReadings(tx, [
       {
-        ...{ sessionId: session.id, runId: run.id, ...found, positionId: place.positionId ?? null },
+        ...{ sessionId: session.id, runId: run.id, ...reading },
         source: "log",
         logFileId,
         takenBy: person.personId,

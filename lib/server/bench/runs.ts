@@ -19,12 +19,31 @@ import type { Person } from "@/lib/domain/accounts/actor";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
 import { demandBench, demandNotOwner } from "./bench-access";
-import { checkPlaces, checkReadings, checkSetSpeed, checkTwice } from "./check-reading";
+import { checkPlaces, checkReadings, checkSetSpeed, checkTwice, type GivenReading } from "./check-reading";
 
 /** Readings of a run that no other supersedes. */
-export async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
+async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
   const readings = await readingsOfSession(tx, { sessionId });
   return readings.filter((each) => each.runId === runId && each.supersededBy === null);
+}
+
+/**
+ * Refuses readings of a run, whatever they came from, that say no place of the bench, are there already, or can't be.
+ * @throws ExpectedError malformed, already_there, impossible
+ */
+export async function checkRunReadings(
+  tx: Handle,
+  { session, runId, readings }: { session: SessionHead; runId: string; readings: readonly GivenReading[] },
+): Promise<void> {
+  const bench = await benchVersionOf(tx, { benchVersionId: session.benchVersionId });
+  const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
+  const standing = await standingOfRun(tx, session.id, runId);
+  checkPlaces(
+    readings,
+    positions.map((each) => each.id),
+  );
+  checkTwice(readings, standing);
+  checkReadings(readings, bench, standing);
 }
 
 /** Readings as they are stored: a speed goes to the run's rotor, ambient and power to the run. */
@@ -37,15 +56,7 @@ async function storeReadings(
     readings,
   }: { session: SessionHead; runId: string; person: Person; readings: readonly ReadingInput[] },
 ): Promise<string[]> {
-  const bench = await benchVersionOf(tx, { benchVersionId: session.benchVersionId });
-  const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
-  checkPlaces(
-    readings,
-    positions.map((each) => each.id),
-  );
-  const standing = await standingOfRun(tx, session.id, runId);
-  checkTwice(readings, standing);
-  checkReadings(readings, bench, standing);
+  await checkRunReadings(tx, { session, runId, readings });
   return insertReadings(
     tx,
     readings.map((each) => ({

@@ -106,7 +106,7 @@ export async function supersedeReading(
       const others = (await readingsOfSession(tx, { sessionId: old.sessionId })).filter(
         (each) => each.runId === old.runId && each.supersededBy === null && each.id !== readingId,
       );
-      checkValue({ quantity: old.quantity as "level_dba", value, source: "typed" }, bench, others);
+      checkValue({ quantity: old.quantity as "level_dba", value }, bench, others);
     }
     await changeWhatWasSigned(tx, session.roundId, reason);
     const [made = ""] = await insertReadings(tx, [
