@@ -1,6 +1,7 @@
 import type { Mesh } from "@/lib/science/geometry/mesh";
 import { Refusal } from "@/lib/science/refusal";
-import { startMeshThread } from "./read-mesh";
+import { hearThread } from "../threads/hear-thread";
+import { startMeshThread, type ThreadAnswer } from "./read-mesh";
 
 const WITHIN_MS = 30_000;
 /** What stands around a cooler needs few; a larger file is not shown. */
@@ -14,14 +15,14 @@ const TRIANGLES_MAX = 200_000;
  */
 export function readMeshAlone(file: string): Promise<Mesh> {
   const thread = startMeshThread({ file, limits: { trianglesMax: TRIANGLES_MAX }, meshAlone: true });
-  return new Promise<Mesh>((resolve, reject) => {
-    const timer = setTimeout(() => reject(new Refusal("time-limit", "The solid took too long to read.")), WITHIN_MS);
-    thread.on("message", (answer) => {
-      if (answer.kind === "mesh") resolve(answer.mesh);
-      if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
-    });
-    thread.on("error", reject);
-    thread.on("exit", (code) => reject(new Error(`The reader's thread ended early (${code}).`)));
-    thread.once("exit", () => clearTimeout(timer));
-  }).finally(() => void thread.terminate());
+  return hearThread<ThreadAnswer, Mesh>(
+    thread,
+    { withinMs: WITHIN_MS, what: "solid" },
+    {
+      onSaid(answer, { resolve, reject }) {
+        if (answer.kind === "mesh") resolve(answer.mesh);
+        if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
+      },
+    },
+  );
 }

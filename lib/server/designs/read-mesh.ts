@@ -4,6 +4,7 @@ import { meshReadingResult, type MeshReadingResult } from "@/lib/contracts/mesh-
 import type { Mesh } from "@/lib/science/geometry/mesh";
 import type { ReadingLimits } from "@/lib/science/geometry/reading";
 import { Refusal } from "@/lib/science/refusal";
+import { hearThread } from "../threads/hear-thread";
 import { startThread } from "../threads/run-thread";
 
 export interface ThreadOrder {
@@ -65,39 +66,26 @@ export function readMeshFile(file: string, control: MeshReadingControl = {}): Pr
   const bounds = { bytesMax: modelBytesMax, elapsedMsMax: withinMs, ...limits };
   const order: ThreadOrder = { file, limits: bounds, ...(mmPerUnit !== undefined && { mmPerUnit }) };
   let measured: MeshReadingResult | undefined;
-  const thread = startMeshThread(order);
-  return new Promise<MeshRead>((resolve, reject) => {
-    // Once it is measured, what goes wrong goes wrong with the drawing alone.
-    const fail = (error: unknown): void => (measured ? resolve({ result: measured, drawing: null }) : reject(error));
-    const cancel = (): void => reject(new Refusal("cancelled", "Reading was cancelled."));
-    const timer = setTimeout(() => fail(tooSlow(withinMs)), withinMs);
-    signal?.addEventListener("abort", cancel, { once: true });
-    if (signal?.aborted) cancel();
-    thread.on("message", (answer: ThreadAnswer) => {
-      if (answer.kind === "progress") onProgress?.("reading", answer.read, answer.expected);
-      else if (answer.kind === "measuring") onProgress?.("measuring", answer.triangles, answer.triangles);
-      else if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
-      else if (answer.kind === "mesh") fail(new Error("The thread handed back a mesh that nobody asked for."));
-      else if (answer.kind === "drawn") {
-        const parsed = meshDrawing.safeParse(answer.drawing);
-        if (measured) resolve({ result: measured, drawing: parsed.success ? parsed.data : null });
-      } else {
-        const parsed = meshReadingResult.safeParse(answer.result);
-        if (parsed.success) measured = parsed.data;
-        else reject(parsed.error);
-      }
-    });
-    thread.on("error", (error) => fail(outOfMemory(error) ? tooBig() : error));
-    thread.on("exit", (code) => fail(new Error(`The reader's thread ended early (${code}).`)));
-    thread.once("exit", () => {
-      clearTimeout(timer);
-      signal?.removeEventListener("abort", cancel);
-    });
-  }).finally(() => void thread.terminate());
+  return hearThread<ThreadAnswer, MeshRead>(
+    startMeshThread(order),
+    { signal, withinMs, what: "model" },
+    {
+      onSaid(answer, { resolve, reject }) {
+        if (answer.kind === "progress") onProgress?.("reading", answer.read, answer.expected);
+        else if (answer.kind === "measuring") onProgress?.("measuring", answer.triangles, answer.triangles);
+        else if (answer.kind === "refused") reject(new Refusal(answer.code, answer.message));
+        else if (answer.kind === "mesh") reject(new Error("The thread handed back a mesh that nobody asked for."));
+        else if (answer.kind === "drawn") {
+          const parsed = meshDrawing.safeParse(answer.drawing);
+          if (measured) resolve({ result: measured, drawing: parsed.success ? parsed.data : null });
+        } else {
+          const parsed = meshReadingResult.safeParse(answer.result);
+          if (parsed.success) measured = parsed.data;
+          else reject(parsed.error);
+        }
+      },
+      // Once it is measured, what goes wrong goes wrong with the drawing alone.
+      rescued: () => measured && { result: measured, drawing: null },
+    },
+  );
 }
-
-const tooSlow = (withinMs: number): Refusal =>
-  new Refusal("time-limit", `Reading took longer than ${Math.round(withinMs / 1000)} s and was stopped.`);
-const tooBig = (): Refusal => new Refusal("memory-limit", "The model needs more memory than one reading may take.");
-const outOfMemory = (error: Error): boolean =>
-  ("code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY") || /array buffer allocation/i.test(error.message);

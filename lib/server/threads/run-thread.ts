@@ -2,6 +2,7 @@ import path from "node:path";
 import { pathToFileURL } from "node:url";
 import { Worker } from "node:worker_threads";
 import { Refusal } from "@/lib/science/refusal";
+import { hearThread } from "./hear-thread";
 
 /** What a thread says: how far it is, what it found, or why it can't. */
 export type ThreadSaid =
@@ -63,27 +64,15 @@ export function startThread(file: string, order: unknown, heapMaxMb: number): Wo
 function start(file: string, order: unknown, control: ThreadControl): Promise<unknown> {
   const { onProgress, signal, withinMs, heapMaxMb } = control;
   const thread = startThread(file, order, heapMaxMb);
-  return new Promise<unknown>((resolve, reject) => {
-    const cancel = (): void => reject(new Refusal("cancelled", "Reading was cancelled."));
-    const timer = setTimeout(() => reject(tooSlow(withinMs)), withinMs);
-    signal?.addEventListener("abort", cancel, { once: true });
-    if (signal?.aborted) cancel();
-    thread.on("message", (said: ThreadSaid) => {
-      if (said.kind === "progress") onProgress?.(said.done);
-      else if (said.kind === "refused") reject(new Refusal(said.code, said.message, said.at));
-      else resolve(said.result);
-    });
-    thread.on("error", (error) => reject(outOfMemory(error) ? tooBig() : error));
-    thread.on("exit", (code) => reject(new Error(`The reader's thread ended early (${code}).`)));
-    thread.once("exit", () => {
-      clearTimeout(timer);
-      signal?.removeEventListener("abort", cancel);
-    });
-  }).finally(() => void thread.terminate());
+  return hearThread<ThreadSaid, unknown>(
+    thread,
+    { signal, withinMs, what: "file" },
+    {
+      onSaid(said, { resolve, reject }) {
+        if (said.kind === "progress") onProgress?.(said.done);
+        else if (said.kind === "refused") reject(new Refusal(said.code, said.message, said.at));
+        else resolve(said.result);
+      },
+    },
+  );
 }
-
-const tooSlow = (withinMs: number): Refusal =>
-  new Refusal("time-limit", `Reading took longer than ${Math.round(withinMs / 1000)} s and was stopped.`);
-const tooBig = (): Refusal => new Refusal("memory-limit", "The file needs more memory than one reading may take.");
-const outOfMemory = (error: Error): boolean =>
-  ("code" in error && error.code === "ERR_WORKER_OUT_OF_MEMORY") || /array buffer allocation/i.test(error.message);
