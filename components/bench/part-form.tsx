@@ -3,19 +3,14 @@
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { TextArea } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
 import { NumberField } from "@/components/ui/number-field";
-import { Slot, SlotGroup } from "@/components/ui/slot";
+import { leftToTick, TickList, type Ticks } from "@/components/ui/tick-list";
 import { useRecordPart } from "@/lib/client/bench-prints";
 import type { SpecimenPart } from "@/lib/contracts/bench-prints";
+import { spinUpItems } from "@/lib/domain/bench/cautions";
 import { Refusal } from "./refusal";
 
-const cautions = [
-  ["guard", "Guard closed around the rotor; nobody stands in its plane"],
-  ["eyes", "Eye protection on"],
-  ["steps", "Speed raised in steps, each held and listened to"],
-  ["vibration", "Stopped at once on vibration, rubbing or a new sound"],
-] as const;
+const cautions = Object.entries(spinUpItems).map(([key, words]) => ({ key, words }));
 
 export type PartFormProps = { specimenId: string; part: SpecimenPart; topSpeedRpm: number | null; name: string };
 
@@ -26,7 +21,7 @@ export function PartForm({ specimenId, part, topSpeedRpm, name }: PartFormProps)
   const [speed, setSpeed] = useState(part.spinUpSpeedRpm ?? undefined);
   const [balanceRecord, setBalanceRecord] = useState(part.balanceRecord);
   const [spinUpRecord, setSpinUpRecord] = useState(part.spinUpRecord);
-  const [ticked, setTicked] = useState<Record<string, boolean>>({});
+  const [ticked, setTicked] = useState<Ticks>({});
   const to = (state: SpecimenPart["state"]) =>
     record.mutate({
       massG: massG ?? null,
@@ -74,18 +69,14 @@ export function PartForm({ specimenId, part, topSpeedRpm, name }: PartFormProps)
           error={error?.field("spinUpRecord")}
         />
       </div>
-      <Notice kind="caution" title="a rotor can burst: tick each one">
-        <SlotGroup legend={`Spin-up of rotor ${part.rotorPosition}`} hideLegend flow="column">
-          {cautions.map(([key, words]) => (
-            <Slot
-              key={key}
-              label={words}
-              checked={ticked[key] ?? false}
-              onChange={(event) => setTicked({ ...ticked, [key]: event.currentTarget.checked })}
-            />
-          ))}
-        </SlotGroup>
-      </Notice>
+      <TickList
+        title="a rotor can burst: tick each one"
+        legend={`Spin-up of rotor ${part.rotorPosition}`}
+        hideLegend
+        items={cautions}
+        ticked={ticked}
+        onTick={setTicked}
+      />
       <p className="flex flex-wrap gap-3">
         <Button busy={record.isPending} aria-label={`Keep record: ${name}`} onClick={() => to("printed")}>
           Keep record
@@ -94,7 +85,7 @@ export function PartForm({ specimenId, part, topSpeedRpm, name }: PartFormProps)
           kind="solid"
           busy={record.isPending}
           aria-label={`Passed its spin-up: ${name}`}
-          disabled={cautions.some(([key]) => !ticked[key])}
+          disabled={leftToTick(cautions, ticked) > 0}
           onClick={() => to("passed")}
         >
           Passed its spin-up

@@ -4,8 +4,7 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
-import { Slot, SlotGroup } from "@/components/ui/slot";
+import { leftToTick, TickList, type Ticks } from "@/components/ui/tick-list";
 import { useStartSession } from "@/lib/client/bench";
 import type { BenchQueue, RoundSetup } from "@/lib/contracts/bench-prints";
 import { Refusal } from "./refusal";
@@ -16,7 +15,7 @@ export function StartSession({ rounds, checklist }: Pick<BenchQueue, "rounds" | 
   const [roundId, setRoundId] = useState(rounds[0]?.roundId ?? "");
   const [bench, setBench] = useState("");
   const [baseline, setBaseline] = useState("");
-  const [ticked, setTicked] = useState<Record<string, boolean>>({});
+  const [ticked, setTicked] = useState<Ticks>({});
   const start = useStartSession();
   const round = rounds.find((each) => each.roundId === roundId) ?? rounds[0];
   if (!round) return <p>No round is planned or being measured: the host plans one first.</p>;
@@ -28,7 +27,7 @@ export function StartSession({ rounds, checklist }: Pick<BenchQueue, "rounds" | 
     baseline,
     round.baselines.map((each) => each.baselineUnitId),
   );
-  const left = checklist.filter(({ key }) => !ticked[key]).length;
+  const left = leftToTick(checklist, ticked);
   const press = () =>
     start.mutate(
       { roundId: round.roundId, benchVersionId, baselineUnitId, checklist: ticked },
@@ -68,18 +67,13 @@ export function StartSession({ rounds, checklist }: Pick<BenchQueue, "rounds" | 
           }))}
         />
       </div>
-      <Notice kind="caution" title="tick each one when it is so">
-        <SlotGroup legend="Before the session starts" flow="column">
-          {checklist.map(({ key, words }) => (
-            <Slot
-              key={key}
-              label={words}
-              checked={ticked[key] ?? false}
-              onChange={(event) => setTicked({ ...ticked, [key]: event.currentTarget.checked })}
-            />
-          ))}
-        </SlotGroup>
-      </Notice>
+      <TickList
+        title="tick each one when it is so"
+        legend="Before the session starts"
+        items={checklist}
+        ticked={ticked}
+        onTick={setTicked}
+      />
       <Refusal error={start.error} fields={start.error?.code !== "malformed"} />
       <p className="flex flex-wrap items-center gap-3">
         <Button type="submit" kind="solid" busy={start.isPending} busyWords="Starting …" disabled={left > 0}>

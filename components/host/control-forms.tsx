@@ -6,7 +6,7 @@ import type { ActField } from "@/components/ui/act/act-values";
 import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
-import { Slot, SlotGroup } from "@/components/ui/slot";
+import { leftToTick, TickList, type Ticks } from "@/components/ui/tick-list";
 import { useDocumentChange, useStartBenchSession } from "@/lib/client/host";
 import type { BenchSetup } from "@/lib/contracts/bench-admin";
 import type { BenchControl } from "@/lib/contracts/control";
@@ -74,12 +74,12 @@ export function StartBenchSession({ benchVersionId, setup, budgets, checklist }:
   const [other, setOther] = useState(units[1]?.value ?? "");
   const [protocol, setProtocol] = useState(protocols.at(-1)?.value ?? "");
   const [budget, setBudget] = useState(budgets.at(-1)?.id ?? "");
-  const [ticked, setTicked] = useState<Record<string, boolean>>({});
+  const [ticked, setTicked] = useState<Ticks>({});
   if (units.length === 0 || protocols.length === 0 || budgets.length === 0)
     return (
       <p>It needs a baseline unit in service, a protocol and a budget first: add them under Benches and protocols.</p>
     );
-  const left = checklist.filter(({ key }) => !ticked[key]).length;
+  const left = leftToTick(checklist, ticked);
   const error = (path: string) => start.error?.field(path);
   const press = () =>
     start.mutate(
@@ -143,18 +143,13 @@ export function StartBenchSession({ benchVersionId, setup, budgets, checklist }:
           error={error("budgetVersionId")}
         />
       </div>
-      <Notice kind="caution" title="tick each one when it is so">
-        <SlotGroup legend="Before the session starts" flow="column">
-          {checklist.map(({ key, words }) => (
-            <Slot
-              key={key}
-              label={words}
-              checked={ticked[key] ?? false}
-              onChange={(event) => setTicked({ ...ticked, [key]: event.currentTarget.checked })}
-            />
-          ))}
-        </SlotGroup>
-      </Notice>
+      <TickList
+        title="tick each one when it is so"
+        legend="Before the session starts"
+        items={checklist}
+        ticked={ticked}
+        onTick={setTicked}
+      />
       {start.error ? (
         <Notice kind="wrong" title="not started" live="alert">
           <p>{start.error.detail}</p>

@@ -1,5 +1,5 @@
 import type { Person } from "@/lib/domain/accounts/actor";
-import { spinUpItems, checklistItems } from "@/lib/server/bench/cautions";
+import { spinUpItems, checklistItems } from "@/lib/domain/bench/cautions";
 import { moveAtBench } from "@/lib/server/bench/entry-moves";
 import { addRun, setRunState } from "@/lib/server/bench/runs";
 import { addSessionReading } from "@/lib/server/bench/session-readings";

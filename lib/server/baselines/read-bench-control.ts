@@ -4,8 +4,8 @@ import { benchControl } from "@/db/queries/bench-control";
 import { handlesOf } from "@/db/queries/people";
 import type { BenchControl } from "@/lib/contracts/control";
 import type { Actor } from "@/lib/domain/accounts/actor";
+import { checklistItems } from "@/lib/domain/bench/cautions";
 import { ExpectedError } from "@/lib/domain/expected-error";
-import { checklistItems } from "../bench/cautions";
 import { demand } from "../permission";
 
 /** A bench version's qualification, newest sessions and documented changes, for the host. */

@@ -5,9 +5,9 @@ import { jobRows, specimensOfRevisions, topSpeeds, type SpecimenRow } from "@/db
 import { handlesOf } from "@/db/queries/people";
 import type { BenchQueue, PrintJob, QueueEntry, SpecimenView } from "@/lib/contracts/bench-prints";
 import type { Actor } from "@/lib/domain/accounts/actor";
+import { checklistItems } from "@/lib/domain/bench/cautions";
 import { readyForReview } from "@/lib/domain/seasons/round-moves";
 import { demand } from "../permission";
-import { checklistItems } from "./cautions";
 
 const onTheirWay = ["accepted", "printing", "on_the_bench", "in_review"] as const;
 

@@ -1,7 +1,7 @@
 import type { Handle } from "@/db/client/connect";
 import { listSessions } from "@/db/queries/bench-sessions";
+import { checklistItems } from "@/lib/domain/bench/cautions";
 import { ExpectedError } from "@/lib/domain/expected-error";
-import { checklistItems } from "./cautions";
 
 /** @throws ExpectedError malformed while a caution is not ticked */
 export function demandTicked(checklist: Readonly<Record<string, boolean>>): void {

@@ -3,10 +3,10 @@ import { queueRow } from "@/db/queries/bench-queue";
 import { hasRuns, insertSpecimen, specimenById, topSpeeds, updatePart } from "@/db/queries/bench-specimens";
 import { seasonsOfRevision } from "@/db/queries/bench-specimens";
 import type { NewSpecimen, PartRecord } from "@/lib/contracts/bench-prints";
+import { spinUpItems } from "@/lib/domain/bench/cautions";
 import { ExpectedError, type FieldProblem } from "@/lib/domain/expected-error";
 import { note, type Asked } from "../audit/audit";
 import { demand } from "../permission";
-import { spinUpItems } from "./cautions";
 
 /** Records a printed copy of an entry that is being printed, with a part for each of its rotors. */
 export async function addSpecimen(
