@@ -8,8 +8,8 @@ export async function up(knex: Knex): Promise<void> {
       select season_id, count(*)::int as entries from published_entry group by season_id;
     create view shown.total as
       select (select count(*) from (select distinct design_id from published_entry) d)::int as designs,
-        (select coalesce(sum(entries), 0) from shown.season_count)::int as entries,
-        (select count(*) from shown.season_count)::int as seasons;
+        coalesce(sum(entries), 0)::int as entries, count(*)::int as seasons
+      from shown.season_count;
     grant select on shown.season_count, shown.total to ${roleNames.app}, ${roleNames.public};
   `);
 }

@@ -59,33 +59,30 @@ export async function insertBreak(db: Handle, row: Omit<ControlBreakRow, "id"> &
   return made.id;
 }
 
+const checkColumns = {
+  sessionId: "session_id",
+  quantity: "quantity",
+  setSpeed: "set_speed",
+  value: "value",
+  chart: "chart",
+  ruleBroken: "rule_broken",
+  at: "at",
+};
+
 /** Check values of a unit on a bench version, in order of time. */
 export async function checksOf(db: Handle, { benchVersionId, baselineUnitId }: Pair): Promise<CheckRow[]> {
   return db("baseline_check")
     .where({ bench_version_id: benchVersionId, baseline_unit_id: baselineUnitId })
     .orderBy(["at", "session_id"])
-    .select<CheckRow[]>({
-      sessionId: "session_id",
-      quantity: "quantity",
-      setSpeed: "set_speed",
-      value: "value",
-      chart: "chart",
-      ruleBroken: "rule_broken",
-      at: "at",
-    });
+    .select<CheckRow[]>(checkColumns);
 }
 
 /** A closed session's check values as they were judged. */
 export async function checksOfSession(db: Handle, { sessionId }: { sessionId: string }): Promise<CheckRow[]> {
-  return db("baseline_check").where({ session_id: sessionId }).orderBy(["quantity", "set_speed"]).select<CheckRow[]>({
-    sessionId: "session_id",
-    quantity: "quantity",
-    setSpeed: "set_speed",
-    value: "value",
-    chart: "chart",
-    ruleBroken: "rule_broken",
-    at: "at",
-  });
+  return db("baseline_check")
+    .where({ session_id: sessionId })
+    .orderBy(["quantity", "set_speed"])
+    .select<CheckRow[]>(checkColumns);
 }
 
 /** Puts a session's check values in the place of those that it had. */

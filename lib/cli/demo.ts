@@ -1,12 +1,11 @@
 import { closeDbs, ownerDb } from "@/db/client/handles";
 import { askForRebuild, searchBuild, searchState } from "@/db/queries/search-build";
 import type { Handle } from "@/db/client/connect";
-import { env, requiredEnv } from "@/lib/env/env";
 import { indexDigest } from "@/search/document";
 import { fillField } from "./demo/fill/fill-field";
 import { holdsDemo } from "./launch/demo-seed";
 import { isLoopback } from "./launch/loopback";
-import { adoptRunningDemo } from "./launch/running-demo";
+import { ownerUrl } from "./launch/running-demo";
 
 /**
  * `npm run demo -- --designs N`: fills the local demo up to N published entries, invented and the same every time, and
@@ -47,8 +46,7 @@ async function untilIndexed(owner: Handle): Promise<void> {
 
 async function main(): Promise<void> {
   const wanted = wantedDesigns(process.argv.slice(2));
-  if (env().MIGRATE_DATABASE_URL === undefined) adoptRunningDemo();
-  const url = requiredEnv("MIGRATE_DATABASE_URL");
+  const url = ownerUrl();
   const owner = ownerDb(url);
   try {
     await demandDemo(url, owner);

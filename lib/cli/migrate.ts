@@ -1,9 +1,8 @@
 import { migrateDown, migrateUp, pendingMigrations } from "@/db/client/migrator";
 import { roleNames } from "@/db/cluster/roles";
 import { ownerDb } from "@/db/client/handles";
-import { env, requiredEnv } from "@/lib/env/env";
 import { installJobs } from "@/lib/services/jobs/install";
-import { adoptRunningDemo } from "./launch/running-demo";
+import { ownerUrl } from "./launch/running-demo";
 
 /**
  * Brings a database up to date: the product's tables, then the job queues'.
@@ -20,8 +19,7 @@ export function migrateEverything(ownerUrl: string): Promise<string[]> {
 }
 
 async function main(order: string): Promise<void> {
-  if (env().MIGRATE_DATABASE_URL === undefined) adoptRunningDemo();
-  const url = requiredEnv("MIGRATE_DATABASE_URL");
+  const url = ownerUrl();
   if (order === "up") return report("Applied", await migrateEverything(url));
   if (order === "down") return report("Taken back", await migrateDown(url, false));
   if (order === "down-all") return report("Taken back", await migrateDown(url, true));

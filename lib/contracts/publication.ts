@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { toneSchema } from "./tone";
 
 /** A figure with its standard uncertainty u and degrees of freedom (null: taken as known exactly). */
 export const figureSchema = z.strictObject({
@@ -95,26 +96,6 @@ export const equalNoiseSchema = z.union([
   z.strictObject({ levelDba: z.number(), why: notReachedWhy }),
 ]);
 export type EqualNoise = z.infer<typeof equalNoiseSchema>;
-
-const toneMatchSchema = z.strictObject({
-  kind: z.enum(["blade-passing", "interaction"]),
-  rotor: z.union([z.literal(1), z.literal(2)]).nullable(),
-  m1: z.int(),
-  m2: z.int(),
-  strutModes: z.array(z.int()).nullable(),
-  residualHz: z.number(),
-});
-
-/** A tone found, with its ratios and which predicted one it is; prominent is null where the standard doesn't reach. */
-export const toneSchema = z.strictObject({
-  frequencyHz: z.number(),
-  levelDb: z.number(),
-  toneToNoiseDb: z.number().nullable(),
-  prominenceDb: z.number().nullable(),
-  prominent: z.boolean().nullable(),
-  match: toneMatchSchema.extend({ alsoMatches: z.array(toneMatchSchema) }).nullable(),
-});
-export type Tone = z.infer<typeof toneSchema>;
 
 /** Third-octave levels in dB, as read and with the background taken out (an upper bound where it was too near). */
 export const spectrumBandSchema = z.strictObject({

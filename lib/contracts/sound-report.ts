@@ -1,18 +1,10 @@
 import { z } from "zod";
+import { toneSchema } from "./tone";
 
 const figure = z.number().nullable();
 const said = z.strictObject({ code: z.string(), message: z.string() });
 const span = z.strictObject({ fromS: z.number(), toS: z.number() });
 const band = { nominalHz: z.number(), midHz: z.number(), levelDb: figure };
-
-const match = z.strictObject({
-  kind: z.enum(["blade-passing", "interaction"]),
-  rotor: z.union([z.literal(1), z.literal(2)]).nullable(),
-  m1: z.int(),
-  m2: z.int(),
-  strutModes: z.array(z.int()).nullable(),
-  residualHz: z.number(),
-});
 
 /** What is read from a recording: the object that the command line prints. Levels in dB, null where a thing can't be known. */
 export const soundReport = z.strictObject({
@@ -33,16 +25,7 @@ export const soundReport = z.strictObject({
     .nullable(),
   correctedDba: figure,
   speedsRpm: z.array(z.number()).nullable(),
-  tones: z.array(
-    z.strictObject({
-      frequencyHz: z.number(),
-      levelDb: z.number(),
-      toneToNoiseDb: figure,
-      prominenceDb: figure,
-      prominent: z.boolean().nullable(),
-      match: z.strictObject({ ...match.shape, alsoMatches: z.array(match) }).nullable(),
-    }),
-  ),
+  tones: z.array(toneSchema),
   loudness: z.strictObject({ sone: z.number(), phon: z.number() }).nullable(),
   warnings: z.array(said),
 });

@@ -1,7 +1,7 @@
 import path from "node:path";
 import { serverAccount } from "@/db/cluster/account";
 import { chooseDataFolder } from "@/db/cluster/folder";
-import { adoptEnvironment, env } from "@/lib/env/env";
+import { adoptEnvironment, env, requiredEnv } from "@/lib/env/env";
 import { toldBy } from "./ledger";
 
 const root = path.resolve(import.meta.dirname, "../../..");
@@ -19,4 +19,10 @@ export function adoptRunningDemo(): void {
   if (!told)
     throw new Error("DATABASE_URL is not set and no demo runs here. Run npm start, leave it running, and try again.");
   adoptEnvironment(told);
+}
+
+/** The schema owner's address: as set, or that of the demo that runs from this clone. @throws when there is neither */
+export function ownerUrl(): string {
+  if (env().MIGRATE_DATABASE_URL === undefined) adoptRunningDemo();
+  return requiredEnv("MIGRATE_DATABASE_URL");
 }
