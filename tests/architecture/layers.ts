@@ -140,5 +140,4 @@ export const longFilesAllowed = [
   /^db\/migrations\//,
   /(^|\/)fixtures\//,
   /^tests\/.*\/values\//,
-  /^tests\/api\/matrix-expectations\.ts$/,
 ];
