@@ -1,5 +1,5 @@
-import Link from "next/link";
 import { ControlChart } from "@/components/charts/control-chart";
+import { ChoiceLinks } from "@/components/ui/choice-links";
 import { Section } from "@/components/ui/sheet";
 import type { Baseline } from "@/lib/contracts/baselines";
 import { formatDate } from "@/lib/format/dates";
@@ -30,6 +30,7 @@ export function ChecksSection({ baseline, path, chosen, all }: ChecksSectionProp
   if (!series) return null;
   const places = [...new Map(every.map((each) => [`${each.serial} ${each.bench}`, each])).values()];
   const isHere = (each: ControlSeries) => each.serial === series.serial && each.bench === series.bench;
+  const hrefOf = ({ key }: ControlSeries) => `${path}?chart=${key}`;
   const name = `${series.words}, unit ${series.serial}`;
   const shared = { unit: series.unit, decimals: series.decimals };
   return (
@@ -38,23 +39,21 @@ export function ChecksSection({ baseline, path, chosen, all }: ChecksSectionProp
       title="Control charts"
       note={all ? "every closed session: what isn't published is seen by the host alone" : "of published sessions"}
     >
-      <Choices
+      <ChoiceLinks
         label="Unit and bench version"
-        choices={places.map((each) => ({
-          key: (
+        items={places.map((each) => ({
+          words: `${each.serial} on ${each.bench}`,
+          href: hrefOf(
             every
               .filter((one) => one.serial === each.serial && one.bench === each.bench)
-              .find(({ words }) => words === series.words) ?? each
-          ).key,
-          words: `${each.serial} on ${each.bench}`,
-          here: isHere(each),
+              .find(({ words }) => words === series.words) ?? each,
+          ),
+          shown: isHere(each),
         }))}
-        path={path}
       />
-      <Choices
+      <ChoiceLinks
         label="Quantity and set speed"
-        choices={every.filter(isHere).map((each) => ({ key: each.key, words: each.words, here: each === series }))}
-        path={path}
+        items={every.filter(isHere).map((each) => ({ words: each.words, href: hrefOf(each), shown: each === series }))}
       />
       <p className="my-4 max-w-3xl">{seriesSummary(series)}</p>
       <div className="grid gap-8">
@@ -86,34 +85,6 @@ export function ChecksSection({ baseline, path, chosen, all }: ChecksSectionProp
         with λ = 0.2 (6.3.2.4). A session that was out is drawn and counts towards no limit.
       </p>
     </Section>
-  );
-}
-
-function Choices({
-  label,
-  choices,
-  path,
-}: {
-  label: string;
-  choices: readonly { key: string; words: string; here: boolean }[];
-  path: string;
-}) {
-  return (
-    <nav aria-label={label} className="mb-2">
-      <ul className="flex flex-wrap gap-x-5 gap-y-1">
-        {choices.map(({ key, words, here }) => (
-          <li key={words}>
-            <Link
-              href={`${path}?chart=${key}#checks`}
-              aria-current={here ? "true" : undefined}
-              className={here ? "font-bold underline decoration-double" : undefined}
-            >
-              {words}
-            </Link>
-          </li>
-        ))}
-      </ul>
-    </nav>
   );
 }
 
