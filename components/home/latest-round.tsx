@@ -50,9 +50,10 @@ function rowOf(item: IndexItem): BarsRow {
 }
 
 const name: BarsColumn = { key: "name", head: "Design" };
+const rank: BarsColumn = { key: "rank", head: "Rank" };
 const ends: readonly BarsColumn[] = [
-  { key: "rank", head: "Rank" },
   { key: "range", head: "95 % range" },
+  { key: "designer", head: "Designer" },
 ];
 
 /** The round published last and who leads it. */
@@ -78,7 +79,7 @@ export function LatestRound(props: LatestRoundProps) {
       <BarsTable
         caption={`The first ${items.length} of ${seasonTitle}, round ${number}, with 95 % intervals`}
         nameColumn="name"
-        columns={[...ends.slice(0, 1), name, { key: "designer", head: "Designer" }, ...middle, ...ends.slice(1)]}
+        columns={[rank, name, ...middle, ...ends]}
         rows={items.map(rowOf)}
       />
       <p className="small-print mt-2 max-w-3xl">
