@@ -42,7 +42,9 @@ export function SeasonList({ seasons }: { seasons: readonly SeasonLine[] }) {
         cells: {
           season: { words: <Link href={`/seasons/${season.slug}`}>{season.title}</Link> },
           state: { words: seasonState(season) },
-          opened: { words: season.opensAt ? formatDate(season.opensAt) : "–" },
+          opened: {
+            words: <span className="whitespace-nowrap">{season.opensAt ? formatDate(season.opensAt) : "–"}</span>,
+          },
           entries: { figure: { value: season.entries, decimals: 0 } },
           levels: { words: levelsWords(season) },
           rounds: {
@@ -50,7 +52,7 @@ export function SeasonList({ seasons }: { seasons: readonly SeasonLine[] }) {
               season.rounds.length === 0 ? (
                 "none yet"
               ) : (
-                <span className="inline-flex flex-wrap gap-x-3">
+                <span className="inline-flex flex-wrap gap-x-1.5">
                   {season.rounds.map((round) => (
                     <Link
                       key={round.number}

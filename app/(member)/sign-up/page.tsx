@@ -9,7 +9,7 @@ export default function SignUpPage() {
   return (
     <Section id="sign-up" title="Make an account" level={1}>
       <p className="mb-4 max-w-2xl">
-        With an account you can send in designs, keep comparisons, ask about a figure and vote. Reading needs none.
+        With an account you keep designs and their revisions, comparisons and searches. Reading needs none.
       </p>
       <SignUpForm />
       <p className="mt-4">
