@@ -27,8 +27,8 @@ export function PlainSumSection({ standing, path }: { standing: Standing | null;
             caption="Entries that the plain sum would move the furthest"
             columns={[
               { key: "name", head: "Moves the furthest" },
-              { key: "from", head: "By the season’s rule" },
-              { key: "to", head: "By the plain sum" },
+              { key: "from", head: "By the season’s rule", short: true },
+              { key: "to", head: "By the plain sum", short: true },
             ]}
             rows={changes.movers.map((each) => ({
               key: each.entryId,

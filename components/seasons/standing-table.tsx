@@ -36,14 +36,16 @@ export type StandingTableProps = {
 function columns(standing: Standing, seasonSlug: string | undefined): BarsColumn[] {
   return [
     { key: "name", head: "Design" },
-    { key: "rank", head: "Rank" },
+    { key: "rank", head: "Rank", short: true },
     { key: "range", head: "95 % range of the rank" },
     { key: "score", head: "Score", unit: scoreUnit(standing) },
     { key: "deltaT", head: "ΔT against baseline, equal noise", unit: "K" },
-    ...(standing.rows.some((row) => row.letters) ? [{ key: "letters", head: "Not told apart" }] : []),
-    { key: "first", head: "Chance of first" },
-    ...(seasonSlug ? [{ key: "round", head: "Round" }] : []),
-    ...(standing.rule.kind === standing.seasonRule ? [] : [{ key: "byRule", head: "Rank by the season’s rule" }]),
+    ...(standing.rows.some((row) => row.letters) ? [{ key: "letters", head: "Not told apart", short: true }] : []),
+    { key: "first", head: "Chance of first", short: true },
+    ...(seasonSlug ? [{ key: "round", head: "Round", short: true }] : []),
+    ...(standing.rule.kind === standing.seasonRule
+      ? []
+      : [{ key: "byRule", head: "Rank by the season’s rule", short: true }]),
     { key: "by", head: "By" },
   ];
 }

@@ -24,6 +24,8 @@ export type BarsColumn = {
   tone?: "baseline" | "strong";
   /** An address that sorts by this column, and how it is sorted now. */
   sort?: { href: string; now?: "ascending" | "descending" };
+  /** Its cells hold a word or two, and take no more room than that on a phone. */
+  short?: boolean;
   /** Only heard: for a column of slots. */
   hideHead?: boolean;
 };

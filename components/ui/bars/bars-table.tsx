@@ -38,6 +38,7 @@ function Head({ column, figures, names }: { column: BarsColumn; figures: boolean
         column.hideHead && "is-heard",
         names && "is-name",
         figures && "is-figure",
+        column.short && "is-short",
         column.tone === "baseline" && "is-baseline",
       )}
     >
@@ -87,6 +88,7 @@ export function BarsTable(props: BarsTableProps) {
                     className={clsx(
                       names && "is-name",
                       figures && "is-figure",
+                      column.short && "is-short",
                       column.tone === "strong" && "is-strong",
                       (row.tone === "baseline" || column.tone === "baseline") && "is-baseline",
                       row.tone === "wrong" && "is-wrong",
