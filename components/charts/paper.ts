@@ -36,10 +36,10 @@ export function axis(palette: Palette, title: string, rules: boolean) {
   } satisfies Partial<Record<keyof ScaleOptionsByType<"linear">, unknown>>;
 }
 
-/** A linear axis of figures. */
+/** A linear axis of figures, named at round steps alone. */
 export function figureAxis(palette: Palette, title: string, rules: boolean) {
   const base = axis(palette, title, rules);
-  return { ...base, ticks: { ...base.ticks, callback: tickFigures } };
+  return { ...base, ticks: { ...base.ticks, callback: tickFigures, includeBounds: false } };
 }
 
 /** What every chart shares: its paper and type, no legend, no motion where none is wanted. */

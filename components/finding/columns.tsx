@@ -1,5 +1,6 @@
 import type { BarsCell } from "@/components/ui/bars/bars-model";
 import { absoluteRanges, ranges, type IndexItem, type RangeKey, type SortKey } from "@/lib/contracts/index-query";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { levelUnit } from "@/lib/format/quantities";
 import { whyNoEqualNoise, whyNoRank } from "./missing-words";
@@ -121,7 +122,7 @@ export const indexColumns: readonly IndexColumn[] = [
   words("spacer", "Spacer", ({ spacerMm }) => (spacerMm > 0 ? `${spacerMm} mm` : "none")),
   words("struts", "Struts", ({ struts }) => String(struts)),
   words("shroud", "Shroud ring", ({ shroud }) => (shroud ? "yes" : "no")),
-  words("frame", "Frame", ({ frameKey }) => frameKey.replace("x", " × ")),
+  words("frame", "Frame", ({ frameKey }) => formatFrame(frameKey)),
   words("material", "Material", ({ material }) => material),
   words("licence", "Licence", ({ licence }) => licence),
 ];

@@ -1,4 +1,5 @@
 import { ranges, type FacetKey, type RangeKey } from "@/lib/contracts/index-query";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { listWords } from "@/lib/format/words";
 
@@ -22,11 +23,9 @@ const spoken: Partial<Record<FacetKey, Titles>> = {
   tone: withOrWithout,
 };
 
-const frameWords = (key: string) => (/^\d+x\d+$/.test(key) ? `${key.replace("x", " × ")} mm` : key);
-
 /** A facet's value for people: "two, counter-rotating", "120 × 25 mm", "Season 4". */
 export function valueLabel(facet: FacetKey, value: string, seasonTitles: Titles): string {
-  if (facet === "frame") return frameWords(value);
+  if (facet === "frame") return `${formatFrame(value)} mm`;
   if (facet === "season") return seasonTitles[value] ?? value;
   return labels[facet]?.[value] ?? value;
 }

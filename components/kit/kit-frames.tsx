@@ -2,6 +2,7 @@ import { FrameDrawingView } from "@/components/drawing/fitting-drawing-view";
 import { buttonClass } from "@/components/ui/button-class";
 import { Section } from "@/components/ui/sheet";
 import type { Kit } from "@/lib/contracts/kit";
+import { formatFrame } from "@/lib/format/frames";
 
 export const kitPath = (kit: Kit): string => `/api/v1/seasons/${kit.season.slug}/kit`;
 
@@ -9,7 +10,7 @@ export const kitPath = (kit: Kit): string => `/api/v1/seasons/${kit.season.slug}
 export function KitFrames({ kit, note }: { kit: Kit; note: string }) {
   return kit.frames.map((frame) => {
     const path = `${kitPath(kit)}/frames/${frame.key}`;
-    const name = frame.key.replace("x", " × ");
+    const name = formatFrame(frame.key);
     return (
       <Section
         key={frame.key}

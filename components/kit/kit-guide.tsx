@@ -3,13 +3,16 @@ import { CautionList } from "@/components/ui/notice";
 import { LinkButton } from "@/components/ui/button";
 import { Section } from "@/components/ui/sheet";
 import type { Kit } from "@/lib/contracts/kit";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 
 const mm = (value: number) => `${formatNumber(value, { decimals: Number.isInteger(value) ? 0 : 1 })} mm`;
 
 function checks(kit: Kit): string[] {
   const { frames, totalDepthMaxMm, inletStackMaxMm, solids } = kit;
-  const swept = frames.map((frame) => `${mm(frame.boreMm - 2 * frame.toleranceMm)} in ${frame.key}`);
+  const swept = frames.map(
+    (frame) => `${mm(frame.boreMm - 2 * frame.toleranceMm)} in a frame of ${formatFrame(frame.key)}`,
+  );
   return [
     `What turns is at most ${[...new Set(swept)].join(", ")} across, ring and all.`,
     ...(totalDepthMaxMm === null

@@ -3,6 +3,7 @@ import { Facts, type Fact } from "@/components/ui/facts";
 import { Section } from "@/components/ui/sheet";
 import type { Season } from "@/lib/contracts/seasons";
 import { formatDate } from "@/lib/format/dates";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { countWords, listWords } from "@/lib/format/words";
 import { seasonLevelUnit } from "./season-list";
@@ -18,7 +19,7 @@ function rulesFacts(season: Season): Fact[] {
       label: "Frames",
       value: listWords(
         season.frames.map(
-          ({ key, boreMm }) => `${key.replace("x", " × ")} (bore ${formatNumber(boreMm, { decimals: 1 })} mm)`,
+          ({ key, boreMm }) => `${formatFrame(key)} (bore ${formatNumber(boreMm, { decimals: 1 })} mm)`,
         ),
         "or",
       ),

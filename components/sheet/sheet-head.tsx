@@ -2,21 +2,14 @@ import Link from "next/link";
 import type { Sheet } from "@/lib/contracts/sheet";
 import { traitOf } from "@/lib/domain/designs/traits";
 import { formatDate, machineTime } from "@/lib/format/dates";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { listWords } from "@/lib/format/words";
 import { Facts, type Fact } from "@/components/ui/facts";
 import { Missing } from "@/components/ui/missing";
 import { Section } from "@/components/ui/sheet";
 import { ClipButton } from "./clip-button";
-import {
-  correctedWords,
-  frameWords,
-  licenceWords,
-  millimetres,
-  printTimeWords,
-  sheetNumber,
-  stageWords,
-} from "./sheet-words";
+import { correctedWords, licenceWords, millimetres, printTimeWords, sheetNumber, stageWords } from "./sheet-words";
 
 /** A trait's key as people call it; a key that no trait has stands as it is. */
 const traitWords = (key: string): string => {
@@ -47,7 +40,7 @@ function traitFacts({ traits, revision }: Sheet): Fact[] {
     { label: "Solidity", value: each((rotor) => rotor.solidityMid, 2, "") },
     { label: "Mass", value: each((rotor) => rotor.massG, 1, " g") },
     { label: "Struts", value: String(traits.struts) },
-    { label: "Frame", value: frameWords(traits.frameKey) },
+    { label: "Frame", value: formatFrame(traits.frameKey) },
     { label: "Material", value: traits.material },
     { label: "Print time", value: traits.printTimeMin === null ? unknown : printTimeWords(traits.printTimeMin) },
     { label: "Licence", value: licenceWords(revision.licence) },

@@ -28,11 +28,6 @@ export function stageWords({ stages, counterRotating }: SheetTraits): string {
   return `${stages}, ${counterRotating ? "counter-rotating" : "same way round"}`;
 }
 
-/** "120 × 25" for the key "120x25". */
-export function frameWords(key: string): string {
-  return key.replace("x", " × ");
-}
-
 /** "3 h 45 min" for a number of minutes. */
 export function printTimeWords(minutes: number): string {
   const [hours, rest] = [Math.floor(minutes / 60), Math.round(minutes % 60)];

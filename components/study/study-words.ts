@@ -1,5 +1,6 @@
 import type { StudyAnswer } from "@/lib/contracts/study";
 import { isYesNo, traitOf, type TraitKey } from "@/lib/domain/study/traits";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { formatRange } from "@/lib/format/quantities";
 
@@ -35,7 +36,7 @@ export function valueWords(trait: TraitKey, value: string | number): string {
     const decimals = Number.isInteger(value) ? 0 : decimalsOf(trait);
     return `${formatNumber(value, { decimals })}${unitAfter(unit)}`;
   }
-  if (trait === "frame") return `${value.replace("x", " × ")} mm`;
+  if (trait === "frame") return `${formatFrame(value)} mm`;
   return levelNames[trait]?.[value] ?? value;
 }
 

@@ -1,11 +1,10 @@
 import type { studyChoices } from "@/db/queries/shown/study";
 import type { StudyChoices } from "@/lib/contracts/study";
+import { formatFrame } from "@/lib/format/frames";
 import { numberWord } from "@/lib/format/words";
 
 type Counted = Awaited<ReturnType<typeof studyChoices>>;
 type Choice = StudyChoices["frames"][number];
-
-const frameWords = (key: string) => `${key.replace("x", " × ")} mm`;
 
 function tally(counted: Counted, keyOf: (row: Counted[number]) => string): Map<string, number> {
   const counts = new Map<string, number>();
@@ -22,7 +21,7 @@ function frameChoices(counted: Counted): Choice[] {
   const shared = classes.filter(([size]) => keys.filter(([key]) => key.startsWith(`${size}x`)).length > 1);
   return [
     ...shared.map(([value, count]) => ({ value, label: `${value} mm, any depth`, count })),
-    ...keys.map(([value, count]) => ({ value, label: frameWords(value), count })),
+    ...keys.map(([value, count]) => ({ value, label: `${formatFrame(value)} mm`, count })),
   ];
 }
 
