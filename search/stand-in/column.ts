@@ -26,8 +26,8 @@ export class Column {
   private readonly codeByNumber = new Map<number, number>();
   private readonly codeByString = new Map<string, number>();
   /** A code, -1 for none, or -(2 + position in `many`). */
-  private codes = new Int32Array(1024).fill(NONE);
-  private flags = new Uint8Array(1024);
+  private codes = new Int32Array(64).fill(NONE);
+  private flags = new Uint8Array(64);
   private readonly many: number[][] = [];
   private readonly freeMany: number[] = [];
   private sortedCodes = new Int32Array(0);
@@ -54,8 +54,9 @@ export class Column {
     if (values.some((value) => value === null)) flag |= FLAG_NULL;
     if (values.some(isEmpty)) flag |= FLAG_EMPTY;
     this.flags[slot] = flag;
-    const codes: number[] = [];
-    for (const value of values) this.collect(value, codes);
+    const distinct = new Set<number>();
+    for (const value of values) this.collect(value, distinct);
+    const codes = [...distinct];
     for (const code of codes) {
       if (this.uses[code] === 0) this.unusedCount -= 1;
       this.uses[code] = (this.uses[code] as number) + 1;
@@ -178,11 +179,10 @@ export class Column {
     return left < right ? -1 : left > right ? 1 : 0;
   }
 
-  private collect(value: Json, codes: number[]): void {
+  private collect(value: Json, codes: Set<number>): void {
     if (Array.isArray(value)) for (const item of value) this.collect(item, codes);
     else if (value !== null && typeof value !== "object") {
-      const code = typeof value === "number" ? this.numberCode(value) : this.stringCode(String(value));
-      if (!codes.includes(code)) codes.push(code);
+      codes.add(typeof value === "number" ? this.numberCode(value) : this.stringCode(String(value)));
     }
   }
 

@@ -1,5 +1,6 @@
 import type { Column } from "./column";
-import { ServiceError } from "./errors";
+import { ServiceError, notSupported } from "./errors";
+import { ownValue } from "./paths";
 import type { SearchIndex } from "./search-index";
 import { Vocabulary } from "./vocabulary";
 import { tokenise } from "./words";
@@ -8,25 +9,32 @@ export type FacetAnswer = {
   facetDistribution: Record<string, Record<string, number>>;
   facetStats: Record<string, { min: number; max: number }>;
 };
+/** Facets times documents that one search may count: half a second or so; a facet costs as much as some documents. */
+const FACET_WORK_MAX = 5e7;
+const DOCUMENTS_PER_FACET = 1000;
+
 export type FacetHit = { value: string; count: number };
 
 /** Counts of the asked attributes over the listed documents, and the range of their numbers. */
 export function countFacets(index: SearchIndex, slots: Int32Array, names: readonly string[]): FacetAnswer {
-  const answer: FacetAnswer = { facetDistribution: {}, facetStats: {} };
+  const distributions: [string, Record<string, number>][] = [];
+  const ranges: [string, { min: number; max: number }][] = [];
   const { maxValuesPerFacet } = index.settings.faceting;
-  for (const path of facetPaths(index, names)) {
+  const paths = facetPaths(index, names);
+  if (paths.length * (index.slots + DOCUMENTS_PER_FACET) > FACET_WORK_MAX)
+    throw notSupported("Counting so many facets of so many documents");
+  for (const path of paths) {
     const column = index.column(path);
     if (column.holders === 0) continue;
     const counts = new Uint32Array(column.size);
     column.count(slots, counts);
     const codes = chooseCodes(column, counts, maxValuesPerFacet, orderOf(index, path));
-    const values: Record<string, number> = {};
-    for (const code of codes) values[column.labels[code] as string] = counts[code] as number;
-    answer.facetDistribution[path] = values;
+    const values = codes.map((code): [string, number] => [column.labels[code] as string, counts[code] as number]);
+    distributions.push([path, Object.fromEntries(values)]);
     const stats = rangeOf(column, counts);
-    if (stats !== undefined) answer.facetStats[path] = stats;
+    if (stats !== undefined) ranges.push([path, stats]);
   }
-  return answer;
+  return { facetDistribution: Object.fromEntries(distributions), facetStats: Object.fromEntries(ranges) };
 }
 
 function facetPaths(index: SearchIndex, names: readonly string[]): string[] {
@@ -51,7 +59,7 @@ function facetPaths(index: SearchIndex, names: readonly string[]): string[] {
 
 function orderOf(index: SearchIndex, path: string): "alpha" | "count" {
   const by = index.settings.faceting.sortFacetValuesBy;
-  return by[path] ?? by["*"] ?? "alpha";
+  return ownValue(by, path) ?? by["*"] ?? "alpha";
 }
 
 /** At most `limit` codes that occur: the first in order of value, or those that occur most, most first. */

@@ -35,8 +35,18 @@ const MAX_DEPTH = 150;
 
 /** Message, then the span as 1-based columns, then the filter itself, as the service writes a bad filter. */
 export function filterMessage(message: string, source: string, start: number, end: number): string {
-  const columns = (to: number): number => Array.from(source.slice(0, to)).length + 1;
+  const columns = (to: number): number => codePoints(source, to) + 1;
   return `${message}\n${columns(start)}:${columns(end)} ${source}`;
+}
+
+/** Characters before a place, where a pair of surrogates is one. */
+function codePoints(text: string, end: number): number {
+  let count = 0;
+  for (let at = 0; at < end; at += 1) {
+    const isSecondHalf = at > 0 && (text.codePointAt(at - 1) ?? 0) > 0xffff;
+    if (!isSecondHalf) count += 1;
+  }
+  return count;
 }
 
 /** Recursive-descent parser of `or := and (OR and)*; and := not (AND not)*; not := NOT not | "(" or ")" | condition`. */
@@ -183,18 +193,20 @@ class Parser {
 
   private quotedWord(quote: string): Word {
     const open = this.at;
-    let text = "";
+    let isEscaped = false;
     for (this.at += 1; this.at < this.source.length; this.at += 1) {
       const char = this.source[this.at] as string;
       if (char === quote) {
+        const raw = this.source.slice(open + 1, this.at);
         this.at += 1;
+        const text = isEscaped ? raw.replace(quote === '"' ? /\\(["\\])/g : /\\(['\\])/g, "$1") : raw;
         return { text, start: open + 1, end: this.at - 1, quoted: true };
       }
       const next = this.source[this.at + 1];
       if (char === "\\" && (next === quote || next === "\\")) {
-        text += next;
+        isEscaped = true;
         this.at += 1;
-      } else text += char;
+      }
     }
     const rest = this.source.slice(open);
     return this.fail(

@@ -1,5 +1,5 @@
 import type { Column } from "./column";
-import { ServiceError } from "./errors";
+import { ServiceError, notSupported } from "./errors";
 import type { Condition, Filter, Word } from "./filter-parse";
 import { filterMessage } from "./filter-parse";
 import { normaliseFacet } from "./words";
@@ -18,17 +18,25 @@ export type FilterContext = {
   code: string;
 };
 
-const NUMBER = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/;
+const NUMBER = /^[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?$/;
+
+/** Documents and values that one filter may look at, over all of its conditions: a second or so. */
+const LOOKS_MAX = 2e8;
+/** What a condition costs by itself, counted in looks. */
+const LOOKS_PER_CONDITION = 2000;
+
+/** A filter being run: how many documents and values it may still look at. */
+type Run = FilterContext & { looksLeft: number };
 
 /** Mask of the documents that a filter keeps: 1 kept, 0 not. Unfilterable attributes are refused with their place. */
 export function runFilter(filter: Filter, context: FilterContext): Uint8Array {
-  const mask = evaluate(filter, context);
+  const mask = evaluate(filter, { ...context, looksLeft: LOOKS_MAX });
   for (let slot = 0; slot < mask.length; slot += 1)
     mask[slot] = (mask[slot] as number) & (context.live[slot] as number);
   return mask;
 }
 
-function evaluate(filter: Filter, context: FilterContext): Uint8Array {
+function evaluate(filter: Filter, context: Run): Uint8Array {
   if (filter.kind === "test") return test(filter.condition, filter.source, context);
   if (filter.kind === "not") return invert(evaluate(filter.part, context));
   const [first, ...rest] = filter.parts;
@@ -47,9 +55,11 @@ function invert(mask: Uint8Array): Uint8Array {
   return mask;
 }
 
-function test(condition: Condition, source: string, context: FilterContext): Uint8Array {
+function test(condition: Condition, source: string, context: Run): Uint8Array {
   requireFilterable(condition.attribute, source, context);
   const column = context.column(condition.attribute.text);
+  context.looksLeft -= LOOKS_PER_CONDITION + context.slots + column.size;
+  if (context.looksLeft < 0) throw notSupported("A filter of so many conditions", context.code);
   const mask = new Uint8Array(context.slots);
   if (condition.kind === "exists" || condition.kind === "null" || condition.kind === "empty") {
     column.markFlag(condition.kind, mask);

@@ -128,7 +128,7 @@ function matchedEnd(text: string, token: Token, shown: readonly Shown[]): number
 
 /** Where matches stand in every attribute, in bytes of UTF-8. */
 export function matchPositions(document: Document, shown: readonly Shown[]): Record<string, MatchPosition[]> {
-  const positions: Record<string, MatchPosition[]> = {};
+  const positions = new Map<string, MatchPosition[]>();
   const visit = (value: Json, path: string, indices: number[]): void => {
     if (Array.isArray(value)) value.forEach((item, i) => visit(item, path, [...indices, i]));
     else if (isRecord(value)) {
@@ -136,14 +136,17 @@ export function matchPositions(document: Document, shown: readonly Shown[]): Rec
     } else {
       const text = scalarText(value);
       if (text === undefined || typeof value === "boolean") return;
-      const found = findSpans(text, tokenise(text), shown).map((span) => ({
-        start: Buffer.byteLength(text.slice(0, span.start)),
-        length: Buffer.byteLength(text.slice(span.start, span.end)),
-        ...(indices.length > 0 ? { indices } : {}),
-      }));
-      if (found.length > 0) positions[path] = [...(positions[path] ?? []), ...found];
+      let at = 0;
+      let bytes = 0;
+      const found = findSpans(text, tokenise(text), shown).map((span) => {
+        bytes += Buffer.byteLength(text.slice(at, span.start));
+        at = span.start;
+        const length = Buffer.byteLength(text.slice(span.start, span.end));
+        return { start: bytes, length, ...(indices.length > 0 ? { indices } : {}) };
+      });
+      if (found.length > 0) positions.set(path, [...(positions.get(path) ?? []), ...found]);
     }
   };
   visit(document, "", []);
-  return positions;
+  return Object.fromEntries(positions);
 }

@@ -1,5 +1,6 @@
 import type { IncomingMessage, ServerResponse } from "node:http";
 import { ServiceError } from "./errors";
+import { parseJson } from "./json";
 import type { Caller } from "./keys";
 import { invalidKey } from "./keys";
 
@@ -79,7 +80,7 @@ export async function readJson(exchange: Exchange, fallback?: unknown): Promise<
   contentTypeOf(exchange, ["application/json"]);
   if (text.trim() === "") throw new ServiceError("missing_payload", "A json payload is missing.");
   try {
-    return JSON.parse(text) as unknown;
+    return parseJson(text);
   } catch (error) {
     const said = error instanceof Error ? error.message : String(error);
     throw new ServiceError("malformed_payload", `The json payload provided is malformed. \`${said}\`.`);

@@ -5,6 +5,11 @@ export function isRecord(value: unknown): value is Record<string, unknown> {
   return typeof value === "object" && value !== null && !Array.isArray(value);
 }
 
+/** The object's own value under a key: never what every object inherits, such as `constructor`. */
+export function ownValue<T>(record: Readonly<Record<string, T>>, key: string): T | undefined {
+  return Object.hasOwn(record, key) ? record[key] : undefined;
+}
+
 /** Whether `path` is the attribute itself or lies below it: `info` covers `info.review`. */
 export function covers(attribute: string, path: string): boolean {
   return path === attribute || path.startsWith(`${attribute}.`);
@@ -35,13 +40,13 @@ function collect(value: Json, path: string, found: Json[]): void {
     return;
   }
   if (!isRecord(value)) return;
-  const direct = value[path];
+  const direct = ownValue(value, path);
   if (direct !== undefined) {
     found.push(direct);
     return;
   }
   for (let dot = path.indexOf("."); dot > 0; dot = path.indexOf(".", dot + 1)) {
-    const below = value[path.slice(0, dot)];
+    const below = ownValue(value, path.slice(0, dot));
     if (below !== undefined) collect(below, path.slice(dot + 1), found);
   }
 }
@@ -82,14 +87,14 @@ function pickerOf(patterns: readonly string[]): Picker {
 export function project(document: Document, patterns: readonly string[]): Document {
   const { names, wild, below } = pickerOf(patterns);
   if (names.has("*")) return document;
-  const kept: Document = {};
+  const kept: [string, Json][] = [];
   for (const [key, value] of Object.entries(document)) {
     const inside = below.get(key);
-    if (names.has(key) || wild.some((pattern) => matchesPattern(pattern, key))) kept[key] = value;
-    else if (inside !== undefined) kept[key] = projectBelow(value, inside);
-    else if (key.includes(".") && patterns.some((pattern) => matchesPattern(pattern, key))) kept[key] = value;
+    if (names.has(key) || wild.some((pattern) => matchesPattern(pattern, key))) kept.push([key, value]);
+    else if (inside !== undefined) kept.push([key, projectBelow(value, inside)]);
+    else if (key.includes(".") && patterns.some((pattern) => matchesPattern(pattern, key))) kept.push([key, value]);
   }
-  return kept;
+  return Object.fromEntries(kept);
 }
 
 function projectBelow(value: Json, patterns: readonly string[]): Json {

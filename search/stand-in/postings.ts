@@ -12,7 +12,7 @@ const POSITION_MAX = SOLE_BIT - 1;
 /** Words of neighbouring array items stand this far apart. */
 const ITEM_GAP = 8;
 
-export const attributeOf = (place: number): number => place >> POSITION_BITS;
+export const attributeOf = (place: number): number => Math.floor(place / 2 ** POSITION_BITS);
 export const positionOf = (place: number): number => place & POSITION_MAX;
 /** Whether the word is the attribute's only one, so that typing it is typing the whole value. */
 export const isSole = (place: number): boolean => (place & SOLE_BIT) !== 0;
@@ -128,9 +128,8 @@ export class Postings {
     const { slots, places } = posting;
     const isLast = slots.length === 0 || (slots[slots.length - 1] as number) <= slot;
     const at = isLast ? slots.length : lowerBound(slots, slot + 1);
-    for (let i = at - 1; i >= 0 && slots[i] === slot; i -= 1) {
-      if (attributeOf(places[i] as number) === attributeOf(place)) return;
-    }
+    // A document's attributes come one after the other, so only the last place can be of the same one.
+    if (slots[at - 1] === slot && attributeOf(places[at - 1] as number) === attributeOf(place)) return;
     if (isLast) {
       slots.push(slot);
       places.push(place);

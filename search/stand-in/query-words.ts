@@ -1,4 +1,4 @@
-import { tokenise } from "./words";
+import { eachToken } from "./words";
 
 /** A typed word, or the words of a phrase in quotes. */
 export type Term = { words: string[]; isPhrase: boolean; isPrefix: boolean };
@@ -18,21 +18,22 @@ export function readQuery(text: string, stopWords: ReadonlySet<string>, allowPre
   let offset = 0;
   pieces.forEach((piece, index) => {
     const isPhrase = index % 2 === 1;
-    const tokens = tokenise(piece);
+    const tokens = budget > 0 ? eachToken(piece) : [];
     if (isPhrase) {
-      const words = tokens.map((token) => token.word).slice(0, budget);
+      const words: string[] = [];
+      for (const token of tokens) if (words.push(token.word) >= budget) break;
       budget -= words.length;
       const target = isMinus(text, offset - 2) ? excluded : terms;
       if (words.length > 0) target.push({ words, isPhrase: true, isPrefix: false });
     } else {
       for (const token of tokens) {
-        if (budget === 0) break;
         const isNegative = isMinus(text, offset + token.start - 1);
         const isLast = offset + token.end === text.length;
         if (stopWords.has(token.word) && !isNegative) continue;
         budget -= 1;
         const term = { words: [token.word], isPhrase: false, isPrefix: allowPrefix && isLast && !isNegative };
         (isNegative ? excluded : terms).push(term);
+        if (budget === 0) break;
       }
     }
     offset += piece.length + 1;

@@ -1,5 +1,6 @@
 import type { Column } from "./column";
 import { ServiceError, notSupported } from "./errors";
+import { rulesInForce } from "./rules-in-force";
 import type { SearchIndex } from "./search-index";
 import type { TextMatch } from "./text-match";
 
@@ -54,7 +55,8 @@ export function rank(
       `Index \`${index.uid}\`: You must specify where \`sort\` is listed in the rankingRules setting to use the sort parameter at search time.`,
     );
   }
-  const keys: Keys = rankingRules.flatMap((rule) => ruleKeys(rule, candidates, index, match, sort));
+  const rules = rulesInForce(rankingRules, match?.strategy ?? "last");
+  const keys: Keys = rules.flatMap((rule) => ruleKeys(rule, candidates, index, match, sort));
   if (keys.length === 0 || wanted === 0) return candidates.slice(0, wanted);
   const order =
     wanted * 4 < candidates.length ? smallest(candidates.length, wanted, keys) : everything(candidates.length, keys);

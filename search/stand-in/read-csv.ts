@@ -3,7 +3,7 @@ import { ServiceError } from "./errors";
 import type { Document, Json } from "./paths";
 
 type Kind = "string" | "number" | "boolean";
-const NUMBER = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/;
+const NUMBER = /^[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d+)?$/;
 
 /**
  * Documents of a table with a head (RFC 4180). A head may end in `:number` or `:boolean`, which tells how to read its

@@ -1,6 +1,6 @@
 import { randomUUID } from "node:crypto";
 import type { Engine } from "./engine";
-import { ServiceError } from "./errors";
+import { ServiceError, notSupported } from "./errors";
 import type { FederatedQuery, Federation } from "./federation";
 import { checkFederated, federate, readFederation, readWeight } from "./federation";
 import type { Exchange, Route } from "./http";
@@ -14,6 +14,8 @@ import type { SearchParams } from "./search-params";
 import { readFacetSearch, readSearch, readSearchAddress } from "./search-params";
 import { kind } from "./settings-check";
 import { bothFilters } from "./tenant-token";
+
+const QUERIES_MAX = 1000;
 
 /** Routes that search. */
 export function searchRoutes(engine: Engine): Route[] {
@@ -60,6 +62,7 @@ export function searchRoutes(engine: Engine): Route[] {
       action: "search",
       handle: async (exchange) => {
         const { queries, federation } = readMultiSearch(await readJson(exchange));
+        if (queries.length > QUERIES_MAX) throw notSupported(`A multi-search of more than ${QUERIES_MAX} queries`);
         const shared = options(new Map());
         const read = queries.map((query, i) => inside(i, () => readQuery(engine, exchange, query, i, federation)));
         if (federation !== undefined) return ok(federate(read, federation, shared));

@@ -1,5 +1,6 @@
 import { notSupported } from "./errors";
 import { eachLeaf } from "./paths";
+import { rulesInForce } from "./rules-in-force";
 import type { Rank } from "./score-rank";
 import { globalScore, positionCost } from "./score-rank";
 import type { SearchIndex } from "./search-index";
@@ -107,7 +108,7 @@ function scoreOf(
     ranks.push(...own);
     details[name] = { order: Object.keys(details).length, ...shown, score: globalScore(of) };
   };
-  for (const rule of withWords(rankingRules, params.matchingStrategy)) {
+  for (const rule of rulesInForce(rankingRules, params.matchingStrategy)) {
     if (rule === "words") add("words", [[1, 1]], { matchingWords: 1, maxMatchingWords: 1 });
     else if (rule === "typo") add("typo", [typo], { typoCount, maxTypoCount });
     else if (rule === "proximity") add("proximity", [[1, 1]]);
@@ -126,13 +127,4 @@ function scoreOf(
     }
   }
   return { score: globalScore(ranks), details };
-}
-
-/** The service puts `words` before the first rule of words where the settings leave it out, unless all are required. */
-function withWords(rules: readonly string[], strategy: SearchParams["matchingStrategy"]): readonly string[] {
-  if (strategy === "all") return rules.filter((rule) => rule !== "words");
-  const first = rules.findIndex((rule) => rule !== "sort" && !rule.includes(":"));
-  if (first < 0 || rules[first] === "words") return rules;
-  const rest = rules.filter((rule) => rule !== "words");
-  return [...rest.slice(0, first), "words", ...rest.slice(first)];
 }

@@ -61,8 +61,21 @@ export class SearchIndex {
     return this.live;
   }
 
+  /** Adds or replaces a document; one that can't be taken in leaves the index without it. */
   put(id: string, document: Document): void {
+    try {
+      this.take(id, document);
+    } catch (error) {
+      this.columns.clear();
+      this.postings = undefined;
+      this.remove(id);
+      throw error;
+    }
+  }
+
+  private take(id: string, document: Document): void {
     const known = this.slotById.get(id);
+    const bytes = JSON.stringify(document).length;
     const slot = known ?? this.freeSlots.pop() ?? this.documents.length;
     if (known !== undefined) this.forget(slot);
     this.documents[slot] = document;
@@ -72,8 +85,8 @@ export class SearchIndex {
     for (const key of Object.keys(document)) {
       this.fieldDistribution.set(key, (this.fieldDistribution.get(key) ?? 0) + 1);
     }
-    this.sizes[slot] = JSON.stringify(document).length;
-    this.documentBytes += this.sizes[slot] ?? 0;
+    this.sizes[slot] = bytes;
+    this.documentBytes += bytes;
     for (const column of this.columns.values()) column.set(slot, document);
     this.postings?.add(slot, document);
   }

@@ -1,5 +1,6 @@
 import { ServiceError, notSupported } from "./errors";
-import { isRecord } from "./paths";
+import { parseJson } from "./json";
+import { isRecord, ownValue } from "./paths";
 import { kind } from "./settings-check";
 import type { MatchingStrategy } from "./text-match";
 
@@ -80,7 +81,7 @@ export function readSearch(body: unknown, extra: Readonly<Record<string, Shape>>
     throw new ServiceError("bad_request", `Invalid value type: expected an object, but found ${kind(body)}`);
   const shapes = { ...SHAPES, ...extra };
   for (const [name, value] of Object.entries(body)) {
-    const shape = shapes[name];
+    const shape = ownValue(shapes, name);
     if (shape === undefined) {
       const list = Object.keys(shapes)
         .map((each) => `\`${each}\``)
@@ -138,7 +139,7 @@ export function readFacetSearch(body: unknown): FacetSearchParams {
 }
 
 function checkShape(name: string, value: unknown, shape: Shape): void {
-  const code = name in FACET_SHAPES ? `invalid_facet_search_${snake(name)}` : searchCode(name);
+  const code = Object.hasOwn(FACET_SHAPES, name) ? `invalid_facet_search_${snake(name)}` : searchCode(name);
   const wrong = (expected: string, found: unknown, at = ""): never => {
     throw new ServiceError(
       code,
@@ -150,8 +151,8 @@ function checkShape(name: string, value: unknown, shape: Shape): void {
       if (typeof value !== "string") wrong("a string", value);
       break;
     case "count":
-      if (typeof value !== "number" || !Number.isInteger(value)) wrong("a positive integer", value);
-      else if (value < 0)
+      if (!Number.isSafeInteger(value)) wrong("a positive integer", value);
+      else if ((value as number) < 0)
         throw new ServiceError(
           code,
           `Invalid value type at \`.${name}\`: expected a positive integer, but found ${kind(value)}`,
@@ -184,7 +185,7 @@ function checkShape(name: string, value: unknown, shape: Shape): void {
 export function readSearchAddress(query: URLSearchParams): Record<string, unknown> {
   const body: Record<string, unknown> = {};
   for (const [name, text] of query) {
-    const shape = SHAPES[name];
+    const shape = ownValue(SHAPES, name);
     if (shape === undefined) {
       const list = Object.keys(SHAPES)
         .map((each) => `\`${each}\``)
@@ -203,7 +204,7 @@ export function readSearchAddress(query: URLSearchParams): Record<string, unknow
 }
 
 export function readCount(name: string, text: string, code: string): number {
-  if (/^\d+$/.test(text)) return Number(text);
+  if (/^\d+$/.test(text) && Number.isSafeInteger(Number(text))) return Number(text);
   throw new ServiceError(
     code,
     `Invalid value in parameter \`${name}\`: could not parse \`${text}\` as a positive integer`,
@@ -221,7 +222,7 @@ export function readFlag(name: string, text: string, code: string): boolean {
 
 function parseOr(text: string): unknown {
   try {
-    return JSON.parse(text);
+    return parseJson(text);
   } catch {
     return text;
   }

@@ -13,6 +13,8 @@ import { settingsRoutes } from "./routes-settings";
 import { warmUp } from "./warm-up";
 
 const LOOPBACK = "127.0.0.1";
+/** A connection that was quiet for a while is still good for the next request. */
+const KEEP_ALIVE_MS = 120_000;
 
 export type StandInOptions = {
   /** Port on 127.0.0.1; 0 takes a free one. */
@@ -46,6 +48,7 @@ export async function startSearchStandIn(options: StandInOptions): Promise<Stand
   const server = createServer((request, response) => {
     void respond(engine, routes, request, response);
   });
+  server.keepAliveTimeout = KEEP_ALIVE_MS;
   await new Promise<void>((resolve, reject) => {
     server.once("error", reject);
     server.listen(options.port, LOOPBACK, resolve);
@@ -70,7 +73,7 @@ async function respond(
   response: ServerResponse,
 ): Promise<void> {
   try {
-    const url = new URL(request.url ?? "/", `http://${LOOPBACK}`);
+    const url = addressOf(request.url ?? "/");
     const path = url.pathname.length > 1 ? url.pathname.replace(/\/$/, "") : url.pathname;
     const found = findRoute(routes, request.method ?? "GET", path);
     if (typeof found === "number") {
@@ -103,6 +106,12 @@ async function respond(
         : new ServiceError("internal", `An internal error has occurred. \`${String(error)}\`.`);
     if (!response.headersSent) send(response, { status: refusal.status, body: refusal.toBody() });
   }
+}
+
+/** The request's address; one that is none leads to no route. */
+function addressOf(target: string): URL {
+  const base = `http://${LOOPBACK}`;
+  return new URL(URL.canParse(target, base) ? target : "/unreadable", base);
 }
 
 /** The route, or the status of what isn't one: 404 for an unknown path, 405 for an unknown method on a known one. */

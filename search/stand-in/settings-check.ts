@@ -114,6 +114,8 @@ export function checkSetting(name: SettingName, value: unknown, path: string): v
       const { oneTypo, twoTypos } = record(sizes, ["oneTypo", "twoTypos"], `${path}.minWordSizeForTypos`);
       count(oneTypo, `${path}.minWordSizeForTypos.oneTypo`);
       count(twoTypos, `${path}.minWordSizeForTypos.twoTypos`);
+      if (Number(oneTypo ?? 0) > 255 || Number(twoTypos ?? 0) > 255)
+        wrong("an integer up to 255", sizes, `${path}.minWordSizeForTypos`);
       if (typeof oneTypo === "number" && typeof twoTypos === "number" && oneTypo > twoTypos) {
         throw new ServiceError(
           "invalid_settings_typo_tolerance",

@@ -42,6 +42,9 @@ export type Work = (task: Task) => void;
  * millisecond runs out even on a busy machine. Shorter than the client's pause between two looks.
  */
 const DELAY_MS = 15;
+/** So many tasks are remembered; beyond, the oldest finished ones are forgotten, as the service does at a million. */
+const TASKS_MAX = 100_000;
+const FORGOTTEN_AT_ONCE = 10_000;
 /** Quiet time after the last task before `onIdle` is called, so that a run of tasks isn't slowed down by it. */
 const IDLE_MS = 150;
 
@@ -73,6 +76,7 @@ export class TaskQueue {
       finishedAt: null,
     };
     this.nextUid += 1;
+    if (this.tasks.size >= TASKS_MAX) this.forgetOldest();
     this.tasks.set(task.uid, task);
     const entry = { task, work, readyAtMs: performance.now() + DELAY_MS };
     if (type === "taskCancelation") this.waiting.unshift(entry);
@@ -128,6 +132,10 @@ export class TaskQueue {
       const isDone = task.status !== "enqueued" && task.status !== "processing";
       if (isDone && task.indexUid !== null) task.indexUid = rename(task.indexUid);
     }
+  }
+
+  private forgetOldest(): void {
+    this.forget([...this.tasks.keys()].slice(0, FORGOTTEN_AT_ONCE));
   }
 
   close(): void {

@@ -1,6 +1,6 @@
 import { createHmac } from "node:crypto";
 import { ServiceError } from "./errors";
-import { isRecord } from "./paths";
+import { isRecord, ownValue } from "./paths";
 import { isSameSecret } from "./secret";
 
 /** What a token lets its holder search: patterns of index names, each with a filter that is always applied. */
@@ -19,7 +19,7 @@ export function readTenantToken(
   nowMs: number,
 ): TenantToken | undefined {
   const [head = "", body = "", signature = "", ...more] = text.split(".");
-  const hash = HASHES[String(readPart(head)?.alg)];
+  const hash = ownValue(HASHES, String(readPart(head)?.alg));
   const claims = readPart(body);
   if (hash === undefined || claims === undefined || more.length > 0) return undefined;
   const keyUid = String(claims.apiKeyUid);

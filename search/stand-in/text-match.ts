@@ -37,6 +37,7 @@ export type TextMatch = {
   position: Uint32Array;
   exact: Uint8Array;
   shown: Shown[];
+  strategy: MatchingStrategy;
 };
 
 const ABSENT = 255;
@@ -74,7 +75,7 @@ export function matchText(
     const out = matchTerm({ ...term, isPrefix: false }, source, exactly, ranks, noTypos, []);
     for (let slot = 0; slot < source.slots; slot += 1) if (out.typos[slot] !== ABSENT) result.matched[slot] = 0;
   }
-  return { ...result, shown };
+  return { ...result, shown, strategy };
 }
 
 function matchTerm(
@@ -191,7 +192,11 @@ export function phraseAt(text: readonly string[], phrase: readonly string[], fro
  * `all`: every term is required. `last`: words may be left out from the end. `frequency`: the most frequent words
  * are left out first. Phrases are always required; without one, the word that would go last must stay.
  */
-function combine(matches: TermMatch[], slots: number, strategy: MatchingStrategy): Omit<TextMatch, "shown"> {
+function combine(
+  matches: TermMatch[],
+  slots: number,
+  strategy: MatchingStrategy,
+): Omit<TextMatch, "shown" | "strategy"> {
   const result = {
     matched: new Uint8Array(slots),
     words: new Uint8Array(slots),

@@ -1,7 +1,9 @@
 /** One word of a text: its normal form and where it stands in the original, in UTF-16 units. */
 export type Token = { word: string; start: number; end: number };
 
-const WORD = /[\p{L}\p{N}\p{M}]+/gu;
+/** Runs in pieces, since a pattern without end may use up the stack on a run of millions. */
+const RUN_MAX = 4096;
+const RUN = new RegExp(`[\\p{L}\\p{N}\\p{M}]{1,${RUN_MAX}}`, "gu");
 const MARKS = /\p{Mn}/gu;
 /** Longer words are not indexed, as in the service. */
 const WORD_LENGTH_MAX = 250;
@@ -18,13 +20,19 @@ export function normaliseWord(word: string): string {
  * scripts written without spaces are not segmented.
  */
 export function tokenise(text: string): Token[] {
-  const tokens: Token[] = [];
-  for (const match of text.matchAll(WORD)) {
-    const word = normaliseWord(match[0]);
-    if (word !== "" && word.length <= WORD_LENGTH_MAX)
-      tokens.push({ word, start: match.index, end: match.index + match[0].length });
+  return [...eachToken(text)];
+}
+
+/** The same one by one, for a reader who may stop early. */
+export function* eachToken(text: string): Generator<Token> {
+  let lastEnd = -1;
+  for (const match of text.matchAll(RUN)) {
+    const end = match.index + match[0].length;
+    const isRest = match.index === lastEnd;
+    lastEnd = end;
+    const word = isRest ? "" : normaliseWord(match[0]);
+    if (word !== "" && word.length <= WORD_LENGTH_MAX) yield { word, start: match.index, end };
   }
-  return tokens;
 }
 
 /** Marks that end a phrase: Latin, Armenian, Arabic, Indic and East Asian ones; a full stop or comma only with a space. */
@@ -38,7 +46,11 @@ export function endsPhrase(between: string): boolean {
 /** The words of a text in normal form and in order, without their places. */
 export function wordsOf(text: string): string[] {
   const words: string[] = [];
-  for (const part of text.match(WORD) ?? []) {
+  if (text.length > RUN_MAX) {
+    for (const token of eachToken(text)) words.push(token.word);
+    return words;
+  }
+  for (const part of text.match(RUN) ?? []) {
     const word = normaliseWord(part);
     if (word !== "" && word.length <= WORD_LENGTH_MAX) words.push(word);
   }

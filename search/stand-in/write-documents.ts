@@ -1,10 +1,12 @@
 import { ServiceError } from "./errors";
+import { parseJson } from "./json";
 import type { Document, Json } from "./paths";
 import { isRecord, valuesAt } from "./paths";
 import { readCsv } from "./read-csv";
 import type { SearchIndex } from "./search-index";
 
 const ID = /^[A-Za-z0-9_-]{1,511}$/;
+const FIELDS_MAX = 65_535;
 const BAD_ID_HINT =
   "A document identifier can be of type integer or string, only composed of alphanumeric characters (a-z A-Z 0-9), hyphens (-) and underscores (_), and can not be more than 511 bytes.";
 
@@ -18,12 +20,23 @@ export function writeDocuments(
   const primaryKey = choosePrimaryKey(index, documents, askedKey);
   if (primaryKey === null) return;
   const ids = documents.map((document) => readId(document, primaryKey, index.uid));
+  checkFieldCount(index, documents);
   index.primaryKey = primaryKey;
   documents.forEach((document, i) => {
     const id = ids[i] as string;
     const slot = mode === "merge" ? index.slotOf(id) : undefined;
     index.put(id, slot === undefined ? document : { ...index.documents[slot], ...document });
   });
+}
+
+function checkFieldCount(index: SearchIndex, documents: readonly Document[]): void {
+  const names = new Set(index.fieldDistribution.keys());
+  for (const document of documents) for (const name of Object.keys(document)) names.add(name);
+  if (names.size <= FIELDS_MAX) return;
+  throw new ServiceError(
+    "max_fields_limit_exceeded",
+    `Index \`${index.uid}\`: A document cannot contain more than 65,535 fields.`,
+  );
 }
 
 /** The index's key, the asked one, or the only field of the first document whose name ends in "id". */
@@ -101,9 +114,9 @@ export function readDocuments(text: string, contentType: string, delimiter: stri
   const found: unknown[] = [];
   try {
     if (name === "ndjson") {
-      for (const line of text.split("\n")) if (line.trim() !== "") found.push(JSON.parse(line));
+      for (const line of text.split("\n")) if (line.trim() !== "") found.push(parseJson(line));
     } else {
-      const value: unknown = JSON.parse(text);
+      const value = parseJson(text);
       found.push(...(Array.isArray(value) ? [] : [value]));
       if (Array.isArray(value)) for (const item of value as unknown[]) found.push(item);
     }

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { clientOf } from "../../setup/search-service";
+import { rulesInForce } from "@/search/stand-in/rules-in-force";
 import { globalScore, positionCost } from "@/search/stand-in/score-rank";
 import { type StandIn, startSearchStandIn } from "@/search/stand-in/server";
 
@@ -122,5 +123,30 @@ describe("several queries as one list", () => {
   ])("a query may not bring %j", async (more, code) => {
     const found = await search({ federation: {}, queries: [{ indexUid: "posts", q: "heron", ...more }] });
     expect(found.code).toBe(code);
+  });
+});
+
+/** Source: the engine's `get_ranking_rules_for_query_graph_search` (crates/milli/src/search/new/mod.rs). */
+describe("rules that don't go together", () => {
+  test.each([
+    [
+      ["words", "attribute", "attributeRank", "wordPosition"],
+      ["words", "attribute"],
+    ],
+    [
+      ["words", "attributeRank", "attribute", "wordPosition"],
+      ["words", "attributeRank", "wordPosition"],
+    ],
+    [
+      ["words", "wordPosition", "attribute", "typo", "typo"],
+      ["words", "wordPosition", "typo"],
+    ],
+    [
+      ["size:asc", "typo", "words"],
+      ["size:asc", "words", "typo"],
+    ],
+  ])("%j is run as %j", (rules, run) => {
+    expect(rulesInForce(rules, "last")).toEqual(run);
+    expect(rulesInForce(rules, "all")).toEqual(run.filter((rule) => rule !== "words"));
   });
 });
