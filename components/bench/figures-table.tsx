@@ -36,7 +36,9 @@ export function FiguresTable({ session }: { session: BenchSession }) {
             tone: isBaseline ? ("baseline" as const) : undefined,
             cells: {
               name: { words: subjects.find((each) => each.entryId === point.entryId)?.name ?? "" },
-              speed: { words: speedWords(point.setSpeed, protocol.setting) },
+              speed: {
+                words: <span className="whitespace-nowrap">{speedWords(point.setSpeed, protocol.setting)}</span>,
+              },
               mounts: { figure: { value: point.mounts, decimals: 0 } },
               level: { figure: { value: point.levelDba, decimals: 1, bound: point.atMost ? "upper" : undefined } },
               correction: { figure: { value: point.correctionDb, decimals: 1 } },

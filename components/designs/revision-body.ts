@@ -1,4 +1,5 @@
 import type { ActField } from "@/components/ui/act/act-values";
+import { formatFrame } from "@/lib/format/frames";
 import { inletStacks, licences, materials, type OwnChoices } from "@/lib/contracts/own-designs";
 
 const choices = (values: readonly string[]) => values.map((value) => ({ value, label: value }));
@@ -11,7 +12,7 @@ export function revisionFields(frames: OwnChoices["frames"], stages: number): Ac
       name: "frameId",
       label: "Frame",
       kind: "choice",
-      options: frames.map(({ id, key }) => ({ value: id, label: key })),
+      options: frames.map(({ id, key }) => ({ value: id, label: `${formatFrame(key)} mm` })),
     },
     { name: "material", label: "Material", kind: "choice", options: choices(materials) },
     ...Array.from({ length: stages }, (_, i) => rotorFields(i + 1)).flat(),

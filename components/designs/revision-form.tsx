@@ -23,13 +23,14 @@ export function RevisionForm({ slug, letter, frames }: { slug: string; letter: s
     <div className="grid gap-4">
       <Select
         label="Stages"
-        className="max-w-xl"
+        className="max-w-40"
         value={String(stages)}
         onChange={(event) => setStages(Number(event.currentTarget.value))}
         options={counts.map((count) => ({ value: String(count), label: String(count) }))}
       />
       <ActForm
         label={`Revision ${letter}`}
+        wide
         fields={revisionFields(frames, stages)}
         work={{
           isPending,

@@ -4,6 +4,7 @@ import { Section } from "@/components/ui/sheet";
 import { LoadingState } from "@/components/ui/states";
 import type { FitFrame, FitSeason } from "@/lib/contracts/fit-limits";
 import type { Comparison } from "@/lib/client/fit/compare-model";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { KeepOutTable } from "./keep-out-table";
 
@@ -30,7 +31,7 @@ function Verdict({ reasons, against }: { reasons: readonly string[]; against: st
 
 /** The model against a frame, a season's limits and what stands around the cooler: fits or not, and what to change. */
 export function FrameSection({ compared, frame, season }: FrameSectionProps) {
-  const against = `the frame ${frame.key}${season ? ` and ${season.title}` : ""}`;
+  const against = `the frame ${formatFrame(frame.key)}${season ? ` and ${season.title}` : ""}`;
   const comparison = compared?.comparison;
   return (
     <Section id="frame" title="Frame, season and bench" note={`against ${against}`} className="grid gap-4">

@@ -7,6 +7,7 @@ import { useChangeSeason, useMakeSeason, useMoveSeason, usePlanRound } from "@/l
 import type { BenchSetup } from "@/lib/contracts/bench-admin";
 import type { HostSeason } from "@/lib/contracts/seasons-admin";
 import { RULES } from "@/lib/domain/scoring/rules";
+import { formatFrame } from "@/lib/format/frames";
 import { HostForm } from "./host-form";
 import { LevelsTry } from "./levels-try";
 
@@ -131,6 +132,7 @@ export function SeasonForm(props: { setup: BenchSetup; season?: HostSeason; next
     <div onInput={watch}>
       <HostForm
         label={season ? "Change the season" : "Make a season"}
+        wide
         fields={fieldsOf(setup, season, nextNumber)}
         work={season ? change : make}
         more={{ frameIds: frames }}
@@ -142,7 +144,7 @@ export function SeasonForm(props: { setup: BenchSetup; season?: HostSeason; next
           {setup.frames.map((frame) => (
             <Slot
               key={frame.id}
-              label={frame.key}
+              label={`${formatFrame(frame.key)} mm`}
               checked={frames.includes(frame.id)}
               onChange={(event) => tick(frame.id, event.currentTarget.checked)}
             />

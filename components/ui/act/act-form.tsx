@@ -1,5 +1,6 @@
 "use client";
 
+import clsx from "clsx";
 import { useState, type FormEvent, type ReactNode } from "react";
 import { Button } from "../button";
 import type { ButtonKind } from "../button-class";
@@ -26,6 +27,8 @@ export type ActFormProps = {
   kind?: ButtonKind;
   /** Sent beside what was typed. */
   more?: ActValues;
+  /** Two fields abreast where there is room: for long forms. */
+  wide?: boolean;
   onDone?: () => void;
   /** Said once it is done. */
   doneWords?: string;
@@ -37,7 +40,7 @@ export type ActFormProps = {
  * wrong with it, and a second press while the first is at work does nothing.
  */
 export function ActForm(props: ActFormProps) {
-  const { label, fields, work, words, busyWords, kind = "solid", more, onDone, doneWords, children } = props;
+  const { label, fields, work, words, busyWords, kind = "solid", more, wide, onDone, doneWords, children } = props;
   const [problems, setProblems] = useState<ActProblems>({});
   const [done, setDone] = useState(false);
   const submit = (event: FormEvent<HTMLFormElement>) => {
@@ -63,10 +66,18 @@ export function ActForm(props: ActFormProps) {
     problems[name] ?? work.error?.fields.find(({ path }) => path.split(/[.[]/)[0] === name)?.message;
   const general = work.error && !work.error.fields.some(({ path }) => fields.some(({ name }) => path.startsWith(name)));
   return (
-    <form aria-label={label} onSubmit={submit} noValidate method="post" className="grid max-w-xl gap-4">
-      {fields.map((field) => (
-        <OneField key={field.name} field={field} error={told(field.name)} />
-      ))}
+    <form
+      aria-label={label}
+      onSubmit={submit}
+      noValidate
+      method="post"
+      className={clsx("grid gap-4", wide ? "max-w-4xl" : "max-w-xl")}
+    >
+      <div className={wide ? "grid items-start gap-x-8 gap-y-4 sm:grid-cols-2" : "contents"}>
+        {fields.map((field) => (
+          <OneField key={field.name} field={field} error={told(field.name)} />
+        ))}
+      </div>
       {children}
       {general ? (
         <Notice kind="wrong" title="not done" live="alert">

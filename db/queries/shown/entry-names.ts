@@ -1,7 +1,7 @@
 import type { EntryName } from "@/lib/domain/designs/entry-token";
 import type { Handle } from "../../client/connect";
 
-export type NamedEntry = EntryName & { entryId: string; name: string };
+export type NamedEntry = EntryName & { entryId: string; name: string; seasonTitle: string };
 
 const columns = {
   entryId: "entry_id",
@@ -9,6 +9,7 @@ const columns = {
   name: "design_name",
   letter: "revision_letter",
   seasonSlug: "season_slug",
+  seasonTitle: "season_title",
 } as const;
 
 /** Public entries by their names in addresses; any order, what isn't public left out. */

@@ -23,7 +23,7 @@ const letterFirst = (a: string, b: string) => a.length - b.length || (a < b ? -1
 
 /**
  * A designer's own public entries against those of their class: the frame's size and the rotation, in the last three
- * seasons (house rule, no source). Only what is public is read, the design's own entries from all seasons.
+ * seasons and that of its newest entry (house rule, no source). Only what is public is read, the design's own entries from all seasons.
  *
  * @throws ExpectedError not_found for another's design as for none
  */
@@ -49,7 +49,8 @@ export async function readField(actor: Actor, asked: { slug: string; outcome: Ou
     if (!latest) return { own: [], field: [], className: undefined };
     const frame = latest.frameKey.split("x")[0] ?? latest.frameKey;
     const rotation = rotationOf(latest);
-    const seasons = seasonSlugs("last-3", counted) ?? [];
+    const itsOwn = counted.find(({ seasonNumber }) => seasonNumber === latest.seasonNumber)?.season;
+    const seasons = [...new Set([...(seasonSlugs("last-3", counted) ?? []), ...(itsOwn ? [itsOwn] : [])])];
     return {
       own: ownEntries,
       className: { frame, rotation },

@@ -9,6 +9,7 @@ import {
 import { MailChoicesForm } from "@/components/accounts/mail-choices-form";
 import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";
+import { formatDate } from "@/lib/format/dates";
 import { readAccount } from "@/lib/server/accounts/account";
 
 export const metadata: Metadata = { title: "Your account" };
@@ -21,7 +22,7 @@ export default async function AccountPage() {
     <>
       <Section id="account" title="Your account" level={1}>
         <p>
-          {account.email} · {account.role} · since {account.createdAt.slice(0, 10)}
+          {account.email} · {account.role} · since {formatDate(account.createdAt)}
         </p>
       </Section>
       <Section id="mail" title="Tell me by mail when">

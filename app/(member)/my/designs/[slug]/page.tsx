@@ -7,6 +7,7 @@ import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";
 import type { OwnDesign } from "@/lib/contracts/own-designs";
 import { nextLetter } from "@/lib/domain/designs/letters";
+import { formatFrame } from "@/lib/format/frames";
 import { readOwnChoices, readOwnDesign } from "@/lib/server/designs/own-designs";
 
 export const metadata: Metadata = { title: "My design" };
@@ -46,7 +47,8 @@ export default async function MyDesignPage({ params }: { params: Promise<{ slug:
         <ul className="list-[square] space-y-1 pl-5">
           {design.revisions.map((revision) => (
             <li key={revision.letter}>
-              {revision.letter}: {revision.frameKey}, {revision.material}, {rotorWords(revision)}, {revision.licence}
+              {revision.letter}: {formatFrame(revision.frameKey)}, {revision.material}, {rotorWords(revision)},{" "}
+              {revision.licence}
               {revision.sentInAt === null ? ", not sent in yet" : ""}{" "}
               <Link href={`/my/designs/${slug}/revisions/${revision.letter}`}>Files and traits</Link>
             </li>
