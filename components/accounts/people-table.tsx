@@ -2,6 +2,7 @@ import Link from "next/link";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import { EmptyState } from "@/components/ui/states";
 import type { PeoplePage, PeopleQuery, PersonItem } from "@/lib/contracts/people";
+import { formatDate } from "@/lib/format/dates";
 import { RoleForm } from "./role-form";
 
 const columns = [
@@ -12,8 +13,8 @@ const columns = [
 ];
 
 function state(person: PersonItem): string {
-  if (person.closedAt) return `closed ${person.closedAt.slice(0, 10)}`;
-  return person.createdAt.slice(0, 10);
+  if (person.closedAt) return `closed ${formatDate(person.closedAt)}`;
+  return formatDate(person.createdAt);
 }
 
 /** One row a person, with the role to give, change or take. */

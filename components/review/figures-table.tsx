@@ -45,7 +45,7 @@ export function FiguresTable({ round }: { round: ReviewRound }) {
             score: { figure: { value: place?.score, decimals: 4, why: place?.whyNotRanked ?? "not scored" } },
             rank: rankCell(place),
             naive: rankCell(other),
-            state: { words: entry.state.replaceAll("_", " ") },
+            state: { words: <span className="whitespace-nowrap">{entry.state.replaceAll("_", " ")}</span> },
           },
         };
       })}

@@ -15,7 +15,7 @@ export function PointsTable({ snapshot }: { snapshot: Snapshot }) {
       background: { figure: { value: point.backgroundDba, decimals: 1, why: "no background was read" } },
       deltaT: measuredCell(point.deltaT),
       resistance: measuredCell(point.resistance, { decimals: 4 }),
-      runs: { words: `${point.runs} in ${point.mounts} mounts` },
+      runs: { words: <span className="whitespace-nowrap">{`${point.runs} in ${point.mounts} mounts`}</span> },
     },
   });
   return (

@@ -13,6 +13,7 @@ import type { RawRuns } from "@/lib/contracts/raw-runs";
 import { sheetSchema, type Sheet, type SheetPoint, type SheetRank } from "@/lib/contracts/sheet";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { stated } from "@/lib/domain/results/stated";
+import { formatDate } from "@/lib/format/dates";
 import { readRawRuns, readSheet, type SheetAnswer } from "./read-sheet";
 import { sheetSpectra } from "./sheet-spectra";
 import { sheetTraits } from "./sheet-traits";
@@ -47,7 +48,7 @@ export async function readSheetPage(asked: SheetAsked): Promise<Sheet> {
     const [stub] = await shownWithdrawals(publicDb(), { slug: asked.slug });
     throw new ExpectedError(
       "gone",
-      stub ? `${stub.name} was withdrawn on ${iso(stub.at).slice(0, 10)}. ${stub.reason}` : error.detail,
+      stub ? `${stub.name} was withdrawn on ${formatDate(stub.at)}. ${stub.reason}` : error.detail,
     );
   });
   const { design, current, snapshot, history } = answer;
