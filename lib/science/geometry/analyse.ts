@@ -12,7 +12,7 @@ import { shellOverlaps } from "./overlaps";
 import { outerRadius } from "./polar";
 import { radiiTo, type FoundRow } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
-import { SHELLS_MAX, shellReport, withShellsTurned, type ShellReport } from "./shells";
+import { SHELLS_MAX, shellReport, withoutCrumbs, withShellsTurned, type ShellReport } from "./shells";
 import { readDucts } from "./standing-parts";
 import { countStruts } from "./struts";
 import { Refusal } from "@/lib/science/refusal";
@@ -59,7 +59,8 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
       : edges.shellOf;
   const shells = soup ? 1 : edges.shellCount;
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
-  const finding = soup ? undefined : findAxis(mesh, shellOf, shells, tiny, options.axis && FILE_AXES[options.axis]);
+  const { searched, crumbs } = withoutCrumbs(shellOf, soup ? [] : report.areasMm2);
+  const finding = soup ? undefined : findAxis(mesh, searched, shells, tiny, options.axis && FILE_AXES[options.axis]);
   const upright = finding ?? boxUpright(mesh, middle);
   const overlapLines =
     finding?.search.overlaps.overlapLines ?? (soup ? 0 : probe(upright.mesh, shellOf, shells, tiny).overlapLines);
@@ -88,6 +89,7 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const warnings = analysisWarnings({
     report,
     turned,
+    crumbs,
     overlap,
     soup,
     watertight,

@@ -9,6 +9,8 @@ export interface WarningFacts {
   readonly report: ShellReport;
   /** Shells that faced inwards and were turned. */
   readonly turned: number;
+  /** Tiny shells that were left out of the search. */
+  readonly crumbs: number;
   readonly overlap: boolean;
   readonly soup: boolean;
   readonly watertight: boolean;
@@ -27,7 +29,7 @@ export function analysisWarnings(facts: WarningFacts): MeshWarning[] {
   return [...meshWarnings(facts), ...rotorWarnings(facts)];
 }
 
-function meshWarnings({ report, turned, overlap, soup, watertight, hollow }: WarningFacts): MeshWarning[] {
+function meshWarnings({ report, turned, crumbs, overlap, soup, watertight, hollow }: WarningFacts): MeshWarning[] {
   const { edges, duplicateTriangles, copyOf } = report;
   const out: MeshWarning[] = [];
   const add = (code: string, message: string): void => void out.push({ code, message });
@@ -55,6 +57,8 @@ function meshWarnings({ report, turned, overlap, soup, watertight, hollow }: War
     );
   }
   if (turned > 0) add("inside-out", `${turned} shells faced inwards and were read as facing outwards.`);
+  if (crumbs > 0)
+    add("crumbs", `${crumbs} tiny shells took no part in the search for rotors; volume and bounds have them.`);
   if (overlap) {
     add(
       "shells-overlap",

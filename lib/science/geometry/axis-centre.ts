@@ -7,8 +7,8 @@ export type Point2 = readonly [number, number];
 
 const WALL_SLOPE_MAX = 0.05;
 const SURFACE_SLOPE_MAX = 0.9;
-const SECTORS = 24;
-const SECTORS_NEEDED = 15;
+const SECTORS = 12;
+const SECTORS_NEEDED = 8;
 /** Width of a group of radii and scale of the weights, both as shares of the size, step by step. */
 const REFINEMENTS = [
   [0.012, 0.004],
@@ -36,8 +36,8 @@ interface NormalLine {
 export function axisCentre(mesh: Mesh): Point2 {
   const faces = facesOf(mesh);
   const size = extent(mesh);
-  const walls = normalLines(faces, WALL_SLOPE_MAX);
-  const surfaces = normalLines(faces, SURFACE_SLOPE_MAX);
+  const walls = normalLines(mesh, faces, WALL_SLOPE_MAX);
+  const surfaces = normalLines(mesh, faces, SURFACE_SLOPE_MAX);
   const starts = [middle(surfaces), boxMiddle(mesh)];
   const best = (lines: NormalLine[]): { centre: Point2; score: number } =>
     starts
@@ -51,15 +51,32 @@ export function axisCentre(mesh: Mesh): Point2 {
   return commonCentre(mesh, faces, centre, size) ?? centre;
 }
 
-function normalLines(faces: Faces, slopeMax: number): NormalLine[] {
+/**
+ * The lines of all faces no steeper than `slopeMax`. Each goes through the middle of its face's extent along the wall,
+ * not through its centroid: the perpendicular bisector of a chord passes through the circle's centre, however coarse the
+ * facets are.
+ */
+function normalLines(mesh: Mesh, faces: Faces, slopeMax: number): NormalLine[] {
+  const { positions: p, triangles } = mesh;
   const out: NormalLine[] = [];
   for (let t = 0; t < faces.areasMm2.length; t++) {
     const nx = faces.normals[3 * t] ?? 0;
     const ny = faces.normals[3 * t + 1] ?? 0;
-    const flat = Math.hypot(nx, ny);
+    const flat = Math.sqrt(nx * nx + ny * ny);
     if (Math.abs(faces.normals[3 * t + 2] ?? 0) > slopeMax || flat === 0) continue;
-    const [x, y] = [faces.middlesMm[3 * t] ?? 0, faces.middlesMm[3 * t + 1] ?? 0];
-    out.push({ x, y, nx: nx / flat, ny: ny / flat, weight: (faces.areasMm2[t] ?? 0) * flat });
+    let [low, high, across] = [Infinity, -Infinity, 0];
+    for (let i = 3 * t; i < 3 * t + 3; i++) {
+      const v = 3 * (triangles[i] ?? 0);
+      const [x, y] = [p[v] ?? 0, p[v + 1] ?? 0];
+      const along = (nx * y - ny * x) / flat;
+      if (along < low) low = along;
+      if (along > high) high = along;
+      across += (nx * x + ny * y) / flat / 3;
+    }
+    const middle = (low + high) / 2;
+    const [ux, uy] = [nx / flat, ny / flat];
+    const [x, y] = [across * ux - middle * uy, across * uy + middle * ux];
+    out.push({ x, y, nx: ux, ny: uy, weight: (faces.areasMm2[t] ?? 0) * flat });
   }
   return out;
 }

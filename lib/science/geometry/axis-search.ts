@@ -22,15 +22,17 @@ const COARSE_ABOVE = 200_000;
 const CONVINCING = 0.85;
 const ALIKE = 0.02;
 
-/** Every n-th triangle, so that directions and centres of very fine meshes are found from a sample. */
-function thinned(mesh: Mesh): Mesh {
+/** Every n-th triangle that takes part, so that directions and centres of very fine meshes are found from a sample. */
+function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
   const count = mesh.triangles.length / 3;
   const stride = Math.ceil(count / FACES_MAX);
-  if (stride <= 1) return mesh;
+  if (stride <= 1 && !shellOf.includes(-1)) return mesh;
   const triangles = new Uint32Array(3 * Math.ceil(count / stride));
   const numbers = new Int32Array(mesh.positions.length / 3).fill(-1);
   const positions: number[] = [];
-  for (let t = 0, to = 0; t < count; t += stride) {
+  let to = 0;
+  for (let t = 0; t < count; t += stride) {
+    if ((shellOf[t] ?? -1) < 0) continue;
     for (let i = 3 * t; i < 3 * t + 3; i++, to++) {
       const v = mesh.triangles[i] ?? 0;
       if ((numbers[v] ?? -1) < 0) {
@@ -40,7 +42,7 @@ function thinned(mesh: Mesh): Mesh {
       triangles[to] = numbers[v] ?? 0;
     }
   }
-  return { positions: Float64Array.from(positions), triangles };
+  return { positions: Float64Array.from(positions), triangles: triangles.slice(0, to) };
 }
 
 /**
@@ -55,7 +57,7 @@ export function findAxis(
   tinyMm: number,
   direction?: Vec3,
 ): AxisFinding | undefined {
-  const sample = thinned(mesh);
+  const sample = thinned(mesh, shellOf);
   const directions = direction ? [direction] : axisDirections(facesOf(sample));
   const places = directions.map((candidate) => () => placeOf(sample, candidate));
   const bounds = meshBounds(mesh);

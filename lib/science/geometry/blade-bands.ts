@@ -25,7 +25,8 @@ const BARE = 0.004;
 const BAND_SHARE = 0.12;
 /** A height at which no more radii than this show blades is bare. */
 const BARE_RADII = 1;
-const HUB_SHARE_MAX = 0.8;
+/** A hub wider than this share of the whole is a gear's or a wheel's (common practice, no source). */
+const HUB_SHARE_MAX = 0.82;
 /** A closed ring may be broken this often before it counts as blades again (part-span rings, chamfers). */
 const RING_SHARE = 0.85;
 
@@ -64,8 +65,12 @@ export function bladeBands(table: RowTable): BladeBand[] {
   });
 }
 
-/** Radial build of a band; undefined where it has no hub inside blades, so that it is no rotor. */
-export function radialProfile(table: RowTable, band: BladeBand): RadialProfile | undefined {
+/**
+ * What the radial build of a band may be, innermost hub first: each run of full circles with something past it may be
+ * the hub, as spokes stand between a boss and the hub's own ring, and blades may pass through a ring at part span. Empty
+ * where no hub is inside blades, so that the band is no rotor.
+ */
+export function radialProfiles(table: RowTable, band: BladeBand): RadialProfile[] {
   const { radiiMm, heightsMm, fill } = table;
   const rows = heightsMm.length;
   const most = (i: number, from: number, to: number): number => {
@@ -74,22 +79,27 @@ export function radialProfile(table: RowTable, band: BladeBand): RadialProfile |
     return high;
   };
   const full = Array.from(radiiMm, (_, i) => most(i, band.zoneFromRow, band.zoneToRow) >= FULL);
-  let outer = radiiMm.length - 1;
-  while (outer >= 0 && most(outer, band.fromRow, band.toRow) <= BARE) outer--;
-  const first = full.indexOf(true);
-  const outerRadius = radiiMm[outer] ?? 0;
-  if (outer < 0 || first < 0 || (radiiMm[first] ?? 0) > HUB_SHARE_MAX * outerRadius) return undefined;
-  let hub = first;
-  while (hub < outer && full[hub + 1]) hub++;
-  if (hub >= outer) return undefined;
-  // Nothing at all between blades and what stands around them: that isn't part of this rotor.
-  for (let i = hub + 1; i < outer; i++) if (most(i, band.fromRow, band.toRow) <= BARE) outer = i - 1;
-  if (hub >= outer) return undefined;
+  const bare = Array.from(radiiMm, (_, i) => most(i, band.fromRow, band.toRow) <= BARE);
+  const outer = bare.lastIndexOf(false);
+  const bore = full.indexOf(true);
+  if (outer < 0 || bore < 0) return [];
+  const widest = HUB_SHARE_MAX * (radiiMm[outer] ?? 0);
+  return full.flatMap((is, hub) => {
+    if (!is || full[hub + 1] || (radiiMm[hub] ?? 0) > widest) return [];
+    // Nothing at all between blades and what stands around them: that isn't part of this rotor.
+    const gap = bare.indexOf(true, hub + 1);
+    const end = gap < 0 ? outer : Math.min(outer, gap - 1);
+    const ring = ringFrom(full, hub, end);
+    return hub >= end || (ring !== undefined && ring <= hub + 1) ? [] : [{ bore, hub, ring, outer: end }];
+  });
+}
+
+/** First radius of the ring that ends a band at `outer`; undefined where there is none. */
+function ringFrom(full: readonly boolean[], hub: number, outer: number): number | undefined {
   let ring: number | undefined;
   for (let i = outer; i > hub; i--) {
     const closed = full.slice(i, outer + 1).filter(Boolean).length;
     if (full[i] && closed >= RING_SHARE * (outer + 1 - i)) ring = i;
   }
-  if (ring !== undefined && ring <= hub + 1) return undefined;
-  return { bore: first, hub, ring, outer };
+  return ring;
 }

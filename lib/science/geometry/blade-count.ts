@@ -60,3 +60,19 @@ export function leader(votes: ReadonlyMap<number, number>): { value: number; sha
   }
   return best && { value: best.value, share: best.votes / total };
 }
+
+/** Two agreeing cylinders each inside and outside make splitters; one may be a fragment. */
+const SPLIT_CYLINDERS = 2;
+
+/**
+ * Blades of two lengths: every cylinder up to some radius shows one number, every one past it a smaller one, at least
+ * half as large. The number that reaches the tips, and the other one; undefined where the counts tell no such thing.
+ */
+export function splitCount(findings: readonly CylinderFindings[]): { long: number; all: number } | undefined {
+  const counts = findings.map((f) => f.byPieces).filter((count) => count !== undefined);
+  const [all, long] = [counts[0], counts[counts.length - 1]];
+  if (all === undefined || long === undefined || long < 2 || all <= long || all > 2 * long) return undefined;
+  const change = counts.indexOf(long);
+  const clean = counts.every((count, i) => count === (i < change ? all : long));
+  return clean && change >= SPLIT_CYLINDERS && counts.length - change >= SPLIT_CYLINDERS ? { long, all } : undefined;
+}

@@ -1,10 +1,10 @@
 import type { BladeBand, RadialProfile } from "./blade-bands";
 import { median } from "@/lib/science/statistics/descriptive";
-import { cylinderFindings, leader, type CylinderFindings } from "./blade-count";
+import { cylinderFindings, leader, splitCount, type CylinderFindings } from "./blade-count";
 import { castColumns } from "./columns";
 import { solidStretches } from "./column-solids";
 import type { Mesh } from "./mesh";
-import { polarOf, radialSpans } from "./polar";
+import { outermostBetween } from "./polar";
 import { rowTable, type RowTable } from "./row-table";
 import { wallRadius } from "./wall-radius";
 
@@ -63,6 +63,11 @@ const PITCH_MIN_DEG = 3;
 const PITCH_MAX_DEG = 87;
 const SLENDER_MIN = 1.6;
 const BLADES_MAX = 60;
+/** A hub without a round wall is hardly one: a blade's own thickness, seen along another axis, looks like it. */
+const NO_WALL_SHARE = 0.5;
+/** Blades of two lengths can be counted either way, so a person is asked. */
+const SPLIT_SHARE = 0.7;
+const CONFIDENCE_MIN = 0.45;
 
 /** Looks closely at one band; undefined where it turns out to be no row of blades. */
 export function bladeRow(
@@ -76,15 +81,16 @@ export function bladeRow(
   const height = (row: number): number => table.heightsMm[row] ?? 0;
   const zone = { from: height(band.zoneFromRow) - step / 2, to: height(band.zoneToRow) + step / 2 };
   const reach = { from: height(band.fromRow) - step, to: height(band.toRow) + step };
-  const hub = edgeRadius(part, table.radiiMm, profile.hub, profile.hub + 1, zone, angles, 1);
+  const wall = edgeRadius(part, table.radiiMm, profile.hub, profile.hub + 1, zone, angles, 1);
+  const hub = wall.radiusMm;
   const bore =
-    profile.bore === 0 ? 0 : edgeRadius(part, table.radiiMm, profile.bore, profile.bore - 1, zone, angles, -1);
-  const swept = outermost(part, reach) ?? table.radiiMm[profile.outer] ?? 0;
+    profile.bore === 0 ? 0 : edgeRadius(part, table.radiiMm, profile.bore, profile.bore - 1, zone, angles, -1).radiusMm;
+  const swept = outermostBetween(part.mesh, part.shellOf, reach.from, reach.to) ?? table.radiiMm[profile.outer] ?? 0;
   const ring = profile.ring;
-  const tip = ring === undefined ? swept : edgeRadius(part, table.radiiMm, ring, ring - 1, zone, angles, -1);
+  const tip = ring === undefined ? swept : edgeRadius(part, table.radiiMm, ring, ring - 1, zone, angles, -1).radiusMm;
   if (!(tip > 1.08 * hub)) return undefined;
   const findings = stationFindings(part, hub, tip, reach, angles);
-  return judged(findings, { bore, hub, tip, swept, zone, reach, shroud: ring !== undefined });
+  return judged(findings, { bore, hub, tip, swept, zone, reach, round: wall.round, shroud: ring !== undefined });
 }
 
 /** The radius at which full circles end (hub) or begin (ring): sampled finely, then taken from the wall's vertices. */
@@ -96,7 +102,7 @@ function edgeRadius(
   zone: { from: number; to: number },
   angles: number,
   facing: 1 | -1,
-): number {
+): { radiusMm: number; round: boolean } {
   const [full, open] = [radiiMm[fullIndex] ?? 0, radiiMm[openIndex] ?? 0];
   const [low, high] = [Math.min(full, open), Math.max(full, open)];
   const fine = Float64Array.from({ length: REFINE_STEPS }, (_, i) => low + ((i + 0.5) / REFINE_STEPS) * (high - low));
@@ -112,24 +118,8 @@ function edgeRadius(
     if (!isFull[index]) break;
     edge = (fine[index] ?? edge) + (facing * (high - low)) / REFINE_STEPS / 2;
   }
-  return wallRadius(part.mesh, part.shellOf, { nearMm: edge, fromZMm: zone.from, toZMm: zone.to, facing }) ?? edge;
-}
-
-/** Largest radius of the turning vertices between two heights. */
-function outermost(part: TurningPart, reach: { from: number; to: number }): number | undefined {
-  const { positions, triangles } = part.mesh;
-  const { radiusMm } = polarOf(positions);
-  let most = -1;
-  const { outerMm } = radialSpans(part.mesh);
-  for (let t = 0; t < outerMm.length; t++) {
-    if ((outerMm[t] ?? 0) <= most || (part.shellOf[t] ?? -1) < 0) continue;
-    for (let i = 3 * t; i < 3 * t + 3; i++) {
-      const v = triangles[i] ?? 0;
-      const z = positions[3 * v + 2] ?? 0;
-      if (z >= reach.from && z <= reach.to) most = Math.max(most, radiusMm[v] ?? 0);
-    }
-  }
-  return most < 0 ? undefined : most;
+  const wall = wallRadius(part.mesh, part.shellOf, { nearMm: edge, fromZMm: zone.from, toZMm: zone.to, facing });
+  return { radiusMm: wall ?? edge, round: wall !== undefined };
 }
 
 function stationFindings(
@@ -153,6 +143,8 @@ interface RowBounds {
   readonly swept: number;
   readonly zone: { from: number; to: number };
   readonly reach: { from: number; to: number };
+  /** Whether a wall goes around at the hub's radius. */
+  readonly round: boolean;
   readonly shroud: boolean;
 }
 
@@ -161,7 +153,8 @@ function judged(findings: CylinderFindings[], bounds: RowBounds): BladeRow | und
   for (const { byPieces, byRuns } of findings) {
     for (const count of [byPieces, byRuns]) if (count !== undefined) votes.set(count, (votes.get(count) ?? 0) + 1);
   }
-  const winner = leader(votes);
+  const split = splitCount(findings);
+  const winner = split ? { value: split.long, share: SPLIT_SHARE } : leader(votes);
   if (!winner || winner.value < 2 || winner.value > BLADES_MAX) return undefined;
   const blades = winner.value;
   const agreeing = findings.filter((f) => f.byPieces === blades);
@@ -178,8 +171,9 @@ function judged(findings: CylinderFindings[], bounds: RowBounds): BladeRow | und
   const bladeShare = sections.length === 0 ? 0 : bladelike.length / sections.length;
   const missing =
     1 - findings.filter((f) => f.byPieces !== undefined || f.byRuns !== undefined).length / findings.length;
-  const confidence = winner.share * handShare ** 2 * bladeShare * sameness(measured) * (1 - missing);
-  if (bladeShare < 0.5 || handShare < 0.75 || confidence < 0.25) return undefined;
+  const round = bounds.round ? 1 : NO_WALL_SHARE;
+  const confidence = round * winner.share * handShare ** 2 * bladeShare * sameness(measured) * (1 - missing);
+  if (bladeShare < 0.5 || handShare < 0.75 || confidence < CONFIDENCE_MIN) return undefined;
   const inner = measured[0];
   const outerStation = measured[measured.length - 1];
   const middle = measured.reduce((a, b) =>

@@ -83,3 +83,33 @@ export function outerRadius(mesh: Mesh, shellOf: Int32Array): number {
   }
   return most;
 }
+
+/**
+ * Largest distance from the z axis of what the triangles that aren't left out (`shellOf` −1) have between two heights,
+ * mm; undefined where there is nothing. A wall that reaches past both heights counts with what lies between them.
+ */
+export function outermostBetween(mesh: Mesh, shellOf: Int32Array, fromMm: number, toMm: number): number | undefined {
+  const { positions: p, triangles } = mesh;
+  const { radiusMm } = polarOf(p);
+  const { outerMm } = radialSpans(mesh);
+  let most = -1;
+  for (let t = 0; t < shellOf.length; t++) {
+    if ((outerMm[t] ?? 0) <= most || (shellOf[t] ?? -1) < 0) continue;
+    let v = triangles[3 * t + 2] ?? 0;
+    for (let i = 3 * t; i < 3 * t + 3; i++) {
+      const w = triangles[i] ?? 0;
+      const [a, b] = [p[3 * v + 2] ?? 0, p[3 * w + 2] ?? 0];
+      if (b >= fromMm && b <= toMm) most = Math.max(most, radiusMm[w] ?? 0);
+      for (const height of [fromMm, toMm]) {
+        // The distance is a convex function, so that corners of the cut triangle are farthest.
+        if ((a - height) * (b - height) >= 0) continue;
+        const share = (height - a) / (b - a);
+        const x = (p[3 * v] ?? 0) + share * ((p[3 * w] ?? 0) - (p[3 * v] ?? 0));
+        const y = (p[3 * v + 1] ?? 0) + share * ((p[3 * w + 1] ?? 0) - (p[3 * v + 1] ?? 0));
+        most = Math.max(most, Math.sqrt(x * x + y * y));
+      }
+      v = w;
+    }
+  }
+  return most < 0 ? undefined : most;
+}

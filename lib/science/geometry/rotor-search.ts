@@ -1,4 +1,4 @@
-import { bladeBands, radialProfile } from "./blade-bands";
+import { bladeBands, radialProfiles } from "./blade-bands";
 import { bladeRow, type BladeRow, type TurningPart } from "./blade-row";
 import { castColumns, type Columns } from "./columns";
 import { solidStretches } from "./column-solids";
@@ -20,6 +20,9 @@ export const fineGrid: SearchGrid = { radii: 80, angles: 1440, rows: 144 };
 
 /** A row that reaches less far than this share of the widest one beside it is a stub. */
 const STUB_SHARE = 0.55;
+
+/** A hub further out has to be surer by this factor. */
+const OUTER_HUB_GAIN = 1.1;
 
 /** A row of blades and the group of shells that it turns with. */
 export interface FoundRow {
@@ -98,8 +101,9 @@ function rowsOfGroup(
   const table = rowTable(solids, low, high, grid.rows);
   const part: TurningPart = { mesh, shellOf: own, include, tinyMm };
   const found = bladeBands(table).flatMap((band) => {
-    const profile = radialProfile(table, band);
-    const row = profile && bladeRow(part, table, band, profile, grid.angles);
+    const rows = radialProfiles(table, band).map((profile) => bladeRow(part, table, band, profile, grid.angles));
+    // Blades through a ring at part span are as sure from its outside on; spokes inside a hub's ring make it less sure.
+    const row = rows.reduce((a, b) => (b && b.confidence > OUTER_HUB_GAIN * (a?.confidence ?? 0) ? b : a), undefined);
     return row ? [{ row, group }] : [];
   });
   // Stubs on the same shaft (blade roots past the hub's end, set screws, spokes) are no rotor of their own.

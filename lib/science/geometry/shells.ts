@@ -41,6 +41,20 @@ export function shellReport(meshIn: Mesh, originMm: Vec3): ShellReport {
   return { mesh, edges, integrals, areasMm2, copyOf, duplicateTriangles };
 }
 
+/** A shell with less than this share of the whole surface is a crumb: a slip of the modelling, not a part (house limit). */
+const CRUMB_SHARE = 1e-4;
+
+/** Shell of each triangle, −1 for those of crumbs too: one far off would make every search coarse. */
+export function withoutCrumbs(
+  shellOf: Int32Array,
+  areasMm2: readonly number[],
+): { searched: Int32Array; crumbs: number } {
+  const total = areasMm2.reduce((sum, area) => sum + area, 0);
+  const crumb = areasMm2.map((area) => area < CRUMB_SHARE * total);
+  const crumbs = crumb.filter(Boolean).length;
+  return { searched: crumbs === 0 ? shellOf : shellOf.map((shell) => (crumb[shell] ? -1 : shell)), crumbs };
+}
+
 /** Pairs shells of the same place, volume and area; only asked for when triangles do repeat. */
 function copies(integrals: SolidIntegrals[], areasMm2: number[]): (number | undefined)[] {
   const same = (a: number, b: number): boolean => Math.abs(a - b) <= 1e-9 * (Math.abs(a) + Math.abs(b));

@@ -16,7 +16,7 @@ export interface StrutCount {
 /** Shells that belong to no row of blades, of parts that look as if they turned (a mount's boss) too. */
 export function standingShells({ search }: AxisFinding): ReadonlySet<number> {
   const bladed = new Set(search.rows.flatMap(({ group }) => [...group.shells]));
-  const all = Array.from(search.overlaps.bodyOf, (_, shell) => shell);
+  const all = [...search.split.standing, ...search.split.groups.flatMap(({ shells }) => [...shells])];
   return new Set(all.filter((shell) => !bladed.has(shell)));
 }
 

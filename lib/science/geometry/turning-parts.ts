@@ -13,7 +13,7 @@ export interface TurningGroup {
   readonly toZMm: number;
 }
 
-/** What turns and what stands still in a file. */
+/** What turns and what stands still in a file; shells that took no part are neither. */
 export interface PartSplit {
   readonly groups: TurningGroup[];
   /** Shells of frames, struts, ducts and other things that stand still. */
@@ -28,16 +28,22 @@ interface Body {
   inner: number;
   kind: "standing" | "carrier" | "ring" | "loose";
   innerRing: number;
+  /** Largest radius at which a full circle lies at each of `ROWS` heights, mm; 0 where there is none. */
+  readonly closedMm: Float64Array;
 }
 
 const ROWS = 48;
 /** A ring nearer than this share of the radius to the blades' tips is fixed to them; a duct keeps more away. */
 const SHROUD_GAP = 0.002;
+/** A ring around this share of another part's length, and no wider than this times, houses it (house limits). */
+const HOUSED_SHARE = 0.25;
+const HOUSED_WITHIN = 1.4;
 
 /**
  * Sorts the bodies of a file, whose axis stands on z. Square outline: a frame, with all that hangs together with it. A
- * body with a full circle near the axis carries blades; one without any belongs to the carrier beside it; a ring
- * belongs to blades that touch it, else it stands still.
+ * body with a full circle near the axis carries blades, unless it houses another such body in a ring of its own: that is
+ * a duct with vanes. One without any full circle belongs to the carrier beside it; a ring belongs to blades that touch
+ * it, else it stands still.
  */
 export function splitParts(
   mesh: Mesh,
@@ -57,13 +63,29 @@ export function splitParts(
     const solids = solidStretches(columns, (shell) => bodyOf[shell] === number, tiny);
     const { fill } = rowTable(solids, body.fromZ, body.toZ, ROWS);
     const radii = columns.grid.radiiMm;
+    fill.forEach((f, cell) => {
+      if (f >= 0.98) body.closedMm[cell % ROWS] = radii[Math.floor(cell / ROWS)] ?? 0;
+    });
     const full = radii.findIndex((_, i) => fill.subarray(i * ROWS, (i + 1) * ROWS).some((f) => f >= 0.98));
     // The grid knows a ring's inside to one step; its vertices know it better, unless struts reach further in.
     const sampled = full < 0 ? Infinity : (radii[full] ?? Infinity);
     body.innerRing = Math.max(body.inner, sampled - (radii[0] ?? 0) * 2);
     body.kind = full < 0 ? "loose" : body.innerRing > 0.8 * body.outer ? "ring" : "carrier";
   });
-  return group(bodies);
+  const carriers = bodies.filter((body) => body.kind === "carrier");
+  for (const body of carriers) if (carriers.some((other) => houses(body, other))) body.kind = "standing";
+  return group(bodies.filter((body) => body.toZ >= body.fromZ));
+}
+
+/** Whether `outer` has a ring of its own around a good part of `inner`. */
+function houses(outer: Body, inner: Body): boolean {
+  if (outer.outer > HOUSED_WITHIN * inner.outer) return false;
+  const step = (outer.toZ - outer.fromZ) / ROWS;
+  const around = outer.closedMm.filter((radius, row) => {
+    const z = outer.fromZ + (row + 0.5) * step;
+    return radius > inner.outer && z > inner.fromZ && z < inner.toZ;
+  });
+  return around.length * step > HOUSED_SHARE * (inner.toZ - inner.fromZ);
 }
 
 function measureBodies(mesh: Mesh, shellOf: Int32Array, bodyOf: Int32Array, bodyCount: number): Body[] {
@@ -75,6 +97,7 @@ function measureBodies(mesh: Mesh, shellOf: Int32Array, bodyOf: Int32Array, body
     inner: Infinity,
     kind: "loose",
     innerRing: Infinity,
+    closedMm: new Float64Array(ROWS),
   }));
   bodyOf.forEach((body, shell) => bodies[body]?.shells.push(shell));
   const { radiusMm } = polarOf(mesh.positions);

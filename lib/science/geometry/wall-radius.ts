@@ -16,11 +16,31 @@ export interface WallSearch {
 }
 
 /**
- * Radius of the circle on which the vertices of a round wall lie, within −1 % to +4 % of the radius looked for;
- * undefined where no wall goes around. `shellOf` −1 leaves a triangle out. A model's nominal diameter is that of its vertices, not of its facets' middles.
+ * How far the corners of a wall may lie outside its facets' middles, 1 / cos(π / n) − 1: 12 facets and more are looked
+ * for first, then 8.
+ */
+const SAGS = [0.04, 0.09];
+
+/**
+ * Radius of the circle on which the vertices of a round wall lie, within −1 % to +9 % of the radius looked for;
+ * undefined where no wall goes around. `shellOf` −1 leaves a triangle out. A model's nominal diameter is that of its
+ * vertices, not of its facets' middles.
  */
 export function wallRadius(mesh: Mesh, shellOf: Int32Array, search: WallSearch): number | undefined {
-  const [low, high] = [0.99 * search.nearMm, 1.04 * search.nearMm];
+  for (const sag of SAGS) {
+    const found = wallWithin(mesh, shellOf, search, 0.99 * search.nearMm, (1 + sag) * search.nearMm);
+    if (found !== undefined) return found;
+  }
+  return undefined;
+}
+
+function wallWithin(
+  mesh: Mesh,
+  shellOf: Int32Array,
+  search: WallSearch,
+  low: number,
+  high: number,
+): number | undefined {
   const sectors = new Uint16Array(BINS);
   const sums = new Float64Array(BINS);
   const counts = new Int32Array(BINS);
@@ -83,7 +103,8 @@ function standsAsWall(
   const x = ax + (ux + vx) / 3;
   const y = ay + (uy + vy) / 3;
   const r = Math.sqrt(x * x + y * y);
-  if (r < 0.93 * low || r > high) return false;
+  // A cone's facets reach far inwards from the circle at its end.
+  if (r < 0.75 * low || r > high) return false;
   const nx = uy * vz - uz * vy;
   const ny = uz * vx - ux * vz;
   const nz = ux * vy - uy * vx;
