@@ -87,8 +87,8 @@ function levelOf(log: ReadLog, warnings: LogWarning[]): LogReport["level"] {
   if (!level || !log.levelDb) return null;
   const levels = log.levelDb.filter((value) => !Number.isNaN(value));
   const weighting = level.unit?.symbol ?? "dB";
-  const isC = /^\W*lc|\blc(eq|f|s|peak)/i.test(level.name);
-  if (weighting === "dB(C)" || weighting === "dB(Z)" || isC) {
+  const isOther = /\bl[cz]([fsi]?(eq|max|min|peak|pk|e)?\d*)\b/i.test(level.name);
+  if (weighting === "dB(C)" || weighting === "dB(Z)" || isOther) {
     warnings.push({ code: "not-a-weighted", message: `"${level.name}" isn't A-weighted: it gives no level in dB(A)` });
     return { laeqDba: null, sDb: sampleSd(levels) ?? null, n: levels.length };
   }

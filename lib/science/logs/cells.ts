@@ -46,19 +46,27 @@ export interface NumberMarks {
 }
 
 const PLAIN = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i;
-const GROUPED = /^[+-]?\d{1,3}([.,' ]\d{3})+$/;
+/** Thousands in groups of one mark, and what may follow a decimal mark that is another. A group never begins with 0. */
+const GROUPED = /^[+-]?[1-9]\d{0,2}(?:([.,' ])\d{3})(?:\1\d{3})*(?:(?!\1)([.,])\d+)?$/;
+
+/** Minus signs and blanks of typography as plain ones. */
+function typed(text: string): string {
+  return text
+    .replace(/\u2212/g, "-")
+    .replace(/[\u00a0\u2009\u202f]/g, " ")
+    .replace(/\u2019/g, "'")
+    .trim();
+}
 
 /**
  * A number as written in a cell; NaN for anything else, also for an empty cell, "NaN" and values beyond double
  * precision. A minus sign of typography and non-breaking spaces are read; a trailing unit only if handed in.
  */
 export function cellNumber(text: string, marks: NumberMarks, unit?: RegExp): number {
-  let written = text
-    .replace(/\u2212/g, "-")
-    .replace(/[\u00a0\u202f]/g, " ")
-    .trim();
+  let written = typed(text);
   if (unit) written = written.replace(unit, "").trim();
-  if (marks.grouped && GROUPED.test(written)) written = written.replace(/[.,' ]/g, "");
+  const group = marks.grouped ? GROUPED.exec(written)?.[1] : undefined;
+  if (group !== undefined && group !== marks.decimal) written = written.split(group).join("");
   if (marks.decimal === ",") {
     if (written.includes(".")) return Number.NaN;
     written = written.replace(",", ".");
@@ -69,13 +77,21 @@ export function cellNumber(text: string, marks: NumberMarks, unit?: RegExp): num
 
 /** Whether a cell could be a number, and which mark it shows. */
 export function numberLook(text: string): "whole" | "point" | "comma" | undefined {
-  const written = text.replace(/\u2212/g, "-").trim();
+  const written = typed(text);
   if (/^[+-]?\d+(e[+-]?\d+)?$/i.test(written)) return "whole";
   if (/^[+-]?(\d+\.\d*|\.\d+)(e[+-]?\d+)?$/i.test(written)) return "point";
   return /^[+-]?(\d+,\d*|,\d+)(e[+-]?\d+)?$/i.test(written) ? "comma" : undefined;
 }
 
-/** Whether a cell looks like whole thousands with a group mark ("1.850", "12,400"). */
-export function looksGrouped(text: string): boolean {
-  return GROUPED.test(text.trim());
+/**
+ * Whether a cell looks like thousands with a group mark ("1.850", "12,400", "1'234.5"). `sure`: it can be nothing else,
+ * by two marks, by the same one twice, or by one that never marks decimals; `decimal` where it shows.
+ */
+export function groupLook(text: string): { sure: boolean; group: string; decimal: "." | "," | undefined } | undefined {
+  const found = GROUPED.exec(typed(text));
+  const group = found?.[1];
+  if (!found || group === undefined) return undefined;
+  const decimal = found[2] === "." || found[2] === "," ? found[2] : undefined;
+  const twice = found[0].split(group).length > 2;
+  return { sure: decimal !== undefined || twice || group === "'" || group === " ", group, decimal };
 }

@@ -1,6 +1,7 @@
-import { cellNumber, looksGrouped, numberLook, splitRecord, type NumberMarks } from "./cells";
+import { cellNumber, groupLook, numberLook, splitRecord, type NumberMarks } from "./cells";
 import type { Layout, SampleLine } from "./layout";
 import { isRemark } from "./layout";
+import { marksOf, neverFalls } from "./marks";
 import { isDifference, quantityOfName, roleOfName } from "./names";
 import { clockSeconds, dateOrder, timeKind, type DateOrder } from "./times";
 import { unitInName, unitOf, type Quantity, type Unit } from "./units";
@@ -27,10 +28,12 @@ export interface Column {
   readonly rising: boolean;
 }
 
+/** Rows that say what a column is; the rest of the sample tells its marks, as thousands come late. */
+const KIND_ROWS = 300;
 const READABLE_SHARE = 0.05;
 const TRAILING_UNIT = /(?<=\d)\s*(°\s?[CF]|℃|℉|[CFK]|dB\s?\(?[ACZ]?\)?|ms|s|rpm|%)$/i;
 
-/** The columns of a layout, judged by name, row of units, and up to 300 rows of the sample. */
+/** The columns of a layout, judged by name, row of units, and up to 2,000 rows of the sample. */
 export function describeColumns(lines: readonly SampleLine[], layout: Layout): Column[] {
   const rows = sampleRows(lines, layout);
   const cellsOf = (index: number) => rows.map((row) => row[index] ?? "");
@@ -40,7 +43,7 @@ export function describeColumns(lines: readonly SampleLine[], layout: Layout): C
   const count = (mark: string) => looks.flat().filter((look) => look === mark).length;
   const common = count("comma") > count("point") ? "," : ".";
   const names = uniqueNames(layout);
-  return names.map((name, index) => describe(name, index, cellsOf(index), common, layout));
+  return names.map(({ name, written }, index) => describe({ name, written, index }, cellsOf(index), common, layout));
 }
 
 function sampleRows(lines: readonly SampleLine[], layout: Layout): string[][] {
@@ -52,22 +55,28 @@ function sampleRows(lines: readonly SampleLine[], layout: Layout): string[][] {
         ? { cells: [text.trim().replace(/^"(.*)"$/, "$1")] }
         : splitRecord(text, layout.delimiter);
     if ("cells" in split && split.cells.length === layout.width) rows.push(split.cells);
-    if (rows.length >= 300) break;
+    if (rows.length >= 2000) break;
   }
   return rows;
 }
 
-function uniqueNames(layout: Layout): string[] {
+/** Names as written, and told apart by a number where one is there again. */
+function uniqueNames(layout: Layout): { name: string; written: string }[] {
   const seen = new Map<string, number>();
   return Array.from({ length: layout.width }, (_, index) => {
-    const name = (layout.names?.[index] ?? "").replace(/\s+/g, " ").trim() || `column ${index + 1}`;
-    const times = (seen.get(name) ?? 0) + 1;
-    seen.set(name, times);
-    return times === 1 ? name : `${name} (${times})`;
+    const written = (layout.names?.[index] ?? "").replace(/\s+/g, " ").trim() || `column ${index + 1}`;
+    const times = (seen.get(written) ?? 0) + 1;
+    seen.set(written, times);
+    return { written, name: times === 1 ? written : `${written} (${times})` };
   });
 }
 
-function describe(name: string, index: number, cells: string[], common: "." | ",", layout: Layout): Column {
+function describe(
+  { name, written: label, index }: { name: string; written: string; index: number },
+  cells: string[],
+  common: "." | ",",
+  layout: Layout,
+): Column {
   const filled = cells.filter((cell) => cell.trim() !== "");
   const written = filled.find(
     (cell) => TRAILING_UNIT.test(cell.trim()) && numberLook(cell.trim().replace(TRAILING_UNIT, "")) !== undefined,
@@ -76,28 +85,25 @@ function describe(name: string, index: number, cells: string[], common: "." | ",
   const unitInCells =
     cellUnit === undefined ? undefined : new RegExp(`\\s*${cellUnit.trim().replace(/[()]/g, "\\$&")}$`, "i");
   const bare = filled.map((cell) => (unitInCells ? cell.trim().replace(unitInCells, "") : cell));
-  const kind = kindOf(bare);
-  const marks = marksOf(bare, common, quantityOfName(name) === "speed" || quantityOfName(name) === "power");
-  const named = unitOf(layout.unitRow?.[index]?.replace(/^[([]|[)\]]$/g, "") ?? "", true) ?? unitInName(name);
+  const kind = kindOf(bare.slice(0, KIND_ROWS));
+  const named = unitOf(layout.unitRow?.[index]?.replace(/^[([]|[)\]]$/g, "") ?? "", true) ?? unitInName(label);
   const unit = named ?? (cellUnit === undefined ? undefined : unitOf(cellUnit, true));
-  const minutesFirst = kind === "clock" && isMinutesFirst(name, bare);
+  const marks = marksOf(bare, common, unit?.quantity ?? quantityOfName(label), unit?.symbol);
+  const minutesFirst = kind === "clock" && isMinutesFirst(label, bare);
   const values = bare.map((cell) => (kind === "clock" ? clockSeconds(cell, minutesFirst) : cellNumber(cell, marks)));
   const known = values.filter((value) => Number.isFinite(value));
-  const rising =
-    known.length > 1 &&
-    known.every((value, at) => at === 0 || value >= (known[at - 1] ?? value)) &&
-    known[0] !== known[known.length - 1];
-  const quantity = kind === "text" ? undefined : quantityOf(name, kind, unit, rising);
+  const rising = neverFalls(known);
+  const mean = known.reduce((total, value) => total + value, 0) / known.length;
+  const quantity = kind === "text" ? undefined : quantityOf(label, kind, unit, rising, mean);
   const fits =
     unit && unit.quantity === (quantity === "temperature-difference" ? "temperature" : quantity) ? unit : undefined;
-  const mean = known.reduce((total, value) => total + value, 0) / known.length;
   return {
     index,
     name,
     kind,
     quantity,
     unit: fits,
-    role: quantity === "temperature" ? roleOfName(name) : undefined,
+    role: quantity === "temperature" ? roleOfName(label) : undefined,
     marks,
     minutesFirst,
     dateOrder: dateOrder(bare, common === "," || layout.delimiter === ";" ? "day-first" : "month-first"),
@@ -111,7 +117,7 @@ function describe(name: string, index: number, cells: string[], common: "." | ",
 function kindOf(cells: readonly string[]): Column["kind"] {
   const counts = new Map<Column["kind"], number>();
   for (const cell of cells) {
-    const kind = numberLook(cell) !== undefined || looksGrouped(cell) ? "number" : (timeKind(cell) ?? "text");
+    const kind = numberLook(cell) !== undefined || groupLook(cell) ? "number" : (timeKind(cell) ?? "text");
     counts.set(kind, (counts.get(kind) ?? 0) + 1);
   }
   // Words among numbers are faults of their rows; a column is one of words when next to nothing else stands in it.
@@ -119,22 +125,17 @@ function kindOf(cells: readonly string[]): Column["kind"] {
   return readable.sort((x, y) => y[1] - x[1])[0]?.[0] ?? "text";
 }
 
-/** Speeds of "1.850" in a log of decimal commas are whole thousands; else a column's own mark counts. */
-function marksOf(cells: readonly string[], common: "." | ",", mayGroup: boolean): NumberMarks {
-  const looks = cells.map(numberLook);
-  const points = looks.filter((look) => look === "point").length;
-  const commas = looks.filter((look) => look === "comma").length;
-  const own = points === commas ? common : commas > points ? "," : ".";
-  const grouped =
-    mayGroup &&
-    cells.length > 0 &&
-    cells.some(looksGrouped) &&
-    cells.every((cell) => looksGrouped(cell) || /^\d{1,3}$/.test(cell.trim()));
-  return own !== common && grouped ? { decimal: common, grouped: true } : { decimal: own, grouped: false };
-}
+/** Seconds since 1970 that a log can be from: above this a rising count without a unit is the time. */
+const EPOCH_MIN = 1e8;
 
-function quantityOf(name: string, kind: Column["kind"], unit: Unit | undefined, rising: boolean): Quantity | undefined {
-  if (kind !== "number") return "time";
+function quantityOf(
+  name: string,
+  kind: Column["kind"],
+  unit: Unit | undefined,
+  rising: boolean,
+  mean: number,
+): Quantity | undefined {
+  if (kind !== "number" || (!unit && rising && mean > EPOCH_MIN)) return "time";
   const byName = quantityOfName(name);
   if (unit?.quantity === "temperature" && isDifference(name)) return "temperature-difference";
   // "t" is the time when it only rises, else a temperature.

@@ -1,4 +1,4 @@
-import { numberLook, splitRecord } from "./cells";
+import { groupLook, numberLook, splitRecord } from "./cells";
 import { timeKind } from "./times";
 
 /** One physical line of the sample; `line` counts from 1. */
@@ -38,7 +38,7 @@ function dataShare(cells: readonly string[]): number {
 
 function isDatum(cell: string): boolean {
   const bare = cell.trim().replace(/(?<=\d)\s*(°\s?[CF]|[CFK]|dB(\(A\))?|s|ms|rpm|%)$/i, "");
-  return numberLook(bare) !== undefined || timeKind(cell) !== undefined;
+  return numberLook(bare) !== undefined || groupLook(bare) !== undefined || timeKind(cell) !== undefined;
 }
 
 function cellsOf(text: string, delimiter: string): string[] | undefined {

@@ -1,7 +1,8 @@
 import { Refusal } from "../refusal";
 import { chooseColumns, type Chosen, type LogChoice, type LogWarning } from "./choice";
-import { describeColumns, type Column } from "./columns";
-import { findLayout, type Layout, type SampleLine } from "./layout";
+import type { Column } from "./columns";
+import { planOf } from "./encodings";
+import type { Layout } from "./layout";
 import type { RefusedRow } from "./refused-rows";
 import { RowMachine } from "./row-machine";
 
@@ -27,7 +28,7 @@ const SAMPLE_BYTES = 1 << 16;
 
 /**
  * Reads a log from chunks of bytes in bounded memory: the first 64 kB decide layout and columns, the rest streams.
- * UTF-8 (with or without mark), UTF-16 with mark, and names in Windows-1252 are read.
+ * UTF-8 (with or without mark), UTF-16 with mark, and the older encodings of `planOf` are read.
  */
 export class LogReader {
   private head: Uint8Array = new Uint8Array(0);
@@ -88,10 +89,10 @@ export class LogReader {
 
   private plan(whole: boolean): void {
     if (this.head.length === 0) throw new Refusal("empty-file", "the file is empty");
-    const lines = sampleLines(this.head.subarray(0, SAMPLE_BYTES), whole && this.head.length <= SAMPLE_BYTES);
-    const layout = findLayout(lines);
-    if (!layout) throw new Refusal("no-rows", "no row of numbers was found in the first 64 kB");
-    this.columns = describeColumns(lines, layout);
+    const plan = planOf(sampleOf(this.head.subarray(0, SAMPLE_BYTES), whole && this.head.length <= SAMPLE_BYTES));
+    if (!plan) throw new Refusal("no-rows", "no row of numbers was found in the first 64 kB");
+    const { layout } = plan;
+    this.columns = plan.columns;
     this.chosen = chooseColumns(this.columns, this.choice);
     this.preambleLines = layout.preambleLines;
     this.machine = machineFor(layout, this.chosen);
@@ -160,19 +161,11 @@ function assumedTimeScale(column: Column, time: Float64Array): { factor: number;
   return { factor: 1, name: "seconds" };
 }
 
-function sampleLines(bytes: Uint8Array, whole: boolean): SampleLine[] {
+/** The sample up to its last line end, so that no line and no character is cut. */
+function sampleOf(bytes: Uint8Array, whole: boolean): Uint8Array {
   if (bytes.includes(0)) throw new Refusal("not-text", "the file holds zero bytes: it is no text");
   const cut = whole ? bytes.length : Math.max(bytes.lastIndexOf(10), bytes.lastIndexOf(13)) + 1;
-  const text = decodeNames(bytes.subarray(0, cut === 0 ? bytes.length : cut));
-  return text.split(/\r\n|\n|\r/).map((line, index) => ({ line: index + 1, text: line }));
-}
-
-function decodeNames(bytes: Uint8Array): string {
-  try {
-    return new TextDecoder("utf-8", { fatal: true }).decode(bytes);
-  } catch {
-    return new TextDecoder("windows-1252").decode(bytes);
-  }
+  return bytes.subarray(0, cut === 0 ? bytes.length : cut);
 }
 
 function joined(a: Uint8Array, b: Uint8Array): Uint8Array {

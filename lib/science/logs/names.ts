@@ -10,7 +10,7 @@ const STEMS: readonly (readonly [Quantity, RegExp])[] = [
   ],
   [
     "level",
-    /l[abcz]?eq\b|\bla[fsi]?\b|\bla[fsi]?\d|laf|las\b|\bspl\b|level|pegel|schall|niveau|nivel|livell|noise|sound|bruit|ruido|ruído|rumor|geluid|lyd|ljud|hałas|poziom|hluk|hladina|шум|звук|уров|騒音|音圧|噪|声级|聲|소음|\bdb[abcz]?\b|gürültü|melu|zaj/u,
+    /l[abcz]?eq\b|\bl[abcz][fsi]?[ _]?(max|min|pk|peak|e)?\d*\b|\bla[fsi]?\d|laf|las\b|\bspl\b|level|pegel|schall|niveau|nivel|livell|noise|sound|bruit|ruido|ruído|rumor|geluid|lyd|ljud|hałas|poziom|hluk|hladina|шум|звук|уров|騒音|音圧|噪|声级|聲|소음|\bdb[abcz]?\b|gürültü|melu|zaj/u,
   ],
   ["humidity", /humid|feucht|\brh\b|humedad|vochtig|wilgot|влажн|湿度|濕度|습도/u],
   ["pressure", /pressure|luftdruck|pression|presión|давлен|気圧|气压/u],
@@ -19,7 +19,7 @@ const STEMS: readonly (readonly [Quantity, RegExp])[] = [
   ["current", /\bcurrent|\bstrom|courant|corriente|電流|电流/u],
   [
     "temperature",
-    /^t ?(amb|air|in|out|room|sink|core|base|hot|hs|a|s|h|u|k)\d*\b|temp|°|celsius|fahrenheit|\bt[ _]?\d+\b|\bt |lämpö|hőm|teplo|темп|温度|溫度|온도|sıcak|حرارة|ambient|\bamb\b|umgebung|\bcpu\b|cooler|\binlet|\broom|heat ?sink|kühl|sensor|sonde|fühler|thermo|датчик|センサ|传感|室温|環境|环境/u,
+    /^t ?(amb|air|in|out|room|sink|core|base|hot|hs|a|s|h|u|k)\d*\b|temp|°|celsius|fahrenheit|\bt[ _]?\d+\b|\bt |lämpö|hőm|teplo|темп|温度|溫度|온도|sıcak|حرارة|ambi[ae]nt|\bamb\b|umgebung|\bcpu\b|cooler|\binlet|\broom|heat ?sink|kühl|sensor|capteur|sonde|sonda|fühler|føler|givare|czujnik|anturi|thermo|датчик|センサ|传感|室温|環境|环境/u,
   ],
   [
     "time",
@@ -28,9 +28,9 @@ const STEMS: readonly (readonly [Quantity, RegExp])[] = [
 ];
 
 const AMBIENT =
-  /^t ?(a|u|in)\b|amb|umgebung|raum|room|inlet|intake|ansaug|zuluft|\bin\b|omgev|omgiv|omgivelse|otocz|okol|prostř|окруж|воздух|комнат|環境|室温|周囲|外気|吸気|环境|室内|주변|실온|ortam|ympärist|környezet|pièce|sala\b|\bair\b|\bluft\b|lucht|powietr/u;
+  /^t ?(a|u|in)\b|amb|umgebung|raum|room|inlet|intake|ansaug|zuluft|\bin\b|omgev|omgiv|omgivelse|otocz|okol|prostř|окруж|воздух|комнат|環境|室温|周囲|外気|吸気|环境|室内|주변|실온|ortam|ympärist|környezet|pièce|sala\b|\baire?\b|\bluft\b|lucht|powietr/u;
 const SENSOR =
-  /^t ?(s|h|hs|k)\b|sensor|heat ?sink|sink|cooler|core|\bcpu\b|base|block|plate|heater|\bhot\b|fühler|kühl|kuehl|heiz|sonde|capteur|sonda|czujnik|датчик|センサ|ヒート|传感|散热|센서|anturi|radiator|радиатор|dissip|source|quelle|føler|givare|koel|chauff|calent/u;
+  /^t ?(s|h|hs|k)\b|sensor|heat ?sink|sink|cooler|core|\bcpu\b|base|block|plate|heater|\bhot\b|fühler|kühl|kuehl|heiz|sonde|capteur|sonda|czujnik|датчик|センサ|ヒート|传感|散热|센서|anturi|radiat|радиатор|diss?ip|kylfl|source|quelle|føler|givare|koel|chauff|calent/u;
 
 /** Underscores and camel case as spaces, so that word limits are found. */
 function spaced(name: string): string {

@@ -70,7 +70,39 @@ interface DateParts {
   zoneS: number;
 }
 
-function splitDate(text: string): DateParts | undefined {
+/** First letters of the months' names in English, German, French, Spanish and Italian. */
+const MONTHS = [
+  "jan|ene|gen|jän",
+  "feb|fév|fev",
+  "mar|mär|mrz",
+  "apr|avr|abr",
+  "ma[iyg]",
+  "jun|juin|giu",
+  "jul|juil|lug",
+]
+  .concat(["aug|ago|aoû|aou", "sep|set", "oct|okt|ott", "nov", "dec|dez|déc|dic"])
+  .map((names) => new RegExp(`^(${names})`, "i"));
+const DAY_NAMED = /^(\d{1,2})\.?[-. /](\p{L}{3,10})\.?[-. /](\d{2,4})(?![\d:])/u;
+const NAMED_DAY = /^(\p{L}{3,10})\.?[-. ](\d{1,2}),? (\d{4})(?!\d)/u;
+
+/** Dates with a month's name, and those of Chinese and Japanese, as year-month-day; any other text as it is. */
+function numbered(text: string): string {
+  if (/[年月日時时]/u.test(text)) {
+    return text
+      .replace(/(\d{4})年(\d{1,2})月(\d{1,2})日/u, "$1-$2-$3")
+      .replace(/(\d{1,2})[時时](\d{1,2})分(?:(\d{1,2})秒)?/u, (_, h: string, m: string, s = "00") => `${h}:${m}:${s}`);
+  }
+  if (!/^\d{0,2}\.?[-. /]?\p{L}{3}/u.test(text)) return text;
+  const [whole, day, month, year] = DAY_NAMED.exec(text) ?? swapped(NAMED_DAY.exec(text));
+  const number = MONTHS.findIndex((names) => names.test(month ?? "")) + 1;
+  if (whole === undefined || day === undefined || year === undefined || number === 0) return text;
+  return `${year.length === 2 ? `20${year}` : year}-${number}-${day}${text.slice(whole.length)}`;
+}
+
+const swapped = (found: RegExpExecArray | null) => (found ? [found[0], found[2], found[1], found[3]] : []);
+
+function splitDate(written: string): DateParts | undefined {
+  const text = numbered(written);
   const cut = text.search(/[T\s]/i);
   const found = DATE.exec(cut < 0 ? text : text.slice(0, cut).replace(/,$/, ""));
   if (!found) return undefined;
