@@ -78,7 +78,8 @@ export function indexQueries(query: IndexQuery, strategy: Strategy): { queries: 
     ...common,
     filter: indexFilter(query),
     facets: [...free.map(counted), SCALE_FIELD],
-    sort: [`${query.sort}:${query.descending ? "desc" : "asc"}`, "id:asc"],
+    // Without an order of its own the service puts the best match first.
+    ...(query.sort !== "match" && { sort: [`${query.sort}:${query.descending ? "desc" : "asc"}`, "id:asc"] }),
     page: query.page,
     hitsPerPage: indexPageSize,
     attributesToRetrieve: ["id", ...SEARCHED_FIELDS],

@@ -81,7 +81,7 @@ export function FindingPage(props: FindingPageProps) {
         {answer.items.length > 0 ? (
           <div className="screen-only mb-4 flex flex-wrap items-end justify-between gap-x-8 gap-y-2">
             <SortForm
-              choices={sortChoices(offered, distanceMm)}
+              choices={sortChoices(offered, { distanceMm, words: query.q })}
               now={`${query.descending ? "-" : ""}${query.sort}`}
               kept={paramsWithout(asked, ["sort", "page"])}
             />

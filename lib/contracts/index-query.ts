@@ -64,8 +64,12 @@ export const ranges = {
 export type RangeKey = keyof typeof ranges;
 export const rangeKeys = Object.keys(ranges) as RangeKey[];
 
-/** What can be sorted by beside the ranges; absolute figures only where one bench, protocol and baseline is chosen. */
-export const sortKeys = [...rangeKeys, "published", "name", "rank", "leveldba", "deltat"] as const;
+/**
+ * What can be sorted by beside the ranges; absolute figures only where one bench, protocol and baseline is chosen.
+ * `match` is how well an entry answers the words that were typed; without words it is the sort that an address without
+ * one means.
+ */
+export const sortKeys = [...rangeKeys, "published", "name", "rank", "leveldba", "deltat", "match"] as const;
 export type SortKey = (typeof sortKeys)[number];
 
 const values = z.array(z.string().min(1).max(80)).max(60);
@@ -88,6 +92,9 @@ export const indexPageSize = 20;
 /** Figures that stand side by side only within one bench version, protocol and baseline unit. */
 export const absoluteRanges: readonly RangeKey[] = ["equal", "loudness"];
 const absoluteSorts: readonly SortKey[] = [...absoluteRanges, "leveldba", "deltat"];
+
+/** The order that an address without one means: the best match first where words were typed, else the coolest. */
+export const usualSort = (words: string): SortKey => (words === "" ? "equal" : "match");
 
 /** The question without what can't be asked over several benches, protocols or baselines: absolute bounds go, a sort by
  * an absolute figure becomes one by the ratio. Asked over one of each, it stays as it is. */
@@ -115,8 +122,10 @@ function boundOf(text: string | null): number | null {
  * out, since an address may be old or typed by hand; it never changes what another part means.
  */
 export function parseIndexQuery(params: URLSearchParams): IndexQuery {
-  const sortText = params.get("sort") ?? "equal";
+  const words = (params.get("q") ?? "").trim().slice(0, 200);
+  const sortText = params.get("sort") ?? "";
   const key = sortText.replace(/^-/, "");
+  const named = sortKeys.find((each) => each === key && (each !== "match" || words !== ""));
   const page = Number(params.get("page") ?? "1");
   const chosen = Object.fromEntries(
     facetKeys.flatMap((facet) => {
@@ -135,11 +144,11 @@ export function parseIndexQuery(params: URLSearchParams): IndexQuery {
     }),
   );
   return indexQuerySchema.parse({
-    q: (params.get("q") ?? "").slice(0, 200),
+    q: words,
     facets: chosen,
     ranges: bounded,
-    sort: sortKeys.find((each) => each === key) ?? "equal",
-    descending: sortText.startsWith("-"),
+    sort: named ?? usualSort(words),
+    descending: named !== undefined && named !== "match" && sortText.startsWith("-"),
     page: Number.isInteger(page) && page >= 1 && page <= 10_000 ? page : 1,
     view: params.get("view") === "drawings" ? "drawings" : "table",
     columns: [...new Set(params.getAll("columns").flatMap((list) => list.split(",")))]
@@ -160,7 +169,8 @@ export function indexAddress(query: IndexQuery): string {
     if (bounded && bounded.low !== null) params.set(from, String(bounded.low));
     if (bounded && bounded.high !== null) params.set(to, String(bounded.high));
   }
-  if (query.sort !== "equal" || query.descending) params.set("sort", `${query.descending ? "-" : ""}${query.sort}`);
+  const sort = query.q === "" && query.sort === "match" ? usualSort("") : query.sort;
+  if (sort !== usualSort(query.q) || query.descending) params.set("sort", `${query.descending ? "-" : ""}${sort}`);
   if (query.view !== "table") params.set("view", query.view);
   if (query.columns.length > 0) params.set("columns", query.columns.join(","));
   if (query.page > 1) params.set("page", String(query.page));

@@ -1,6 +1,7 @@
 import { expect, test } from "vitest";
 import { baselineSchema } from "@/lib/contracts/baselines";
 import { ledgerSchema } from "@/lib/contracts/corrections";
+import { indexAnswerSchema } from "@/lib/contracts/index-query";
 import { methodSchema } from "@/lib/contracts/method";
 import { rawRunsSchema } from "@/lib/contracts/raw-runs";
 import { roundSchema, roundsSchema, seasonSchema, seasonsSchema } from "@/lib/contracts/seasons";
@@ -22,6 +23,15 @@ test("a sheet, its readings and their CSV answer anybody by their contracts", as
   expect(csv.headers.get("content-type")).toBe("text/csv; charset=utf-8");
   expect(csv.headers.get("content-disposition")).toContain(`filename="${slug}-readings.csv"`);
   expect((await csv.text()).trimEnd().split("\r\n").length).toBe(raw.readings.length + 1);
+});
+
+test("words that were typed bring the design of that name first, whatever it scored, also where one letter is wrong", async () => {
+  for (const words of ["heronwing", "heronwign"]) {
+    const { items } = indexAnswerSchema.parse(await (await get(`/api/v1/designs?q=${words}`)).json());
+    expect(items[0]?.name).toBe("Heronwing");
+  }
+  const { items } = indexAnswerSchema.parse(await (await get("/api/v1/designs?q=mill&sort=name")).json());
+  expect(items.map(({ name }) => name)).toEqual(items.map(({ name }) => name).toSorted((a, b) => (a < b ? -1 : 1)));
 });
 
 test.each([

@@ -71,7 +71,7 @@ const listed = {
   baselineUnitId: "baseline_unit_id",
 } as const;
 
-const sortColumns: Record<Exclude<SortKey, keyof typeof ranges>, string> = {
+const sortColumns: Record<Exclude<SortKey, keyof typeof ranges | "match">, string> = {
   published: "published_at",
   name: "lower(design_name)",
   rank: "round_rank",
@@ -104,6 +104,15 @@ function addFacet(query: Knex.QueryBuilder, facet: FacetKey, values: readonly st
   else void query.whereRaw(`??::text = any (?::text[])`, [column, [...values]]);
 }
 
+/** Names that are what was typed first, then those that begin so, then the rest; each by the figure, coolest first. */
+function addBestMatch(query: Knex.QueryBuilder, words: string): void {
+  void query.orderByRaw("lower(design_name) = lower(?) desc, starts_with(lower(design_name), lower(?)) desc", [
+    words,
+    words,
+  ]);
+  void query.orderByRaw(`${ranges.equal.column} nulls last`);
+}
+
 /** Everything that the question asks but the facet or range that is being counted. */
 export function asked(db: Handle, question: IndexQuery, without?: string): Knex.QueryBuilder {
   const query = db("shown.entry");
@@ -128,7 +137,11 @@ export async function listEntries(db: Handle, question: IndexQuery): Promise<Lis
   const direction = question.descending ? "desc" : "asc";
   return asked(db, question)
     .select(listed)
-    .orderByRaw(`${sortColumn(question.sort)} ${direction} nulls last, entry_id`)
+    .modify((query) => {
+      if (question.sort === "match") addBestMatch(query, question.q);
+      else void query.orderByRaw(`${sortColumn(question.sort)} ${direction} nulls last`);
+    })
+    .orderBy("entry_id")
     .limit(indexPageSize)
     .offset((question.page - 1) * indexPageSize);
 }

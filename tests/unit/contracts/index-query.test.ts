@@ -25,6 +25,16 @@ describe("a question in the address", () => {
 });
 
 describe("over several benches", () => {
+  it("puts the best match first where words were typed, and only there", () => {
+    expect(parse("q=mill")).toMatchObject({ sort: "match", descending: false });
+    expect(parse("q=mill&sort=-match")).toMatchObject({ sort: "match", descending: false });
+    expect(parse("q=mill&sort=equal").sort).toBe("equal");
+    expect(parse("sort=match").sort).toBe("equal");
+    expect(indexAddress(parse("q=mill"))).toBe("/designs?q=mill");
+    expect(indexAddress(parse("q=mill&sort=equal"))).toBe("/designs?q=mill&sort=equal");
+    expect(indexAddress({ ...parse("q=mill"), q: "" })).toBe("/designs");
+  });
+
   it("bounds and sorts by absolute figures are let go, others stay", () => {
     const asked = parse("equal-to=-1&gap-from=0.5&sort=leveldba");
     expect(settledQuery(asked, true)).toEqual(asked);
