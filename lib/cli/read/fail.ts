@@ -16,3 +16,9 @@ export function failureLine(error: unknown): string {
 export function failureStatus(error: unknown): number {
   return error instanceof Refusal ? 2 : 1;
 }
+
+/** Why a file can't be read: the system's word without its path, which the caller knows. */
+export function unreadableReason(error: unknown): string {
+  const code = error instanceof Error && "code" in error ? String(error.code) : "unknown";
+  return { ENOENT: "there is no such file", EISDIR: "it is a folder", EACCES: "it may not be read" }[code] ?? code;
+}

@@ -4,6 +4,7 @@ import { analyseLog, type LogReport } from "@/lib/science/logs/analyse-log";
 import { LogReader } from "@/lib/science/logs/log-reader";
 import { Refusal } from "@/lib/science/refusal";
 import { HOUSE_RULE } from "@/lib/science/thermal/steady-window";
+import { unreadableReason } from "./fail";
 
 /**
  * `log FILE.csv [--sensor NAME --ambient NAME | --level NAME] [--eps K]`: one report of a log file.
@@ -18,7 +19,7 @@ export async function readLog(args: string[]): Promise<LogReport> {
     }
   } catch (error) {
     if (error instanceof Refusal) throw error;
-    throw new Refusal("unreadable-file", `the file can't be read: ${reasonOf(error)}`, file);
+    throw new Refusal("unreadable-file", `the file can't be read: ${unreadableReason(error)}`, file);
   }
   return analyseLog(reader.finish(), epsilonK);
 }
@@ -48,10 +49,4 @@ function parse(args: string[]) {
     ...(level === undefined ? {} : { level }),
   };
   return { file, choice, epsilonK };
-}
-
-/** The system's word without its path, which the caller knows. */
-function reasonOf(error: unknown): string {
-  const code = error instanceof Error && "code" in error ? String(error.code) : "unknown";
-  return { ENOENT: "there is no such file", EISDIR: "it is a folder", EACCES: "it may not be read" }[code] ?? code;
 }

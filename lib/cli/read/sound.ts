@@ -4,7 +4,7 @@ import { analyseRecording, type SoundOptions } from "@/lib/science/acoustics/ana
 import type { RotorSet } from "@/lib/science/acoustics/fan-tones";
 import type { ByteSource } from "@/lib/science/acoustics/recording";
 import type { SoundReport } from "@/lib/science/acoustics/sound-report";
-import { ReadError } from "./fail";
+import { ReadError, unreadableReason } from "./fail";
 
 const OPTIONS = {
   cal: { type: "string" },
@@ -112,11 +112,7 @@ function fileSource(file: string): ByteSource {
         if (chunk instanceof Uint8Array) yield chunk;
       }
     } catch (error) {
-      throw new ReadError("file-not-read", `The file can't be read: ${reasonOf(error)}.`, file);
+      throw new ReadError("file-not-read", `The file can't be read: ${unreadableReason(error)}.`, file);
     }
   };
-}
-
-function reasonOf(error: unknown): string {
-  return error instanceof Error && "code" in error && error.code === "ENOENT" ? "it doesn't exist" : String(error);
 }

@@ -10,6 +10,9 @@ const CHANCE = 13.8;
 /** Peaks are looked for from here up, Hz: below it room and mains drown a fan. */
 const SEARCH_FROM_HZ = 38;
 
+/** A line this far (200 dB) under the sum of all is the arithmetic's own rounding: no recording reaches so deep. */
+const ROUNDING_SHARE = 1e-20;
+
 /**
  * Factor over the mean that a line of plain noise, averaged over `blocks` blocks, passes once in a million:
  * blocks·(t − 1 − ln t) = 13.8 (Chernoff bound of the gamma distribution), at least 6 dB.
@@ -49,10 +52,12 @@ export function noiseFloor({ psd, spacingHz }: Spectrum): Float64Array {
 /** Lines that are local maxima and stand out of the floor, strongest first. */
 export function peakLines({ psd, spacingHz, blocks }: Spectrum, floor: Float64Array): number[] {
   const factor = peakFactor(blocks);
+  const least = ROUNDING_SHARE * psd.reduce((sum, line) => sum + line, 0);
   const peaks: number[] = [];
   for (let k = Math.max(3, Math.round(SEARCH_FROM_HZ / spacingHz)); k < psd.length - 2; k += 1) {
     const line = psd[k] ?? 0;
-    if (line > (psd[k - 1] ?? 0) && line >= (psd[k + 1] ?? 0) && line >= factor * (floor[k] ?? 0)) peaks.push(k);
+    if (line > (psd[k - 1] ?? 0) && line >= (psd[k + 1] ?? 0) && line >= factor * (floor[k] ?? 0) && line > least)
+      peaks.push(k);
   }
   return peaks.sort((a, b) => (psd[b] ?? 0) - (psd[a] ?? 0));
 }

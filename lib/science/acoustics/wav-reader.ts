@@ -16,14 +16,15 @@ export interface WavSink {
   samples(values: Float64Array, count: number): void;
 }
 
-type State = "riff" | "header" | "format" | "skip" | "data" | "done";
+type State = "riff" | "header" | "format" | "skip" | "after-empty" | "data" | "done";
 
 /**
  * Reads a WAV file from pieces of any size, one channel of it (from 1), in bounded memory. With `orMono` a file of one
  * channel gives that one, whichever is wanted.
  *
  * Chunks are word-aligned and unknown ones skipped; a data size left open by a streaming writer means to the end of the
- * file. Refused with a code and the byte: not a WAV, no format, no samples, truncated, a last frame that is not whole.
+ * file, and so does a size of 0 where what follows is no chunk (a recorder that was cut off). Refused with a code and the
+ * byte: not a WAV, no format, no samples, truncated, a last frame that is not whole.
  * Source: RIFF/WAVE (Microsoft, 1994; value from memory, common practice).
  */
 export class WavReader {
@@ -64,7 +65,7 @@ export class WavReader {
       this.refuse("wav-truncated", `is truncated: ${this.remaining} bytes that it announces are missing`);
     }
     if (this.wav === undefined) this.refuse("wav-no-format", "has no format chunk");
-    if (this.state !== "data" && this.state !== "done") this.refuse("wav-no-data", "has no data chunk");
+    if (!["data", "done", "after-empty"].includes(this.state)) this.refuse("wav-no-data", "has no data chunk");
     if (this.frames === 0) this.refuse("wav-no-samples", "holds no samples");
     return this.frames;
   }
@@ -78,8 +79,8 @@ export class WavReader {
   }
 
   /** Collects the few bytes that a header needs, then reads them. */
-  private gather(bytes: Uint8Array, state: "riff" | "header" | "format"): Uint8Array {
-    const needed = state === "riff" ? 12 : state === "header" ? 8 : this.remaining + this.held.length;
+  private gather(bytes: Uint8Array, state: Exclude<State, "skip" | "data" | "done">): Uint8Array {
+    const needed = state === "riff" ? 12 : state === "format" ? this.remaining + this.held.length : 8;
     const take = Math.min(needed - this.held.length, bytes.length);
     const joined = new Uint8Array(this.held.length + take);
     joined.set(this.held);
@@ -87,6 +88,7 @@ export class WavReader {
     this.held = joined;
     if (state === "format") this.remaining -= take;
     if (joined.length === needed) {
+      if (state === "after-empty") return this.afterEmpty(joined, bytes.subarray(take));
       if (state === "riff") this.riff(joined);
       else if (state === "header") this.header(joined);
       else {
@@ -106,6 +108,22 @@ export class WavReader {
       this.held = new Uint8Array(0);
     }
     return bytes.subarray(take);
+  }
+
+  /** What stands behind a data chunk of no bytes: another chunk within the file's size, or samples never counted. */
+  private afterEmpty(head: Uint8Array, rest: Uint8Array): Uint8Array {
+    this.held = new Uint8Array(0);
+    const to = this.offset + 8 + new DataView(head.buffer).getUint32(4, true);
+    if (/^[\w -]{4}$/.test(ascii(head, 0)) && to <= this.riffSize + 9) {
+      this.state = "done";
+      return rest.subarray(rest.length);
+    }
+    this.streamed = true;
+    this.remaining = Infinity;
+    this.state = "data";
+    let left = head;
+    while (left.length > 0) left = this.data(left);
+    return rest;
   }
 
   private startSkip(size: number): void {
@@ -138,7 +156,7 @@ export class WavReader {
       if (!this.streamed && size % this.wav.frameBytes !== 0) {
         this.refuse("wav-partial-frame", `announces ${size} bytes of samples, which are no whole frames`);
       }
-      this.state = this.remaining > 0 ? "data" : "done";
+      this.state = this.remaining > 0 ? "data" : "after-empty";
     } else this.startSkip(size + this.padding);
   }
 

@@ -107,6 +107,16 @@ describe("tones of a fan with known parts (levels by definition, frequencies m·
     }
   });
 
+  it("finds nothing but the tone itself where a file holds one to the last digit of a double", async () => {
+    // What else the sum of lines shows lies 240 dB lower: rounding, by the definition of a double (2^-53, 319 dB).
+    for (const hz of [1003.3, 4000, 9000.5]) {
+      const pure = addTone(new Float64Array(11 * RATE), hz, 0.2, RATE);
+      const { tones } = await read(wavBytes({ sampleRateHz: RATE, channels: [pure], encoding: "float", bits: 64 }));
+      expect(tones).toHaveLength(1);
+      expect(tones[0]?.levelDb).toBeCloseTo(100 + 20 * Math.log10(0.2), 2);
+    }
+  });
+
   it("lists no tone below 40 Hz and at most 40", async () => {
     const low = addTone(noise(25, 12 * RATE, 0.003), 35, 0.01, RATE);
     expect((await read(wavBytes({ sampleRateHz: RATE, channels: [low], bits: 24 }))).tones).toEqual([]);

@@ -74,8 +74,19 @@ describe("reading WAV", { timeout: 60_000 }, () => {
     const open = [
       wavBytes({ channels: [left], dataSize: 0xffffffff, riffSize: 0xffffffff }),
       wavBytes({ channels: [left], dataSize: 0, riffSize: 0 }),
+      // A recorder that was cut off leaves its first header: no samples yet. Common practice, no source.
+      wavBytes({ channels: [left], dataSize: 0, riffSize: 36 }),
+      wavBytes({ channels: [left], dataSize: 0 }),
     ];
-    for (const bytes of open) expect(readAll(bytes).samples).toHaveLength(500);
+    const whole = readAll(wavBytes({ channels: [left] })).samples;
+    for (const bytes of open)
+      for (const piece of [1, 5, 11, 4096]) expect(readAll(bytes, 1, piece).samples).toEqual(whole);
+  });
+
+  it("takes a chunk behind a data chunk of no bytes for no samples", () => {
+    const empty = wavBytes({ riffSize: 4 + 24 + 8 + 8 + 6 });
+    const list = Uint8Array.from([...new TextEncoder().encode("LIST"), 6, 0, 0, 0, 1, 2, 3, 4, 5, 6]);
+    for (const bytes of [empty, join([empty, list])]) expect(() => readAll(bytes)).toThrowError(/holds no samples/);
   });
 
   it.each<[string, Uint8Array, string]>([
