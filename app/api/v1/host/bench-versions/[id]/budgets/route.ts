@@ -5,11 +5,9 @@ import { reply } from "@/lib/http/reply";
 import { route } from "@/lib/http/route";
 import { addBudget } from "@/lib/server/benches/benches";
 
-/** Begins a new version of a bench's uncertainty budget. */
+/** Writes a new version of a bench's uncertainty budget, with its parts where they come with it. */
 export const POST = route(
   { access: "signed_in", params: idParams, body: newBudget },
   async ({ actor, params, body, requestId }) =>
-    reply(made.parse(await addBudget({ actor, requestId }, { benchVersionId: params.id, note: body.note })), {
-      status: 201,
-    }),
+    reply(made.parse(await addBudget({ actor, requestId }, { benchVersionId: params.id, ...body })), { status: 201 }),
 );
