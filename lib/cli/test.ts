@@ -45,9 +45,11 @@ export async function main(_order: string, chosen: string[]): Promise<void> {
   const seeded = mkdtempSync(path.join(os.tmpdir(), "fanfold-seeded-"));
   const remove = (): void => [folder, seeded].forEach((each) => rmSync(each, { recursive: true, force: true }));
   process.once("exit", remove);
-  const steps = allSteps(life, folder, seeded).filter((step) => chosen.length === 0 || chosen.includes(step.name));
+  const groups = allSteps(life, folder, seeded)
+    .map((group) => group.filter(({ name }) => chosen.length === 0 || chosen.includes(name)))
+    .filter((group) => group.length > 0);
   const results = await runSteps(
-    steps,
+    groups,
     () => signalled,
     (line) => console.log(line),
     () => Date.now(),
@@ -58,7 +60,8 @@ export async function main(_order: string, chosen: string[]): Promise<void> {
   process.exit(results.length > 0 && results.every((each) => each.failed === 0) ? 0 : 1);
 }
 
-function allSteps(life: Lifetime, folder: string, seeded: string): Step[] {
+/** In their order; what stands in one group uses one core each and nothing of the others, so it runs side by side. */
+function allSteps(life: Lifetime, folder: string, seeded: string): Step[][] {
   const programs = path.join(root, "node_modules");
   const node = (name: string, ...calls: string[][]): Step => ({
     name,
@@ -72,31 +75,35 @@ function allSteps(life: Lifetime, folder: string, seeded: string): Step[] {
     run: () => runVitest(life, path.join(folder, `${name}.json`), projects.length === 0 ? [name] : projects, seeded),
   });
   return [
-    { name: "packages", run: () => ensurePackages(life) },
-    node("format", [path.join(programs, "prettier/bin/prettier.cjs"), "--check", "--log-level=warn", "."]),
-    node("lint", [
-      path.join(programs, "eslint/bin/eslint.js"),
-      "--config",
-      "tests/setup/eslint.config.mjs",
-      "--max-warnings",
-      "0",
-      ".",
-    ]),
-    // The routes' own types are generated, so that they are checked on a clean clone, too.
-    node("types", [nextProgram(root), "typegen"], [path.join(programs, "typescript/bin/tsc"), "--noEmit"]),
-    vitest("fast", "architecture", "unit", "reference", "recorded"),
-    vitest("db"),
-    {
-      name: "build",
-      async run() {
-        await buildIfStale(life, undefined, root);
-        return one;
+    [{ name: "packages", run: () => ensurePackages(life) }],
+    [
+      node("format", [path.join(programs, "prettier/bin/prettier.cjs"), "--check", "--log-level=warn", "."]),
+      node("lint", [
+        path.join(programs, "eslint/bin/eslint.js"),
+        "--config",
+        "tests/setup/eslint.config.mjs",
+        "--max-warnings",
+        "0",
+        ".",
+      ]),
+      // The routes' own types are generated, so that they are checked on a clean clone, too.
+      node("types", [nextProgram(root), "typegen"], [path.join(programs, "typescript/bin/tsc"), "--noEmit"]),
+    ],
+    [vitest("fast", "architecture", "unit", "reference", "recorded")],
+    [vitest("db")],
+    [
+      {
+        name: "build",
+        async run() {
+          await buildIfStale(life, undefined, root);
+          return one;
+        },
       },
-    },
-    { name: "demo", run: () => seedOnce(life, seeded) },
-    vitest("api"),
-    vitest("faults"),
-    vitest("browser"),
+      { name: "demo", run: () => seedOnce(life, seeded) },
+    ],
+    [vitest("api")],
+    [vitest("faults")],
+    [vitest("browser")],
   ];
 }
 

@@ -16,26 +16,29 @@ export interface StepResult extends Tally {
   seconds: number;
 }
 
-/** Runs steps one after the other, whatever fails, until `stopped` says so. */
+/**
+ * Runs groups of steps one after the other, and the steps of a group side by side, whatever fails, until `stopped` says
+ * so. Results come in the order of the steps.
+ */
 export async function runSteps(
-  steps: Step[],
+  groups: readonly (readonly Step[])[],
   stopped: () => boolean,
   say: (line: string) => void,
   now: () => number,
 ): Promise<StepResult[]> {
-  const results: StepResult[] = [];
-  for (const step of steps) {
-    if (stopped()) break;
-    say(`\n=== ${step.name}`);
+  const run = async (step: Step): Promise<StepResult> => {
     const began = now();
-    let tally: Tally;
-    try {
-      tally = await step.run();
-    } catch (error) {
+    const tally = await step.run().catch((error: unknown): Tally => {
       say(error instanceof Error ? error.message : String(error));
-      tally = { passed: 0, failed: 1, skipped: 0 };
-    }
-    results.push({ ...tally, name: step.name, seconds: Math.round((now() - began) / 1000) });
+      return { passed: 0, failed: 1, skipped: 0 };
+    });
+    return { ...tally, name: step.name, seconds: Math.round((now() - began) / 1000) };
+  };
+  const results: StepResult[] = [];
+  for (const group of groups) {
+    if (stopped()) break;
+    say(`\n=== ${group.map(({ name }) => name).join(", ")}`);
+    results.push(...(await Promise.all(group.map(run))));
   }
   return results;
 }
