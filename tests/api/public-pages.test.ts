@@ -25,6 +25,18 @@ test("a sheet, its readings and their CSV answer anybody by their contracts", as
   expect((await csv.text()).trimEnd().split("\r\n").length).toBe(raw.readings.length + 1);
 });
 
+test.each([
+  ["/seasons/%ff", 404],
+  ["/api/v1/sheets/%ff", 404],
+  ["/designs/a%00b", 404],
+  ["/api/v1/sheets/a%00b", 404],
+  ["/designs?q=a%00b", 400],
+  ["/api/v1/designs?q=a%00b", 400],
+  ["/designs?q=100%", 200],
+])("an address that can name nothing is refused as %s, with %d", async (path, status) => {
+  expect((await get(path)).status).toBe(status);
+});
+
 test("words that were typed bring the design of that name first, whatever it scored, also where one letter is wrong", async () => {
   for (const words of ["heronwing", "heronwign"]) {
     const { items } = indexAnswerSchema.parse(await (await get(`/api/v1/designs?q=${words}`)).json());
