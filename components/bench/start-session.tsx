@@ -2,9 +2,8 @@
 
 import { useRouter } from "next/navigation";
 import { useState } from "react";
-import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/field";
-import { leftToTick, TickList, type Ticks } from "@/components/ui/tick-list";
+import { TickedButton, TickList, type Ticks } from "@/components/ui/tick-list";
 import { useStartSession } from "@/lib/client/bench";
 import type { BenchQueue, RoundSetup } from "@/lib/contracts/bench-prints";
 import { Refusal } from "./refusal";
@@ -27,7 +26,6 @@ export function StartSession({ rounds, checklist }: Pick<BenchQueue, "rounds" | 
     baseline,
     round.baselines.map((each) => each.baselineUnitId),
   );
-  const left = leftToTick(checklist, ticked);
   const press = () =>
     start.mutate(
       { roundId: round.roundId, benchVersionId, baselineUnitId, checklist: ticked },
@@ -75,14 +73,13 @@ export function StartSession({ rounds, checklist }: Pick<BenchQueue, "rounds" | 
         onTick={setTicked}
       />
       <Refusal error={start.error} fields={start.error?.code !== "malformed"} />
-      <p className="flex flex-wrap items-center gap-3">
-        <Button type="submit" kind="solid" busy={start.isPending} busyWords="Starting …" disabled={left > 0}>
-          Start session
-        </Button>
-        <span className="docket" role="status">
-          {left > 0 ? `${left} of ${checklist.length} still to tick` : "All ticked"}
-        </span>
-      </p>
+      <TickedButton
+        items={checklist}
+        ticked={ticked}
+        words="Start session"
+        busy={start.isPending}
+        busyWords="Starting …"
+      />
     </form>
   );
 }

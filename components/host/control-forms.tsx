@@ -3,10 +3,9 @@
 import { useRouter } from "next/navigation";
 import { useState } from "react";
 import type { ActField } from "@/components/ui/act/act-values";
-import { Button } from "@/components/ui/button";
 import { Select } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
-import { leftToTick, TickList, type Ticks } from "@/components/ui/tick-list";
+import { TickedButton, TickList, type Ticks } from "@/components/ui/tick-list";
 import { useDocumentChange, useStartBenchSession } from "@/lib/client/host";
 import type { BenchSetup } from "@/lib/contracts/bench-admin";
 import type { BenchControl } from "@/lib/contracts/control";
@@ -79,7 +78,6 @@ export function StartBenchSession({ benchVersionId, setup, budgets, checklist }:
     return (
       <p>It needs a baseline unit in service, a protocol and a budget first: add them under Benches and protocols.</p>
     );
-  const left = leftToTick(checklist, ticked);
   const error = (path: string) => start.error?.field(path);
   const press = () =>
     start.mutate(
@@ -155,14 +153,13 @@ export function StartBenchSession({ benchVersionId, setup, budgets, checklist }:
           <p>{start.error.detail}</p>
         </Notice>
       ) : null}
-      <p className="flex flex-wrap items-center gap-3">
-        <Button type="submit" kind="solid" busy={start.isPending} busyWords="Starting …" disabled={left > 0}>
-          Start session
-        </Button>
-        <span className="docket" role="status">
-          {left > 0 ? `${left} of ${checklist.length} still to tick` : "All ticked"}
-        </span>
-      </p>
+      <TickedButton
+        items={checklist}
+        ticked={ticked}
+        words="Start session"
+        busy={start.isPending}
+        busyWords="Starting …"
+      />
     </form>
   );
 }

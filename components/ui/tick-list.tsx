@@ -1,4 +1,5 @@
 import type { ReactNode } from "react";
+import { Button } from "./button";
 import { Notice } from "./notice";
 import { Slot, SlotGroup } from "./slot";
 
@@ -33,5 +34,26 @@ export function TickList({ title, legend, hideLegend, items, ticked, onTick }: T
         ))}
       </SlotGroup>
     </Notice>
+  );
+}
+
+export type TickedButtonProps = Pick<TickListProps, "items" | "ticked"> & {
+  words: string;
+  busy: boolean;
+  busyWords: string;
+};
+
+/** The button of a form with such cautions: it waits until each is ticked, and says how many are left. */
+export function TickedButton({ items, ticked, words, busy, busyWords }: TickedButtonProps) {
+  const left = leftToTick(items, ticked);
+  return (
+    <p className="flex flex-wrap items-center gap-3">
+      <Button type="submit" kind="solid" busy={busy} busyWords={busyWords} disabled={left > 0}>
+        {words}
+      </Button>
+      <span className="docket" role="status">
+        {left > 0 ? `${left} of ${items.length} still to tick` : "All ticked"}
+      </span>
+    </p>
   );
 }

@@ -1,4 +1,5 @@
 import type { Handle } from "../client/connect";
+import { protocolColumns, type ProtocolColumns } from "./protocol-columns";
 
 export interface SessionHead {
   id: string;
@@ -145,43 +146,20 @@ export async function setupOf(
   return rows[0];
 }
 
-export interface ProtocolRow {
+export interface ProtocolRow extends ProtocolColumns {
   id: string;
-  heatLoadW: number;
-  setting: "rpm" | "drive_percent";
-  setSpeeds: number[];
-  positions: string[];
-  mounts: number;
-  runsPerMount: number;
-  backgroundGrade: "engineering" | "survey";
-  epsilonK: number;
-  ambientMinC: number;
-  ambientMaxC: number;
-  ambientDriftMaxK: number;
-  calibratorDriftMaxDb: number;
-  levelAverageS: number;
 }
 
 export async function protocolOf(
   db: Handle,
   { protocolVersionId }: { protocolVersionId: string },
 ): Promise<ProtocolRow> {
-  const row = await db("protocol_version").where({ id: protocolVersionId }).first<ProtocolRow | undefined>({
-    id: "id",
-    heatLoadW: "heat_load_w",
-    setting: "setting",
-    setSpeeds: "set_speeds",
-    positions: "positions",
-    mounts: "mounts",
-    runsPerMount: "runs_per_mount",
-    backgroundGrade: "background_grade",
-    epsilonK: "epsilon_k",
-    ambientMinC: "ambient_min_c",
-    ambientMaxC: "ambient_max_c",
-    ambientDriftMaxK: "ambient_drift_max_k",
-    calibratorDriftMaxDb: "calibrator_drift_max_db",
-    levelAverageS: "level_average_s",
-  });
+  const row = await db("protocol_version")
+    .where({ id: protocolVersionId })
+    .first<ProtocolRow | undefined>({
+      id: "id",
+      ...protocolColumns,
+    });
   if (!row) throw new Error(`no protocol version ${protocolVersionId}`);
   return row;
 }

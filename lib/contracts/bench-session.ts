@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { id, time } from "./base";
 import { controlCheck, qualificationView, unitBridge } from "./control";
+import { protocolParts } from "./protocol";
 
 /** What the screen of one session reads. Handles stand for people as they are called today; null once erased. */
 const person = z.strictObject({ personId: id, handle: z.string().nullable() });
@@ -127,20 +128,7 @@ export const benchSession = z.strictObject({
     temperatureMaxC: z.number(),
   }),
   baseline: z.strictObject({ name: z.string(), serial: z.string() }),
-  protocol: z.strictObject({
-    heatLoadW: z.number(),
-    setting: z.enum(["rpm", "drive_percent"]),
-    setSpeeds: z.array(z.number()),
-    mounts: z.int(),
-    runsPerMount: z.int(),
-    backgroundGrade: z.enum(["engineering", "survey"]),
-    epsilonK: z.number(),
-    ambientMinC: z.number(),
-    ambientMaxC: z.number(),
-    ambientDriftMaxK: z.number(),
-    calibratorDriftMaxDb: z.number(),
-    levelAverageS: z.number(),
-  }),
+  protocol: z.strictObject(protocolParts),
   /** Of the bench; `used` by the protocol. */
   positions: z.array(
     z.strictObject({ id, name: z.string(), distanceMm: z.number(), angleDeg: z.number(), used: z.boolean() }),

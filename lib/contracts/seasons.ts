@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { RULE_KINDS } from "@/lib/domain/scoring/rules";
 import { slug, time, wholeText } from "./base";
+import { protocolParts } from "./protocol";
 
 export const ruleKind = z.enum(RULE_KINDS, { error: "is no scoring rule" });
 export const seasonParams = z.strictObject({ slug });
@@ -110,19 +111,8 @@ export const seasonSchema = z.strictObject({
   protocol: z.strictObject({
     name: z.string(),
     version: z.int(),
-    heatLoadW: z.number(),
-    setting: z.string(),
-    setSpeeds: z.array(z.number()),
+    ...protocolParts,
     positions: z.array(z.string()),
-    mounts: z.int(),
-    runsPerMount: z.int(),
-    backgroundGrade: z.enum(["engineering", "survey"]),
-    epsilonK: z.number(),
-    ambientMinC: z.number(),
-    ambientMaxC: z.number(),
-    ambientDriftMaxK: z.number(),
-    calibratorDriftMaxDb: z.number(),
-    levelAverageS: z.number(),
   }),
   standing: standingSchema.nullable(),
 });

@@ -1,4 +1,5 @@
 import type { Handle } from "../../client/connect";
+import { protocolColumns, type ProtocolColumns } from "../protocol-columns";
 
 export interface WithdrawalRow {
   entryId: string;
@@ -26,22 +27,9 @@ export async function nothingLeftOf(db: Handle, { slug }: { slug: string }): Pro
   return rows[0]?.gone ?? false;
 }
 
-export interface ShownProtocolRow {
+export interface ShownProtocolRow extends ProtocolColumns {
   name: string;
   version: number;
-  heatLoadW: number;
-  setting: string;
-  setSpeeds: number[];
-  positions: string[];
-  mounts: number;
-  runsPerMount: number;
-  backgroundGrade: "engineering" | "survey";
-  epsilonK: number;
-  ambientMinC: number;
-  ambientMaxC: number;
-  ambientDriftMaxK: number;
-  calibratorDriftMaxDb: number;
-  levelAverageS: number;
 }
 
 /** A protocol version that a season uses, by id. */
@@ -49,23 +37,13 @@ export async function shownProtocol(
   db: Handle,
   { protocolVersionId }: { protocolVersionId: string },
 ): Promise<ShownProtocolRow | undefined> {
-  return db("shown.protocol_version").where({ id: protocolVersionId }).first({
-    name: "protocol_name",
-    version: "number",
-    heatLoadW: "heat_load_w",
-    setting: "setting",
-    setSpeeds: "set_speeds",
-    positions: "positions",
-    mounts: "mounts",
-    runsPerMount: "runs_per_mount",
-    backgroundGrade: "background_grade",
-    epsilonK: "epsilon_k",
-    ambientMinC: "ambient_min_c",
-    ambientMaxC: "ambient_max_c",
-    ambientDriftMaxK: "ambient_drift_max_k",
-    calibratorDriftMaxDb: "calibrator_drift_max_db",
-    levelAverageS: "level_average_s",
-  });
+  return db("shown.protocol_version")
+    .where({ id: protocolVersionId })
+    .first({
+      name: "protocol_name",
+      version: "number",
+      ...protocolColumns,
+    });
 }
 
 export interface EntryRankRow {
