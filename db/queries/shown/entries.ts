@@ -82,13 +82,17 @@ const sortColumns: Record<Exclude<SortKey, keyof typeof ranges | "match">, strin
 const sortColumn = (key: SortKey): string =>
   key in ranges ? ranges[key as keyof typeof ranges].column : sortColumns[key as keyof typeof sortColumns];
 
-/** Words must all be in the name, a designer's handle or the material; errors of typing are the search service's to forgive. */
+/**
+ * Words must all be in the name, the season's title, a designer's handle or the material; errors of typing are the
+ * search service's to forgive.
+ */
 function addWords(query: Knex.QueryBuilder, words: string): void {
   for (const word of words.split(/\s+/).filter(Boolean).slice(0, 10)) {
     const like = `%${word.replace(/[\\%_]/g, "\\$&")}%`;
     query.where((either) => {
       void either
         .whereILike("design_name", like)
+        .orWhereILike("season_title", like)
         .orWhereILike("material", like)
         .orWhereRaw("design_id in (select d.design_id from shown.designer d where d.handle ilike ?)", [like]);
     });
