@@ -60,13 +60,19 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const shells = soup ? 1 : edges.shellCount;
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
   const { searched, crumbs } = withoutCrumbs(shellOf, soup ? [] : report.areasMm2);
-  const finding = soup ? undefined : findAxis(mesh, searched, shells, tiny, options.axis && FILE_AXES[options.axis]);
+  const finding = soup
+    ? undefined
+    : findAxis(mesh, searched, shells, tiny, bounds, options.axis && FILE_AXES[options.axis]);
   const upright = finding ?? boxUpright(mesh, middle);
   const overlapLines =
     finding?.search.overlaps.overlapLines ?? (soup ? 0 : probe(upright.mesh, shellOf, shells, tiny).overlapLines);
   const overlap = copied || overlapLines > 0;
   const density = options.densityGCm3 ?? DENSITY_DEFAULT_GCM3;
-  const { integrals } = shellIntegrals(upright.mesh, shellOf, shells, [0, 0, 0]);
+  // Upright about its middle, as nothing turns, the mesh has the integrals that the report took there.
+  const asReported = !finding && shellOf === edges.shellOf && turned === 0;
+  const { integrals } = asReported
+    ? { integrals: report.integrals.map((one): SolidIntegrals => ({ ...one, originMm: [0, 0, 0] })) }
+    : shellIntegrals(upright.mesh, shellOf, shells, [0, 0, 0]);
   const blades = finding?.search.rows[0]?.row.blades ?? 1;
   const excess = (own: Int32Array): SolidIntegrals =>
     excessIntegrals(upright.mesh, own, outerRadius(upright.mesh, own), evenAngles(blades));

@@ -1,12 +1,18 @@
 import { median } from "@/lib/science/statistics/descriptive";
 import { facesOf, type Faces } from "./faces";
 import type { Mesh } from "./mesh";
+import { converge, inlierArea, normalLines, type NormalLines, type Point2 } from "./normal-lines";
 
-/** A point of the plane across the axis, mm. */
-export type Point2 = readonly [number, number];
+/** Where the axis passes, and the area of the faces that may be of revolution about it, mm². */
+export interface AxisCentre {
+  readonly centre: Point2;
+  readonly roundMm2: number;
+}
 
 const WALL_SLOPE_MAX = 0.05;
 const SURFACE_SLOPE_MAX = 0.9;
+/** A line passes through the centre within this share of the size. */
+const CENTRED_WITHIN = 0.004;
 const SECTORS = 12;
 const SECTORS_NEEDED = 8;
 /** Width of a group of radii and scale of the weights, both as shares of the size, step by step. */
@@ -18,67 +24,29 @@ const REFINEMENTS = [
   [0.003, 0.00001],
 ] as const;
 
-/** Straight lines that ought to pass through the centre, by the faces that they stand on. */
-interface NormalLine {
-  readonly x: number;
-  readonly y: number;
-  readonly nx: number;
-  readonly ny: number;
-  readonly weight: number;
-}
-
 /**
  * Where the rotation axis passes through x–y, for a mesh whose axis stands along z: the point that the normals of
  * walls pass through, found robustly (Cauchy weights, narrowed step by step, from several starts), then the common
  * centre of the circles on which their vertices lie, by least squares. So a heavy blade doesn't move it, as it would
  * the centroid. Without any round wall it is the middle of the surface.
  */
-export function axisCentre(mesh: Mesh): Point2 {
+export function axisCentre(mesh: Mesh): AxisCentre {
   const faces = facesOf(mesh);
   const size = extent(mesh);
   const walls = normalLines(mesh, faces, WALL_SLOPE_MAX);
   const surfaces = normalLines(mesh, faces, SURFACE_SLOPE_MAX);
-  const starts = [middle(surfaces), boxMiddle(mesh)];
-  const best = (lines: NormalLine[]): { centre: Point2; score: number } =>
+  const near = CENTRED_WITHIN * size;
+  const starts = [surfaces.middle, boxMiddle(mesh)];
+  const best = (lines: NormalLines): { centre: Point2; score: number } =>
     starts
       .map((start) => converge(lines, start, size))
-      .map((centre) => ({ centre, score: inlierArea(lines, centre, 0.004 * size) }))
+      .map((centre) => ({ centre, score: inlierArea(lines, centre, near) }))
       .reduce((a, b) => (b.score > a.score ? b : a));
   const byWalls = best(walls);
-  const bySurfaces = best(surfaces);
   // Walls decide where they go around; otherwise every surface of revolution has a say.
-  const centre = byWalls.score > 0.02 * total(surfaces) ? byWalls.centre : bySurfaces.centre;
-  return commonCentre(mesh, faces, centre, size) ?? centre;
-}
-
-/**
- * The lines of all faces no steeper than `slopeMax`. Each goes through the middle of its face's extent along the wall,
- * not through its centroid: the perpendicular bisector of a chord passes through the circle's centre, however coarse the
- * facets are.
- */
-function normalLines(mesh: Mesh, faces: Faces, slopeMax: number): NormalLine[] {
-  const { positions: p, triangles } = mesh;
-  const out: NormalLine[] = [];
-  for (let t = 0; t < faces.areasMm2.length; t++) {
-    const nx = faces.normals[3 * t] ?? 0;
-    const ny = faces.normals[3 * t + 1] ?? 0;
-    const flat = Math.sqrt(nx * nx + ny * ny);
-    if (Math.abs(faces.normals[3 * t + 2] ?? 0) > slopeMax || flat === 0) continue;
-    let [low, high, across] = [Infinity, -Infinity, 0];
-    for (let i = 3 * t; i < 3 * t + 3; i++) {
-      const v = 3 * (triangles[i] ?? 0);
-      const [x, y] = [p[v] ?? 0, p[v + 1] ?? 0];
-      const along = (nx * y - ny * x) / flat;
-      if (along < low) low = along;
-      if (along > high) high = along;
-      across += (nx * x + ny * y) / flat / 3;
-    }
-    const middle = (low + high) / 2;
-    const [ux, uy] = [nx / flat, ny / flat];
-    const [x, y] = [across * ux - middle * uy, across * uy + middle * ux];
-    out.push({ x, y, nx: ux, ny: uy, weight: (faces.areasMm2[t] ?? 0) * flat });
-  }
-  return out;
+  const rough = byWalls.score > 0.02 * surfaces.totalMm2 ? byWalls.centre : best(surfaces).centre;
+  const centre = commonCentre(mesh, faces, rough, size) ?? rough;
+  return { centre, roundMm2: inlierArea(surfaces, centre, near) };
 }
 
 function extent(mesh: Mesh): number {
@@ -95,13 +63,6 @@ function extent(mesh: Mesh): number {
   return most;
 }
 
-const total = (lines: NormalLine[]): number => lines.reduce((sum, line) => sum + line.weight, 0);
-
-function middle(lines: NormalLine[]): Point2 {
-  const sum = total(lines) || 1;
-  return [lines.reduce((s, l) => s + l.weight * l.x, 0) / sum, lines.reduce((s, l) => s + l.weight * l.y, 0) / sum];
-}
-
 function boxMiddle(mesh: Mesh): Point2 {
   let [x0, x1, y0, y1] = [Infinity, -Infinity, Infinity, -Infinity];
   for (let i = 0; i < mesh.positions.length; i += 3) {
@@ -109,33 +70,6 @@ function boxMiddle(mesh: Mesh): Point2 {
     [x0, x1, y0, y1] = [Math.min(x0, x), Math.max(x1, x), Math.min(y0, y), Math.max(y1, y)];
   }
   return [(x0 + x1) / 2, (y0 + y1) / 2];
-}
-
-/** Distance by which a normal's line misses the centre. */
-const miss = (line: NormalLine, c: Point2): number => (line.x - c[0]) * -line.ny + (line.y - c[1]) * line.nx;
-
-function inlierArea(lines: NormalLine[], centre: Point2, within: number): number {
-  return lines.reduce((sum, line) => (Math.abs(miss(line, centre)) <= within ? sum + line.weight : sum), 0);
-}
-
-function converge(lines: NormalLine[], start: Point2, size: number): Point2 {
-  let centre = start;
-  for (const scale of [0.2, 0.1, 0.05, 0.02, 0.02, 0.01, 0.01, 0.005, 0.005, 0.002, 0.002, 0.001, 0.001]) {
-    let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
-    for (const line of lines) {
-      const weight = line.weight / (1 + (miss(line, centre) / (scale * size)) ** 2);
-      const along = -line.ny * line.x + line.nx * line.y;
-      xx += weight * line.ny * line.ny;
-      xy -= weight * line.nx * line.ny;
-      yy += weight * line.nx * line.nx;
-      bx -= weight * line.ny * along;
-      by += weight * line.nx * along;
-    }
-    const det = xx * yy - xy * xy;
-    if (!(det > 1e-6 * (xx + yy) ** 2)) return centre;
-    centre = [(bx * yy - by * xy) / det, (by * xx - bx * xy) / det];
-  }
-  return centre;
 }
 
 /** Common centre of all circles of wall vertices that go around; undefined where there is none. */

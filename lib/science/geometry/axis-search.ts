@@ -3,8 +3,7 @@ import { axisDirections } from "./axis-directions";
 import { frameAlong, meshInFrame, pointInFile, type AxisFrame } from "./axis-frame";
 import { coarsened } from "./coarsened";
 import { facesOf } from "./faces";
-import { shellIntegrals } from "./mass-properties";
-import { meshBounds, middleOf, type Mesh, type Vec3 } from "./mesh";
+import { meshBounds, middleOf, signedVolume, type Bounds, type Mesh, type Vec3 } from "./mesh";
 import { coarseGrid, fineGrid, searchRotors, type RotorSearch } from "./rotor-search";
 
 /** An axis, the mesh stood on it, and what turns about it. */
@@ -16,13 +15,17 @@ export interface AxisFinding {
   readonly search: RotorSearch;
 }
 
-const FACES_MAX = 24_000;
+const FACES_MAX = 12_000;
+/** Knuth's multiplicative hash: strides through the triangles without marching in step with a grid's rows. */
+const SCATTER = 0x9e3779b1;
+/** A direction with less than this share of the faces of revolution of the roundest one before it carries no hub. */
+const ROUND_SHARE = 0.5;
 /** Meshes of more triangles are searched for their axis in a coarser copy. */
 const COARSE_ABOVE = 200_000;
 const CONVINCING = 0.85;
 const ALIKE = 0.02;
 
-/** Every n-th triangle that takes part, so that directions and centres of very fine meshes are found from a sample. */
+/** One of every n triangles that take part, so that directions and centres of very fine meshes are found from a sample. */
 function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
   const count = mesh.triangles.length / 3;
   const stride = Math.ceil(count / FACES_MAX);
@@ -31,7 +34,8 @@ function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
   const numbers = new Int32Array(mesh.positions.length / 3).fill(-1);
   const positions: number[] = [];
   let to = 0;
-  for (let t = 0; t < count; t += stride) {
+  for (let first = 0; first < count; first += stride) {
+    const t = Math.min(count - 1, first + ((Math.imul(first, SCATTER) >>> 8) % stride));
     if ((shellOf[t] ?? -1) < 0) continue;
     for (let i = 3 * t; i < 3 * t + 3; i++, to++) {
       const v = mesh.triangles[i] ?? 0;
@@ -48,6 +52,7 @@ function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
 /**
  * The axis about which the file's blades turn: each likely direction is stood upright, centred and searched coarsely;
  * the one whose rows of blades are surest wins and is searched finely. Undefined where no direction shows blades.
+ * @param bounds of the mesh
  * @param direction fixes the direction (length 1), as when a person names a file axis
  */
 export function findAxis(
@@ -55,13 +60,13 @@ export function findAxis(
   shellOf: Int32Array,
   shells: number,
   tinyMm: number,
+  bounds: Bounds,
   direction?: Vec3,
 ): AxisFinding | undefined {
   const sample = thinned(mesh, shellOf);
   const directions = direction ? [direction] : axisDirections(facesOf(sample));
   const places = directions.map((candidate) => () => placeOf(sample, candidate));
-  const bounds = meshBounds(mesh);
-  const fine = shellOf.length > COARSE_ABOVE && bounds ? coarsened(mesh, shellOf, bounds) : undefined;
+  const fine = shellOf.length > COARSE_ABOVE ? coarsened(mesh, shellOf, bounds) : undefined;
   let best = surest(fine?.mesh ?? mesh, fine?.shellOf ?? shellOf, shells, tinyMm, places);
   // Walls too thin for the coarser copy show in the mesh itself, about the likeliest axis.
   if (fine && !best && !likeIn(fine.mesh, mesh)) best = surest(mesh, shellOf, shells, tinyMm, places.slice(0, 1));
@@ -73,16 +78,19 @@ export function findAxis(
 
 /** Whether a coarser copy holds as much as the mesh, so that nothing to speak of vanished. */
 function likeIn(coarse: Mesh, mesh: Mesh): boolean {
-  const [a, b] = [coarse, mesh].map((one) => {
-    const all = new Int32Array(one.triangles.length / 3);
-    return shellIntegrals(one, all, 1, [0, 0, 0]).integrals[0]?.volumeMm3 ?? 0;
-  });
-  return a !== undefined && b !== undefined && Math.abs(a - b) < ALIKE * Math.abs(b);
+  const whole = signedVolume(mesh);
+  return Math.abs(signedVolume(coarse) - whole) < ALIKE * Math.abs(whole);
 }
 
 interface Place {
   readonly frame: AxisFrame;
   readonly originMm: Vec3;
+}
+
+/** A place, and the area of the faces of revolution about its axis, mm². */
+interface CentredPlace {
+  readonly place: Place;
+  readonly roundMm2: number;
 }
 
 /** The place whose rows of blades are surest; undefined where none shows blades. */
@@ -91,11 +99,14 @@ function surest(
   shellOf: Int32Array,
   shells: number,
   tinyMm: number,
-  places: readonly (() => Place)[],
+  places: readonly (() => CentredPlace)[],
 ): Place | undefined {
   let best: { place: Place; score: number } | undefined;
+  let roundest = 0;
   for (const find of places) {
-    const place = find();
+    const { place, roundMm2 } = find();
+    if (roundMm2 < ROUND_SHARE * roundest) continue;
+    roundest = Math.max(roundest, roundMm2);
     const { rows, score } = searchRotors(
       meshInFrame(mesh, place.frame, place.originMm),
       shellOf,
@@ -110,13 +121,13 @@ function surest(
 }
 
 /** A direction as z with the axis through x = y = 0. */
-function placeOf(sample: Mesh, direction: Vec3): Place {
+function placeOf(sample: Mesh, direction: Vec3): CentredPlace {
   const frame = frameAlong(direction);
   const bounds = meshBounds(sample);
   // From the middle of the box, so that a file far from its origin loses no digits.
   const middle = bounds ? middleOf(bounds) : ([0, 0, 0] as const);
-  const [x, y] = axisCentre(meshInFrame(sample, frame, middle));
-  return { frame, originMm: pointInFile(frame, middle, [x, y, 0]) };
+  const { centre, roundMm2 } = axisCentre(meshInFrame(sample, frame, middle));
+  return { place: { frame, originMm: pointInFile(frame, middle, [centre[0], centre[1], 0]) }, roundMm2 };
 }
 
 /** The mesh upright about the middle of its box, for files in which nothing turns. */

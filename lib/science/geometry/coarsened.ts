@@ -25,7 +25,8 @@ export function coarsened(mesh: Mesh, shellOf: Int32Array, bounds: Bounds): Coar
   while (slots < 2 * vertices) slots *= 2;
   const [keys, firsts] = [new Int32Array(slots), new Int32Array(slots)];
   const [x0, y0, z0] = bounds.min;
-  const kept: number[] = [];
+  const kept = new Uint32Array(vertices);
+  let count = 0;
   for (let v = 0; v < vertices; v++) {
     const i = ((p[3 * v] ?? 0) - x0) * scale;
     const j = ((p[3 * v + 1] ?? 0) - y0) * scale;
@@ -35,13 +36,13 @@ export function coarsened(mesh: Mesh, shellOf: Int32Array, bounds: Bounds): Coar
     while (keys[slot] !== 0 && keys[slot] !== key) slot = (slot + 1) & (slots - 1);
     if (keys[slot] === 0) {
       keys[slot] = key;
-      firsts[slot] = kept.length;
-      kept.push(v);
+      firsts[slot] = count;
+      kept[count++] = v;
     }
     stand[v] = firsts[slot] ?? 0;
   }
-  const positions = new Float64Array(3 * kept.length);
-  kept.forEach((v, to) => positions.set(p.subarray(3 * v, 3 * v + 3), 3 * to));
+  const positions = new Float64Array(3 * count);
+  for (let i = 0; i < positions.length; i++) positions[i] = p[3 * (kept[(i / 3) | 0] ?? 0) + (i % 3)] ?? 0;
   const { corners, shells } = collapsed(triangles, stand, shellOf);
   return { mesh: { positions, triangles: corners }, shellOf: shells };
 }

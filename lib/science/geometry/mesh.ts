@@ -43,13 +43,16 @@ export function vertexAt(mesh: Mesh, vertex: number): Vec3 {
 export function meshBounds(mesh: Mesh): Bounds | undefined {
   const { positions, triangles } = mesh;
   if (triangles.length === 0) return undefined;
+  // Marking is far quicker than fetching each vertex six times over; the marks fit the processor's cache.
+  const used = new Uint8Array(positions.length / 3);
+  for (let i = 0; i < triangles.length; i++) used[triangles[i] ?? 0] = 1;
   let [x0, y0, z0] = [Infinity, Infinity, Infinity];
   let [x1, y1, z1] = [-Infinity, -Infinity, -Infinity];
-  for (let i = 0; i < triangles.length; i++) {
-    const start = 3 * (triangles[i] ?? 0);
-    const x = positions[start] ?? 0;
-    const y = positions[start + 1] ?? 0;
-    const z = positions[start + 2] ?? 0;
+  for (let v = 0; v < used.length; v++) {
+    if (used[v] === 0) continue;
+    const x = positions[3 * v] ?? 0;
+    const y = positions[3 * v + 1] ?? 0;
+    const z = positions[3 * v + 2] ?? 0;
     if (x < x0) x0 = x;
     if (x > x1) x1 = x;
     if (y < y0) y0 = y;
@@ -58,6 +61,28 @@ export function meshBounds(mesh: Mesh): Bounds | undefined {
     if (z > z1) z1 = z;
   }
   return { min: [x0, y0, z0], max: [x1, y1, z1] };
+}
+
+/** Volume by signed tetrahedra about the first vertex, mm³; meaningless for an open mesh, 0 for one without triangles. */
+export function signedVolume({ positions: p, triangles }: Mesh): number {
+  const [ox, oy, oz] = [p[0] ?? 0, p[1] ?? 0, p[2] ?? 0];
+  let six = 0;
+  for (let i = 0; i < triangles.length; i += 3) {
+    const a = 3 * (triangles[i] ?? 0);
+    const b = 3 * (triangles[i + 1] ?? 0);
+    const c = 3 * (triangles[i + 2] ?? 0);
+    const ax = (p[a] ?? 0) - ox;
+    const ay = (p[a + 1] ?? 0) - oy;
+    const az = (p[a + 2] ?? 0) - oz;
+    const bx = (p[b] ?? 0) - ox;
+    const by = (p[b + 1] ?? 0) - oy;
+    const bz = (p[b + 2] ?? 0) - oz;
+    const cx = (p[c] ?? 0) - ox;
+    const cy = (p[c + 1] ?? 0) - oy;
+    const cz = (p[c + 2] ?? 0) - oz;
+    six += ax * (by * cz - bz * cy) + ay * (bz * cx - bx * cz) + az * (bx * cy - by * cx);
+  }
+  return six / 6;
 }
 
 /** Length of the space diagonal of a box, mm. */

@@ -1,5 +1,6 @@
 import { Refusal } from "@/lib/science/refusal";
 import type { Mesh } from "./mesh";
+import { placed } from "./placed";
 import { ReadingWatch, type ByteSource, type MeshWarning, type ReadingControl } from "./reading";
 import { readAsciiStl } from "./stl-ascii";
 import { STL_HEADER_BYTES, STL_RECORD_BYTES, binaryStlBytes, readBinaryStl, type StlReading } from "./stl-binary";
@@ -83,12 +84,12 @@ export async function readModelFile(source: ByteSource, control: ReadingControl 
   }
   if (format === "3mf") {
     const { mesh, mmPerUnit, warnings: found } = await readThreeMf(source, watch);
-    return { format, mesh, mmPerUnit, warnings: [...warnings, ...found] };
+    return { format, mesh: placed(mesh), mmPerUnit, warnings: [...warnings, ...found] };
   }
   const reading =
     format === "stl-binary" ? await readBinaryStl(source, triangles, watch) : await readAsciiStl(source, watch);
   if (reading.mesh.triangles.length === 0) throw new Refusal("empty", "The file holds no triangles.");
-  return { format, mesh: reading.mesh, mmPerUnit: undefined, warnings: [...warnings, ...stlWarnings(reading)] };
+  return { format, mesh: placed(reading.mesh), mmPerUnit: undefined, warnings: [...warnings, ...stlWarnings(reading)] };
 }
 
 function stlWarnings(reading: StlReading): MeshWarning[] {

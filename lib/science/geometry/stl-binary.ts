@@ -26,10 +26,22 @@ export interface StlReading {
   readonly warnings: MeshWarning[];
 }
 
+/** A chunk of records as 32-bit words: every other record lies two bytes off a whole word, so it is there twice. */
+class AlignedRecords {
+  private readonly bytes = RECORDS_PER_CHUNK * STL_RECORD_BYTES;
+  readonly even = new Int32Array(this.bytes / 4 + 1);
+  readonly odd = new Int32Array(this.bytes / 4 + 1);
+
+  set(chunk: Uint8Array): void {
+    new Uint8Array(this.even.buffer).set(chunk);
+    new Uint8Array(this.odd.buffer).set(chunk, 2);
+  }
+}
+
 /**
  * Reads `triangles` records of a binary STL in chunks, welding as it goes; coordinates as in the file.
  * Throws a Refusal for a record with NaN or infinite coordinates (`at` = triangle, from 1) and for a source that ends
- * early. Layout: Library of Congress FDD fdd000505; records lie on even bytes only, so they are read as 16-bit words.
+ * early. Layout: Library of Congress FDD fdd000505; records lie on even bytes only, so a second copy of each chunk stands two bytes on.
  */
 export async function readBinaryStl(source: ByteSource, triangles: number, watch: ReadingWatch): Promise<StlReading> {
   if (triangles > watch.limits.trianglesMax) watch.refuseTriangles(triangles);
@@ -37,6 +49,7 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
   const out = new Uint32Array(3 * triangles);
   const words = new Int32Array(12);
   const floats = new Float32Array(words.buffer);
+  const byParity = new AlignedRecords();
   let against = 0;
   for (let first = 0; first < triangles; first += RECORDS_PER_CHUNK) {
     watch.step(first, triangles);
@@ -44,13 +57,13 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
     const length = count * STL_RECORD_BYTES;
     const chunk = await source.read(STL_HEADER_BYTES + first * STL_RECORD_BYTES, length);
     if (chunk.length < length) throw new Refusal("truncated", "The file ends inside its triangles.", first + 1);
-    const aligned = chunk.byteOffset % 2 === 0 ? chunk : chunk.slice();
-    const halves = new Uint16Array(aligned.buffer, aligned.byteOffset, length / 2);
+    byParity.set(chunk);
     for (let record = 0; record < count; record++) {
-      let half = 25 * record;
+      const from = (record & 1) === 0 ? byParity.even : byParity.odd;
+      const start = (STL_RECORD_BYTES * record + 2) >> 2;
       let finite = true;
-      for (let i = 0; i < 12; i++, half += 2) {
-        const word = (halves[half] ?? 0) | ((halves[half + 1] ?? 0) << 16);
+      for (let i = 0; i < 12; i++) {
+        const word = from[start + i] ?? 0;
         words[i] = word === NEGATIVE_ZERO ? 0 : word;
         if (i > 2 && (word & EXPONENT) === EXPONENT) finite = false;
       }
