@@ -9,7 +9,7 @@ import { buildIfStale } from "./launch/build";
 import { readyGivenServices } from "./launch/given-services";
 import { openLedger, type LaunchLedger } from "./launch/ledger";
 import { runLaunch, type Lifetime } from "./launch/lifetime";
-import { startLocalServices } from "./launch/local-services";
+import { startLocalServices, type LocalServices } from "./launch/local-services";
 import { canListen, isLoopback } from "./launch/loopback";
 import { localAddress, startSite, startWorker, untilHealthy } from "./launch/site";
 
@@ -47,18 +47,13 @@ async function launch(life: Lifetime, mode: "start" | "dev"): Promise<{ broken: 
   life.check();
   const site = startSite(life, ledger, root, mode, settings, services.environment);
   const worker = startWorker(life, ledger, root, services.environment);
-  const broken = Promise.race([
-    services.broken,
-    site.ended.then((code) => `The site ended (exit ${code}).`),
-    worker.ended.then((code) => `The worker ended (exit ${code}).`),
-  ]);
-  const early = broken.then((what) => {
+  const early = Promise.race([services.firstEnd, site.firstEnd, worker.firstEnd]).then((what) => {
     throw new Error(what);
   });
   await Promise.race([untilHealthy(life, address), early]);
   early.catch(() => undefined);
   announce(address, folder, demo, Date.now() - began);
-  return { broken };
+  return { broken: Promise.race([services.broken, site.gaveUp, worker.gaveUp]) };
 }
 
 async function readyServices(
@@ -66,11 +61,12 @@ async function readyServices(
   ledger: LaunchLedger,
   dataFolder: string,
   settings: Environment,
-): Promise<{ environment: Record<string, string>; broken: Promise<string> }> {
+): Promise<LocalServices> {
   if (settings.DATABASE_URL === undefined) return startLocalServices({ root, dataFolder, life, ledger }, settings);
   const { demo } = await readyGivenServices(settings, settings.DATABASE_URL);
   const environment = { DATA_DIR: dataFolder, ...(demo && { FANFOLD_DEMO: "1" }) };
-  return { environment, broken: new Promise<string>(() => undefined) };
+  const never = new Promise<string>(() => undefined);
+  return { environment, firstEnd: never, broken: never };
 }
 
 function announce(address: string, folder: string, demo: boolean, tookMs: number): void {

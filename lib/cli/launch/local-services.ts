@@ -6,9 +6,9 @@ import { startCluster } from "@/db/cluster/cluster";
 import { anyFreePort } from "@/db/cluster/port";
 import { childEnvironment, type env } from "@/lib/env/env";
 import { startMailStandIn } from "@/lib/services/mail/stand-in";
-import { startChild } from "./children";
 import { ensurePostgres } from "./debian";
 import { prepareDemoDatabase, seedInChild } from "./demo-seed";
+import { keepChild, type KeptChild } from "./kept-child";
 import type { LaunchLedger } from "./ledger";
 import type { Lifetime } from "./lifetime";
 
@@ -17,7 +17,9 @@ type Settings = ReturnType<typeof env>;
 export interface LocalServices {
   /** What the site and the worker get set, on top of what was set before. */
   environment: Record<string, string>;
-  /** Resolves with what broke when one of them ends by itself. */
+  /** Resolves with what happened when one of them ends by itself for the first time. */
+  firstEnd: Promise<string>;
+  /** Resolves with what broke once one of them is gone for good: the database, or the search that ended too often. */
   broken: Promise<string>;
 }
 
@@ -52,7 +54,8 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
     NEXTAUTH_SECRET: settings.NEXTAUTH_SECRET ?? keptSecret(path.join(dataFolder, "session-secret")),
     NEXTAUTH_URL: settings.NEXTAUTH_URL ?? `http://127.0.0.1:${settings.PORT}`,
   };
-  const ends: Promise<string>[] = [cluster.ended.then(() => "The database ended.")];
+  const databaseEnd = cluster.ended.then(() => "The database ended.");
+  const search: KeptChild[] = [];
   if (settings.SMTP_URL === undefined) {
     const mail = await startMailStandIn(path.join(dataFolder, "mail"));
     life.onStop(() => mail.close());
@@ -61,17 +64,21 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   if (settings.MEILI_HOST === undefined) {
     environment.MEILI_HOST = `http://127.0.0.1:${await anyFreePort()}`;
     environment.MEILI_API_KEY = randomBytes(24).toString("base64url");
-    const search = startChild(life, ledger, {
+    const standIn = keepChild(life, ledger, {
       name: "search stand-in",
       command: process.execPath,
       args: ["--import", "tsx", "lib/cli/search-stand-in.ts"],
       cwd: root,
       env: childEnvironment({ ...environment, NODE_ENV: "production" }),
     });
-    ends.push(search.ended.then(() => "The search stand-in ended."));
+    search.push(standIn);
   }
   ledger.tell(environment);
-  return { environment, broken: Promise.race(ends) };
+  return {
+    environment,
+    firstEnd: Promise.race([databaseEnd, ...search.map(({ firstEnd }) => firstEnd)]),
+    broken: Promise.race([databaseEnd, ...search.map(({ gaveUp }) => gaveUp)]),
+  };
 }
 
 /** A secret that stays the same over restarts, so that sessions do; only the folder's owner can read it. */

@@ -1,7 +1,7 @@
 import { childEnvironment } from "@/lib/env/env";
 import type { Environment } from "@/lib/env/schema";
 import { nextProgram } from "./build";
-import { startChild, type RunningChild } from "./children";
+import { keepChild, type KeptChild } from "./kept-child";
 import type { LaunchLedger } from "./ledger";
 import type { Lifetime } from "./lifetime";
 
@@ -13,8 +13,8 @@ export function startSite(
   mode: "start" | "dev",
   settings: Environment,
   environment: Record<string, string>,
-): RunningChild {
-  return startChild(life, ledger, {
+): KeptChild {
+  return keepChild(life, ledger, {
     name: "site",
     command: process.execPath,
     args: [nextProgram(root), mode, "-H", settings.HOST, "-p", String(settings.PORT)],
@@ -33,8 +33,8 @@ export function startWorker(
   ledger: LaunchLedger,
   root: string,
   environment: Record<string, string>,
-): RunningChild {
-  return startChild(life, ledger, {
+): KeptChild {
+  return keepChild(life, ledger, {
     name: "worker",
     command: process.execPath,
     args: ["--import", "tsx", "lib/cli/worker.ts"],

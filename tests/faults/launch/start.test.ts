@@ -1,10 +1,13 @@
 import { randomUUID } from "node:crypto";
-import { existsSync, rmSync } from "node:fs";
+import { existsSync, readFileSync, rmSync } from "node:fs";
 import { createServer } from "node:net";
 import path from "node:path";
-import { afterEach, beforeEach, expect, test } from "vitest";
+import { afterEach, beforeEach, expect, test, vi } from "vitest";
+import { z } from "zod";
 import { anyFreePort } from "@/db/cluster/port";
 import { processesIn, until } from "@/db/cluster/processes";
+import { lifetime } from "@/lib/cli/launch/lifetime";
+import { untilHealthy } from "@/lib/cli/launch/site";
 import { dataFolderOfOnesOwn } from "@/tests/setup/seeded-folder";
 import { launch, marked } from "./launcher";
 
@@ -25,6 +28,7 @@ afterEach(async () => {
   rmSync(folder, { recursive: true, force: true });
 });
 
+const patience = { timeout: 120_000, interval: 200 };
 const healthy = async (): Promise<number> => (await fetch(`http://127.0.0.1:${port}/api/v1/health`)).status;
 
 test("a start answers, a second one beside it is refused, and SIGTERM ends all of it with exit code 0", async () => {
@@ -51,6 +55,34 @@ test("what a killed launcher left running is ended by the next start, which serv
   expect(await healthy()).toBe(200);
   second.signal("SIGINT");
   expect(await second.ended).toBe(0);
+});
+
+test("the search, the worker and the site are started again when they are killed, and answer as before", async () => {
+  const start = launch(settings(), mark);
+  await start.ready;
+  const address = `http://127.0.0.1:${port}`;
+  const listed = async () => {
+    const answer = await fetch(`${address}/api/v1/designs`);
+    return (await answer.json()) as { from: string; total: number };
+  };
+  const before = await listed();
+  const { children } = z
+    .object({ children: z.array(z.object({ pid: z.int(), name: z.string() })) })
+    .parse(JSON.parse(readFileSync(path.join(folder, "launcher.json"), "utf8")));
+  for (const name of ["search stand-in", "worker", "site"]) {
+    const child = children.findLast((each) => each.name === name);
+    process.kill(child?.pid ?? Number.NaN, "SIGKILL");
+    await vi.waitUntil(() => start.said().includes(`The ${name} ended (exit 1). It is started again.`), patience);
+  }
+  await untilHealthy(lifetime(), address);
+  // The search came back empty: until the worker has filled it again the list comes from the database.
+  const after = await vi.waitUntil(async () => {
+    const now = await listed();
+    return now.from === "search" && now;
+  }, patience);
+  expect(after.total).toBe(before.total);
+  start.signal("SIGTERM");
+  expect(await start.ended).toBe(0);
 });
 
 test("a start that is stopped on its way leaves nothing, and says by its code that it was", async () => {

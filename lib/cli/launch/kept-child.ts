@@ -1,0 +1,35 @@
+import { startChild, type ChildOptions } from "./children";
+import type { LaunchLedger } from "./ledger";
+import type { Lifetime } from "./lifetime";
+
+/** So many ends by itself within a while are borne; a machine in trouble isn't made busier by starts without end. */
+const borne = { ends: 5, withinMs: 60_000 };
+
+/** A child that is started again when it ends by itself. */
+export interface KeptChild {
+  /** Resolves with what happened when it ends by itself for the first time: while things start, that is a failure. */
+  firstEnd: Promise<string>;
+  /** Resolves with what happened once it ended too often to be started again. */
+  gaveUp: Promise<string>;
+}
+
+/** Starts a child and starts it again whenever it ends by itself, until the lifetime stops or it ends too often. */
+export function keepChild(life: Lifetime, ledger: LaunchLedger | undefined, options: ChildOptions): KeptChild {
+  const first = startChild(life, ledger, options);
+  const ends: number[] = [];
+  const keep = async (): Promise<string> => {
+    for (let running = first; ; running = startChild(life, ledger, options)) {
+      const told = `The ${options.name} ended (exit ${await running.ended}).`;
+      // What is left of its group may hold its port.
+      await running.stop();
+      if (life.stopping) return told;
+      ends.push(Date.now());
+      if (ends.filter((at) => at > Date.now() - borne.withinMs).length > borne.ends) return told;
+      console.error(`${told} It is started again.`);
+    }
+  };
+  return {
+    firstEnd: first.ended.then((code) => `The ${options.name} ended (exit ${code}).`),
+    gaveUp: keep().catch((error: unknown) => `The ${options.name} can't be started again: ${String(error)}`),
+  };
+}
