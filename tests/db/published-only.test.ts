@@ -10,6 +10,8 @@ let first: Awaited<ReturnType<typeof measureRound>>;
 let second: Awaited<ReturnType<typeof measureRound>>;
 
 beforeAll(async () => {
+  // As if so many drafts had been made before.
+  await db.owner.raw("alter table design alter column number restart with 500");
   world = await makeBenchWorld(db.owner);
   first = await measureRound(world, { number: 1 });
   second = await measureRound(world, { number: 2 });
@@ -71,6 +73,16 @@ describe("the public role", () => {
     const found = leaks(shown, await secretsOf(first)).map((line) => line.split(" shows ")[1]);
     expect(new Set(found)).toEqual(new Set(await secretsOf(first)));
     expect(leaks(shown, await secretsOf(second))).toEqual([]);
+    const numbers: { number: number }[] = await db.public("shown.design").orderBy("number").select("number");
+    expect(
+      numbers.map(({ number }) => number),
+      "sheets are counted, not drafts",
+    ).toEqual(numbers.map((_, i) => i + 1));
+    const entries: { number: number }[] = await db
+      .public("shown.entry")
+      .distinct({ number: "design_number" })
+      .orderBy("number");
+    expect(entries).toEqual(numbers);
   });
 
   it("reads no table, and writes nothing", async () => {
