@@ -1,4 +1,5 @@
 import knex, { type Knex } from "knex";
+import type { Client } from "pg";
 import { typeParser } from "./parsers";
 
 /** What every query function takes first, so that a transaction passes through unchanged. */
@@ -21,7 +22,15 @@ export function connect(url: string, { poolMax = 10, name = "fanfold" }: Connect
       connectionTimeoutMillis: 10_000,
       types: { getTypeParser: typeParser },
     },
-    pool: { min: 0, max: poolMax },
+    pool: { min: 0, max: poolMax, afterCreate: withoutJit },
     acquireConnectionTimeout: 15_000,
   });
+}
+
+/**
+ * Pages ask short questions over joins that the planner thinks are long: compiling them took longer than answering, near
+ * a second each over a hundred thousand entries.
+ */
+function withoutJit(connection: Client, done: (error: Error | null, connection: Client) => void): void {
+  connection.query("set jit = off", (error: Error | null) => done(error, connection));
 }

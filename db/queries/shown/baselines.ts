@@ -67,16 +67,19 @@ export async function shownBaselineSessions(
   { unitIds }: { unitIds: readonly string[] },
 ): Promise<BaselineSessionRow[]> {
   const { rows }: { rows: BaselineSessionRow[] } = await db.raw(
-    `select s.baseline_unit_id as "unitId", s.number as session, s.began_at as "beganAt", f.season_slug as season,
-       f.season_title as "seasonTitle", f.round_number as round, b.bench_name || ', version ' || b.number as bench,
+    `with s as materialized (
+       select * from shown.session where baseline_unit_id = any (:unitIds::uuid[]) and round_id is not null
+       order by began_at desc, id limit :sessionsMost)
+     select s.baseline_unit_id as "unitId", s.number as session, s.began_at as "beganAt", t.slug as season,
+       t.title as "seasonTitle", n.number as round, b.bench_name || ', version ' || b.number as bench,
        b.microphone_distance_mm as "microphoneDistanceMm", f.points
-     from shown.session s join shown.bench_version b on b.id = s.bench_version_id
+     from s join shown.bench_version b on b.id = s.bench_version_id
+       join shown.round n on n.id = s.round_id join shown.season t on t.id = n.season_id
      cross join lateral (
-       select e.season_slug, e.season_title, e.round_number, p.snapshot -> 'baselinePoints' as points
-       from shown.run r join shown.entry e on e.entry_id = r.entry_id join shown.publication p on p.id = e.publication_id
-       where r.session_id = s.id and p.snapshot ->> 'sessionId' = s.id::text limit 1) f
-     where s.baseline_unit_id = any (:unitIds::uuid[])
-     order by s.began_at desc, s.id limit :sessionsMost`,
+       select p.snapshot -> 'baselinePoints' as points
+       from shown.publication_session o join shown.publication p on p.id = o.publication_id
+       where o.session_id = s.id and p.snapshot ->> 'sessionId' = s.id::text limit 1) f
+     order by s.began_at desc, s.id`,
     { unitIds: [...unitIds], sessionsMost },
   );
   return rows;

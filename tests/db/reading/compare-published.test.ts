@@ -1,3 +1,4 @@
+import { parse } from "csv-parse/sync";
 import { beforeAll, describe, expect, it } from "vitest";
 import { GET as getCompare } from "@/app/api/v1/compare/route";
 import { GET as getCsv } from "@/app/api/v1/compare/csv/route";
@@ -121,7 +122,9 @@ describe("a comparison", () => {
     // OWASP, CSV Injection: a cell that begins like a formula is prefixed by an apostrophe.
     expect(lines.filter((line) => line.includes(",'=1+1,")).length).toBeGreaterThan(1);
     expect(lines.some((line) => /(^|,)=/.test(line))).toBe(false);
-    expect(new Set(lines.map((line) => line.split(",").length)).size).toBe(1);
+    // csv-parse refuses records of another length than the first one's.
+    const records: string[][] = parse(text);
+    expect(records.length).toBe(lines.length + 1);
   });
 });
 
