@@ -9,8 +9,8 @@ export const metadata: Metadata = { title: "Host" };
 
 export default async function HostPage() {
   const actor = await personForPage("/host");
-  const [{ items: seasons }, { items: entries }] = await orPageState(
-    Promise.all([readHostSeasons(actor), readHostEntries(actor, { state: "sent_in" })]),
+  const [{ items: seasons }, { items: entries, next }] = await orPageState(
+    Promise.all([readHostSeasons(actor), readHostEntries(actor, { state: "sent_in", limit: 200 })]),
     "/host",
   );
   const open = seasons.filter((season) => season.openedAt && !season.closedAt);
@@ -22,7 +22,8 @@ export default async function HostPage() {
       <Section id="host" title="Host" level={1}>
         <ul className="list-[square] space-y-1 pl-5">
           <li>
-            <Link href="/host/entries">Entries</Link>: {entries.length} sent in, waiting for you
+            <Link href="/host/entries">Entries</Link>: {entries.length}
+            {next === null ? "" : " and more"} sent in, waiting for you
           </li>
           <li>
             <Link href="/host/seasons">Seasons</Link>: {open.length} open

@@ -23,35 +23,48 @@ export interface HostEntryRow {
   licence: string;
 }
 
+export interface HostEntriesAsked {
+  entryId?: string;
+  roundId?: string;
+  seasonId?: string;
+  states?: readonly EntryState[];
+  /** Only what comes after this entry, and so many at most. */
+  after?: string;
+  limit?: number;
+}
+
 /** Entries for the host, those that waited longest first; a round's, a season's, of one state, or one alone. */
-export async function hostEntryRows(
-  db: Handle,
-  where: { entryId?: string; roundId?: string; seasonId?: string; states?: readonly EntryState[] },
-): Promise<HostEntryRow[]> {
+export async function hostEntryRows(db: Handle, where: HostEntriesAsked): Promise<HostEntryRow[]> {
   const { rows }: { rows: HostEntryRow[] } = await db.raw(
-    `select e.id as "entryId", r.id as "revisionId", d.name as "designName", d.slug as "designSlug", r.letter,
+    `with e as (
+       select x.* from entry x
+       where (:entryId::uuid is null or x.id = :entryId::uuid)
+         and (:seasonId::uuid is null or x.season_id = :seasonId::uuid)
+         and (:states::text[] is null or x.state = any (:states::text[]))
+         and (:roundId::uuid is null or exists (select 1 from round_entry q
+           where q.round_id = :roundId::uuid and q.entry_id = x.id and q.taken_out_at is null))
+         and (:after::uuid is null or (x.state_at, x.id) > (select a.state_at, a.id from entry a where a.id = :after::uuid))
+       order by x.state_at, x.id limit :limit)
+     select e.id as "entryId", r.id as "revisionId", d.name as "designName", d.slug as "designSlug", r.letter,
        array(select coalesce(h.handle, 'former member') from design_owner o join person h on h.id = o.person_id
          where o.design_id = d.id and o.until_at is null order by o.from_at, o.id) as owners,
        s.id as "seasonId", s.number as "seasonNumber", e.state, e.state_at as "stateAt", e.ever_published as "everPublished",
        (select m.reason from entry_move m where m.entry_id = e.id order by m.at desc, m.id desc limit 1) as reason,
        e.carried_from as "carriedFrom", n.id as "roundId", n.number as "roundNumber",
        t.stages, f.key as "frameKey", t.material, r.licence
-     from entry e join revision r on r.id = e.revision_id join design d on d.id = r.design_id join season s on s.id = e.season_id
+     from e join revision r on r.id = e.revision_id join design d on d.id = r.design_id join season s on s.id = e.season_id
        join revision_trait t on t.revision_id = r.id join frame f on f.id = t.frame_id
        left join lateral (
          select x.id, x.number from round_entry re join round x on x.id = re.round_id
          where re.entry_id = e.id and re.taken_out_at is null and x.state <> 'published' limit 1) n on true
-     where (:entryId::uuid is null or e.id = :entryId::uuid)
-       and (:seasonId::uuid is null or e.season_id = :seasonId::uuid)
-       and (:states::text[] is null or e.state = any (:states::text[]))
-       and (:roundId::uuid is null or exists (select 1 from round_entry q
-         where q.round_id = :roundId::uuid and q.entry_id = e.id and q.taken_out_at is null))
      order by e.state_at, e.id`,
     {
       entryId: where.entryId ?? null,
       roundId: where.roundId ?? null,
       seasonId: where.seasonId ?? null,
       states: where.states ? [...where.states] : null,
+      after: where.after ?? null,
+      limit: where.limit ?? null,
     },
   );
   return rows;

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { ENTRY_STATES } from "@/lib/domain/designs/entry-moves";
-import { id, time } from "./base";
+import { id, pageOf, pageQuery, time } from "./base";
 
 /** An entry as the host's lists show it: no figure. */
 export const hostEntry = z.strictObject({
@@ -29,12 +29,15 @@ export const hostEntry = z.strictObject({
 });
 export type HostEntry = z.infer<typeof hostEntry>;
 
-/** `states` are separated by commas in an address. */
 export const hostEntriesQuery = z.strictObject({
+  ...pageQuery,
+  after: id.optional(),
   state: z.enum(ENTRY_STATES).optional(),
   seasonId: id.optional(),
 });
-export const hostEntries = z.strictObject({ items: z.array(hostEntry) });
+export type HostEntriesQuery = z.infer<typeof hostEntriesQuery>;
+export const hostEntries = pageOf(hostEntry);
+export type HostEntries = z.infer<typeof hostEntries>;
 
 const reason = z.string().trim().min(1, "is missing: say why").max(1000);
 

@@ -30,9 +30,9 @@ export default async function HostEntriesPage({
 }) {
   const actor = await personForPage(path);
   const parsed = hostEntriesQuery.safeParse(await searchParams);
-  const state = (parsed.success && parsed.data.state) || "sent_in";
-  const [{ items }, { items: seasons }] = await orPageState(
-    Promise.all([readHostEntries(actor, { state }), readHostSeasons(actor)]),
+  const { state = "sent_in", after } = parsed.success ? parsed.data : {};
+  const [{ items, next }, { items: seasons }] = await orPageState(
+    Promise.all([readHostEntries(actor, { state, after }), readHostSeasons(actor)]),
     path,
   );
   const open = seasons.filter((season) => season.openedAt && !season.closedAt);
@@ -86,6 +86,11 @@ export default async function HostEntriesPage({
             },
           }))}
         />
+      )}
+      {next === null ? null : (
+        <p className="mt-4">
+          <Link href={`${path}?state=${state}&after=${next}`}>Further entries</Link>
+        </p>
       )}
     </Section>
   );

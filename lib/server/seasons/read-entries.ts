@@ -1,6 +1,6 @@
 import { appDb } from "@/db/client/handles";
 import { hostEntryRows, type HostEntryRow } from "@/db/queries/host-entries";
-import type { HostEntry } from "@/lib/contracts/entries";
+import type { HostEntries, HostEntriesQuery, HostEntry } from "@/lib/contracts/entries";
 import type { Actor } from "@/lib/domain/accounts/actor";
 import { entryMovesFor, type EntryState } from "@/lib/domain/designs/entry-moves";
 import { demand } from "../permission";
@@ -19,15 +19,15 @@ export function hostEntryView({ revisionId: _revisionId, stateAt, ...row }: Host
   };
 }
 
-/** Entries for the host, those that waited longest first; by default all that are on their way. */
-export async function readHostEntries(
-  actor: Actor,
-  query: { state?: EntryState; seasonId?: string },
-): Promise<{ items: HostEntry[] }> {
+/** A page of entries for the host, those that waited longest first; by default of all that are on their way. */
+export async function readHostEntries(actor: Actor, query: HostEntriesQuery): Promise<HostEntries> {
   demand(actor, "entry.judge");
   const states: readonly EntryState[] = query.state
     ? [query.state]
     : ["sent_in", "returned", "accepted", "printing", "on_the_bench", "in_review"];
-  const rows = await hostEntryRows(appDb(), { seasonId: query.seasonId, states });
-  return { items: rows.map(hostEntryView) };
+  const limit = query.limit ?? 50;
+  const { seasonId, after } = query;
+  const rows = await hostEntryRows(appDb(), { seasonId, states, after, limit: limit + 1 });
+  const items = rows.slice(0, limit).map(hostEntryView);
+  return { items, next: rows.length > limit ? (items.at(-1)?.entryId ?? null) : null };
 }
