@@ -21,7 +21,8 @@ beforeAll(async () => {
  * directions, tables excepted. One load: theme and width change under the page, as they do under people.
  */
 async function wrongsOf({ path, as }: PageAddress): Promise<string[]> {
-  const { page, complaints } = await pageOf(as);
+  const opened = idle[as]?.pop() ?? (await browser.open({ as: as === "signed out" ? undefined : as }));
+  const { page, complaints } = opened;
   complaints.length = 0;
   await page.setViewportSize({ width: 1280, height: 900 });
   await page.emulateMedia({ colorScheme: "light" });
@@ -38,17 +39,12 @@ async function wrongsOf({ path, as }: PageAddress): Promise<string[]> {
   await page.waitForFunction(fits, undefined, { timeout: 5_000 }).catch(() => undefined);
   const by = await scrollsSidewaysBy(page);
   if (by > 0) said.push(`scrolls sideways by ${by} px at 320 px`);
+  (idle[as] ??= []).push(opened);
   return [...said, ...complaints].map((each) => `${path}: ${each}`);
 }
 
-const opened = new Map<Reader, Opened>();
-
-/** One page a reader, which goes from address to address. */
-async function pageOf(as: Reader): Promise<Opened> {
-  const known = opened.get(as) ?? (await browser.open({ as: as === "signed out" ? undefined : as }));
-  opened.set(as, known);
-  return known;
-}
+/** Pages that wait for their next address, by reader. */
+const idle: Partial<Record<Reader, Opened[]>> = {};
 
 describe("every page of the tree", () => {
   it("is reached by links in the demo", () => {
@@ -56,7 +52,7 @@ describe("every page of the tree", () => {
     expect(patterns.filter((pattern) => !reached.has(pattern))).toEqual([]);
   });
 
-  it.each([...patterns, ...filledPatterns])(
+  it.concurrent.each([...patterns, ...filledPatterns])(
     "%s: axe finds nothing, dark keeps its contrast, 320 px don't scroll sideways",
     async (pattern) => {
       const address = found.find((each) => each.pattern === pattern);

@@ -31,6 +31,7 @@ export default defineConfig({
   resolve: { alias: { "@": root } },
   test: {
     maxWorkers: 2,
+    maxConcurrency: 2,
     projects: [
       plain("architecture", { testTimeout: 180_000 }),
       plain("unit", { testTimeout: 120_000 }),
