@@ -1,6 +1,5 @@
 import { fork } from "node:child_process";
 import path from "node:path";
-import { performance } from "node:perf_hooks";
 import { anyFreePort } from "@/db/cluster/port";
 import { ensureDatabase } from "@/db/cluster/roles";
 import { connect, type Handle } from "@/db/client/connect";
@@ -20,18 +19,13 @@ import { DESIGNS_INDEX } from "@/search/settings";
 import { outletOf } from "../setup/search-field";
 import { temporaryCluster } from "../setup/temporary-cluster";
 import type { BenchResult } from "./log";
+import { quantiles } from "./quantiles";
 
 /** Sizes in published entries; each grows from the one before. */
 const defaultSizes = [1_000, 10_000, 100_000];
 const questions = 60;
-const warmUps = 5;
 const root = path.resolve(import.meta.dirname, "../..");
 const apiKey = "bench-index-query-key";
-
-interface Quantiles {
-  p50: number;
-  p95: number;
-}
 
 /**
  * The index page's question (two filters, all facets and histograms, a sort, one page; with and without typed words)
@@ -177,20 +171,4 @@ async function sqlCount(reader: Handle, query: IndexQuery): Promise<void> {
     if (values) void counted.whereIn(column, values);
   }
   await counted;
-}
-
-async function quantiles(
-  asked: readonly IndexQuery[],
-  ask: (query: IndexQuery) => Promise<unknown>,
-): Promise<Quantiles> {
-  for (const query of asked.slice(0, warmUps)) await ask(query);
-  const times: number[] = [];
-  for (const query of asked) {
-    const start = performance.now();
-    await ask(query);
-    times.push(performance.now() - start);
-  }
-  times.sort((a, b) => a - b);
-  const at = (part: number): number => times[Math.min(times.length - 1, Math.floor(part * times.length))] ?? Number.NaN;
-  return { p50: at(0.5), p95: at(0.95) };
 }

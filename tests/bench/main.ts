@@ -2,6 +2,7 @@ import os from "node:os";
 import { run as benchIndexQuery } from "./index-query";
 import { benchLog, type BenchResult } from "./log";
 import { benchMesh } from "./mesh";
+import { benchPages } from "./pages";
 import { run as benchSound } from "./sound";
 
 const rooms: Record<string, () => BenchResult[] | Promise<BenchResult[]>> = {
@@ -9,6 +10,7 @@ const rooms: Record<string, () => BenchResult[] | Promise<BenchResult[]>> = {
   log: benchLog,
   mesh: benchMesh,
   index: benchIndexQuery,
+  pages: () => benchPages(),
 };
 
 /** Runs the rooms named on the command line, or all, one after the other, and prints each ratio beside its goal. */
