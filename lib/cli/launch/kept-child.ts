@@ -16,20 +16,21 @@ export interface KeptChild {
 /** Starts a child and starts it again whenever it ends by itself, until the lifetime stops or it ends too often. */
 export function keepChild(life: Lifetime, ledger: LaunchLedger | undefined, options: ChildOptions): KeptChild {
   const first = startChild(life, ledger, options);
-  const ends: number[] = [];
+  const told = (code: number): string => `The ${options.name} ended (exit ${code}).`;
+  let ends: number[] = [];
   const keep = async (): Promise<string> => {
     for (let running = first; ; running = startChild(life, ledger, options)) {
-      const told = `The ${options.name} ended (exit ${await running.ended}).`;
+      const code = await running.ended;
       // What is left of its group may hold its port.
       await running.stop();
-      if (life.stopping) return told;
-      ends.push(Date.now());
-      if (ends.filter((at) => at > Date.now() - borne.withinMs).length > borne.ends) return told;
-      console.error(`${told} It is started again.`);
+      const now = Date.now();
+      ends = [...ends.filter((at) => at > now - borne.withinMs), now];
+      if (life.stopping || ends.length > borne.ends) return told(code);
+      console.error(`${told(code)} It is started again.`);
     }
   };
   return {
-    firstEnd: first.ended.then((code) => `The ${options.name} ended (exit ${code}).`),
+    firstEnd: first.ended.then(told),
     gaveUp: keep().catch((error: unknown) => `The ${options.name} can't be started again: ${String(error)}`),
   };
 }

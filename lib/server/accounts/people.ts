@@ -4,6 +4,7 @@ import type { PeoplePage, PeopleQuery, PersonItem } from "@/lib/contracts/people
 import type { Actor, Role } from "@/lib/domain/accounts/actor";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { note } from "../audit/audit";
+import { cutPage } from "../cut-page";
 import { demand } from "../permission";
 import { keepAHost } from "./leave";
 
@@ -29,8 +30,8 @@ export async function readPeople(actor: Actor, query: PeopleQuery): Promise<Peop
     ...(query.role && { role: query.role }),
     ...(query.after && { after: { handle: query.after } }),
   });
-  const items = rows.slice(0, limit).map(personItem);
-  return { items, next: rows.length > limit ? (items.at(-1)?.handle ?? null) : null };
+  const { page, next } = cutPage(rows, limit, ({ handle }) => handle);
+  return { items: page.map(personItem), next };
 }
 
 /**

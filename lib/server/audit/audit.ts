@@ -5,6 +5,7 @@ import { handlesOf } from "@/db/queries/people";
 import type { AuditPage } from "@/lib/contracts/audit";
 import type { Actor } from "@/lib/domain/accounts/actor";
 import { isPerson } from "@/lib/domain/accounts/actor";
+import { cutPage } from "../cut-page";
 import { demand } from "../permission";
 
 /** Who asks, and the request it belongs to. Use-cases that change something take it first. */
@@ -47,7 +48,7 @@ export async function readAudit(
     limit: limit + 1,
     ...(after !== undefined && { beforeId: after }),
   });
-  const page = rows.slice(0, limit);
+  const { page, next } = cutPage(rows, limit, ({ auditId }) => String(auditId));
   const handles = await handlesOf(appDb(), { personIds: page.flatMap((row) => row.actorId ?? []) });
   return {
     items: page.map(({ actorId, at, before, after: then, ...rest }) => ({
@@ -57,6 +58,6 @@ export async function readAudit(
       before: before ?? null,
       after: then ?? null,
     })),
-    next: rows.length > limit ? String(page.at(-1)?.auditId) : null,
+    next,
   };
 }

@@ -3,6 +3,7 @@ import { hostEntryRows, type HostEntryRow } from "@/db/queries/host-entries";
 import type { HostEntries, HostEntriesQuery, HostEntry } from "@/lib/contracts/entries";
 import type { Actor } from "@/lib/domain/accounts/actor";
 import { entryMovesFor, type EntryState } from "@/lib/domain/designs/entry-moves";
+import { cutPage } from "../cut-page";
 import { demand } from "../permission";
 
 /** Moves that the operator's screens make; here the host sees the others. */
@@ -28,6 +29,6 @@ export async function readHostEntries(actor: Actor, query: HostEntriesQuery): Pr
   const limit = query.limit ?? 50;
   const { seasonId, after } = query;
   const rows = await hostEntryRows(appDb(), { seasonId, states, after, limit: limit + 1 });
-  const items = rows.slice(0, limit).map(hostEntryView);
-  return { items, next: rows.length > limit ? (items.at(-1)?.entryId ?? null) : null };
+  const { page, next } = cutPage(rows, limit, ({ entryId }) => entryId);
+  return { items: page.map(hostEntryView), next };
 }
