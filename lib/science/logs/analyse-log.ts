@@ -74,18 +74,21 @@ function intervalOf(timeS: Float64Array | undefined, warnings: LogWarning[]): nu
   for (let i = 0; i < steps.length; i++) steps[i] = at(timeS, i + 1) - at(timeS, i);
   const interval = median(steps) ?? null;
   if (interval === null || !(interval > 0)) return null;
-  const gaps = steps.filter((step) => step > 2.5 * interval);
-  if (gaps.length > 0) {
-    const longest = gaps.reduce((a, b) => Math.max(a, b), 0);
-    warnings.push({ code: "gaps", message: `${gaps.length} gaps in time, the longest ${round(longest)} s` });
+  let gaps = 0;
+  let longest = 0;
+  for (const step of steps) {
+    if (!(step > 2.5 * interval)) continue;
+    gaps += 1;
+    longest = Math.max(longest, step);
   }
+  if (gaps > 0) warnings.push({ code: "gaps", message: `${gaps} gaps in time, the longest ${round(longest)} s` });
   return interval;
 }
 
 function levelOf(log: ReadLog, warnings: LogWarning[]): LogReport["level"] {
   const { level } = log.chosen;
   if (!level || !log.levelDb) return null;
-  const levels = log.levelDb.filter((value) => !Number.isNaN(value));
+  const levels = known(log.levelDb);
   const weighting = level.unit?.symbol ?? "dB";
   const isOther = /\bl[cz]([fsi]?(eq|max|min|peak|pk|e)?\d*)\b/i.test(level.name);
   if (weighting === "dB(C)" || weighting === "dB(Z)" || isOther) {
@@ -96,13 +99,21 @@ function levelOf(log: ReadLog, warnings: LogWarning[]): LogReport["level"] {
     warnings.push({ code: "weighting-assumed", message: `"${level.name}" names no weighting: read as dB(A)` });
   }
   // Sums of energy are taken about the highest level, so that nothing overflows.
-  const top = levels.reduce((a, b) => Math.max(a, b), -Infinity);
-  const energy = mean(levels.map((value) => 10 ** ((value - top) / 10)));
+  let top = -Infinity;
+  for (const level of levels) top = Math.max(top, level);
+  const energies = new Float64Array(levels.length);
+  for (let i = 0; i < levels.length; i++) energies[i] = 10 ** ((at(levels, i) - top) / 10);
+  const energy = mean(energies);
   return {
     laeqDba: energy === undefined ? null : top + 10 * Math.log10(energy),
     sDb: sampleSd(levels) ?? null,
     n: levels.length,
   };
+}
+
+/** The readings there are: the series itself where nothing is missing. */
+function known(values: Float64Array): Float64Array {
+  return values.includes(Number.NaN) ? values.filter((value) => !Number.isNaN(value)) : values;
 }
 
 function temperatureOf(log: ReadLog, rule: SteadyRule, warnings: LogWarning[]): TemperatureReport | null {
@@ -113,9 +124,9 @@ function temperatureOf(log: ReadLog, rule: SteadyRule, warnings: LogWarning[]): 
     return null;
   }
   const { sensorC, ambientC, timeS, speedRpm } = log;
-  const known = (i: number) => !Number.isNaN(at(sensorC, i)) && !Number.isNaN(at(ambientC, i));
-  const whole = sensorC.every((_, i) => known(i));
-  const pick = (values: Float64Array) => (whole ? values : values.filter((_, i) => known(i)));
+  const whole = !sensorC.includes(Number.NaN) && !ambientC.includes(Number.NaN);
+  const both = (_: number, i: number) => !Number.isNaN(at(sensorC, i)) && !Number.isNaN(at(ambientC, i));
+  const pick = (values: Float64Array) => (whole ? values : values.filter(both));
   const air = pick(ambientC);
   const unknown = { deltaTK: null, uDeltaTK: null, ambientC: mean(air) ?? null };
   if (!timeS) {

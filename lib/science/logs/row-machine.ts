@@ -247,12 +247,14 @@ export class RowMachine {
 
   /** Checks the row as a whole and keeps it. */
   private commit(line: number): void {
-    for (let slot = 0; slot < this.reads.length; slot++) {
+    let missing = 0;
+    for (let slot = 0; slot < this.row.length; slot++) {
       const value = this.row[slot] ?? Number.NaN;
       if (value < -273.15 && this.reads[slot]?.column.quantity === "temperature") {
         this.refused.add(line, `${this.reads[slot]?.column.name}: below absolute zero`);
         return;
       }
+      if (Number.isNaN(value)) missing += 1;
     }
     if (this.timed) {
       const clock = this.reads[0]?.column.kind === "clock";
@@ -275,7 +277,7 @@ export class RowMachine {
       this.lastLine = line;
       this.row[0] = time;
     }
-    for (const value of this.row) if (Number.isNaN(value)) this.missing += 1;
+    this.missing += missing;
     this.table.add(this.row);
   }
 

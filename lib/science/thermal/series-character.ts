@@ -35,8 +35,12 @@ function moves(values: ArrayLike<number>): Float64Array {
   let scale = 0;
   for (let i = 0; i < values.length; i++) scale = Math.max(scale, Math.abs(at(values, i)));
   const steps = new Float64Array(Math.max(0, values.length - 1));
-  for (let i = 0; i < steps.length; i++) steps[i] = Math.abs(at(values, i + 1) - at(values, i));
-  return steps.filter((step) => step > 1e-9 * scale);
+  let count = 0;
+  for (let i = 1; i < values.length; i++) {
+    const step = Math.abs(at(values, i) - at(values, i - 1));
+    if (step > 1e-9 * scale) steps[count++] = step;
+  }
+  return steps.subarray(0, count);
 }
 
 /** A display's step as the smallest move of its series, in its unit; undefined when nothing ever moves. */

@@ -73,16 +73,20 @@ export function findSteadyWindow(record: SteadyRecord, rule: SteadyRule = HOUSE_
         : undefined;
   const widen = character.autocorrelated ? Math.sqrt((1 + character.lagOne) / (1 - character.lagOne)) : 1;
   const quiet = withoutRatio === undefined ? quietAhead(deltaTK, rule.quietRun) : undefined;
-  const slopes = [deltaTK, record.ambientC, record.speedRpm].map((series) => series && new BackwardLine(timeS, series));
+  const own = new BackwardLine(timeS, deltaTK);
+  const ambient = new BackwardLine(timeS, record.ambientC);
+  const speed = record.speedRpm && new BackwardLine(timeS, record.speedRpm);
   let from: number | undefined;
   let broken: Clause[] = ["window"];
   let shortestSeen = false;
   for (let s = n - 1; s >= 0; s--) {
-    for (const line of slopes) line?.add(s);
-    const [own, ambient, speed] = slopes;
+    own.add(s);
+    ambient.add(s);
+    speed?.add(s);
     const spanS = at(timeS, n - 1) - at(timeS, s);
     const tauS = transient?.fit.tau ?? spanS;
-    if (!own || !ambient || n - s < 4 || spanS < rule.windowMinS || (transient && spanS < tauS / 2)) continue;
+    if (n - s < 4 || spanS < rule.windowMinS || (transient && spanS < tauS / 2)) continue;
+    if (shortestSeen && quiet && quiet[s] !== 1) continue;
     const failed: Clause[] = [];
     if (!(Math.abs(own.slope) + 2 * widen * own.seSlope <= rule.epsilonK / tauS)) failed.push("slope");
     if (quiet && quiet[s] !== 1) failed.push("variance-ratio");
