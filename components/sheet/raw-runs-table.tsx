@@ -3,6 +3,7 @@ import type { BarsCell, BarsColumn, BarsRow } from "@/components/ui/bars/bars-mo
 import type { RawReading, RawRun, RawRuns } from "@/lib/contracts/raw-runs";
 import { formatDateTime } from "@/lib/format/dates";
 import { formatNumber } from "@/lib/format/numbers";
+import { RawFilesTable } from "./raw-files-table";
 
 const quantityWords: Readonly<Record<string, string>> = {
   level_dba: "Level",
@@ -86,6 +87,11 @@ export function RawRunsTable({ raw, setSpeed, unit }: { raw: RawRuns; setSpeed: 
     <div className="grid gap-6">
       <Table caption={`This design, reading by reading, at ${at}`} rows={rowsOf("entry")} />
       <Table caption={`The baseline in the same session, at ${at}`} rows={rowsOf("baseline")} />
+      <RawFilesTable
+        caption={`Logs and recordings behind these readings, at ${at}`}
+        raw={raw}
+        runs={raw.runs.filter((run) => run.setSpeed === setSpeed)}
+      />
     </div>
   );
 }
@@ -93,5 +99,10 @@ export function RawRunsTable({ raw, setSpeed, unit }: { raw: RawRuns; setSpeed: 
 /** Readings that belong to the session: calibrator before and after, background, air. */
 export function SessionReadingsTable({ raw }: { raw: RawRuns }) {
   const own = raw.readings.filter((reading) => reading.runId === null);
-  return <Table caption="The session’s own readings" rows={own.map((reading) => readingRow(reading, raw.readings))} />;
+  return (
+    <div className="grid gap-6">
+      <Table caption="The session’s own readings" rows={own.map((reading) => readingRow(reading, raw.readings))} />
+      <RawFilesTable caption="Logs and recordings of the session itself" raw={raw} runs={[]} />
+    </div>
+  );
 }

@@ -34,10 +34,26 @@ export const rawRunSchema = z.strictObject({
 });
 export type RawRun = z.infer<typeof rawRunSchema>;
 
-/** Every run of an entry and of the baseline in its session, and every reading, superseded ones too. */
+/** A log or recording that readings came from. `address` is where its bytes are served, null with the reason why not. */
+export const sessionFileSchema = z.strictObject({
+  id: z.uuid(),
+  runId: z.uuid().nullable(),
+  kind: z.enum(["temperature", "level", "recording"]),
+  rowsRead: z.int(),
+  refusedCount: z.int(),
+  bytes: z.int(),
+  sha256: z.string(),
+  address: z.string().nullable(),
+  whyNotServed: z.string().nullable(),
+  at: time,
+});
+export type SessionFile = z.infer<typeof sessionFileSchema>;
+
+/** Every run of an entry and of the baseline in its session, every reading, superseded ones too, and the files behind. */
 export const rawRunsSchema = z.strictObject({
   sessionId: z.uuid(),
   runs: z.array(rawRunSchema),
   readings: z.array(rawReadingSchema),
+  files: z.array(sessionFileSchema),
 });
 export type RawRuns = z.infer<typeof rawRunsSchema>;

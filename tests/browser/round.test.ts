@@ -50,10 +50,12 @@ describe("a whole round", () => {
 
       const writers = ["semicolon and comma", "fahrenheit", "gap and text row"] as const;
       const logged: number[] = [];
+      const sent: string[] = [];
       for (const [i, speed] of speeds.entries()) {
         const writer = writers[i] ?? "fahrenheit";
         const log = temperatureLog(writer, { deltaTK: first.rises[i] ?? NaN, ambientC, seed: 11 + i });
         logged.push(log.meanDeltaTK);
+        sent.push(log.csv);
         await hand.run(one.name, 1, speed, { level: comma(first.levels[i] ?? NaN), power: "150", rpm: String(speed) });
         const refused = await hand.log(`${speed}.csv`, log.csv);
         if (writer === "gap and text row") expect(refused).toMatch(/^1 refused row/);
@@ -102,6 +104,17 @@ describe("a whole round", () => {
         timeout: 150_000,
         interval: 2_000,
       });
+
+      // Everybody may check: the logs behind the figures are there as they were received.
+      const received: string[] = [];
+      for (const speed of speeds) {
+        await reader.page.getByText(new RegExp(`^${speed} rpm: .* of this design`)).click();
+        const log = reader.page.getByRole("link", { name: "Temperature log, this design, mount 1" });
+        await log.waitFor();
+        received.push(await (await reader.page.request.get((await log.getAttribute("href")) ?? "")).text());
+        await reader.page.getByText(new RegExp(`^${speed} rpm: .* of this design`)).click();
+      }
+      expect(received).toEqual(sent);
 
       // By hand: the same readings, formulas of their own. The baseline's two mounts read the same, so their mean is either.
       const below = points(baseline, baseline.rises);

@@ -9,6 +9,7 @@ import {
   shownRevisions,
 } from "@/db/queries/shown/sheet";
 import { shownReadings, shownRuns } from "@/db/queries/shown/raw-runs";
+import { shownSessionFiles } from "@/db/queries/shown/session-files";
 import { snapshotSchema } from "@/lib/contracts/publication";
 import { ExpectedError } from "@/lib/domain/expected-error";
 
@@ -53,7 +54,7 @@ export async function readSheet({ slug, entryId }: { slug: string; entryId?: str
 }
 export type SheetAnswer = Awaited<ReturnType<typeof readSheet>>;
 
-/** Every raw reading behind an entry's figures, run by run, with the baseline's runs and the session's own checks. */
+/** Every raw reading behind an entry's figures, run by run, the baseline's runs, the session's own checks, their files. */
 export async function readRawRuns({ slug, entryId }: { slug: string; entryId?: string }) {
   const { current, snapshot } = await readSheet({ slug, entryId });
   const db = publicDb();
@@ -63,6 +64,10 @@ export async function readRawRuns({ slug, entryId }: { slug: string; entryId?: s
     shownRuns(db, { ...of, baselineUnitId: snapshot.baselineUnitId }),
   ]);
   const runIds = [...runs, ...baselineRuns].map((run) => run.runId);
-  return { sessionId: snapshot.sessionId, runs, baselineRuns, readings: await shownReadings(db, { runIds, ...of }) };
+  const [readings, files] = await Promise.all([
+    shownReadings(db, { runIds, ...of }),
+    shownSessionFiles(db, { runIds, ...of }),
+  ]);
+  return { sessionId: snapshot.sessionId, runs, baselineRuns, readings, files };
 }
 export type RawRunsAnswer = Awaited<ReturnType<typeof readRawRuns>>;

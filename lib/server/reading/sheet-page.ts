@@ -15,6 +15,7 @@ import { ExpectedError } from "@/lib/domain/expected-error";
 import { stated } from "@/lib/domain/results/stated";
 import { formatDate } from "@/lib/format/dates";
 import { readRawRuns, readSheet, type SheetAnswer } from "./read-sheet";
+import { sessionFileOf } from "./session-files";
 import { sheetSpectra } from "./sheet-spectra";
 import { sheetTraits } from "./sheet-traits";
 
@@ -212,7 +213,7 @@ function historyLine(entry: SheetEntryRow, units: SheetAnswer["units"]): Sheet["
 
 /** Every raw reading behind an entry's figures and the baseline's of its session. */
 export async function readRawRunsPage(asked: { slug: string; entryId?: string }): Promise<RawRuns> {
-  const { sessionId, runs, baselineRuns, readings } = await readRawRuns(asked);
+  const { sessionId, runs, baselineRuns, readings, files } = await readRawRuns(asked);
   const told = (subject: "entry" | "baseline") => (run: (typeof runs)[number]) => ({
     ...run,
     subject,
@@ -222,5 +223,6 @@ export async function readRawRunsPage(asked: { slug: string; entryId?: string })
     sessionId,
     runs: [...runs.map(told("entry")), ...baselineRuns.map(told("baseline"))],
     readings: readings.map((reading) => ({ ...reading, takenAt: iso(reading.takenAt) })),
+    files: files.map(sessionFileOf),
   };
 }

@@ -1,5 +1,5 @@
 import type { MatrixFacts } from "../support/matrix-facts";
-import { all, type MatrixRows } from "../support/matrix-row";
+import { all, nowhere, type MatrixRows } from "../support/matrix-row";
 
 const kit =
   (then: string) =>
@@ -17,6 +17,7 @@ export const publicRows: MatrixRows = {
     path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings`,
     expected: all(200),
   },
+  "GET /api/v1/session-files/[id]": { path: () => `/api/v1/session-files/${nowhere}`, expected: all(404) },
   "GET /api/v1/sheets/[slug]/readings.csv": {
     path: ({ publishedDesignSlug }) => `/api/v1/sheets/${publishedDesignSlug}/readings.csv`,
     expected: all(200),
