@@ -1,6 +1,8 @@
 "use client";
 
+import { useState } from "react";
 import { Button } from "@/components/ui/button";
+import { Field } from "@/components/ui/field";
 import { Fold } from "@/components/ui/fold";
 import { Notice } from "@/components/ui/notice";
 import { Progress } from "@/components/ui/progress";
@@ -66,16 +68,43 @@ export function RecordingItem({ recording, session }: { recording: BenchRecordin
 }
 
 function Keep({ recording, session, level }: { recording: BenchRecording; session: BenchSession; level: string }) {
+  const [reason, setReason] = useState("");
   const keep = useKeepRecording(recording.id);
   const version = session.runs.find((run) => run.id === recording.runId)?.version ?? null;
+  const standing =
+    recording.runId === null
+      ? undefined
+      : session.readings.find(
+          (each) =>
+            each.runId === recording.runId &&
+            each.quantity === "level_dba" &&
+            each.positionId === recording.positionId &&
+            each.supersededBy === null,
+        );
   return (
     <>
+      {standing ? (
+        <Field
+          className="max-w-xl"
+          label={`Reason to supersede ${standing.value} ${standing.unit}, ${standing.source}`}
+          hint="the run has a level at this position already; it stays beside this one"
+          value={reason}
+          onChange={(event) => setReason(event.currentTarget.value)}
+          error={keep.error?.field("reason")}
+        />
+      ) : null}
       <p>
-        <Button kind="solid" busy={keep.isPending} busyWords="Keeping …" onClick={() => keep.mutate({ version })}>
+        <Button
+          kind="solid"
+          busy={keep.isPending}
+          busyWords="Keeping …"
+          disabled={standing !== undefined && reason.trim() === ""}
+          onClick={() => keep.mutate({ version, reason: standing ? reason : null })}
+        >
           Keep {level} from {recording.name}
         </Button>
       </p>
-      <Refusal error={keep.error} />
+      <Refusal error={keep.error} fields={false} />
     </>
   );
 }

@@ -24,17 +24,17 @@ export function TakeAway({ tokens, levelDba }: { tokens: readonly string[]; leve
     event.currentTarget.href = address.toString();
   };
   return (
-    <div className="screen-only flex flex-wrap items-center gap-x-4 gap-y-1">
+    <div className="screen-only -ml-1 flex flex-wrap items-center gap-x-3 gap-y-1">
       <Button kind="quiet" small onClick={() => void copy()}>
         Copy link
       </Button>
       <Button kind="quiet" small onClick={() => window.print()}>
         Print
       </Button>
-      <a href={atLevel("/api/v1/compare/csv")} onClick={withPresentLevel} download>
+      <a className="button button-quiet button-small" href={atLevel("/api/v1/compare/csv")} onClick={withPresentLevel} download>
         CSV
       </a>
-      <a href={atLevel("/api/v1/compare")} onClick={withPresentLevel}>
+      <a className="button button-quiet button-small" href={atLevel("/api/v1/compare")} onClick={withPresentLevel}>
         JSON
       </a>
       <span role="status" className="small-print">

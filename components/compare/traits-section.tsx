@@ -1,5 +1,6 @@
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import type { BarsRow } from "@/components/ui/bars/bars-model";
+import { Missing } from "@/components/ui/missing";
 import { Fold } from "@/components/ui/fold";
 import { Section } from "@/components/ui/sheet";
 import type { ComparedHead, ComparedTrait } from "@/lib/contracts/compare";
@@ -7,8 +8,8 @@ import { nameOf } from "./names";
 
 type Props = { heads: readonly ComparedHead[]; traits: readonly ComparedTrait[] };
 
-const notDeclared = { figure: { value: null, why: "not declared" } };
-const ofBaseline = { figure: { value: null, why: "not declared for the baseline" } };
+const notDeclared = { words: <Missing why="not declared" /> };
+const ofBaseline = { words: <Missing why="not declared for the baseline" /> };
 
 function TraitTable({ heads, traits, caption }: Props & { caption: string }) {
   const rows = traits.map((trait): BarsRow => ({

@@ -9,12 +9,14 @@ import { Slot, SlotGroup } from "@/components/ui/slot";
 export type ColumnsFormProps = {
   options: readonly { key: string; label: string }[];
   shown: readonly string[];
+  /** The column sorted by, which always stands. */
+  sortedBy: string | undefined;
   /** The rest of the address, to be kept. */
   kept: readonly (readonly [string, string])[];
 };
 
 /** Which columns the list shows, as slots; asked for at once where scripts run, else by the button. */
-export function ColumnsForm({ options, shown, kept }: ColumnsFormProps) {
+export function ColumnsForm({ options, shown, sortedBy, kept }: ColumnsFormProps) {
   const router = useRouter();
   const [pending, start] = useTransition();
   const [draft, setDraft] = useState<{ over: readonly string[]; keys: readonly string[] }>();
@@ -41,7 +43,8 @@ export function ColumnsForm({ options, shown, kept }: ColumnsFormProps) {
               key={key}
               name="columns"
               value={key}
-              label={label}
+              label={key === sortedBy ? `${label} (sorted by)` : label}
+              disabled={key === sortedBy}
               checked={chosen.includes(key)}
               onChange={() => flip(key)}
             />

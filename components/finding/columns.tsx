@@ -1,5 +1,6 @@
+import { Missing } from "@/components/ui/missing";
 import type { BarsCell } from "@/components/ui/bars/bars-model";
-import { absoluteRanges, ranges, type IndexItem, type RangeKey, type SortKey } from "@/lib/contracts/index-query";
+import { absoluteRanges, ranges, type IndexItem, type IndexQuery, type RangeKey, type SortKey } from "@/lib/contracts/index-query";
 import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { levelUnit } from "@/lib/format/quantities";
@@ -16,12 +17,15 @@ export type IndexColumn = {
   /** Shown only where all entries share bench version, protocol and baseline unit. */
   absolute?: boolean;
   strong?: boolean;
+  /** Its cells hold a word or two. */
+  short?: boolean;
   cell: (item: IndexItem) => BarsCell;
 };
 
 const words = (key: string, head: string, say: (item: IndexItem) => string): IndexColumn => ({
   key,
   head,
+  short: true,
   cell: (item) => ({ words: <span className="whitespace-nowrap">{say(item)}</span> }),
 });
 
@@ -54,10 +58,10 @@ const stagesWords = ({ stages, counterRotating }: IndexItem) =>
 
 function rankWords(item: IndexItem): BarsCell {
   const { roundRank, roundRankLow, roundRankHigh, roundOf } = item;
-  if (roundRank === null) return { figure: { value: null, why: whyNoRank(item) } };
+  if (roundRank === null) return { words: <Missing why={whyNoRank(item)} /> };
   return {
     words: (
-      <span className="whitespace-nowrap">
+      <span className="figures whitespace-nowrap">
         {roundRank} ({roundRankLow}–{roundRankHigh}) of {roundOf}
       </span>
     ),
@@ -65,7 +69,7 @@ function rankWords(item: IndexItem): BarsCell {
 }
 
 const fullSpeed = (quantity: string) => (facts: ListFacts) =>
-  facts.fullSetSpeed === undefined ? `${quantity}, full speed` : `${quantity}, ${formatNumber(facts.fullSetSpeed)} rpm`;
+  facts.fullSetSpeed === undefined ? `${quantity}, full speed` : `${quantity}, ${formatNumber(facts.fullSetSpeed)}\u00a0rpm`;
 
 /** Every column that the index has beside the design's name, in the order in which they stand:
  * what is sorted by first, so that a phone shows it beside the name. */
@@ -108,8 +112,9 @@ export const indexColumns: readonly IndexColumn[] = [
   figure("loudness", 1, (item) => [item.loudnessSone], "no recording was analysed"),
   {
     key: "rank",
-    head: "Rank in its round, 95 % range",
+    head: "Rank in its round, 95\u00a0% range",
     sort: "rank",
+    short: true,
     cell: rankWords,
   },
   words("season", "Season, round", (item) => `${item.seasonTitle}, round ${item.roundNumber}`),
@@ -139,11 +144,22 @@ export function offeredColumns(comparableOnly: boolean, hasLoudness: boolean): I
   );
 }
 
-/** Those asked for in the address, else the usual ones; what may not be shown here is left out. */
-export function shownColumns(offered: readonly IndexColumn[], asked: readonly string[], comparableOnly: boolean) {
+/** What the address asks of the columns. */
+type AskedColumns = Pick<IndexQuery, "columns" | "sort">;
+
+/**
+ * Those asked for in the address, else the usual ones; what may not be shown here is left out. What is sorted by always
+ * stands, or nobody could see the order.
+ */
+export function shownColumns(offered: readonly IndexColumn[], { columns: asked, sort }: AskedColumns, comparableOnly: boolean) {
   const known = asked.filter((key) => indexColumns.some((column) => column.key === key));
   const wanted: readonly string[] = known.length > 0 ? known : usual[comparableOnly ? "comparable" : "ratios"];
-  return offered.filter((column) => wanted.includes(column.key));
+  return offered.filter((column) => wanted.includes(column.key) || column.sort === sort);
+}
+
+/** The one figure that stands under a drawing: what is sorted by, else that at equal noise. */
+export function leadColumn(offered: readonly IndexColumn[], sort: SortKey): IndexColumn | undefined {
+  return offered.find((column) => column.sort === sort) ?? offered[0];
 }
 
 /** The column in plain words, for choosing it: "ΔT, full speed, K". */

@@ -20,6 +20,7 @@ export function ComparableNote({ answer, asked }: ComparableNoteProps) {
     );
   }
   const bounds = Object.keys(asked.ranges).some((range) => needsOneScale.includes(range));
+  const order = asked.q === "" ? asked.sort !== "equal" && needsOneScale.includes(asked.sort) : needsOneScale.includes(asked.sort);
   const columns = asked.columns.some((column) => needsOneScale.includes(column));
   return (
     <p className="small-print mb-3 max-w-3xl">
@@ -27,6 +28,7 @@ export function ComparableNote({ answer, asked }: ComparableNoteProps) {
       each entry’s ratio and difference to the baseline of its own session, at its own season’s headline level. Against
       different baseline units they hold only against their own.
       {bounds ? " The bounds in K or sone were let go for the same reason." : null}
+      {order ? " The order asked for needs one scale too: ΔT/P orders the list instead." : null}
       {columns ? " Columns asked for in the address that need one scale are left out." : null} Choose a season to see
       levels and ΔT. Intervals are 95 % coverage for the one printed copy measured; copy-to-copy spread is not included.
     </p>

@@ -23,6 +23,7 @@ function headOf(column: IndexColumn, facts: ListFacts, query: IndexQuery): BarsC
     head: typeof column.head === "function" ? column.head(facts) : column.head,
     ...(unit && { unit }),
     ...(column.strong && { tone: "strong" as const }),
+    ...(column.short && { short: true }),
     ...(column.sort && {
       sort: {
         href: indexAddress({ ...query, sort: column.sort, descending: turned, page: 1 }),

@@ -1,14 +1,13 @@
 import Link from "next/link";
 import { drawingOf } from "@/components/drawing/traits-drawing-view";
 import { ViewSvg } from "@/components/drawing/view-svg";
-import { Missing } from "@/components/ui/missing";
+import { Value } from "@/components/ui/value";
 import type { DrawnTraitsAnswer } from "@/lib/contracts/compare";
 import type { IndexItem } from "@/lib/contracts/index-query";
 import { entryToken } from "@/lib/domain/designs/entry-token";
-import { writeMeasured } from "@/lib/format/measured";
 import { ArrowList } from "./arrow-list";
+import { columnWords, type IndexColumn } from "./columns";
 import { entryName, nameWords, type Piece } from "./entry-name";
-import { whyNoEqualNoise } from "./missing-words";
 import { PickSlot } from "./pick-slot";
 
 export type DrawingGridProps = {
@@ -16,13 +15,16 @@ export type DrawingGridProps = {
   /** By entry id; missing where nothing is known to draw from. */
   drawings: Readonly<Record<string, DrawnTraitsAnswer>>;
   names: Readonly<Record<string, readonly Piece[] | undefined>>;
+  /** The figure that stands under each drawing: the one sorted by. */
+  lead: IndexColumn | undefined;
+  distanceMm: number | undefined;
 };
 
 /** Room around the largest tip circle, as a share of its radius. */
 const margin = 1.06;
 
-/** The list as front views, all at one scale, each with the figure it is ranked by. Arrows go from one to the next. */
-export function DrawingGrid({ items, drawings, names }: DrawingGridProps) {
+/** The list as front views, all at one scale, each with the figure it is sorted by. Arrows go from one to the next. */
+export function DrawingGrid({ items, drawings, names, lead, distanceMm }: DrawingGridProps) {
   const radius = (traits: DrawnTraitsAnswer | undefined) =>
     Math.max(0, ...(traits?.rotors ?? []).map((rotor) => (rotor.tipDiameterMm ?? 0) / 2));
   const reach = margin * Math.max(1, ...items.map((item) => radius(drawings[item.entryId])));
@@ -35,14 +37,14 @@ export function DrawingGrid({ items, drawings, names }: DrawingGridProps) {
         {items.map((item) => (
           <li key={item.entryId} className="grid content-start gap-1.5" data-stop>
             <Thumb item={item} traits={drawings[item.entryId]} reach={reach} />
-            <p className="flex items-baseline gap-2">
+            <p className="flex items-start gap-2 leading-7">
               <PickSlot token={entryToken(item)} name={entryName(item)} />
               <Link href={`/designs/${item.slug}`} className="font-bold">
                 {nameWords(item, names[item.entryId])}
               </Link>
             </p>
             <p className="figures text-sm">
-              <HeadFigure item={item} />
+              <LeadFigure item={item} lead={lead} distanceMm={distanceMm} />
             </p>
             <p className="small-print">
               {item.designers.join(", ")}
@@ -52,8 +54,8 @@ export function DrawingGrid({ items, drawings, names }: DrawingGridProps) {
         ))}
       </ArrowList>
       <p className="small-print mt-4">
-        Front views from declared traits, not from meshes, all at one scale. Beside each name its slot; under it ΔT at
-        equal noise.
+        Front views from declared traits, not from meshes, all at one scale. Beside each name its slot
+        {lead ? `; under it: ${columnWords(lead, distanceMm)}` : ""}.
       </p>
     </>
   );
@@ -68,15 +70,12 @@ function Thumb({ item, traits, reach }: { item: IndexItem; traits: DrawnTraitsAn
   return <ViewSvg view={{ ...view, title: `${entryName(item)}, front` }} width="100%" />;
 }
 
-/** K against the baseline where all stand on one scale, else % of it. */
-function HeadFigure({ item }: { item: IndexItem }) {
-  const { equalNoiseK, uEqualNoiseK, equalNoisePercent, uEqualNoisePercent } = item;
-  if (equalNoiseK !== null)
-    return writeMeasured(
-      { value: equalNoiseK, uncertainty: uEqualNoiseK ?? undefined, decimals: 1, signed: true },
-      "K",
-    );
-  if (equalNoisePercent !== null)
-    return writeMeasured({ value: equalNoisePercent, uncertainty: uEqualNoisePercent ?? undefined, decimals: 1 }, "%");
-  return <Missing why={whyNoEqualNoise(item)} />;
+type LeadProps = Pick<DrawingGridProps, "lead" | "distanceMm"> & { item: IndexItem };
+
+function LeadFigure({ item, lead, distanceMm }: LeadProps) {
+  const cell = lead?.cell(item);
+  if (!cell) return null;
+  if ("words" in cell) return cell.words;
+  const unit = typeof lead?.unit === "function" ? lead.unit({ distanceMm, fullSetSpeed: undefined }) : lead?.unit;
+  return <Value {...cell.figure} unit={unit} />;
 }

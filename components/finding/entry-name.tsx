@@ -11,7 +11,7 @@ export function markedWords(plain: string, pieces: readonly Piece[] | undefined)
   if (!pieces || pieces.map((piece) => piece.text).join("") !== plain) return plain;
   return pieces.map(({ text, hit }, index) =>
     hit ? (
-      <mark key={index} className="bg-transparent text-inherit decoration-4">
+      <mark key={index} className="found-mark">
         {text}
       </mark>
     ) : (

@@ -14,7 +14,7 @@ import {
   type IndexQuery,
 } from "@/lib/contracts/index-query";
 import { countWords } from "@/lib/format/words";
-import { columnWords, offeredColumns, shownColumns } from "./columns";
+import { columnWords, leadColumn, offeredColumns, shownColumns } from "./columns";
 import { ColumnsForm } from "./columns-form";
 import { ComparableNote } from "./comparable-note";
 import { DesignTable } from "./design-table";
@@ -46,9 +46,11 @@ export type FindingPageProps = {
 export function FindingPage(props: FindingPageProps) {
   const { asked, answer, seasonTitles, distanceMm, clipNames, open, drawings, saver } = props;
   const query = settledQuery(asked, answer.comparableOnly);
-  const input = { query, answer, seasonTitles, open };
+  // Addresses carry the order as it was asked: one that can't be kept here comes back where it can.
+  const standing = { ...query, sort: asked.sort };
+  const input = { query: standing, answer, seasonTitles, open };
   const offered = offeredColumns(answer.comparableOnly, (answer.histograms["loudness"] ?? []).length > 0);
-  const columns = shownColumns(offered, query.columns, answer.comparableOnly);
+  const columns = shownColumns(offered, query, answer.comparableOnly);
   const first = (query.page - 1) * indexPageSize + 1;
   const last = first + answer.items.length - 1;
   const pageHref = (page: number) => indexAddress({ ...asked, page });
@@ -56,8 +58,8 @@ export function FindingPage(props: FindingPageProps) {
   const words = (
     <WordsForm
       q={query.q}
-      kept={paramsWithout(query, ["q", "page"])}
-      withoutHref={indexAddress({ ...query, q: "", page: 1 })}
+      kept={paramsWithout(standing, ["q", "page"])}
+      withoutHref={indexAddress({ ...standing, q: "", page: 1 })}
     />
   );
   return (
@@ -67,11 +69,11 @@ export function FindingPage(props: FindingPageProps) {
           label="Which designs"
           action="/designs"
           pieces={sentencePieces(input)}
-          kept={paramsWithout(query, [...sentenceNames, "page"])}
+          kept={paramsWithout(standing, [...sentenceNames, "page"])}
           found={found}
           countOf="entries"
           more={furtherParts(input)}
-          clearHref={indexAddress({ ...query, q: "", facets: {}, ranges: {}, page: 1 })}
+          clearHref={indexAddress({ ...standing, q: "", facets: {}, ranges: {}, page: 1 })}
           open={open}
         />
       </Section>
@@ -93,7 +95,13 @@ export function FindingPage(props: FindingPageProps) {
         ) : (
           <form action="/compare" method="get" aria-label="Entries to lay over the baseline">
             {query.view === "drawings" ? (
-              <DrawingGrid items={answer.items} drawings={drawings} names={namesMarked(answer)} />
+              <DrawingGrid
+                items={answer.items}
+                drawings={drawings}
+                names={namesMarked(answer)}
+                lead={leadColumn(offered, query.sort)}
+                distanceMm={distanceMm}
+              />
             ) : (
               <DesignTable answer={answer} query={query} columns={columns} distanceMm={distanceMm} />
             )}
@@ -116,6 +124,7 @@ export function FindingPage(props: FindingPageProps) {
           <ColumnsForm
             options={offered.map((column) => ({ key: column.key, label: columnWords(column, distanceMm) }))}
             shown={columns.map((column) => column.key)}
+            sortedBy={columns.find((column) => column.sort === query.sort)?.key}
             kept={paramsWithout(asked, ["columns"])}
           />
         ) : null}

@@ -94,7 +94,7 @@ export function sentencePieces(input: SentenceInput): SentencePiece[] {
     ...alwaysThere.flatMap((place) => facetPieces(input, place)),
     ...addedFacets.filter(({ facet }) => isAdded(facet)).flatMap((place) => facetPieces(input, place)),
     ...addedRanges.filter(({ range }) => isBounded(range)).flatMap((place) => rangePieces(input, place)),
-    ...text(query.q ? `, with “${query.q}” in name, designer or material.` : "."),
+    ...text(query.q ? `, with “${query.q}” in name, designer or traits.` : "."),
   ];
 }
 

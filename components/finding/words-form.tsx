@@ -39,19 +39,19 @@ export function WordsForm({ q, kept, withoutHref }: WordsFormProps) {
   return (
     <form
       role="search"
-      aria-label="Words in name, designer or material"
+      aria-label="Words in name, designer or traits"
       action="/designs"
       method="get"
-      className="screen-only flex flex-wrap items-end gap-x-4 gap-y-2"
+      className="screen-only grid grid-cols-[minmax(0,1fr)_auto] items-end gap-x-3 gap-y-2"
       aria-busy={pending}
       onSubmit={ask}
     >
       {kept.map(([name, value]) => (
         <input key={`${name} ${value}`} type="hidden" name={name} value={value} />
       ))}
-      <div className="field w-full max-w-sm">
+      <div className="field w-full">
         <label className="field-label" htmlFor="index-words">
-          Words in name, designer or material
+          Words in name, designer or traits
         </label>
         <span className="blank">
           <input
@@ -70,7 +70,7 @@ export function WordsForm({ q, kept, withoutHref }: WordsFormProps) {
         Find
       </Button>
       {q ? (
-        <Link href={withoutHref} scroll={false}>
+        <Link href={withoutHref} scroll={false} className="justify-self-start">
           Without these words
         </Link>
       ) : null}

@@ -3,7 +3,7 @@
 import { useEffect } from "react";
 import { numberWord } from "@/lib/format/words";
 import { Button, LinkButton } from "@/components/ui/button";
-import { adoptAddress, clipLimit, useClips } from "./clips";
+import { adoptAddress, clipLimit, useClips, watchTraversal } from "./clips";
 
 export type ClipBarProps = {
   compareHref?: string;
@@ -25,6 +25,7 @@ function ClipMark() {
 export function ClipBar({ compareHref = "/compare", names = noNames }: ClipBarProps) {
   const { clips, toggle, clear } = useClips();
 
+  useEffect(watchTraversal, []);
   useEffect(() => adoptAddress(names), [names]);
 
   const left = clipLimit - clips.length;

@@ -44,14 +44,30 @@ export function storeClips(clips: readonly Clip[]): void {
   window.dispatchEvent(new Event(changed));
 }
 
-/** Takes over the picks of a shared address, which win over what this device had; the same picks change nothing. */
+let traversed = false;
+
+/** Hears of the back and forward buttons, see `adoptAddress`. @returns what stops it */
+export function watchTraversal(): () => void {
+  const note = () => {
+    traversed = true;
+  };
+  window.addEventListener("popstate", note);
+  return () => window.removeEventListener("popstate", note);
+}
+
+/**
+ * Takes over the picks of a shared address, which win over what this device had; the same picks change nothing. An
+ * address that comes back by the back or forward button is an old one: what was picked since stays, and is written there.
+ */
 export function adoptAddress(names: Readonly<Record<string, string>>): void {
+  const old = traversed;
+  traversed = false;
   const asked = new URLSearchParams(window.location.search).get("clip");
   if (!asked) return;
   const now = parse(read());
   const ids = [...new Set(asked.split(",").filter(Boolean))].slice(0, clipLimit);
   const clips = ids.map((id) => ({ id, name: names[id] ?? now.find((clip) => clip.id === id)?.name ?? id }));
-  if (JSON.stringify(clips) !== JSON.stringify(now)) storeClips(clips);
+  if (JSON.stringify(clips) !== JSON.stringify(now)) storeClips(old ? now : clips);
 }
 
 function subscribe(onChange: () => void): () => void {

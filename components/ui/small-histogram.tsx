@@ -9,7 +9,7 @@ export type SmallHistogramProps = {
   summary: string;
 };
 
-/** A small histogram for a range: no axes, the fields below it carry the figures. Empty bins give nothing. */
+/** A small histogram for a range: no axes, what stands below it carries the figures. Empty bins give nothing. */
 export function SmallHistogram({ bins, from, to, summary }: SmallHistogramProps) {
   const first = bins[0];
   const last = bins[bins.length - 1];

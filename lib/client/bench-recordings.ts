@@ -140,7 +140,7 @@ function useRecordingAct<T, B>(write: (body: B) => Promise<T>) {
 
 /** Keeps what the server read of a recording; of a run, at the run's version. */
 export const useKeepRecording = (recordingId: string) =>
-  useRecordingAct((body: { version: number | null }) =>
+  useRecordingAct((body: { version: number | null; reason: string | null }) =>
     sendJson(keptRecording, `${api}/recordings/${recordingId}/keep`, { method: "POST", body }),
   );
 

@@ -102,8 +102,11 @@ export const benchRecordings = z.strictObject({
 });
 export type BenchRecordings = z.infer<typeof benchRecordings>;
 
-/** Keeps what was read, as readings; of a run, if it is still at `version`. */
-export const keepRecording = z.strictObject({ version: z.int().nullable().default(null) });
+/** Keeps what was read, as readings; of a run, if it is still at `version`. With `reason` it may supersede its level. */
+export const keepRecording = z.strictObject({
+  version: z.int().nullable().default(null),
+  reason: z.string().trim().min(1).max(1000).nullable().default(null),
+});
 export const keptRecording = z.strictObject({
   logFileId: id,
   readingIds: z.array(id),

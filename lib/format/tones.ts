@@ -10,7 +10,7 @@ export type ToneOrders = { kind: "blade-passing" | "interaction"; rotor: 1 | 2 |
 export function toneName({ kind, rotor, m1, m2 }: ToneOrders, stages: number): string {
   if (kind === "blade-passing") {
     const order = Math.abs(m1) + Math.abs(m2);
-    return ["blade passing", stages > 1 ? `stage ${rotor}` : null, order > 1 ? `${order} ×` : null]
+    return ["blade passing", stages > 1 ? `stage ${rotor}` : null, order > 1 ? `${order}\u00a0×` : null]
       .filter(Boolean)
       .join(", ");
   }

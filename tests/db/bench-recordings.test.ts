@@ -37,8 +37,8 @@ const tones = [
 
 const read = (bytes: Uint8Array, input: Record<string, unknown>) =>
   readAsJob(db.app, room.operator, sessionId, bytes, { positionId: room.positionId, ...input });
-const keep = (recordingId: string, version: number | null = null) =>
-  keepRecording(asked(room.operator), { recordingId, version, now: later(8) });
+const keep = (recordingId: string, version: number | null = null, reason: string | null = null) =>
+  keepRecording(asked(room.operator), { recordingId, version, reason, now: later(8) });
 const view = (recordingId: string) => readRecording(room.operator, { recordingId });
 
 async function newRun(): Promise<string> {
@@ -136,16 +136,21 @@ describe("a run's recording", () => {
     await expect(keep(none.id, 1)).rejects.toMatchObject({ code: "moved_on" });
   });
 
-  it("is kept once, at the run's version, and never beside another level of the run", async () => {
+  it("is kept once, at the run's version, and supersedes another level of the run only with a reason", async () => {
     const runId = await newRun();
     const order = { purpose: "run", runId, calibration: { recordingId: calibrationId } };
     const [one, two] = [await read(fanWav({ tones }), order), await read(fanWav({ tones, seed: 8 }), order)];
     await expect(keep(one)).rejects.toMatchObject({ code: "malformed", fields: [{ path: "version" }] });
     await expect(keep(one, 7)).rejects.toMatchObject({ code: "moved_on" });
-    await keep(one, 1);
+    const [first] = (await keep(one, 1)).readingIds;
     await expect(keep(one, 2)).rejects.toMatchObject({ code: "moved_on" });
     await expect(keep(two, 2)).rejects.toMatchObject({ code: "already_there" });
     expect(await db.owner("spectrum").where({ run_id: runId })).toHaveLength(1);
+    const [second] = (await keep(two, 2, "A lorry passed.")).readingIds;
+    expect(await db.owner("reading").where({ id: second }).first()).toMatchObject({
+      ...{ supersedes: first, reason: "A lorry passed.", source: "recording" },
+    });
+    expect(await db.owner("spectrum").where({ run_id: runId })).toHaveLength(2);
   });
 
   it("gives no level where it is digital silence, and is refused where it is clipped or too short", async () => {

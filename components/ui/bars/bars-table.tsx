@@ -24,7 +24,7 @@ function Head({ column, figures, names }: { column: BarsColumn; figures: boolean
         <>
           <span className="sr-only">, </span>
           <br />
-          {column.unit}
+          <span className="whitespace-nowrap">{column.unit}</span>
         </>
       ) : null}
     </>

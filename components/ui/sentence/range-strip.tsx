@@ -14,6 +14,8 @@ export type RangeStripProps = {
   onRange: (ends: RangeEnds) => void;
 };
 
+const writeEnd = (value: number) => String(value).replace("-", "−");
+
 type Ends = { from: string; to: string };
 
 function readEnd(text: string, unit: string): { value?: number; why?: string } {
@@ -42,6 +44,7 @@ export function RangeStrip({ part, countOf, onRange }: RangeStripProps) {
     const changed = from.value !== part.from || to.value !== part.to;
     if (!from.why && !toError && changed) onRange({ from: from.value, to: to.value });
   };
+  const [lowest, highest] = [part.bins[0]?.from, part.bins.at(-1)?.to];
   const total = part.bins.reduce((sum, bin) => sum + bin.count, 0);
   const input = (end: keyof Ends) => ({
     value: typed[end],
@@ -65,8 +68,16 @@ export function RangeStrip({ part, countOf, onRange }: RangeStripProps) {
         bins={part.bins}
         from={from.value}
         to={to.value}
-        summary={`${part.label}: ${total} ${countOf} from ${part.bins[0]?.from} to ${part.bins.at(-1)?.to} ${part.unit}`}
+        summary={`${part.label}: ${total} ${countOf} from ${lowest} to ${highest} ${part.unit}`}
       />
+      {lowest === undefined ? null : (
+        <p aria-hidden className="docket -mt-1 flex justify-between">
+          <span>{writeEnd(lowest)}</span>
+          <span>
+            {writeEnd(highest ?? lowest)} {part.unit}
+          </span>
+        </p>
+      )}
       <div className="flex flex-wrap justify-between gap-4">
         <Field label="from" name={part.fromName} error={checked ? from.why : undefined} {...input("from")} />
         <Field label="to" name={part.toName} error={checked ? toError : undefined} {...input("to")} />

@@ -12,7 +12,7 @@ import { ExpectedError } from "@/lib/domain/expected-error";
 import { SOUND_READER_VERSION } from "@/lib/science/acoustics/reader-version";
 import { note, type Asked } from "../audit/audit";
 import { demandRecording } from "./recordings";
-import { checkRunReadings, demandKept, demandRun, movedOn } from "./runs";
+import { checkRunReadings, demandKept, demandRun, movedOn, standingOfRun } from "./runs";
 import { checkSessionValue } from "./session-readings";
 
 export interface Kept {
@@ -28,17 +28,25 @@ interface Keeping {
   session: SessionHead;
   person: Person;
   logFileId: string;
+  /** Why its level stands for one that the run has already; null where it must not. */
+  reason: string | null;
 }
 
 /**
  * Keeps what was read from a recording: its analysis beside the file, the reading that comes of it, and its spectrum. The
- * levels are as read: correcting for background is the method's, from the background that is kept.
+ * levels are as read: correcting for background is the method's, from the background that is kept. A level that the run
+ * has already is superseded only with a reason.
  * @throws ExpectedError moved_on for what isn't read or is kept already, a closed session, a run that changed; impossible
  * without a level; already_there; forbidden
  */
 export async function keepRecording(
   asked: Asked,
-  { recordingId, version, now }: { recordingId: string; version: number | null; now: Date },
+  {
+    recordingId,
+    version,
+    reason = null,
+    now,
+  }: { recordingId: string; version: number | null; reason?: string | null; now: Date },
 ): Promise<Kept> {
   return appDb().transaction(async (tx) => {
     const { row, session, person } = await demandRecording(tx, asked, { recordingId, lock: true, open: true });
@@ -53,7 +61,7 @@ export async function keepRecording(
       analysis: { purpose: row.purpose, asked: row.asked, report: result.report, calibrator: result.calibrator },
       byPerson: person.personId,
     });
-    const keeping: Keeping = { row, result, session, person, logFileId };
+    const keeping: Keeping = { row, result, session, person, logFileId, reason };
     const readingIds = await keepReading(tx, keeping);
     const spectrumId = await keepSpectrum(tx, keeping);
     await keepRecordingAs(tx, { recordingId, logFileId, keptAt: now });
@@ -126,15 +134,23 @@ async function keepReading(tx: Handle, keeping: Keeping): Promise<string[]> {
   return [readingId];
 }
 
-async function keepLevel(tx: Handle, { row, result, session, person, logFileId }: Keeping): Promise<string[]> {
+async function keepLevel(tx: Handle, keeping: Keeping): Promise<string[]> {
+  const { row, result, session, person, logFileId, reason } = keeping;
   const { positionId } = row;
   const runId = row.runId ?? "";
   const { usedS, durationS, correctedDba, disturbed, warnings } = result.report;
   const level = { quantity: "level_dba" as const, value: levelOf(result), positionId };
-  await checkRunReadings(tx, { session, runId, readings: [level] });
+  const before =
+    reason === null
+      ? undefined
+      : (await standingOfRun(tx, session.id, runId)).find(
+          (each) => each.quantity === "level_dba" && each.positionId === positionId,
+        );
+  await checkRunReadings(tx, { session, runId, readings: [level], superseded: before?.id });
   return insertReadings(tx, [
     {
       ...{ sessionId: session.id, runId, ...level, unit: "dB(A)" },
+      ...(before && { supersedes: before.id, reason }),
       ...{ source: "recording", logFileId, takenBy: person.personId },
       detail: {
         usedS,

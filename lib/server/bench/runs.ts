@@ -22,22 +22,28 @@ import { demandBench, demandNotOwner } from "./bench-access";
 import { checkPlaces, checkReadings, checkSetSpeed, checkTwice, type GivenReading } from "./check-reading";
 
 /** Readings of a run that no other supersedes. */
-async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
+export async function standingOfRun(tx: Handle, sessionId: string, runId: string): Promise<BenchReading[]> {
   const readings = await readingsOfSession(tx, { sessionId });
   return readings.filter((each) => each.runId === runId && each.supersededBy === null);
 }
 
 /**
  * Refuses readings of a run, whatever they came from, that say no place of the bench, are there already, or can't be.
+ * @param superseded the reading that one of them stands for from now on
  * @throws ExpectedError malformed, already_there, impossible
  */
 export async function checkRunReadings(
   tx: Handle,
-  { session, runId, readings }: { session: SessionHead; runId: string; readings: readonly GivenReading[] },
+  {
+    session,
+    runId,
+    readings,
+    superseded,
+  }: { session: SessionHead; runId: string; readings: readonly GivenReading[]; superseded?: string },
 ): Promise<void> {
   const bench = await benchVersionOf(tx, { benchVersionId: session.benchVersionId });
   const positions = await positionsOf(tx, { benchVersionId: session.benchVersionId });
-  const standing = await standingOfRun(tx, session.id, runId);
+  const standing = (await standingOfRun(tx, session.id, runId)).filter((each) => each.id !== superseded);
   checkPlaces(
     readings,
     positions.map((each) => each.id),

@@ -8,6 +8,6 @@ export const POST = route(
   { access: "signed_in", params: idParams, body: keepSchema },
   async ({ actor, params, body, requestId }) =>
     keptRecording.parse(
-      await keepRecording({ actor, requestId }, { recordingId: params.id, version: body.version, now: new Date() }),
+      await keepRecording({ actor, requestId }, { recordingId: params.id, ...body, now: new Date() }),
     ),
 );
