@@ -58,7 +58,7 @@ describe("the spectrum's words and table", () => {
   it("name tones by what makes them: m·B·n/60 of a stage, or m₁f₁ + m₂f₂ (kinematics)", () => {
     const named = (m1: number, m2: number, stages = 2) => toneName(tone(1, m1, m2, false).match, stages);
     expect(named(1, 0, 1)).toBe("blade passing");
-    expect(named(0, 3)).toBe("blade passing, stage 2, 3 ×");
+    expect(named(0, 3)).toBe("blade passing, stage 2, 3\u00a0×");
     expect(named(1, 2)).toBe("rotor interaction 1 f₁ + 2 f₂");
     expect(named(-1, 2)).toBe("rotor interaction 2 f₂ − 1 f₁");
   });

@@ -46,7 +46,7 @@ describe("the sentence of the index", () => {
     expect(aloud(sentencePieces(asked(`${query}&spacer=true&q=mill`)))).toBe(
       "Designs with one or two counter-rotating stages and 7 or 9 blades in the first, no inlet stack, printed in any " +
         "material, for a frame of any size, measured in Season 2, with a spacer, a tip gap of 0.5 to 1.0 mm, with “mill” " +
-        "in name, designer or material.",
+        "in name, designer or traits.",
     );
   });
 
