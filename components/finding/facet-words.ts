@@ -23,18 +23,26 @@ const spoken: Partial<Record<FacetKey, Titles>> = {
   tone: withOrWithout,
 };
 
+/** What a value is called; an address may say "constructor", which every object has and no list of titles does. */
+const titleOf = (titles: Titles | undefined, value: string): string | undefined =>
+  titles && Object.hasOwn(titles, value) ? titles[value] : undefined;
+
 /** A facet's value for people: "two, counter-rotating", "120 × 25 mm", "Season 4". */
 export function valueLabel(facet: FacetKey, value: string, seasonTitles: Titles): string {
   if (facet === "frame") return `${formatFrame(value)} mm`;
-  if (facet === "season") return seasonTitles[value] ?? value;
-  return labels[facet]?.[value] ?? value;
+  if (facet === "season") return titleOf(seasonTitles, value) ?? value;
+  return titleOf(labels[facet], value) ?? value;
 }
 
 /** The chosen values as the sentence says them: "7, 9 or 11". */
 export function chosenWords(facet: FacetKey, values: readonly string[], seasonTitles: Titles): string {
-  if (values.length === 2 && values.every((value) => value in withOrWithout) && spoken[facet] === withOrWithout)
+  if (
+    values.length === 2 &&
+    values.every((value) => Object.hasOwn(withOrWithout, value)) &&
+    spoken[facet] === withOrWithout
+  )
     return "with or without";
-  const words = values.map((value) => spoken[facet]?.[value] ?? valueLabel(facet, value, seasonTitles));
+  const words = values.map((value) => titleOf(spoken[facet], value) ?? valueLabel(facet, value, seasonTitles));
   return listWords(words, "or");
 }
 

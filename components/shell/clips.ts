@@ -66,7 +66,10 @@ export function adoptAddress(names: Readonly<Record<string, string>>): void {
   if (!asked) return;
   const now = parse(read());
   const ids = [...new Set(asked.split(",").filter(Boolean))].slice(0, clipLimit);
-  const clips = ids.map((id) => ({ id, name: names[id] ?? now.find((clip) => clip.id === id)?.name ?? id }));
+  const clips = ids.map((id) => ({
+    id,
+    name: (Object.hasOwn(names, id) ? names[id] : undefined) ?? now.find((clip) => clip.id === id)?.name ?? id,
+  }));
   if (JSON.stringify(clips) !== JSON.stringify(now)) storeClips(old ? now : clips);
 }
 

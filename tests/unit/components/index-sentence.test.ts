@@ -50,6 +50,16 @@ describe("the sentence of the index", () => {
     );
   });
 
+  it("takes names that every object has for values like any other", () => {
+    const query =
+      "season=__proto__&season=constructor&rotation=constructor&tone=toString&shroud=__proto__&shroud=valueOf";
+    expect(aloud(sentencePieces(asked(query)))).toBe(
+      "Designs with constructor stages and any number of blades in the first, any inlet stack, printed in any material, " +
+        "for a frame of any size, measured in constructor or __proto__, __proto__ or valueOf a shroud ring, toString a " +
+        "prominent tone.",
+    );
+  });
+
   it("lists numbers and seasons in their own order, the newest season first", () => {
     const options = (name: string) =>
       sentencePieces(asked("")).flatMap((piece) =>
