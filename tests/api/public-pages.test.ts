@@ -33,7 +33,9 @@ test.each([
   ["/designs?q=a%00b", 400],
   ["/api/v1/designs?q=a%00b", 400],
   ["/designs?q=100%", 200],
-])("an address that can name nothing is refused as %s, with %d", async (path, status) => {
+  ["/designs?season=__proto__&rotation=constructor&tone=toString&shroud=valueOf", 200],
+  ["/traits?season=__proto__&frame=constructor&rotation=toString", 200],
+])("an address that can name nothing is answered: %s with %d", async (path, status) => {
   expect((await get(path)).status).toBe(status);
 });
 
