@@ -15,7 +15,7 @@ export type ChartFrameProps = {
   table: Pick<BarsTableProps, "caption" | "columns" | "rows">;
   /** Name of the picture, without its ending; no picture is offered without one. */
   fileName?: string;
-  height?: "tall" | "middle" | "low";
+  height?: "long" | "tall" | "middle" | "low";
   children: (chart: RefObject<Chart | null>) => ReactNode;
 };
 

@@ -1,6 +1,7 @@
 "use client";
 
 import type { ChartData, ChartOptions } from "chart.js";
+import { color } from "chart.js/helpers";
 import type { ReactNode } from "react";
 import { Scatter } from "react-chartjs-2";
 import { levelUnit } from "@/lib/format/quantities";
@@ -36,6 +37,19 @@ export type CoolingChartProps = {
 
 type Data = ChartData<"scatter", BarredPoint[]>;
 
+/** The curve's 95 % band: two bare edges with what is between them tinted, light enough for bands to lie over each other. */
+function band(curve: NonNullable<CoolingSeries["curve"]>, style: SeriesStyle): Data["datasets"] {
+  const edge = (sign: 1 | -1, fill: false | "-1") => ({
+    showLine: true,
+    pointRadius: 0,
+    borderWidth: 0,
+    fill,
+    backgroundColor: color(style.colour).alpha(0.13).rgbString(),
+    data: curve.map(({ levelDba, cooling, coolingU95 = 0 }) => ({ x: levelDba, y: cooling + sign * coolingU95 })),
+  });
+  return curve.some(({ coolingU95 }) => coolingU95 !== undefined) ? [edge(-1, false), edge(1, "-1")] : [];
+}
+
 function datasets(series: CoolingSeries, style: SeriesStyle, palette: Palette): Data["datasets"] {
   const line = { borderColor: style.colour, borderWidth: 2, borderDash: style.dash };
   const marks = {
@@ -53,7 +67,7 @@ function datasets(series: CoolingSeries, style: SeriesStyle, palette: Palette): 
   };
   if (!series.curve) return [marks];
   const curve = series.curve.map(({ levelDba, cooling }) => ({ x: levelDba, y: cooling }));
-  return [marks, { ...line, showLine: true, pointRadius: 0, data: curve }];
+  return [marks, { ...line, showLine: true, pointRadius: 0, data: curve }, ...band(series.curve, style)];
 }
 
 function options(props: CoolingChartProps, palette: Palette, quantity: CoolingQuantity): ChartOptions<"scatter"> {
@@ -107,7 +121,7 @@ function options(props: CoolingChartProps, palette: Palette, quantity: CoolingQu
   };
 }
 
-/** Cooling against noise over the baseline: error bars both ways, names at the ends, left and low is better. */
+/** Cooling against noise over the baseline: error bars both ways, bands along curves that carry them, names at the ends, left and low is better. */
 export function CoolingChart(props: CoolingChartProps) {
   const palette = usePalette();
   const { series, baseline, quantity = deltaTQuantity, distanceMm, caption, fileName, height = "tall" } = props;

@@ -19,8 +19,11 @@ export type CoolingSeries = {
   key: string;
   name: string;
   points: readonly CoolingPoint[];
-  /** The curve between the points as the method reads it, in drawing order; straight lines when not given. */
-  curve?: readonly { levelDba: number; cooling: number }[];
+  /**
+   * The curve between the points as the method reads it, in drawing order, with its 95 % half-width where there is one;
+   * straight lines when not given.
+   */
+  curve?: readonly { levelDba: number; cooling: number; coolingU95?: number }[];
 };
 
 /** The vertical quantity: temperature rise, or rise for each watt where sessions are put side by side. */

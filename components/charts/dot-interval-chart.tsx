@@ -133,7 +133,7 @@ export function DotIntervalChart(props: DotIntervalChartProps) {
       caption={caption}
       table={dotTable(props)}
       fileName={fileName}
-      height={rows.length > 6 ? "tall" : "middle"}
+      height={rows.length > 9 ? "long" : rows.length > 6 ? "tall" : "middle"}
     >
       {(chart) =>
         palette && options ? (

@@ -20,10 +20,12 @@ function drawLabels(chart: Chart): void {
   ctx.save();
   ctx.font = `700 12px ${family}`;
   ctx.textBaseline = "middle";
-  const obstacles: Box[] = chart.data.datasets.flatMap((_, index) => [
-    ...markBoxes(chart, index),
-    ...lineObstacles(chart.getDatasetMeta(index).data.map(({ x, y }) => ({ x, y }))),
-  ]);
+  // A band's edges have no line: labels may lie over a tint.
+  const obstacles: Box[] = chart.data.datasets.flatMap((dataset, index) =>
+    dataset.borderWidth === 0
+      ? []
+      : [...markBoxes(chart, index), ...lineObstacles(chart.getDatasetMeta(index).data.map(({ x, y }) => ({ x, y })))],
+  );
   const area = { x: chartArea.left, y: chartArea.top, w: chart.width - chartArea.left - 2, h: chartArea.height };
   const wishes = named.map(({ text, at }) => ({ w: ctx.measureText(text).width, h: 14, at }));
   placeLabels(wishes, obstacles, area).forEach((place, order) => {

@@ -3,6 +3,7 @@ import {
   BarElement,
   CategoryScale,
   Chart,
+  Filler,
   LinearScale,
   LineController,
   LineElement,
@@ -21,6 +22,7 @@ Chart.register(
   LineElement,
   PointElement,
   ScatterController,
+  Filler,
   annotation,
 );
 

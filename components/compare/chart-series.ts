@@ -1,12 +1,16 @@
 import type { CoolingSeries } from "@/components/charts/cooling-model";
-import { pointsWithIntervals } from "@/lib/domain/results/compare-figures";
+import { curveWithIntervals, pointsWithIntervals } from "@/lib/domain/results/compare-figures";
 import type { LaidSubject } from "@/lib/domain/results/lay-over";
 
 const curveSteps = 60;
 
-/** A subject as the chart draws it: points with 95 % half-widths both ways, and the method's own curve between them. */
+/** A subject as the chart draws it: points with 95 % half-widths both ways, and the method's own curve between them with its own. */
 export function seriesOf(key: string, name: string, subject: LaidSubject): CoolingSeries {
-  const { curve } = subject;
+  const curve = curveWithIntervals(subject, curveSteps).map(({ levelDba, deltaTK }) => ({
+    levelDba,
+    cooling: deltaTK.value,
+    coolingU95: deltaTK.half95,
+  }));
   return {
     key,
     name,
@@ -18,13 +22,6 @@ export function seriesOf(key: string, name: string, subject: LaidSubject): Cooli
       speedRpm: point.setSpeedRpm,
       upperBound: point.levelDba.upperBound,
     })),
-    ...(curve && { curve: sampled(curve.deltaT) }),
+    ...(curve.length > 0 && { curve }),
   };
-}
-
-function sampled(line: { xMin: number; xMax: number; value(x: number): number | undefined }) {
-  return Array.from({ length: curveSteps + 1 }, (_, step) => {
-    const levelDba = step === curveSteps ? line.xMax : line.xMin + ((line.xMax - line.xMin) * step) / curveSteps;
-    return { levelDba, cooling: line.value(levelDba) };
-  }).flatMap(({ levelDba, cooling }) => (cooling === undefined ? [] : [{ levelDba, cooling }]));
 }

@@ -47,6 +47,13 @@ export function LayOverView({ heads, input, levelDba, deltaTK }: LayOverViewProp
   const laid = useMemo(() => layOver(input), [input]);
   const ends = useMemo(() => sliderEnds(laid), [laid]);
   const figures = useMemo(() => compareFigures(laid, () => level), [laid, level]);
+  const drawn = useMemo(
+    () => ({
+      entries: laid.map((entry) => seriesOf(entry.id, entry.id, entry)),
+      baseline: laid[0] && seriesOf("baseline", "Baseline", laid[0].baseline),
+    }),
+    [laid],
+  );
   useInAddress("level", moved);
 
   const name = (id: string) => {
@@ -61,21 +68,20 @@ export function LayOverView({ heads, input, levelDba, deltaTK }: LayOverViewProp
   }));
   const distanceMm = heads[0]?.distanceMm ?? Number.NaN;
   const headline = heads[0]?.headlineDba ?? Number.NaN;
-  const first = laid[0];
   return (
     <div className="grid gap-x-10 gap-y-6 lg:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
       {/* Stays beside the sliders while they are read down. */}
       <div className="min-w-0 self-start lg:sticky lg:top-4">
         <CoolingChart
-          series={laid.map((entry) => seriesOf(entry.id, name(entry.id), entry))}
-          baseline={first && seriesOf("baseline", "Baseline", first.baseline)}
+          series={drawn.entries.map((series) => ({ ...series, name: name(series.key) }))}
+          baseline={drawn.baseline}
           distanceMm={distanceMm}
           equalNoiseDba={level}
           fileName={`compare-${heads.map((head) => head.token).join("-")}`}
           caption={
             <>
-              Lower and further left is better. Error bars: 95 % coverage both ways, for the one printed copy measured;
-              remounts are in, copy-to-copy spread is not.
+              Lower and further left is better. Error bars both ways, and the tint along each curve: 95 % coverage, for
+              the one printed copy measured; remounts are in, copy-to-copy spread is not.
               {sessions.length > 1
                 ? ` The baseline drawn is the one run beside ${name(sessions[0]?.id ?? "")}; each entry’s figures use the baseline of its own session.`
                 : null}

@@ -31,7 +31,12 @@ export function TakeAway({ tokens, levelDba }: { tokens: readonly string[]; leve
       <Button kind="quiet" small onClick={() => window.print()}>
         Print
       </Button>
-      <a className="button button-quiet button-small" href={atLevel("/api/v1/compare/csv")} onClick={withPresentLevel} download>
+      <a
+        className="button button-quiet button-small"
+        href={atLevel("/api/v1/compare/csv")}
+        onClick={withPresentLevel}
+        download
+      >
         CSV
       </a>
       <a className="button button-quiet button-small" href={atLevel("/api/v1/compare")} onClick={withPresentLevel}>

@@ -199,3 +199,17 @@ export function pointsWithIntervals({ points }: Pick<LaidEntry, "points">) {
     mounts: point.mounts,
   }));
 }
+
+/**
+ * ΔT along a subject's curve as the method reads it, K, with the 95 % half-width at each level: what levels and ΔT of
+ * the points around it leave open there. From the lowest level to the highest in even steps; none without a curve.
+ */
+export function curveWithIntervals({ curve }: Pick<LaidEntry, "curve">, steps: number) {
+  if (!curve) return [];
+  const { xMin, xMax } = curve.deltaT;
+  return Array.from({ length: steps + 1 }, (_, step) => {
+    const levelDba = step === steps ? xMax : xMin + ((xMax - xMin) * step) / steps;
+    const read = readDeltaT(curve, levelDba);
+    return read && { levelDba, deltaTK: estimate(read.value, read.effects) };
+  }).filter((each) => each !== undefined);
+}

@@ -1,5 +1,10 @@
 import { describe, expect, it } from "vitest";
-import { compareFigures, type ComparedEntry, type ComparedPair } from "@/lib/domain/results/compare-figures";
+import {
+  compareFigures,
+  curveWithIntervals,
+  type ComparedEntry,
+  type ComparedPair,
+} from "@/lib/domain/results/compare-figures";
 import { layOver } from "@/lib/domain/results/lay-over";
 import { measuredCurve } from "../../factories/measured-point";
 
@@ -127,5 +132,51 @@ describe("outside the range of both curves", () => {
     expect(below.a).toMatchObject({ why: "baseline-not-reached" });
     expect(below.a.deltaTK).toBeUndefined();
     expect(below.pair.deltaTK).toBeUndefined();
+  });
+});
+
+describe("a curve with its band", () => {
+  // A straight line of ΔT = 100 K − 1.5 K/dB · L, whose band has a closed form; t(0.975, 6) = 2.447 (JCGM 100:2008, table G.2: 2.45).
+  const levels = [30, 34, 40, 46];
+  const line = (spread: Parameters<typeof measuredCurve>[2]) =>
+    curveWithIntervals(
+      layOver({
+        entries: [
+          {
+            id: "a",
+            sessionId: "one",
+            points: measuredCurve(
+              levels,
+              levels.map((l) => 100 - 1.5 * l),
+              spread,
+            ),
+          },
+        ],
+        sessions: [{ id: "one", grade, baselinePoints: z }],
+      })[0] ?? { curve: undefined },
+      8,
+    );
+  const none = { uLevelOwnDb: 0, uDeltaTOwnK: 0, uLevelOffsetDb: 0, uDeltaTOffsetK: 0, uDeltaTGainRel: 0, dof: 6 };
+
+  it("goes from the lowest level to the highest in even steps, on the line", () => {
+    const band = line(none);
+    expect(band.map(({ levelDba }) => levelDba)).toEqual([30, 32, 34, 36, 38, 40, 42, 44, 46]);
+    for (const { levelDba, deltaTK } of band) {
+      expect(deltaTK.value).toBeCloseTo(100 - 1.5 * levelDba, 9);
+      expect(deltaTK.half95).toBe(0);
+    }
+  });
+
+  it("carries an offset of ΔT as it is, and one of the level times the slope (JCGM 100:2008, 5.1.2)", () => {
+    for (const { deltaTK } of line({ ...none, uDeltaTOffsetK: 0.1 })) expect(deltaTK.half95 / 0.1).toBeCloseTo(1.96, 2);
+    for (const { deltaTK } of line({ ...none, uLevelOffsetDb: 0.2 }))
+      expect(deltaTK.half95 / (0.2 * 1.5)).toBeCloseTo(1.96, 2);
+  });
+
+  it("is widest at a measured level for what each run has of its own, with that run's degrees of freedom", () => {
+    const band = line({ ...none, uDeltaTOwnK: 0.25 });
+    for (const levelDba of [30, 34, 40, 46])
+      expect((band.find((each) => each.levelDba === levelDba)?.deltaTK.half95 ?? 0) / 0.25).toBeCloseTo(2.447, 3);
+    expect(band.find((each) => each.levelDba === 32)?.deltaTK.half95).toBeLessThan(2.447 * 0.25);
   });
 });
