@@ -25,7 +25,7 @@ function outside(box: Box, area: Box): number {
     Math.max(0, box.x + box.w - area.x - area.w) +
     Math.max(0, area.y - box.y) +
     Math.max(0, box.y + box.h - area.y - area.h);
-  return over * 100;
+  return over * 1000;
 }
 
 /** Places around a mark, the best first: right of it, then over and under, then left, then further off. */
@@ -41,7 +41,7 @@ function candidates({ w, h, at }: LabelWish): LabelPlace[] {
     }
     places.push({ x: at.x - gap - w, y: at.y - h / 2, w, h, tied: false });
   }
-  for (const far of [36, 50, 66, 84]) {
+  for (const far of [36, 50, 66, 84, 104, 126, 150]) {
     for (const side of [-1, 1]) {
       places.push({ x: at.x + 4, y: at.y + side * far - h / 2, w, h, tied: true });
       places.push({ x: at.x - w - 4, y: at.y + side * far - h / 2, w, h, tied: true });

@@ -30,6 +30,15 @@ describe("placeLabels", () => {
     expect(place && place.x + place.w).toBeLessThanOrEqual(600);
   });
 
+  it("keeps off the figures under the axis on a phone, however many curves end in the lowest corner", () => {
+    const phone = { x: 0, y: 0, w: 250, h: 240 };
+    const at = { x: 215, y: 225 };
+    const curve = lineObstacles([{ x: 10, y: 60 }, { x: 110, y: 170 }, at]);
+    const wishes = [90, 70, 90, 60].map((w) => ({ w, h: 14, at }));
+    for (const place of placeLabels(wishes, [{ x: 195, y: 215, w: 40, h: 20 }, ...curve], phone))
+      expect(place.y + place.h).toBeLessThanOrEqual(phone.h);
+  });
+
   it("ties a label to its mark by a line when everything near is taken", () => {
     const wall = { x: 150, y: 165, w: 300, h: 70 };
     const [place] = placeLabels([{ w: 80, h: 14, at: { x: 300, y: 200 } }], [wall], area);
