@@ -31,12 +31,24 @@ describe("placeLabels", () => {
   });
 
   it("keeps off the figures under the axis on a phone, however many curves end in the lowest corner", () => {
-    const phone = { x: 0, y: 0, w: 250, h: 240 };
-    const at = { x: 215, y: 225 };
-    const curve = lineObstacles([{ x: 10, y: 60 }, { x: 110, y: 170 }, at]);
-    const wishes = [90, 70, 90, 60].map((w) => ({ w, h: 14, at }));
-    for (const place of placeLabels(wishes, [{ x: 195, y: 215, w: 40, h: 20 }, ...curve], phone))
-      expect(place.y + place.h).toBeLessThanOrEqual(phone.h);
+    const phone = { x: 44, y: 0, w: 292, h: 266 };
+    const ends = [
+      { x: 278, y: 214 },
+      { x: 284, y: 247 },
+      { x: 292, y: 250 },
+      { x: 294, y: 251 },
+    ];
+    const obstacles = ends.flatMap(({ x, y }, n) => [
+      { x: x - 14, y: y - 7, w: 28, h: 14 },
+      ...lineObstacles([
+        { x: 80 + 3 * n, y: n === 0 ? 40 : 90 },
+        { x: 180, y: n === 0 ? 145 : 178 },
+        { x, y },
+      ]),
+    ]);
+    const wishes = ends.map((at, n) => ({ w: [62, 92, 85, 108][n] ?? 0, h: 14, at }));
+    for (const place of placeLabels(wishes, obstacles, phone))
+      expect(place.y + place.h).toBeLessThanOrEqual(phone.y + phone.h);
   });
 
   it("ties a label to its mark by a line when everything near is taken", () => {
