@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { Progress } from "@/components/ui/progress";
 import { Section } from "@/components/ui/sheet";
 import { ErrorState } from "@/components/ui/states";
+import { chosenFrame } from "@/lib/client/fit/chosen-frame";
 import { forgetKeptModel, keptModel } from "@/lib/client/fit/kept-model";
 import type { CarryChoices } from "@/lib/contracts/carry";
 import type { FitLimits } from "@/lib/contracts/fit-limits";
@@ -62,6 +63,7 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
   const [file, setFile] = useState<File>();
   const [carrying, setCarrying] = useState(false);
   const [chosen, setChosen] = useState<CompareWith>({
+    ownFrame: {},
     frameKey: limits.seasons[0]?.frameKeys[0] ?? limits.frames[0]?.key ?? "",
     seasonSlug: limits.seasons[0]?.slug ?? "",
     speedRpm: BENCH_RPM,
@@ -69,12 +71,12 @@ export function FitDesk({ limits, own }: { limits: FitLimits; own: CarryChoices 
     turned: false,
   });
   const measured = state.step === "measured" ? state.measured : undefined;
-  const { frameKey, seasonSlug, turned } = chosen;
+  const { frameKey, ownFrame, seasonSlug, turned } = chosen;
   useEffect(() => {
-    const frame = limits.frames.find((each) => each.key === frameKey);
+    const preset = limits.frames.find((each) => each.key === frameKey);
     const season = limits.seasons.find((each) => each.slug === seasonSlug);
-    if (measured && frame) compare({ frame, season, turned });
-  }, [measured, limits, frameKey, seasonSlug, turned, compare]);
+    if (measured && preset) compare({ frame: chosenFrame(preset, ownFrame), season, turned });
+  }, [measured, limits, frameKey, ownFrame, seasonSlug, turned, compare]);
   useEffect(() => {
     keptModel()
       .then((kept) => {

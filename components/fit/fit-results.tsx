@@ -1,4 +1,5 @@
 import type { FitLimits } from "@/lib/contracts/fit-limits";
+import { chosenFrame, isOwnFrame } from "@/lib/client/fit/chosen-frame";
 import type { ModelReadingActs, ModelState } from "@/lib/client/fit/use-model-reading";
 import { BalanceSection } from "./balance-section";
 import type { CompareWith } from "./compare-fields";
@@ -18,14 +19,21 @@ export type FitResultsProps = {
 /** Everything read off a model, piece by piece. */
 export function FitResults({ state, limits, chosen, turn }: FitResultsProps) {
   const { model, measured } = state;
-  const frame = limits.frames.find((each) => each.key === chosen.frameKey);
+  const preset = limits.frames.find((each) => each.key === chosen.frameKey);
   const season = limits.seasons.find((each) => each.slug === chosen.seasonSlug);
   const { rotors } = measured;
   const [first, second] = rotors;
   return (
     <>
       <TraitsSection measured={measured} />
-      {frame ? <FrameSection compared={state.compared} frame={frame} season={season} /> : null}
+      {preset ? (
+        <FrameSection
+          compared={state.compared}
+          frame={chosenFrame(preset, chosen.ownFrame)}
+          own={isOwnFrame(preset, chosen.ownFrame)}
+          season={season}
+        />
+      ) : null}
       <DrawingSection name={model.name} drawn={state.drawn} turn={turn} />
       {first && second ? (
         <CrossingsSection

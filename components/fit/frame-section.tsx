@@ -13,6 +13,8 @@ const mm = (value: number) => `${formatNumber(value, { decimals: 2 })} mm`;
 export type FrameSectionProps = {
   compared: { readonly comparison: Comparison | undefined } | undefined;
   frame: FitFrame;
+  /** Some of its numbers are not the preset's. */
+  own: boolean;
   season: FitSeason | undefined;
 };
 
@@ -30,8 +32,9 @@ function Verdict({ reasons, against }: { reasons: readonly string[]; against: st
 }
 
 /** The model against a frame, a season's limits and what stands around the cooler: fits or not, and what to change. */
-export function FrameSection({ compared, frame, season }: FrameSectionProps) {
-  const against = `the frame ${formatFrame(frame.key)}${season ? ` and ${season.title}` : ""}`;
+export function FrameSection({ compared, frame, own, season }: FrameSectionProps) {
+  const named = `the frame ${formatFrame(frame.key)}${own ? ", as you measured it," : ""}`;
+  const against = season ? `${named} and ${season.title}` : named.replace(/,$/, "");
   const comparison = compared?.comparison;
   return (
     <Section id="frame" title="Frame, season and bench" note={`against ${against}`} className="grid gap-4">

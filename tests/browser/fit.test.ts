@@ -48,6 +48,11 @@ describe("a model that is dropped on the page", () => {
     // The demo's frame of 120 mm has a bore of 114 mm: (114 − 110) / 2.
     await page.getByText("Tip gap, nominal").waitFor();
     expect(await page.locator("#frame").innerText()).toMatch(/Tip gap, nominal\s+2\.00 mm/);
+    // A frame that was measured: (116.5 − 110) / 2.
+    await page.getByText("Measured the frame at hand?").click();
+    await page.getByRole("textbox", { name: "Bore" }).fill("116,5");
+    await page.locator("#frame").getByText("3.25 mm").waitFor();
+    expect(await page.locator("#frame").innerText()).toContain("as you measured it");
     expect(asked).toEqual([]);
     expect(complaints).toEqual([]);
   });
