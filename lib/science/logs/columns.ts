@@ -1,6 +1,5 @@
-import { cellNumber, groupLook, numberLook, splitRecord, type NumberMarks } from "./cells";
-import type { Layout, SampleLine } from "./layout";
-import { isRemark } from "./layout";
+import { cellNumber, groupLook, numberLook, type NumberMarks } from "./cells";
+import { cellsOf, isRemark, type Layout, type SampleLine } from "./layout";
 import { marksOf, neverFalls } from "./marks";
 import { isDifference, quantityOfName, roleOfName } from "./names";
 import { clockSeconds, dateOrder, timeKind, type DateOrder } from "./times";
@@ -36,25 +35,22 @@ const TRAILING_UNIT = /(?<=\d)\s*(°\s?[CF]|℃|℉|[CFK]|dB\s?\(?[ACZ]?\)?|ms|s
 /** The columns of a layout, judged by name, row of units, and up to 2,000 rows of the sample. */
 export function describeColumns(lines: readonly SampleLine[], layout: Layout): Column[] {
   const rows = sampleRows(lines, layout);
-  const cellsOf = (index: number) => rows.map((row) => row[index] ?? "");
+  const cellsAt = (index: number) => rows.map((row) => row[index] ?? "");
   const looks = Array.from({ length: layout.width }, (_, index) =>
-    cellsOf(index).map((cell) => numberLook(cell.replace(TRAILING_UNIT, ""))),
+    cellsAt(index).map((cell) => numberLook(cell.replace(TRAILING_UNIT, ""))),
   );
   const count = (mark: string) => looks.flat().filter((look) => look === mark).length;
   const common = count("comma") > count("point") ? "," : ".";
   const names = uniqueNames(layout);
-  return names.map(({ name, written }, index) => describe({ name, written, index }, cellsOf(index), common, layout));
+  return names.map(({ name, written }, index) => describe({ name, written, index }, cellsAt(index), common, layout));
 }
 
 function sampleRows(lines: readonly SampleLine[], layout: Layout): string[][] {
   const rows: string[][] = [];
   for (const { line, text } of lines) {
     if (line < layout.firstRowLine || text.trim() === "" || isRemark(text, layout.delimiter)) continue;
-    const split =
-      layout.delimiter === ""
-        ? { cells: [text.trim().replace(/^"(.*)"$/, "$1")] }
-        : splitRecord(text, layout.delimiter);
-    if ("cells" in split && split.cells.length === layout.width) rows.push(split.cells);
+    const cells = cellsOf(text, layout.delimiter);
+    if (cells?.length === layout.width) rows.push(cells);
     if (rows.length >= 2000) break;
   }
   return rows;

@@ -1,3 +1,4 @@
+import { BLANKS, blankCells, blankNames } from "./blank-squeezer";
 import { groupLook, numberLook, splitRecord } from "./cells";
 import { timeKind } from "./times";
 
@@ -9,7 +10,7 @@ export interface SampleLine {
 
 /** How a log is laid out: what divides cells, how many there are, where names and rows begin. */
 export interface Layout {
-  /** "" for a single column. */
+  /** "" for a single column, " " where runs of blanks divide cells. */
   readonly delimiter: string;
   readonly width: number;
   /** Names as written; undefined when the log has none. */
@@ -41,7 +42,9 @@ function isDatum(cell: string): boolean {
   return numberLook(bare) !== undefined || groupLook(bare) !== undefined || timeKind(cell) !== undefined;
 }
 
-function cellsOf(text: string, delimiter: string): string[] | undefined {
+/** Cells of a line of the sample; undefined where its quotes are broken. */
+export function cellsOf(text: string, delimiter: string): string[] | undefined {
+  if (delimiter === BLANKS) return blankCells(text);
   if (delimiter === "") return [text.trim().replace(/^"(.*)"$/, "$1")];
   const split = splitRecord(text, delimiter);
   return "cells" in split ? split.cells : undefined;
@@ -50,12 +53,16 @@ function cellsOf(text: string, delimiter: string): string[] | undefined {
 /**
  * The layout of a log from its first lines, or undefined when no line holds numbers: the delimiter whose rows of one
  * width hold most numbers wins; names are the nearest line of that width above the first two rows that follow one another.
+ * Blanks divide cells only where they do it better than commas and a single column, and no rarer mark does it at all.
  */
 export function findLayout(lines: readonly SampleLine[]): Layout | undefined {
   const candidates = DELIMITERS.map((delimiter) => ({ delimiter, ...rate(lines, delimiter) }));
   const best = candidates.reduce((a, b) => (b.score > a.score ? b : a));
   const single = { delimiter: "", ...rate(lines, "") };
-  const chosen = best.score === 0 || (best.delimiter === "," && isSingle(lines, best.first)) ? single : best;
+  const marked = best.score === 0 || (best.delimiter === "," && isSingle(lines, best.first)) ? single : best;
+  const blanks = { delimiter: BLANKS, ...rate(lines, BLANKS) };
+  const byBlanks = (marked.delimiter === "" || marked.delimiter === ",") && blanks.score > marked.score;
+  const chosen = byBlanks ? blanks : marked;
   return chosen.score === 0 ? undefined : withNames(lines, chosen.delimiter, chosen.width, chosen.first);
 }
 
@@ -99,7 +106,8 @@ function withNames(lines: readonly SampleLine[], delimiter: string, width: numbe
     const text = lines[index]?.text ?? "";
     if (text.trim() === "") continue;
     const remark = isRemark(text, delimiter);
-    const cells = cellsOf(remark ? text.replace(/^\s*(#+|%+|\/\/|!|\*|'|;)\s*/, "") : text, delimiter);
+    const bare = remark ? text.replace(/^\s*(#+|%+|\/\/|!|\*|'|;)\s*/, "") : text;
+    const cells = delimiter === BLANKS ? blankNames(bare, width) : cellsOf(bare, delimiter);
     const fits = cells && (cells.length === width || cells.length === width - 1) && dataShare(cells) < 0.5;
     if (!fits) {
       if (names === undefined) continue;

@@ -1,4 +1,5 @@
 import { Refusal } from "../refusal";
+import { BLANKS, BlankSqueezer } from "./blank-squeezer";
 import { chooseColumns, type Chosen, type LogChoice, type LogWarning } from "./choice";
 import type { Column } from "./columns";
 import { planOf } from "./encodings";
@@ -33,6 +34,7 @@ const SAMPLE_BYTES = 1 << 16;
 export class LogReader {
   private head: Uint8Array = new Uint8Array(0);
   private machine: RowMachine | undefined;
+  private squeezer: BlankSqueezer | undefined;
   private decoder: TextDecoder | undefined;
   private columns: readonly Column[] = [];
   private chosen: Chosen | undefined;
@@ -80,7 +82,7 @@ export class LogReader {
 
   private feed(bytes: Uint8Array): void {
     if (this.machine) {
-      this.machine.push(bytes);
+      this.machine.push(this.squeezer?.push(bytes) ?? bytes);
       return;
     }
     this.head = joined(this.head, bytes);
@@ -96,9 +98,10 @@ export class LogReader {
     this.chosen = chooseColumns(this.columns, this.choice);
     this.preambleLines = layout.preambleLines;
     this.machine = machineFor(layout, this.chosen);
+    if (layout.delimiter === BLANKS) this.squeezer = new BlankSqueezer();
     const head = this.head;
     this.head = new Uint8Array(0);
-    this.machine.push(head);
+    this.feed(head);
   }
 }
 

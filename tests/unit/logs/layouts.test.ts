@@ -26,6 +26,10 @@ const logs: Record<string, string> = {
   "remarks, a preamble and blank lines": `# bench 2\nDevice: logger\n\nStart;2026-03-01\ntime_s;sensor_c;ambient_c\n# heat on\n${rows(point, ";", "\n\n")}# end\n;;\n`,
   "names in other scripts": `時間(秒),センサ温度(℃),周囲温度(℃)\n${rows(point, ",", "\n")}`,
   "units in the cells": `time,sensor,ambient\n${rows((v) => (expected.timeS.includes(v) ? `${v} s` : `${v} °C`), ",", "\n")}`,
+  "blanks alone, in columns of one width": `time_s  sensor_c  ambient_c\n${rows((v) => v.toFixed(3).padStart(10), " ", "\n")}`,
+  "blanks, names of several words, decimal commas": `Zeit (s)  Kühler vorn (°C)  Raum (°C)\r\n${rows(comma, "   ", " \r\n")}`,
+  "blanks, units in brackets": `t [s] Heatsink [°C] Room [°C]\n${rows(point, " ", "\n")}`,
+  "blanks, a date and a clock": `date time sensor_c ambient_c\n2026-03-01 10:00:00 52.5 21.5\n2026-03-01 10:00:05 52.25 21.25\n2026-03-01 10:00:10 52.125 21\n`,
   "blanks around cells and a byte mark": `\ufefftime_s , sensor_c , ambient_c\n${rows((v) => ` ${v} `, ",", "\n")}`,
   "a status column in words": `time_s,state,sensor_c,ambient_c\n0,ok,52.5,21.5\n5,"ok, still",52.25,21.25\n10,,52.125,21\n`,
   "a trailing delimiter in every row": `time_s;sensor_c;ambient_c;\n${rows(comma, ";", ";\n")}`,
@@ -69,6 +73,11 @@ describe("a log's layout", () => {
     const log = readText("0;40,5;20\n1;41,5;20\n2;42,5;20,5\n", { sensor: "column 2", ambient: "column 3" });
     expect(list(log.sensorC)).toEqual([40.5, 41.5, 42.5]);
     expect(list(log.timeS)).toEqual([0, 1, 2]);
+  });
+  it("counts physical lines of a log laid out by blanks, and refuses a row that lacks a cell", () => {
+    const log = readText("time_s sensor_c ambient_c\n0 52.5 21.5\n# heat on\n\n  5   21.25\n10 52.125 21\n");
+    expect(log.refused).toEqual([{ line: 5, reason: "2 cells where 3 are expected" }]);
+    expect(list(log.timeS)).toEqual([0, 10]);
   });
   it("gives the same for every chunking", () => {
     for (const text of Object.values(logs)) {
