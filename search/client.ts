@@ -1,4 +1,4 @@
-import { Meilisearch } from "meilisearch";
+import { Meilisearch, MeilisearchRequestTimeOutError } from "meilisearch";
 import { requiredEnv } from "@/lib/env/env";
 
 /** A task of bulk indexing takes longer than the client's own five seconds. */
@@ -24,3 +24,7 @@ export function createSearchClient(access: SearchAccess, requestTimeoutMs = 10_0
 export function searchAccess(): SearchAccess {
   return { host: requiredEnv("MEILI_HOST"), apiKey: requiredEnv("MEILI_API_KEY") };
 }
+
+/** Whether a request ended because no answer came in its time; the client wraps that in an error of its own. */
+export const isTimeOut = (error: unknown): boolean =>
+  error instanceof MeilisearchRequestTimeOutError || (error instanceof Error && isTimeOut(error.cause));

@@ -84,7 +84,7 @@ function options(props: CoolingChartProps, palette: Palette, quantity: CoolingQu
       x: {
         ...figureAxis(palette, `Level, ${levelUnit(props.distanceMm)}`, false),
         suggestedMin: left,
-        suggestedMax: right + (right - left) * 0.12,
+        suggestedMax: right + (right - left) * 0.2,
       },
       y: {
         ...figureAxis(palette, `${quantity.head}, ${quantity.unit}`, true),

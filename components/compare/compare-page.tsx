@@ -53,7 +53,9 @@ export function ComparePage(props: ComparePageProps) {
   });
   const deltaTK = readingDeltaT(laid, { asked: props.askedDeltaTK, levelDba });
   const tokens = heads.map((head) => head.token);
-  const names = `${listWords(heads.map((head) => nameOf(head, heads)))}, over the baseline`;
+  // A letter stays beside its name where the title breaks.
+  const kept = (head: ComparedHead) => nameOf(head, heads).replace(/ (?=[A-Z]+$)/, "\u00a0");
+  const names = `${listWords(heads.map(kept))}, over the baseline`;
   return (
     <>
       <Section

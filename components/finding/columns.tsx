@@ -1,6 +1,13 @@
 import { Missing } from "@/components/ui/missing";
 import type { BarsCell } from "@/components/ui/bars/bars-model";
-import { absoluteRanges, ranges, type IndexItem, type IndexQuery, type RangeKey, type SortKey } from "@/lib/contracts/index-query";
+import {
+  absoluteRanges,
+  ranges,
+  type IndexItem,
+  type IndexQuery,
+  type RangeKey,
+  type SortKey,
+} from "@/lib/contracts/index-query";
 import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import { levelUnit } from "@/lib/format/quantities";
@@ -69,7 +76,9 @@ function rankWords(item: IndexItem): BarsCell {
 }
 
 const fullSpeed = (quantity: string) => (facts: ListFacts) =>
-  facts.fullSetSpeed === undefined ? `${quantity}, full speed` : `${quantity}, ${formatNumber(facts.fullSetSpeed)}\u00a0rpm`;
+  facts.fullSetSpeed === undefined
+    ? `${quantity}, full speed`
+    : `${quantity}, ${formatNumber(facts.fullSetSpeed)}\u00a0rpm`;
 
 /** Every column that the index has beside the design's name, in the order in which they stand:
  * what is sorted by first, so that a phone shows it beside the name. */
@@ -149,12 +158,18 @@ type AskedColumns = Pick<IndexQuery, "columns" | "sort">;
 
 /**
  * Those asked for in the address, else the usual ones; what may not be shown here is left out. What is sorted by always
- * stands, or nobody could see the order.
+ * stands, or nobody could see the order: first where nobody asked for it, so that it is in sight on every screen.
  */
-export function shownColumns(offered: readonly IndexColumn[], { columns: asked, sort }: AskedColumns, comparableOnly: boolean) {
+export function shownColumns(
+  offered: readonly IndexColumn[],
+  { columns: asked, sort }: AskedColumns,
+  comparableOnly: boolean,
+) {
   const known = asked.filter((key) => indexColumns.some((column) => column.key === key));
   const wanted: readonly string[] = known.length > 0 ? known : usual[comparableOnly ? "comparable" : "ratios"];
-  return offered.filter((column) => wanted.includes(column.key) || column.sort === sort);
+  const shown = offered.filter((column) => wanted.includes(column.key));
+  const unasked = offered.find((column) => column.sort === sort && !shown.includes(column));
+  return unasked ? [unasked, ...shown] : shown;
 }
 
 /** The one figure that stands under a drawing: what is sorted by, else that at equal noise. */

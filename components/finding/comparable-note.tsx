@@ -20,7 +20,8 @@ export function ComparableNote({ answer, asked }: ComparableNoteProps) {
     );
   }
   const bounds = Object.keys(asked.ranges).some((range) => needsOneScale.includes(range));
-  const order = asked.q === "" ? asked.sort !== "equal" && needsOneScale.includes(asked.sort) : needsOneScale.includes(asked.sort);
+  const order =
+    asked.q === "" ? asked.sort !== "equal" && needsOneScale.includes(asked.sort) : needsOneScale.includes(asked.sort);
   const columns = asked.columns.some((column) => needsOneScale.includes(column));
   return (
     <p className="small-print mb-3 max-w-3xl">

@@ -9,8 +9,8 @@ export function LimitedNotice({ query }: { query: Pick<IndexQuery, "q"> }) {
         The search service doesn’t answer just now, so this list comes straight from the database. It is complete and up
         to date.{" "}
         {query.q
-          ? `“${query.q}” is looked for letter by letter in name, designer, season and material: an error of typing finds nothing, and nothing is marked in the list.`
-          : "Words are looked for letter by letter in name, designer, season and material: errors of typing aren’t forgiven."}
+          ? `“${query.q}” is looked for letter by letter in name, designer, season, inlet stack and material: an error of typing finds nothing, and nothing is marked in the list.`
+          : "Words are looked for letter by letter in name, designer, season, inlet stack and material: errors of typing aren’t forgiven."}
       </p>
     </Notice>
   );

@@ -83,7 +83,7 @@ const sortColumn = (key: SortKey): string =>
   key in ranges ? ranges[key as keyof typeof ranges].column : sortColumns[key as keyof typeof sortColumns];
 
 /**
- * Words must all be in the name, the season's title, a designer's handle or the material; errors of typing are the
+ * Words must all be in the name, the season's title, a designer's handle, the inlet stack or the material; errors of typing are the
  * search service's to forgive.
  */
 function addWords(query: Knex.QueryBuilder, words: string): void {
@@ -94,6 +94,7 @@ function addWords(query: Knex.QueryBuilder, words: string): void {
         .whereILike("design_name", like)
         .orWhereILike("season_title", like)
         .orWhereILike("material", like)
+        .orWhereILike("inlet_stack", like)
         .orWhereRaw("design_id in (select d.design_id from shown.designer d where d.handle ilike ?)", [like]);
     });
   }

@@ -1,13 +1,16 @@
 import { publicDb } from "@/db/client/handles";
 import { entriesByIds } from "@/db/queries/shown/entries";
 import { indexPageSize, type IndexAnswer, type IndexQuery } from "@/lib/contracts/index-query";
-import { createSearchClient, searchAccess } from "@/search/client";
+import { createSearchClient, isTimeOut, searchAccess } from "@/search/client";
 import { searchDesigns, type Found } from "@/search/query";
 import { log } from "../log";
 import { indexItem, listDesigns, withoutAbsoluteRanges, withoutAbsolutes } from "./list-designs";
 
 /** A reader waits this long for the search service before the database answers. */
 const patienceMs = 2_000;
+/** After one that got no answer the service is let be for so long: whoever goes on choosing doesn't wait at each choice. */
+const restMs = 5_000;
+let restsUntil = 0;
 
 /**
  * Answers the index's question by the search service; by the database, with `from: "database"`, while the service is
@@ -36,10 +39,12 @@ export async function findDesigns(query: IndexQuery): Promise<IndexAnswer> {
 }
 
 async function askService(query: IndexQuery): Promise<Found | undefined> {
+  if (Date.now() < restsUntil) return undefined;
   try {
     const found = await searchDesigns(createSearchClient(searchAccess(), patienceMs), query);
     return found.ofAll > 0 ? found : undefined;
   } catch (error) {
+    if (isTimeOut(error)) restsUntil = Date.now() + restMs;
     log().warn({ err: error }, "limited search: the database answers");
     return undefined;
   }

@@ -1,3 +1,5 @@
+import { createServer } from "node:http";
+import type { AddressInfo } from "node:net";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { indexQuerySchema, sortKeys, type IndexAnswer, type IndexQuery } from "@/lib/contracts/index-query";
 import { adoptEnvironment } from "@/lib/env/env";
@@ -117,4 +119,28 @@ test("without the service the database answers, and says so", async () => {
   expect((await findDesigns(ask())).from).toBe("database");
   adoptEnvironment({ MEILI_API_KEY: apiKey });
   expect((await findDesigns(ask())).from).toBe("search");
+});
+
+test("an inlet stack is found by its word in the database too", async () => {
+  const { facets } = await listDesigns(ask());
+  const bellmouths = facets.inlet?.find(({ value }) => value === "bellmouth")?.count;
+  expect((await listDesigns(ask({ q: "bellmouth" }))).total).toBeGreaterThanOrEqual(bellmouths ?? Infinity);
+});
+
+test("a service that hangs is waited for once, not at every choice, and asked again after a while", async () => {
+  let asked = 0;
+  const hanging = createServer(() => void asked++).listen(0, "127.0.0.1");
+  await new Promise((resolve) => hanging.once("listening", resolve));
+  adoptEnvironment({ MEILI_HOST: `http://127.0.0.1:${(hanging.address() as AddressInfo).port}` });
+  try {
+    expect((await findDesigns(ask())).from).toBe("database");
+    expect(asked).toBe(1);
+    for (let choice = 0; choice < 3; choice++) expect((await findDesigns(ask())).from).toBe("database");
+    expect(asked).toBe(1);
+  } finally {
+    hanging.closeAllConnections();
+    hanging.close();
+    adoptEnvironment({ MEILI_HOST: standIn.url, MEILI_API_KEY: apiKey });
+  }
+  await expect.poll(async () => (await findDesigns(ask())).from, { timeout: 15_000 }).toBe("search");
 });
