@@ -12,7 +12,7 @@ import { shellOverlaps } from "./overlaps";
 import { outerRadius } from "./polar";
 import { radiiTo, type FoundRow } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
-import { SHELLS_MAX, shellReport, withoutCrumbs, withShellsTurned, type ShellReport } from "./shells";
+import { onlyShells, SHELLS_MAX, shellReport, withoutCrumbs, withShellsTurned, type ShellReport } from "./shells";
 import { readDucts } from "./standing-parts";
 import { countStruts } from "./struts";
 import { Refusal } from "@/lib/science/refusal";
@@ -167,7 +167,7 @@ function measureRow(finding: AxisFinding, found: FoundRow, context: MassContext)
   const { mesh, search } = finding;
   const { row, group } = found;
   const alone = search.rows.filter((other) => other.group === group).length === 1 && Number.isFinite(group.fromZMm);
-  const own = context.shellOf.map((shell) => (group.shells.has(shell) ? shell : -1));
+  const own = onlyShells(context.shellOf, group.shells);
   const outer = outerRadius(mesh, own);
   if (alone) {
     const sum = sumIntegrals(context.integrals.filter((_, shell) => group.shells.has(shell)));

@@ -1,6 +1,7 @@
 import { median } from "@/lib/science/statistics/descriptive";
 import { facesOf, type Faces } from "./faces";
 import type { Mesh } from "./mesh";
+import { bitCount } from "./wall-radius";
 import { converge, inlierArea, normalLines, type NormalLines, type Point2 } from "./normal-lines";
 
 /** Where the axis passes, and the area of the faces that may be of revolution about it, mm². */
@@ -123,25 +124,49 @@ function sharpened(circles: readonly Point2[][], centre: Point2, scale: number):
 
 /** Vertices of walls that face the centre, in groups of nearly equal radius that go most of the way around. */
 function wallCircles(mesh: Mesh, faces: Faces, centre: Point2, width: number): Point2[][] {
-  const groups = new Map<number, { points: Map<number, Point2>; sectors: Set<number> }>();
+  const { positions: p, triangles } = mesh;
+  const corners = facingCorners(mesh, faces, centre);
+  const radii = new Float64Array(corners.length);
+  const sectors = new Map<number, number>();
+  for (let i = 0; i < corners.length; i++) {
+    const v = triangles[corners[i] ?? 0] ?? 0;
+    const [dx, dy] = [(p[3 * v] ?? 0) - centre[0], (p[3 * v + 1] ?? 0) - centre[1]];
+    const radius = Math.hypot(dx, dy);
+    radii[i] = radius;
+    const sector = 1 << (Math.floor((Math.atan2(dy, dx) / (2 * Math.PI) + 1) * SECTORS) % SECTORS);
+    const [even, odd] = binsOf(radius, width);
+    sectors.set(even, (sectors.get(even) ?? 0) | sector);
+    sectors.set(odd, (sectors.get(odd) ?? 0) | sector);
+  }
+  // Most groups go only a little way around: their points needn't be gathered.
+  const groups = new Map<number, Map<number, Point2>>();
+  for (const [bin, mask] of sectors) if (bitCount(mask) >= SECTORS_NEEDED) groups.set(bin, new Map());
+  if (groups.size === 0) return [];
+  for (let i = 0; i < corners.length; i++) {
+    for (const bin of binsOf(radii[i] ?? 0, width)) {
+      const v = triangles[corners[i] ?? 0] ?? 0;
+      groups.get(bin)?.set(v, [p[3 * v] ?? 0, p[3 * v + 1] ?? 0]);
+    }
+  }
+  return [...groups.values()].map((points) => [...points.values()]);
+}
+
+/** Two rows of bins, half a width apart, so that no circle is cut in two by a bin's edge. */
+const binsOf = (radius: number, width: number): [number, number] => [
+  2 * Math.round(radius / width),
+  2 * Math.floor(radius / width) + 1,
+];
+
+/** Places, among the triangles' corners, of those of upright faces whose normal runs about through the centre. */
+function facingCorners(mesh: Mesh, faces: Faces, centre: Point2): Int32Array {
+  const out = new Int32Array(mesh.triangles.length);
+  let count = 0;
   for (let t = 0; t < faces.areasMm2.length; t++) {
     const [nx, ny, nz] = [faces.normals[3 * t] ?? 0, faces.normals[3 * t + 1] ?? 0, faces.normals[3 * t + 2] ?? 0];
     if (Math.abs(nz) > WALL_SLOPE_MAX || nx * nx + ny * ny === 0) continue;
     const [mx, my] = [(faces.middlesMm[3 * t] ?? 0) - centre[0], (faces.middlesMm[3 * t + 1] ?? 0) - centre[1]];
     if (Math.abs(mx * ny - my * nx) > 0.3 * Math.hypot(mx, my)) continue;
-    for (let corner = 0; corner < 3; corner++) {
-      const v = mesh.triangles[3 * t + corner] ?? 0;
-      const [x, y] = [mesh.positions[3 * v] ?? 0, mesh.positions[3 * v + 1] ?? 0];
-      const radius = Math.hypot(x - centre[0], y - centre[1]);
-      const turn = Math.atan2(y - centre[1], x - centre[0]) / (2 * Math.PI) + 1;
-      // Two rows of bins, half a width apart, so that no circle is cut in two by a bin's edge.
-      for (const key of [2 * Math.round(radius / width), 2 * Math.floor(radius / width) + 1]) {
-        const group = groups.get(key) ?? { points: new Map<number, Point2>(), sectors: new Set<number>() };
-        groups.set(key, group);
-        group.points.set(v, [x, y]);
-        group.sectors.add(Math.floor(turn * SECTORS) % SECTORS);
-      }
-    }
+    for (let corner = 3 * t; corner < 3 * t + 3; corner++) out[count++] = corner;
   }
-  return [...groups.values()].filter((g) => g.sectors.size >= SECTORS_NEEDED).map((g) => [...g.points.values()]);
+  return out.subarray(0, count);
 }

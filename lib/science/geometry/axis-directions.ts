@@ -43,13 +43,13 @@ export function axisDirections(faces: Faces): Vec3[] {
 
 /** Mean normals of the groups of faces with the largest common area, opposite normals together. */
 function planarNormals(faces: Faces): Vec3[] {
-  const groups = new Map<string, { area: number; sum: Vec3 }>();
+  const groups = new Map<number, { area: number; sum: Vec3 }>();
   const total = faces.areasMm2.reduce((sum, area) => sum + area, 0);
   for (let t = 0; t < faces.areasMm2.length; t++) {
     const area = faces.areasMm2[t] ?? 0;
     if (area === 0) continue;
     const normal = withPositiveLead(vectorAt(faces.normals, t));
-    const key = normal.map((value) => Math.round(value * 200)).join();
+    const key = normal.reduce((sum, value) => 401 * sum + Math.round(value * 200) + 200, 0);
     const group = groups.get(key);
     if (group) {
       group.area += area;

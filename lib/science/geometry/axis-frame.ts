@@ -21,6 +21,15 @@ export function meshInFrame(mesh: Mesh, frame: AxisFrame, origin: Vec3): Mesh {
   const { positions: p } = mesh;
   const out = new Float64Array(p.length);
   const { x, y, z } = frame;
+  if (x[0] === 1 && y[1] === 1 && z[2] === 1) {
+    // The file's own axes: nothing turns.
+    for (let i = 0; i < p.length; i += 3) {
+      out[i] = (p[i] ?? 0) - origin[0];
+      out[i + 1] = (p[i + 1] ?? 0) - origin[1];
+      out[i + 2] = (p[i + 2] ?? 0) - origin[2];
+    }
+    return { positions: out, triangles: mesh.triangles };
+  }
   for (let i = 0; i < p.length; i += 3) {
     const a = (p[i] ?? 0) - origin[0];
     const b = (p[i + 1] ?? 0) - origin[1];

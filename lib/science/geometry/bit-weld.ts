@@ -35,7 +35,7 @@ export class BitWeld {
   /** The positions, x y z of each vertex in turn; ends the use of this object. */
   finish(): Float64Array {
     this.table = new Int32Array(0);
-    const out = Float64Array.from(new Float32Array(this.words.buffer, 0, 3 * this.count));
+    const out = new Float64Array(new Float32Array(this.words.buffer, 0, 3 * this.count));
     this.words = new Int32Array(0);
     return out;
   }

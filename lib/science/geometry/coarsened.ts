@@ -21,30 +21,70 @@ export function coarsened(mesh: Mesh, shellOf: Int32Array, bounds: Bounds): Coar
   const scale = CELLS / longest;
   const vertices = p.length / 3;
   const stand = new Int32Array(vertices);
-  let slots = 1 << 16;
-  while (slots < 2 * vertices) slots *= 2;
-  const [keys, firsts] = [new Int32Array(slots), new Int32Array(slots)];
+  const cells = new CellNumbers();
   const [x0, y0, z0] = bounds.min;
   const kept = new Uint32Array(vertices);
-  let count = 0;
+  let [count, lastKey, last] = [0, 0, 0];
   for (let v = 0; v < vertices; v++) {
     const i = ((p[3 * v] ?? 0) - x0) * scale;
     const j = ((p[3 * v + 1] ?? 0) - y0) * scale;
     const k = ((p[3 * v + 2] ?? 0) - z0) * scale;
     const key = 1 + (i | 0) + (CELLS + 1) * ((j | 0) + (CELLS + 1) * (k | 0));
-    let slot = (Math.imul(key, 0x9e3779b1) >>> 8) & (slots - 1);
-    while (keys[slot] !== 0 && keys[slot] !== key) slot = (slot + 1) & (slots - 1);
-    if (keys[slot] === 0) {
-      keys[slot] = key;
-      firsts[slot] = count;
-      kept[count++] = v;
+    // Below 1 is a vertex outside the box, which no triangle uses.
+    if (key < 1) continue;
+    // Neighbours in the file mostly lie in one cell.
+    if (key !== lastKey) {
+      lastKey = key;
+      last = cells.numberOf(key);
+      if (last === count) kept[count++] = v;
     }
-    stand[v] = firsts[slot] ?? 0;
+    stand[v] = last;
   }
   const positions = new Float64Array(3 * count);
   for (let i = 0; i < positions.length; i++) positions[i] = p[3 * (kept[(i / 3) | 0] ?? 0) + (i % 3)] ?? 0;
   const { corners, shells } = collapsed(triangles, stand, shellOf);
   return { mesh: { positions, triangles: corners }, shellOf: shells };
+}
+
+/** Numbers cells in the order in which they are met. A table no larger than they need stays in the processor's cache. */
+class CellNumbers {
+  private keys = new Int32Array(1 << 16);
+  private numbers = new Int32Array(1 << 16);
+  private count = 0;
+
+  /** Number of a cell by its key (above 0); a new cell gets the next number. */
+  numberOf(key: number): number {
+    let slot = this.slotOf(key);
+    if (this.keys[slot] === key) return this.numbers[slot] ?? 0;
+    if (2 * this.count >= this.keys.length) {
+      this.grow();
+      slot = this.slotOf(key);
+    }
+    this.keys[slot] = key;
+    this.numbers[slot] = this.count;
+    return this.count++;
+  }
+
+  private slotOf(key: number): number {
+    const { keys } = this;
+    const mask = keys.length - 1;
+    let slot = (Math.imul(key, 0x9e3779b1) >>> 8) & mask;
+    while (keys[slot] !== 0 && keys[slot] !== key) slot = (slot + 1) & mask;
+    return slot;
+  }
+
+  private grow(): void {
+    const { keys, numbers } = this;
+    this.keys = new Int32Array(2 * keys.length);
+    this.numbers = new Int32Array(2 * keys.length);
+    for (let i = 0; i < keys.length; i++) {
+      const key = keys[i] ?? 0;
+      if (key === 0) continue;
+      const slot = this.slotOf(key);
+      this.keys[slot] = key;
+      this.numbers[slot] = numbers[i] ?? 0;
+    }
+  }
 }
 
 function collapsed(triangles: Uint32Array, stand: Int32Array, shellOf: Int32Array) {

@@ -105,7 +105,8 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
   const step = (2 * Math.PI) / angles;
   const cos = Float64Array.from({ length: angles }, (_, k) => Math.cos((k + PHASE) * step));
   const sin = Float64Array.from({ length: angles }, (_, k) => Math.sin((k + PHASE) * step));
-  const { radiusMm: radius, angleRad: turn } = polarOf(p);
+  const polar = polarOf(p);
+  const radius = polar.radiusMm;
   const sides = new EdgeSides();
   let work = 0;
   const { innerMm, outerMm } = radialSpans(mesh);
@@ -147,9 +148,9 @@ export function castColumns(mesh: Mesh, shellOf: Int32Array, grid: ColumnGrid): 
     let kFrom = 0;
     let kTo = angles - 1;
     if (!around) {
-      const ta = turn[a] ?? 0;
-      const tb = near(turn[b] ?? 0, ta);
-      const tc = near(turn[c] ?? 0, ta);
+      const ta = polar.angleAt(a);
+      const tb = near(polar.angleAt(b), ta);
+      const tc = near(polar.angleAt(c), ta);
       kFrom = Math.ceil(Math.min(ta, tb, tc) / step - PHASE - 1e-9);
       kTo = Math.floor(Math.max(ta, tb, tc) / step - PHASE + 1e-9);
       if (kTo < kFrom) continue;

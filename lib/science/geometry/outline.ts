@@ -8,7 +8,8 @@ const FLOOR_EVERY = 2048;
 export function outline(mesh: Mesh, includes: (triangle: number) => boolean): Float64Array {
   const out = new Float64Array(BINS);
   const { positions: p, triangles } = mesh;
-  const { radiusMm, angleRad } = polarOf(p);
+  const polar = polarOf(p);
+  const { radiusMm } = polar;
   // No edge below the lowest degree so far says anything; it is looked up anew now and then.
   let [floor, since] = [0, 0];
   for (let i = 0; i < triangles.length; i++) {
@@ -18,7 +19,7 @@ export function outline(mesh: Mesh, includes: (triangle: number) => boolean): Fl
     if (v > w) continue;
     if ((radiusMm[v] ?? 0) <= floor && (radiusMm[w] ?? 0) <= floor) continue;
     if (!includes((i / 3) | 0)) continue;
-    edgeInto(out, p, v, w, angleRad[v] ?? 0, angleRad[w] ?? 0);
+    edgeInto(out, p, v, w, polar.angleAt(v), polar.angleAt(w));
     if (++since % FLOOR_EVERY === 0) floor = out.reduce((least, radius) => Math.min(least, radius), Infinity);
   }
   return out;

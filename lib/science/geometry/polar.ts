@@ -1,9 +1,24 @@
 import type { Mesh } from "./mesh";
 
-/** Distance from the z axis and angle about it of each vertex: mm, and rad in −π…π. */
-export interface Polar {
-  readonly radiusMm: Float64Array;
-  readonly angleRad: Float64Array;
+/** Distance from the z axis of each vertex, mm, and its angle about it, rad in −π…π, worked out when first asked for. */
+export class Polar {
+  private readonly angleRad: Float64Array;
+
+  constructor(
+    private readonly positions: Float64Array,
+    readonly radiusMm: Float64Array,
+  ) {
+    this.angleRad = new Float64Array(radiusMm.length).fill(NaN);
+  }
+
+  /** Angle of a vertex about the z axis: most vertices of a fine mesh are never asked for theirs. */
+  angleAt(vertex: number): number {
+    const kept = this.angleRad[vertex] ?? 0;
+    if (kept === kept) return kept;
+    const angle = Math.atan2(this.positions[3 * vertex + 1] ?? 0, this.positions[3 * vertex] ?? 0);
+    this.angleRad[vertex] = angle;
+    return angle;
+  }
 }
 
 const known = new WeakMap<Float64Array, Polar>();
@@ -17,14 +32,12 @@ export function polarOf(positions: Float64Array): Polar {
   if (kept) return kept;
   const vertices = positions.length / 3;
   const radiusMm = new Float64Array(vertices);
-  const angleRad = new Float64Array(vertices);
   for (let v = 0; v < vertices; v++) {
     const x = positions[3 * v] ?? 0;
     const y = positions[3 * v + 1] ?? 0;
     radiusMm[v] = Math.sqrt(x * x + y * y);
-    angleRad[v] = Math.atan2(y, x);
   }
-  const made = { radiusMm, angleRad };
+  const made = new Polar(positions, radiusMm);
   known.set(positions, made);
   return made;
 }

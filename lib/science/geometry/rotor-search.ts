@@ -6,6 +6,7 @@ import type { Mesh } from "./mesh";
 import { shellOverlaps, type OverlapReport } from "./overlaps";
 import { outerRadius } from "./polar";
 import { rowTable } from "./row-table";
+import { onlyShells } from "./shells";
 import { splitParts, type PartSplit, type TurningGroup } from "./turning-parts";
 
 /** How finely a search samples. */
@@ -87,7 +88,7 @@ function rowsOfGroup(
   tinyMm: number,
   cast?: Columns,
 ): FoundRow[] {
-  const own = shellOf.map((shell) => (group.shells.has(shell) ? shell : -1));
+  const own = onlyShells(shellOf, group.shells);
   const columns =
     cast ?? castColumns(mesh, own, { radiiMm: radiiTo(outerRadius(mesh, own), grid.radii), angles: grid.angles });
   const include = (shell: number): boolean => group.shells.has(shell);

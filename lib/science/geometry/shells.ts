@@ -55,6 +55,17 @@ export function withoutCrumbs(
   return { searched: crumbs === 0 ? shellOf : shellOf.map((shell) => (crumb[shell] ? -1 : shell)), crumbs };
 }
 
+/** Shell of each triangle, −1 for those of other shells than these; not to be changed, as it may be the array handed in. */
+export function onlyShells(shellOf: Int32Array, shells: ReadonlySet<number>): Int32Array {
+  let most = -1;
+  for (let t = 0; t < shellOf.length; t++) if ((shellOf[t] ?? -1) > most) most = shellOf[t] ?? -1;
+  const kept = Int32Array.from({ length: most + 1 }, (_, shell) => (shells.has(shell) ? shell : -1));
+  if (!kept.includes(-1)) return shellOf;
+  const own = new Int32Array(shellOf.length);
+  for (let t = 0; t < own.length; t++) own[t] = kept[shellOf[t] ?? -1] ?? -1;
+  return own;
+}
+
 /** Pairs shells of the same place, volume and area; only asked for when triangles do repeat. */
 function copies(integrals: SolidIntegrals[], areasMm2: number[]): (number | undefined)[] {
   const same = (a: number, b: number): boolean => Math.abs(a - b) <= 1e-9 * (Math.abs(a) + Math.abs(b));

@@ -31,10 +31,14 @@ class AlignedRecords {
   private readonly bytes = RECORDS_PER_CHUNK * STL_RECORD_BYTES;
   readonly even = new Int32Array(this.bytes / 4 + 1);
   readonly odd = new Int32Array(this.bytes / 4 + 1);
+  readonly evenFloats = new Float32Array(this.even.buffer);
+  readonly oddFloats = new Float32Array(this.odd.buffer);
+  private readonly evenBytes = new Uint8Array(this.even.buffer);
+  private readonly oddBytes = new Uint8Array(this.odd.buffer);
 
   set(chunk: Uint8Array): void {
-    new Uint8Array(this.even.buffer).set(chunk);
-    new Uint8Array(this.odd.buffer).set(chunk, 2);
+    this.evenBytes.set(chunk);
+    this.oddBytes.set(chunk, 2);
   }
 }
 
@@ -47,8 +51,6 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
   if (triangles > watch.limits.trianglesMax) watch.refuseTriangles(triangles);
   const weld = new BitWeld(0.52 * triangles);
   const out = new Uint32Array(3 * triangles);
-  const words = new Int32Array(12);
-  const floats = new Float32Array(words.buffer);
   const byParity = new AlignedRecords();
   let against = 0;
   for (let first = 0; first < triangles; first += RECORDS_PER_CHUNK) {
@@ -61,35 +63,42 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
     for (let record = 0; record < count; record++) {
       const from = (record & 1) === 0 ? byParity.even : byParity.odd;
       const start = (STL_RECORD_BYTES * record + 2) >> 2;
-      let finite = true;
-      for (let i = 0; i < 12; i++) {
-        const word = from[start + i] ?? 0;
-        words[i] = word === NEGATIVE_ZERO ? 0 : word;
-        if (i > 2 && (word & EXPONENT) === EXPONENT) finite = false;
-      }
-      if (!finite) throw new Refusal("not-finite", "A vertex is not a finite number.", first + record + 1);
       const to = 3 * (first + record);
-      out[to] = weld.add(words[3] ?? 0, words[4] ?? 0, words[5] ?? 0);
-      out[to + 1] = weld.add(words[6] ?? 0, words[7] ?? 0, words[8] ?? 0);
-      out[to + 2] = weld.add(words[9] ?? 0, words[10] ?? 0, words[11] ?? 0);
-      if (record % NORMALS_EVERY === 0 && normalIsAgainst(floats)) against++;
+      for (let corner = 0; corner < 3; corner++) {
+        const at = start + 3 + 3 * corner;
+        const x = from[at] ?? 0;
+        const y = from[at + 1] ?? 0;
+        const z = from[at + 2] ?? 0;
+        if ((x & EXPONENT) === EXPONENT || (y & EXPONENT) === EXPONENT || (z & EXPONENT) === EXPONENT) {
+          throw new Refusal("not-finite", "A vertex is not a finite number.", first + record + 1);
+        }
+        out[to + corner] = weld.add(withoutSign(x), withoutSign(y), withoutSign(z));
+      }
+      if (record % NORMALS_EVERY !== 0) continue;
+      if (normalIsAgainst((record & 1) === 0 ? byParity.evenFloats : byParity.oddFloats, start)) against++;
     }
   }
   watch.step(triangles, triangles);
   return { mesh: { positions: weld.finish(), triangles: out }, normalsAgainst: NORMALS_EVERY * against, warnings: [] };
 }
 
-/** True when the stored normal (floats 0–2) points against the winding of the vertices (floats 3–11). */
-function normalIsAgainst(f: Float32Array): boolean {
-  const x0 = f[3] ?? 0;
-  const y0 = f[4] ?? 0;
-  const z0 = f[5] ?? 0;
-  const ax = (f[6] ?? 0) - x0;
-  const ay = (f[7] ?? 0) - y0;
-  const az = (f[8] ?? 0) - z0;
-  const bx = (f[9] ?? 0) - x0;
-  const by = (f[10] ?? 0) - y0;
-  const bz = (f[11] ?? 0) - z0;
-  const dot = (ay * bz - az * by) * (f[0] ?? 0) + (az * bx - ax * bz) * (f[1] ?? 0) + (ax * by - ay * bx) * (f[2] ?? 0);
+/** The bits of a number, −0 as 0. */
+const withoutSign = (word: number): number => (word === NEGATIVE_ZERO ? 0 : word);
+
+/** True when the stored normal (three floats from `at`) points against the winding of the vertices (nine floats more). */
+function normalIsAgainst(f: Float32Array, at: number): boolean {
+  const x0 = f[at + 3] ?? 0;
+  const y0 = f[at + 4] ?? 0;
+  const z0 = f[at + 5] ?? 0;
+  const ax = (f[at + 6] ?? 0) - x0;
+  const ay = (f[at + 7] ?? 0) - y0;
+  const az = (f[at + 8] ?? 0) - z0;
+  const bx = (f[at + 9] ?? 0) - x0;
+  const by = (f[at + 10] ?? 0) - y0;
+  const bz = (f[at + 11] ?? 0) - z0;
+  const dot =
+    (ay * bz - az * by) * (f[at] ?? 0) +
+    (az * bx - ax * bz) * (f[at + 1] ?? 0) +
+    (ax * by - ay * bx) * (f[at + 2] ?? 0);
   return dot < 0;
 }

@@ -45,7 +45,8 @@ function wallWithin(
   const sums = new Float64Array(BINS);
   const counts = new Int32Array(BINS);
   const { positions: p, triangles } = mesh;
-  const { radiusMm, angleRad } = polarOf(p);
+  const polar = polarOf(p);
+  const { radiusMm } = polar;
   const { innerMm, outerMm } = radialSpans(mesh);
   for (let t = 0; t < shellOf.length; t++) {
     // A corner has to lie near the wall for its triangle to say anything.
@@ -58,7 +59,7 @@ function wallWithin(
       const radius = radiusMm[v] ?? 0;
       const bin = Math.floor(((radius - low) / (high - low)) * BINS);
       if (bin < 0 || bin >= BINS) continue;
-      const sector = Math.floor(((angleRad[v] ?? 0) / (2 * Math.PI) + 1) * SECTORS) % SECTORS;
+      const sector = Math.floor((polar.angleAt(v) / (2 * Math.PI) + 1) * SECTORS) % SECTORS;
       sectors[bin] = (sectors[bin] ?? 0) | (1 << sector);
       sums[bin] = (sums[bin] ?? 0) + radius;
       counts[bin] = (counts[bin] ?? 0) + 1;
@@ -68,7 +69,7 @@ function wallWithin(
   let most = { around: SECTORS_NEEDED - 1, count: 0 };
   for (let bin = 0; bin + 1 < BINS; bin++) {
     // Two neighbouring bins, so that rounding at a bin's edge doesn't split a circle.
-    const around = bits((sectors[bin] ?? 0) | (sectors[bin + 1] ?? 0));
+    const around = bitCount((sectors[bin] ?? 0) | (sectors[bin + 1] ?? 0));
     const count = (counts[bin] ?? 0) + (counts[bin + 1] ?? 0);
     // Where blades cut the facets there are vertices nearer to the axis; the rim's own are more.
     if (around < most.around || (around === most.around && count <= most.count) || count === 0) continue;
@@ -112,7 +113,8 @@ function standsAsWall(
   return length > 0 && ((nx * x + ny * y) / (length * r)) * search.facing >= 0.9;
 }
 
-function bits(mask: number): number {
+/** Number of set bits of a mask below 2³¹. */
+export function bitCount(mask: number): number {
   let count = 0;
   for (let rest = mask; rest > 0; rest >>= 1) count += rest & 1;
   return count;
