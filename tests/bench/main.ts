@@ -1,4 +1,5 @@
 import os from "node:os";
+import { benchDrawing } from "./drawing";
 import { run as benchIndexQuery } from "./index-query";
 import { benchLog, type BenchResult } from "./log";
 import { benchMesh } from "./mesh";
@@ -9,6 +10,7 @@ const rooms: Record<string, () => BenchResult[] | Promise<BenchResult[]>> = {
   sound: benchSound,
   log: benchLog,
   mesh: benchMesh,
+  drawing: benchDrawing,
   index: benchIndexQuery,
   pages: () => benchPages(),
 };
