@@ -4,6 +4,7 @@ import type { ChartData, ChartOptions } from "chart.js";
 import type { ReactNode } from "react";
 import { Scatter } from "react-chartjs-2";
 import { formatNumber } from "@/lib/format/numbers";
+import { countWords } from "@/lib/format/words";
 import { ChartFrame } from "./chart-frame";
 import { errorBars, type BarredPoint } from "./error-bars";
 import { usePalette, type Palette } from "./palette";
@@ -68,7 +69,7 @@ function dotSummary({ rows, quantity, unit, intervalWords }: DotIntervalChartPro
     ({ name, estimate = 0 }) => `${name} ${formatNumber(estimate, { decimals: 1, signed: true })} ${unit}`,
   );
   const which = said.length > 0 ? `clear of zero: ${said.join(", ")}` : "none clear of zero";
-  return `${quantity} for ${rows.length} traits with ${intervalWords}; ${which}.`;
+  return `${quantity} for ${countWords(rows.length, "trait")} with ${intervalWords}; ${which}.`;
 }
 
 function dotData(rows: readonly DotInterval[], palette: Palette): ChartData<"scatter", BarredPoint[]> {

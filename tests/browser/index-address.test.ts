@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { setUpBrowser } from "../setup/browser";
+import { scrollsSidewaysBy } from "./support/axe";
 
 const browser = setUpBrowser();
 
@@ -50,5 +51,27 @@ describe("the index as its address says it", () => {
     await page.goBack();
     await page.waitForURL((url) => !url.searchParams.has("page"));
     await expect.poll(picks).toEqual(both);
+  });
+
+  it("goes through the parts that could be added by arrows", async () => {
+    const { page } = await browser.open({});
+    await page.goto("/designs");
+    await page.getByRole("button", { name: /add a part/ }).press("Enter");
+    const on = () => page.evaluate(() => document.activeElement?.textContent);
+    await expect.poll(on).toBe("Stages");
+    await page.keyboard.press("ArrowDown");
+    expect(await on()).toBe("Blades, second stage");
+    await page.keyboard.press("End");
+    expect(await on()).toBe("Print time");
+  });
+
+  it("prints its usual columns on a portrait page, without slots", async () => {
+    // A4 is 210 mm wide (ISO 216): 688 px between the sheet's margins of 14 mm, at 96 px an inch (CSS Values 4, 6.2).
+    const { page } = await browser.open({ width: 688 });
+    await page.emulateMedia({ media: "print" });
+    await page.goto("/designs?season=season-4");
+    expect(await page.locator("#list tbody tr").count()).toBe(20);
+    expect(await page.getByRole("checkbox", { name: /^Clip / }).count()).toBe(0);
+    expect(await scrollsSidewaysBy(page)).toBeLessThanOrEqual(0);
   });
 });

@@ -3,6 +3,7 @@
 import clsx from "clsx";
 import Link from "next/link";
 import { Fragment, useEffect, useId, useRef, useState, useSyncExternalStore, type MouseEvent } from "react";
+import { moveByArrows } from "@/components/ui/arrow-keys";
 import { partKey, partParams, type SentenceMore, type SentencePiece } from "./pieces";
 import { SentencePanel } from "./sentence-panel";
 import { useSentenceAddress, type Param } from "./use-sentence-address";
@@ -142,7 +143,7 @@ export function Sentence(props: SentenceProps) {
       ) : null}
       {adding ? (
         <div id={`${id}-panel`} role="group" aria-label="Add a part" className="sentence-panel" tabIndex={-1}>
-          <ul className="sentence-choices">
+          <ul className="sentence-choices" onKeyDown={(event) => moveByArrows(event, "a")}>
             {more.map(({ label: word, href }) => (
               <li key={href}>
                 <Link href={href} className="inline-flex min-h-8 items-center">
