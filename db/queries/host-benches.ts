@@ -8,6 +8,7 @@ import type {
   newProtocolVersion,
 } from "@/lib/contracts/bench-admin";
 import type { Handle } from "../client/connect";
+import { carryKeepOuts } from "./keep-outs";
 
 async function insertOne(db: Handle, table: string, row: Record<string, unknown>): Promise<string> {
   const [made]: { id: string }[] = await db(table).insert(row).returning("id");
@@ -32,14 +33,17 @@ async function nextNumber(
 export const insertBench = (db: Handle, bench: z.output<typeof newBench>): Promise<string> =>
   insertOne(db, "bench", bench);
 
-/** @returns undefined when there is no such bench; so do the other additions to something */
+/**
+ * A bench's next version, with the keep-out solids of the one before it.
+ * @returns undefined when there is no such bench; so do the other additions to something
+ */
 export async function insertBenchVersion(
   db: Handle,
   { benchId, version, at }: { benchId: string; version: z.output<typeof newBenchVersion>; at: Date },
 ): Promise<string | undefined> {
   const number = await nextNumber(db, { parent: "bench", id: benchId, table: "bench_version", column: "bench_id" });
   if (number === undefined) return undefined;
-  return insertOne(db, "bench_version", {
+  const id = await insertOne(db, "bench_version", {
     bench_id: benchId,
     number,
     cooler: version.cooler,
@@ -54,6 +58,8 @@ export async function insertBenchVersion(
     valid_from: at,
     change_reason: version.changeReason,
   });
+  await carryKeepOuts(db, { benchId, toVersionId: id });
+  return id;
 }
 
 export async function insertPosition(

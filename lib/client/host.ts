@@ -13,6 +13,8 @@ export const useAddBench = () => useWrite("POST", at("benches"), hostKeys.all);
 export const useAddBenchVersion = (benchId: string) =>
   useWrite("POST", at(`benches/${benchId}/versions`), hostKeys.all);
 export const useAddPosition = (id: string) => useWrite("POST", at(`bench-versions/${id}/positions`), hostKeys.all);
+export const useAddKeepOutBox = (id: string) => useWrite("POST", at(`bench-versions/${id}/keep-outs`), hostKeys.all);
+export const useDropKeepOut = (keepOutId: string) => useWrite("DELETE", at(`keep-outs/${keepOutId}`), hostKeys.all);
 export const useAddBudget = (id: string) => useWrite("POST", at(`bench-versions/${id}/budgets`), hostKeys.all);
 export const useDocumentChange = (id: string) => useWrite("POST", at(`bench-versions/${id}/changes`), hostKeys.all);
 

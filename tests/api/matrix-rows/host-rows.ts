@@ -39,6 +39,12 @@ export const hostRows: MatrixRows = {
     body: { name: "on axis", distanceMm: 100, angleDeg: 0 },
     expected: hostOnly(404),
   },
+  "POST /api/v1/host/bench-versions/[id]/keep-outs": {
+    path: under("bench-versions", "keep-outs"),
+    body: { name: "Memory", minMm: [62, -70, -45], maxMm: [70, 70, 8] },
+    expected: hostOnly(404),
+  },
+  "DELETE /api/v1/host/keep-outs/[id]": { path: under("keep-outs"), expected: hostOnly(404) },
   "POST /api/v1/host/bench-versions/[id]/budgets": {
     path: under("bench-versions", "budgets"),
     body: { note: "" },

@@ -3,10 +3,12 @@ import Link from "next/link";
 import { BudgetDesk } from "@/components/host/budget-desk";
 import { ChangeForm, StartBenchSession } from "@/components/host/control-forms";
 import { ChangeList, SessionList } from "@/components/host/control-parts";
+import { KeepOutsPart } from "@/components/host/keep-out-parts";
 import { Section } from "@/components/ui/sheet";
 import { orPageState, personForPage } from "@/lib/auth/page";
 import { readBenchControl } from "@/lib/server/baselines/read-bench-control";
 import { readBenchSetup } from "@/lib/server/benches/benches";
+import { readKeepOuts } from "@/lib/server/benches/keep-outs";
 import { idParams } from "@/lib/contracts/base";
 import { notFound } from "next/navigation";
 
@@ -20,6 +22,7 @@ export default async function BenchVersionPage({ params }: { params: Promise<{ i
   const actor = await personForPage(path);
   const control = await orPageState(readBenchControl(actor, { benchVersionId: id }), path);
   const setup = await orPageState(readBenchSetup(actor), path);
+  const keepOuts = await orPageState(readKeepOuts(actor, { benchVersionId: id }), path);
   const version = setup.benches.flatMap((bench) => bench.versions).find((each) => each.id === id);
   if (!version) notFound();
   const speeds = control.qualifiedSpeeds;
@@ -46,6 +49,9 @@ export default async function BenchVersionPage({ params }: { params: Promise<{ i
       </Section>
       <Section id="sessions" title="Sessions" note={`the newest ${control.sessions.length}`}>
         <SessionList sessions={control.sessions} />
+      </Section>
+      <Section id="keep-outs" title="Keep-out solids" note="what a fan must stay clear of around the cooler">
+        <KeepOutsPart benchVersionId={id} keepOuts={keepOuts} />
       </Section>
       <Section id="budgets" title="Uncertainty budget" tone="bar" note="a change is a new version">
         <BudgetDesk benchVersionId={id} budgets={version.budgets} />
