@@ -1,9 +1,7 @@
+import { bearEnds } from "./borne-ends";
 import { startChild, type ChildOptions } from "./children";
 import type { LaunchLedger } from "./ledger";
 import type { Lifetime } from "./lifetime";
-
-/** So many ends by itself within a while are borne; a machine in trouble isn't made busier by starts without end. */
-const borne = { ends: 5, withinMs: 60_000 };
 
 /** A child that is started again when it ends by itself. */
 export interface KeptChild {
@@ -17,15 +15,13 @@ export interface KeptChild {
 export function keepChild(life: Lifetime, ledger: LaunchLedger | undefined, options: ChildOptions): KeptChild {
   const first = startChild(life, ledger, options);
   const told = (code: number): string => `The ${options.name} ended (exit ${code}).`;
-  let ends: number[] = [];
+  const again = bearEnds();
   const keep = async (): Promise<string> => {
     for (let running = first; ; running = startChild(life, ledger, options)) {
       const code = await running.ended;
       // What is left of its group may hold its port.
       await running.stop();
-      const now = Date.now();
-      ends = [...ends.filter((at) => at > now - borne.withinMs), now];
-      if (life.stopping || ends.length > borne.ends) return told(code);
+      if (life.stopping || !again()) return told(code);
       console.error(`${told(code)} It is started again.`);
     }
   };

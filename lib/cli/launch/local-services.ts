@@ -2,13 +2,13 @@ import { randomBytes } from "node:crypto";
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { serverAccount } from "@/db/cluster/account";
-import { startCluster } from "@/db/cluster/cluster";
 import { anyFreePort } from "@/db/cluster/port";
 import { childEnvironment, type env } from "@/lib/env/env";
 import { startMailStandIn } from "@/lib/services/mail/stand-in";
 import { ensurePostgres } from "./debian";
 import { prepareDemoDatabase, seedInChild } from "./demo-seed";
 import { keepChild, type KeptChild } from "./kept-child";
+import { keepDatabase } from "./kept-database";
 import type { LaunchLedger } from "./ledger";
 import type { Lifetime } from "./lifetime";
 
@@ -19,7 +19,7 @@ export interface LocalServices {
   environment: Record<string, string>;
   /** Resolves with what happened when one of them ends by itself for the first time. */
   firstEnd: Promise<string>;
-  /** Resolves with what broke once one of them is gone for good: the database, or the search that ended too often. */
+  /** Resolves with what broke once one of them ended too often to be started again. */
   broken: Promise<string>;
 }
 
@@ -38,9 +38,8 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   const { root, dataFolder, life, ledger } = place;
   await ensurePostgres(life);
   life.check();
-  const cluster = await startCluster({ folder: dataFolder, account: serverAccount() });
-  ledger.add(cluster.pid, "database");
-  life.onStop(() => cluster.stop());
+  const database = await keepDatabase(life, ledger, { folder: dataFolder, account: serverAccount() });
+  const { cluster } = database;
   life.check();
   await prepareDemoDatabase(cluster, demoDatabase, seedInChild(life, ledger, root, dataFolder));
   life.check();
@@ -54,7 +53,6 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
     NEXTAUTH_SECRET: settings.NEXTAUTH_SECRET ?? keptSecret(path.join(dataFolder, "session-secret")),
     NEXTAUTH_URL: settings.NEXTAUTH_URL ?? `http://127.0.0.1:${settings.PORT}`,
   };
-  const databaseEnd = cluster.ended.then(() => "The database ended.");
   const search: KeptChild[] = [];
   if (settings.SMTP_URL === undefined) {
     const mail = await startMailStandIn(path.join(dataFolder, "mail"));
@@ -76,8 +74,8 @@ export async function startLocalServices(place: Place, settings: Settings): Prom
   ledger.tell(environment);
   return {
     environment,
-    firstEnd: Promise.race([databaseEnd, ...search.map(({ firstEnd }) => firstEnd)]),
-    broken: Promise.race([databaseEnd, ...search.map(({ gaveUp }) => gaveUp)]),
+    firstEnd: Promise.race([database.firstEnd, ...search.map(({ firstEnd }) => firstEnd)]),
+    broken: Promise.race([database.gaveUp, ...search.map(({ gaveUp }) => gaveUp)]),
   };
 }
 

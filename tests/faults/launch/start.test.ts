@@ -57,7 +57,7 @@ test("what a killed launcher left running is ended by the next start, which serv
   expect(await second.ended).toBe(0);
 });
 
-test("the search, the worker and the site are started again when they are killed, and answer as before", async () => {
+test("the search, the worker, the site and the database are started again when they are killed, and answer as before", async () => {
   const start = launch(settings(), mark);
   await start.ready;
   const address = `http://127.0.0.1:${port}`;
@@ -69,9 +69,10 @@ test("the search, the worker and the site are started again when they are killed
   const { children } = z
     .object({ children: z.array(z.object({ pid: z.int(), name: z.string() })) })
     .parse(JSON.parse(readFileSync(path.join(folder, "launcher.json"), "utf8")));
+  const kill = (name: string) =>
+    process.kill(children.findLast((each) => each.name === name)?.pid ?? Number.NaN, "SIGKILL");
   for (const name of ["search stand-in", "worker", "site"]) {
-    const child = children.findLast((each) => each.name === name);
-    process.kill(child?.pid ?? Number.NaN, "SIGKILL");
+    kill(name);
     await vi.waitUntil(() => start.said().includes(`The ${name} ended (exit 1). It is started again.`), patience);
   }
   await untilHealthy(lifetime(), address);
@@ -81,6 +82,12 @@ test("the search, the worker and the site are started again when they are killed
     return now.from === "search" && now;
   }, patience);
   expect(after.total).toBe(before.total);
+  kill("database");
+  await vi.waitUntil(() => start.said().includes("The database ended. It is started again."), patience);
+  await untilHealthy(lifetime(), address);
+  // A sheet is read from the database alone.
+  const sheet = (await (await fetch(`${address}/api/v1/designs`)).json()) as { items: { slug: string }[] };
+  expect((await fetch(`${address}/api/v1/sheets/${sheet.items[0]?.slug}`)).status).toBe(200);
   start.signal("SIGTERM");
   expect(await start.ended).toBe(0);
 });
