@@ -72,7 +72,7 @@ export async function listedTraits(
   const { rows }: { rows: (ListedTraits & { revision_id: string })[] } = await db.raw(
     `select t.revision_id, t.stages, t.counter_rotating, a.blades as blades_first, b.blades as blades_second, a.hand as hand_first,
        t.inlet_stack, t.inlet_stack_mm, t.spacer_mm, t.struts, bool_or(c.shroud) as shroud, f.key as frame_key, t.material, r.licence,
-       t.tip_gap_mm, a.solidity_mid, a.pitch_mid_deg, sum(c.mass_g) as mass_g, t.print_time_min
+       t.tip_gap_mm, a.solidity_mid, a.pitch_mid_deg, round(sum(c.mass_g)::numeric, 6)::float8 as mass_g, t.print_time_min
      from revision_trait t join revision r on r.id = t.revision_id join frame f on f.id = t.frame_id
        join rotor a on a.revision_id = t.revision_id and a.position = 1
        left join rotor b on b.revision_id = t.revision_id and b.position = 2
