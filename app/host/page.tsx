@@ -35,6 +35,9 @@ export default async function HostPage() {
             <Link href="/host/benches">Benches, protocols and baselines</Link>
           </li>
           <li>
+            <Link href="/host/frames">Frames</Link>
+          </li>
+          <li>
             <Link href="/host/people">People</Link>
           </li>
           <li>

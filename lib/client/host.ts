@@ -15,6 +15,8 @@ export const useAddBenchVersion = (benchId: string) =>
 export const useAddPosition = (id: string) => useWrite("POST", at(`bench-versions/${id}/positions`), hostKeys.all);
 export const useAddKeepOutBox = (id: string) => useWrite("POST", at(`bench-versions/${id}/keep-outs`), hostKeys.all);
 export const useDropKeepOut = (keepOutId: string) => useWrite("DELETE", at(`keep-outs/${keepOutId}`), hostKeys.all);
+export const useAddFrame = () => useWrite("POST", at("frames"), hostKeys.all);
+export const useChangeFrame = (frameId: string) => useWrite("PUT", at(`frames/${frameId}`), hostKeys.all);
 export const useAddBudget = (id: string) => useWrite("POST", at(`bench-versions/${id}/budgets`), hostKeys.all);
 export const useDocumentChange = (id: string) => useWrite("POST", at(`bench-versions/${id}/changes`), hostKeys.all);
 

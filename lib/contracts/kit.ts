@@ -1,7 +1,10 @@
 import { z } from "zod";
 import { slug } from "./base";
 
-export const kitFrameParams = z.strictObject({ slug, frame: z.string().regex(/^\d{2,3}x\d{1,3}$/, "is no frame") });
+export const kitFrameParams = z.strictObject({
+  slug,
+  frame: z.string().regex(/^\d{2,3}x\d{1,3}(-[a-z0-9]{1,12})?$/, "is no frame"),
+});
 export const kitSolidParams = z.strictObject({ slug, id: z.uuid() });
 
 const corner = z.tuple([z.number(), z.number(), z.number()]);

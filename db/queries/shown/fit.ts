@@ -13,7 +13,7 @@ export interface ShownFrame {
 
 /** Every frame preset, the smallest first. */
 export async function shownFrames(db: Handle): Promise<ShownFrame[]> {
-  return db("shown.frame").orderBy(["outer_mm", "depth_mm"]).select({
+  return db("shown.frame").orderBy(["outer_mm", "depth_mm", "key"]).select({
     id: "id",
     key: "key",
     sizeMm: "outer_mm",

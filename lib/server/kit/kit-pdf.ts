@@ -1,6 +1,7 @@
 import { PDFDocument, StandardFonts, degrees, rgb, type PDFFont, type PDFPage } from "pdf-lib";
 import type { DrawnView } from "@/lib/science/geometry/drawing/drawn-view";
 import { FRAME_PRESET_NOTE } from "@/lib/science/geometry/frames";
+import { formatFrame } from "@/lib/format/frames";
 import { kitDrawing, kitFileName } from "./kit-drawing";
 import { kitFrameOf } from "./read-kit";
 
@@ -45,7 +46,7 @@ export async function kitPdf(asked: { slug: string; frame: string }): Promise<{ 
       font: as,
       color,
     });
-  say(`${kit.season.title}: frame ${frame.key.replace("x", " × ")} mm and its limits`, yOfTop - 5, 5, bold);
+  say(`${kit.season.title}: frame ${formatFrame(frame.key)} mm and its limits`, yOfTop - 5, 5, bold);
   const told = `Dimensions in mm. ${scale === 1 ? "True size on A4: print without scaling" : `Scale ${scale.toFixed(2)} : 1`}. Tolerance ${frame.toleranceMm} mm a side. ${FRAME_PRESET_NOTE}.`;
   say(told, yOfTop - 11, 3, font, soft);
   const axisY = yOfTop - HEAD_MM + top * scale;

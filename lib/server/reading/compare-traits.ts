@@ -1,4 +1,5 @@
 import type { RotorRow, TraitRow } from "@/db/queries/shown/sheet";
+import { formatFrame } from "@/lib/format/frames";
 import { formatNumber } from "@/lib/format/numbers";
 import type { ComparedTrait } from "@/lib/contracts/compare";
 
@@ -49,7 +50,7 @@ const lines: readonly Line[] = [
   { key: "spacer", label: "Spacer", unit: "mm", say: ({ trait }) => figure(trait.spacer_mm, 0) },
   { key: "struts", label: "Struts", say: ({ trait }) => String(trait.struts) },
   byStage("Shroud ring", "shroud", "", (rotor) => yesNo(rotor.shroud), true),
-  { key: "frame", label: "Frame", unit: "mm", say: ({ trait }) => trait.frame_key.replace("x", " × ") },
+  { key: "frame", label: "Frame", unit: "mm", say: ({ trait }) => formatFrame(trait.frame_key) },
   { key: "tip_gap", label: "Tip gap", unit: "mm", say: ({ trait }) => figure(trait.tip_gap_mm, 1) },
   byStage("Tip diameter", "tip_diameter", "mm", (rotor) => figure(rotor.tip_diameter_mm, 1)),
   byStage("Hub diameter", "hub_diameter", "mm", (rotor) => figure(rotor.hub_diameter_mm, 1)),

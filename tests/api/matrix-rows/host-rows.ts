@@ -12,6 +12,16 @@ const budgetPart = {
   kind: "own_run",
 };
 
+const frame = {
+  frameClass: "120",
+  outerMm: 120,
+  depthMm: 25,
+  boreMm: 114,
+  holeSpacingMm: 105,
+  holeDiameterMm: 4.3,
+  toleranceMm: 0.5,
+};
+
 /** The host's routes and pages. */
 export const hostRows: MatrixRows = {
   "GET /api/v1/people": { expected: hostOnly(200) },
@@ -55,6 +65,8 @@ export const hostRows: MatrixRows = {
     body: { ...budgetPart, unit: "K" },
     expected: hostOnly(404),
   },
+  "POST /api/v1/host/frames": { body: {}, expected: signedIn(400) },
+  "PUT /api/v1/host/frames/[id]": { path: under("frames"), body: frame, expected: hostOnly(404) },
   "POST /api/v1/host/protocols": { body: {}, expected: signedIn(400) },
   "POST /api/v1/host/protocols/[id]/versions": {
     path: under("protocols", "versions"),
@@ -127,6 +139,7 @@ export const hostRows: MatrixRows = {
     path: ({ benchVersionId }) => `/host/benches/${benchVersionId}`,
     expected: asPage(hostOnly(200)),
   },
+  "PAGE /host/frames": { expected: asPage(hostOnly(200)) },
   "PAGE /host/people": { expected: asPage(hostOnly(200)) },
   "PAGE /host/audit": { expected: asPage(hostOnly(200)) },
 };
