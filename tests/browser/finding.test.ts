@@ -76,7 +76,7 @@ describe.each([{ width: 1280 }, { width: 390 }])("a builder with a keyboard alon
     // Back with the picks as they were, the form open and the name ready to be typed over.
     await arrive(page, "/compare");
     expect(new URL(page.url()).searchParams.get("entries")).toBe(asked);
-    await expect.poll(async () => (await focused(page)).name).toMatch(/^Name/);
+    await expect.poll(async () => (await focused(page)).name, { timeout: 15_000 }).toMatch(/^Name/);
     await page.keyboard.press("Control+a");
     const name = `Two by the keyboard, ${width}`;
     await page.keyboard.type(name);
