@@ -92,24 +92,26 @@ function commonCentre(mesh: Mesh, faces: Faces, start: Point2, size: number): Po
 function sharpened(circles: readonly Point2[][], centre: Point2, scale: number): Point2 {
   let [xx, xy, yy, bx, by] = [0, 0, 0, 0, 0];
   for (const points of circles) {
-    const polar = points.map(([x, y]) => ({
-      d: Math.hypot(x - centre[0], y - centre[1]),
-      x: x - centre[0],
-      y: y - centre[1],
-    }));
-    const typical = median(polar.map((p) => p.d)) ?? 0;
+    const far = Float64Array.from(points, ([x, y]) => Math.hypot(x - centre[0], y - centre[1]));
+    const typical = median(far) ?? 0;
+    const weights = new Float64Array(far.length);
     let [sum, mx, my, md] = [0, 0, 0, 0];
-    const weighted = polar.map((p) => {
-      const weight = 1 / (1 + ((p.d - typical) / scale) ** 2);
-      const [ux, uy] = p.d > 0 ? [p.x / p.d, p.y / p.d] : [0, 0];
+    for (const [i, [x, y]] of points.entries()) {
+      const d = far[i] ?? 0;
+      const off = (d - typical) / scale;
+      const weight = 1 / (1 + off ** 2);
+      weights[i] = weight;
       sum += weight;
-      mx += weight * ux;
-      my += weight * uy;
-      md += weight * p.d;
-      return { weight, ux, uy, d: p.d };
-    });
-    for (const { weight, ux, uy, d } of weighted) {
-      const [cx, cy, cd] = [ux - mx / sum, uy - my / sum, d - md / sum];
+      mx += weight * (d > 0 ? (x - centre[0]) / d : 0);
+      my += weight * (d > 0 ? (y - centre[1]) / d : 0);
+      md += weight * d;
+    }
+    for (const [i, [x, y]] of points.entries()) {
+      const d = far[i] ?? 0;
+      const weight = weights[i] ?? 0;
+      const cx = (d > 0 ? (x - centre[0]) / d : 0) - mx / sum;
+      const cy = (d > 0 ? (y - centre[1]) / d : 0) - my / sum;
+      const cd = d - md / sum;
       xx += (weight * cx * cx) / sum;
       xy += (weight * cx * cy) / sum;
       yy += (weight * cy * cy) / sum;
@@ -159,12 +161,17 @@ const binsOf = (radius: number, width: number): [number, number] => [
 
 /** Places, among the triangles' corners, of those of upright faces whose normal runs about through the centre. */
 function facingCorners(mesh: Mesh, faces: Faces, centre: Point2): Int32Array {
+  const { normals, middlesMm } = faces;
+  const [x, y] = centre;
   const out = new Int32Array(mesh.triangles.length);
   let count = 0;
   for (let t = 0; t < faces.areasMm2.length; t++) {
-    const [nx, ny, nz] = [faces.normals[3 * t] ?? 0, faces.normals[3 * t + 1] ?? 0, faces.normals[3 * t + 2] ?? 0];
-    if (Math.abs(nz) > WALL_SLOPE_MAX || nx * nx + ny * ny === 0) continue;
-    const [mx, my] = [(faces.middlesMm[3 * t] ?? 0) - centre[0], (faces.middlesMm[3 * t + 1] ?? 0) - centre[1]];
+    if (Math.abs(normals[3 * t + 2] ?? 0) > WALL_SLOPE_MAX) continue;
+    const nx = normals[3 * t] ?? 0;
+    const ny = normals[3 * t + 1] ?? 0;
+    if (nx * nx + ny * ny === 0) continue;
+    const mx = (middlesMm[3 * t] ?? 0) - x;
+    const my = (middlesMm[3 * t + 1] ?? 0) - y;
     if (Math.abs(mx * ny - my * nx) > 0.3 * Math.hypot(mx, my)) continue;
     for (let corner = 3 * t; corner < 3 * t + 3; corner++) out[count++] = corner;
   }

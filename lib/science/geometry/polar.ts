@@ -8,13 +8,14 @@ export class Polar {
     private readonly positions: Float64Array,
     readonly radiusMm: Float64Array,
   ) {
-    this.angleRad = new Float64Array(radiusMm.length).fill(NaN);
+    this.angleRad = new Float64Array(radiusMm.length);
   }
 
   /** Angle of a vertex about the z axis: most vertices of a fine mesh are never asked for theirs. */
   angleAt(vertex: number): number {
     const kept = this.angleRad[vertex] ?? 0;
-    if (kept === kept) return kept;
+    // An angle of just 0 is worked out anew each time; that way no memory is touched but what is asked for.
+    if (kept !== 0) return kept;
     const angle = Math.atan2(this.positions[3 * vertex + 1] ?? 0, this.positions[3 * vertex] ?? 0);
     this.angleRad[vertex] = angle;
     return angle;
