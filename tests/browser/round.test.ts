@@ -1,4 +1,5 @@
 import { describe, expect, it, vi } from "vitest";
+import { formatNumber } from "@/lib/format/numbers";
 import { setUpBrowser } from "../setup/browser";
 import { temperatureLog } from "./support/bench-logs";
 import { baselineDeltaTK, ratioAtEqualNoise, type Point } from "./support/by-hand";
@@ -108,11 +109,12 @@ describe("a whole round", () => {
       // Everybody may check: the logs behind the figures are there as they were received.
       const received: string[] = [];
       for (const speed of speeds) {
-        await reader.page.getByText(new RegExp(`^${speed} rpm: .* of this design`)).click();
+        const fold = reader.page.getByText(new RegExp(`^${formatNumber(speed)} rpm: .* of this design`));
+        await fold.click();
         const log = reader.page.getByRole("link", { name: "Temperature log, this design, mount 1" });
         await log.waitFor();
         received.push(await (await reader.page.request.get((await log.getAttribute("href")) ?? "")).text());
-        await reader.page.getByText(new RegExp(`^${speed} rpm: .* of this design`)).click();
+        await fold.click();
       }
       expect(received).toEqual(sent);
 
