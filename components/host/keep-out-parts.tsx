@@ -6,6 +6,7 @@ import { EmptyState } from "@/components/ui/states";
 import type { BenchKeepOuts } from "@/lib/contracts/keep-outs";
 import { formatNumber } from "@/lib/format/numbers";
 import { AddKeepOutBoxForm, DropKeepOut } from "./keep-out-forms";
+import { AddKeepOutMeshForm } from "./keep-out-mesh-form";
 
 const cautions = [
   "Measure with the heater cold and unplugged and the fan at rest.",
@@ -40,6 +41,9 @@ export function KeepOutsPart({ benchVersionId, keepOuts }: { benchVersionId: str
           <div>
             <Fold title="Add a box …">
               <AddKeepOutBoxForm benchVersionId={benchVersionId} />
+            </Fold>
+            <Fold title="Add a mesh …">
+              <AddKeepOutMeshForm benchVersionId={benchVersionId} />
             </Fold>
           </div>
         </>

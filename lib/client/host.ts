@@ -2,6 +2,7 @@ import { useMutation, useQuery, useQueryClient, type UseMutationResult } from "@
 import type { z } from "zod";
 import { startedSession } from "@/lib/contracts/bench-session";
 import type { startBenchSession } from "@/lib/contracts/control";
+import type { KeepOutUnit } from "@/lib/contracts/keep-outs";
 import { levelsTrial, type LevelsTrial } from "@/lib/contracts/seasons-admin";
 import { useWrite } from "./act";
 import { getJson, send, sendJson, withQuery, type ApiError } from "./fetcher";
@@ -45,6 +46,24 @@ export function useEndLoan(roundId: string): UseMutationResult<void, ApiError, v
   const client = useQueryClient();
   return useMutation<void, ApiError, void>({
     mutationFn: () => send(at(`rounds/${roundId}/loan`), { method: "DELETE" }),
+    onSuccess: () => client.invalidateQueries({ queryKey: hostKeys.all }),
+  });
+}
+
+export interface MeshToAdd {
+  file: File;
+  query: { name: string; note: string; unit: KeepOutUnit };
+}
+
+/** Sends a keep-out solid's model file; the server reads it before it answers. */
+export function useAddKeepOutMesh(benchVersionId: string): UseMutationResult<void, ApiError, MeshToAdd> {
+  const client = useQueryClient();
+  return useMutation<void, ApiError, MeshToAdd>({
+    mutationFn: ({ file, query }) =>
+      send(withQuery(at(`bench-versions/${benchVersionId}/keep-out-meshes`), query), {
+        method: "POST",
+        file: { content: file, type: "application/octet-stream" },
+      }),
     onSuccess: () => client.invalidateQueries({ queryKey: hostKeys.all }),
   });
 }

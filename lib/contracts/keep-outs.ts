@@ -21,6 +21,21 @@ export const newKeepOutBox = z
   });
 export type NewKeepOutBox = z.output<typeof newKeepOutBox>;
 
+/** The largest model file of a solid, bytes. */
+export const keepOutFileMaxBytes = 32_000_000;
+
+/** Millimetres in one unit of a file, by the unit's sign; "file" is the unit that a 3MF names by itself. */
+export const keepOutUnits = { mm: 1, cm: 10, m: 1000, in: 25.4, file: undefined } as const;
+export type KeepOutUnit = keyof typeof keepOutUnits;
+
+/** What is said of a solid's model file, which is the request's body. Its unit is never guessed. */
+export const newKeepOutMesh = z.strictObject({
+  name,
+  note,
+  unit: z.enum(Object.keys(keepOutUnits) as KeepOutUnit[], { error: "is missing: mm, cm, m, in or file" }),
+});
+export type NewKeepOutMesh = z.output<typeof newKeepOutMesh>;
+
 const place = z.array(z.number()).length(3).nullable();
 
 /** Keep-out solids of a bench version; `frozen` says why they stand as they are, null while they can be changed. */

@@ -5,7 +5,7 @@ import { attachFile, fileOfContent } from "@/db/queries/uploads";
 import type { DemoBench } from "@/db/seeds/demo/seed-bench";
 import { isShallow, toyFinStack, toyMesh } from "@/db/seeds/demo/toy-mesh";
 import type { DemoDesign, DemoRevision } from "@/db/seeds/demo/world";
-import type { Mesh } from "@/lib/science/geometry/mesh";
+import { meshBounds, type Mesh } from "@/lib/science/geometry/mesh";
 import { writeBinaryStl } from "@/lib/science/geometry/stl-write";
 import { contentOf, keepContent } from "@/lib/server/uploads/content";
 import { startJobs } from "@/lib/services/jobs/jobs";
@@ -41,7 +41,9 @@ export async function seedFiles(
   }
   const host = people.get("alderkeeper") ?? "";
   for (const [i, version] of bench.versions.entries()) {
-    const fileId = await keep(db, toyFinStack(i === 0 ? 46 : 52), `Fin stack, bench version ${i + 1}, invented`, host);
+    const fins = toyFinStack(i === 0 ? 46 : 52);
+    const reach = meshBounds(fins);
+    const fileId = await keep(db, fins, `Fin stack, bench version ${i + 1}, invented`, host);
     const note = "fins, without the pipes";
     await db("keep_out").insert({
       bench_version_id: version.id,
@@ -49,6 +51,8 @@ export async function seedFiles(
       shape: "mesh",
       file_id: fileId,
       note,
+      extent_min_mm: reach ? [...reach.min] : null,
+      extent_max_mm: reach ? [...reach.max] : null,
     });
   }
   await askToRead(db, fileIds);

@@ -72,7 +72,8 @@ async function takeIn(
   return { sha256: hash.digest("hex"), bytes };
 }
 
-async function* chunksOf(body: ReadableStream<Uint8Array> | null): AsyncGenerator<Uint8Array> {
+/** A request's body as it comes; what is left unread is let go. */
+export async function* chunksOf(body: ReadableStream<Uint8Array> | null): AsyncGenerator<Uint8Array> {
   if (!body) return;
   const reader = body.getReader();
   try {

@@ -23,7 +23,8 @@ async function meshOf({ id, name, minMm, maxMm }: KitSolid): Promise<Mesh> {
   const file = await shownKeepOutFile(publicDb(), { keepOutId: id });
   if (!file) throw new ExpectedError("gone", `The file of ${name} was taken down.`);
   const { body } = await storage().get(file.storageKey);
-  return asLocalFile(body, (path) => readMeshAlone(path));
+  // Solids are kept in mm, whatever their size makes one guess.
+  return asLocalFile(body, (path) => readMeshAlone(path, 1));
 }
 
 /** One keep-out solid as a binary STL in cooler coordinates, mm. */

@@ -54,6 +54,11 @@ export const hostRows: MatrixRows = {
     body: { name: "Memory", minMm: [62, -70, -45], maxMm: [70, 70, 8] },
     expected: hostOnly(404),
   },
+  "POST /api/v1/host/bench-versions/[id]/keep-out-meshes": {
+    path: () => `${under("bench-versions", "keep-out-meshes")()}?name=Fins&unit=mm`,
+    body: {},
+    expected: hostOnly(404),
+  },
   "DELETE /api/v1/host/keep-outs/[id]": { path: under("keep-outs"), expected: hostOnly(404) },
   "POST /api/v1/host/bench-versions/[id]/budgets": {
     path: under("bench-versions", "budgets"),
