@@ -9,6 +9,7 @@ export function FrameTable({ frames }: { frames: readonly HostFrame[] }) {
   return (
     <BarsTable
       caption="Frames"
+      phone="fold"
       columns={[
         { key: "name", head: "Frame", unit: "mm" },
         { key: "outer", head: "Outer", unit: "mm" },

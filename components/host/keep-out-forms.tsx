@@ -57,8 +57,8 @@ export function DropKeepOut({ id, name, shape }: { id: string; name: string; sha
   };
   return (
     <>
-      <Button small onClick={() => setAsking(true)} aria-label={`Take ${name} off`}>
-        Take off …
+      <Button small onClick={() => setAsking(true)}>
+        Take off<span className="sr-only"> {name}</span> …
       </Button>
       <Dialog
         open={asking}

@@ -1,6 +1,7 @@
 import Link from "next/link";
 import { BarsTable } from "@/components/ui/bars/bars-table";
 import { Fold } from "@/components/ui/fold";
+import { Missing } from "@/components/ui/missing";
 import { CautionList } from "@/components/ui/notice";
 import { EmptyState } from "@/components/ui/states";
 import type { BenchKeepOuts } from "@/lib/contracts/keep-outs";
@@ -76,7 +77,7 @@ function Solids({ items, changeable }: { items: BenchKeepOuts["items"]; changeab
           shape: { words: shape },
           min: corner(minMm),
           max: corner(maxMm),
-          note: note === "" ? { figure: { value: null, why: "there is nothing to add" } } : { words: note },
+          note: { words: note === "" ? <Missing why="there is nothing to add" /> : note },
           drop: { words: <DropKeepOut id={id} name={name} shape={shape} /> },
         },
       }))}
