@@ -58,7 +58,7 @@ export function DropKeepOut({ id, name, shape }: { id: string; name: string; sha
   return (
     <>
       <Button small onClick={() => setAsking(true)}>
-        Take off<span className="sr-only"> {name}</span> …
+        Take off <span className="sr-only">{name} </span>…
       </Button>
       <Dialog
         open={asking}
