@@ -6,8 +6,17 @@ import { addKeepOutBox, dropKeepOut, readKeepOuts } from "@/lib/server/benches/k
 import { readFitLimits } from "@/lib/server/reading/fit-limits";
 import { kitSolidStl } from "@/lib/server/kit/kit-solids";
 import { readKit } from "@/lib/server/kit/read-kit";
+import { publishDueRounds, scheduleRound } from "@/lib/server/publishing/schedule";
+import { signRound } from "@/lib/server/review/sign-round";
 import { analyseMesh } from "@/lib/science/geometry/analyse";
-import { asHost, asOperator, makeBenchWorld, type BenchWorld } from "../factories/measured-round";
+import {
+  asHost,
+  asOperator,
+  asReviewer,
+  makeBenchWorld,
+  measureRound,
+  type BenchWorld,
+} from "../factories/measured-round";
 import { readBytes } from "../factories/rotor-mesh";
 import { setUpDatabase } from "../setup/database";
 
@@ -123,5 +132,22 @@ describe("a bench version that an opened season stands on", () => {
     const { mesh } = await readBytes((await kitSolidStl({ slug: "season-9", id })).bytes);
     expect(analyseMesh(mesh).volumeMm3).toBeCloseTo(14 * 150 * 24.5, 6);
     await expect(dropKeepOut(host, { keepOutId: id })).rejects.toMatchObject({ code: "moved_on" });
+  });
+});
+
+describe("a bench version whose figures are published", () => {
+  it("keeps its solids, whatever becomes of the season", async () => {
+    const { roundId } = await measureRound(world, { number: 1 });
+    const at = new Date();
+    await signRound(asReviewer(world), { roundId, remark: "", at });
+    await scheduleRound(host, { roundId, publishAt: null, now: at });
+    expect((await publishDueRounds(new Date(), undefined, 50)).published).toEqual([roundId]);
+    // No host can close a season's opening; the figures alone are to hold the solids here.
+    await db.owner("season").where({ slug: "season-1" }).update({ opened_at: null });
+    const { frozen, items } = await readKeepOuts(host.actor, { benchVersionId: usedVersionId });
+    expect(frozen).toMatch(/any more: figures measured on it are published\./);
+    const keepOutId = items[0]?.id ?? "";
+    await expect(dropKeepOut(host, { keepOutId })).rejects.toMatchObject({ code: "moved_on", detail: frozen });
+    await expect(db.app("keep_out").where({ id: keepOutId }).delete()).rejects.toThrow("the bench version is in use");
   });
 });
