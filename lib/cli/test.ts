@@ -60,7 +60,7 @@ export async function main(_order: string, chosen: string[]): Promise<void> {
   process.exit(results.length > 0 && results.every((each) => each.failed === 0) ? 0 : 1);
 }
 
-/** In their order; what stands in one group uses one core each and nothing of the others, so it runs side by side. */
+/** In their order; what stands in one group uses a core each at most and nothing of the others: it runs side by side. */
 function allSteps(life: Lifetime, folder: string, seeded: string): Step[][] {
   const programs = path.join(root, "node_modules");
   const node = (name: string, ...calls: string[][]): Step => ({
@@ -101,8 +101,8 @@ function allSteps(life: Lifetime, folder: string, seeded: string): Step[][] {
       },
       { name: "demo", run: () => seedOnce(life, seeded) },
     ],
-    [vitest("api")],
-    [vitest("faults")],
+    // Each waits more than it computes: for processes to die and come back, for one answer after the other.
+    [vitest("api"), vitest("faults")],
     [vitest("browser")],
   ];
 }
