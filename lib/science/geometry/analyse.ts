@@ -7,7 +7,7 @@ import { withPositiveLead } from "./axis-directions";
 import { pointInFile } from "./axis-frame";
 import { fitInFrame } from "./frame-fit";
 import { massProperties, shellIntegrals, addIntegrals, type SolidIntegrals } from "./mass-properties";
-import { diagonalMm, meshBounds, middleOf, type Mesh, type Vec3 } from "./mesh";
+import { diagonalMm, meshBounds, middleOf, signedVolume, type Mesh, type Vec3 } from "./mesh";
 import { shellOverlaps } from "./overlaps";
 import { outerRadius } from "./polar";
 import { radiiTo, type FoundRow } from "./rotor-search";
@@ -60,9 +60,11 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const shells = soup ? 1 : edges.shellCount;
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
   const { searched, crumbs } = withoutCrumbs(shellOf, soup ? [] : report.areasMm2);
+  const volumeMm3 =
+    watertight && turned === 0 ? report.integrals.reduce((sum, shell) => sum + shell.volumeMm3, 0) : signedVolume(mesh);
   const finding = soup
     ? undefined
-    : findAxis(mesh, searched, shells, tiny, bounds, options.axis && FILE_AXES[options.axis]);
+    : findAxis(mesh, searched, shells, tiny, { bounds, volumeMm3 }, options.axis && FILE_AXES[options.axis]);
   const upright = finding ?? boxUpright(mesh, middle);
   const overlapLines =
     finding?.search.overlaps.overlapLines ?? (soup ? 0 : probe(upright.mesh, shellOf, shells, tiny).overlapLines);

@@ -15,6 +15,7 @@ export interface AxisFinding {
   readonly search: RotorSearch;
 }
 
+/** So many faces tell directions and centres; of meshes that are searched in a coarser copy, half as many. */
 const FACES_MAX = 12_000;
 /** Knuth's multiplicative hash: strides through the triangles without marching in step with a grid's rows. */
 const SCATTER = 0x9e3779b1;
@@ -28,7 +29,7 @@ const ALIKE = 0.02;
 /** One of every n triangles that take part, so that directions and centres of very fine meshes are found from a sample. */
 function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
   const count = mesh.triangles.length / 3;
-  const stride = Math.ceil(count / FACES_MAX);
+  const stride = Math.ceil(count / (count > COARSE_ABOVE ? FACES_MAX / 2 : FACES_MAX));
   if (stride <= 1 && !shellOf.includes(-1)) return mesh;
   const triangles = new Uint32Array(3 * Math.ceil(count / stride));
   const numbers = new Int32Array(mesh.positions.length / 3).fill(-1);
@@ -52,7 +53,7 @@ function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
 /**
  * The axis about which the file's blades turn: each likely direction is stood upright, centred and searched coarsely;
  * the one whose rows of blades are surest wins and is searched finely. Undefined where no direction shows blades.
- * @param bounds of the mesh
+ * @param known bounds of the mesh, and its volume, mm³
  * @param direction fixes the direction (length 1), as when a person names a file axis
  */
 export function findAxis(
@@ -60,16 +61,17 @@ export function findAxis(
   shellOf: Int32Array,
   shells: number,
   tinyMm: number,
-  bounds: Bounds,
+  known: { readonly bounds: Bounds; readonly volumeMm3: number },
   direction?: Vec3,
 ): AxisFinding | undefined {
   const sample = thinned(mesh, shellOf);
   const directions = direction ? [direction] : axisDirections(facesOf(sample));
   const places = directions.map((candidate) => () => placeOf(sample, candidate));
-  const fine = shellOf.length > COARSE_ABOVE ? coarsened(mesh, shellOf, bounds) : undefined;
+  const fine = shellOf.length > COARSE_ABOVE ? coarsened(mesh, shellOf, known.bounds) : undefined;
   let best = surest(fine?.mesh ?? mesh, fine?.shellOf ?? shellOf, shells, tinyMm, places);
   // Walls too thin for the coarser copy show in the mesh itself, about the likeliest axis.
-  if (fine && !best && !likeIn(fine.mesh, mesh)) best = surest(mesh, shellOf, shells, tinyMm, places.slice(0, 1));
+  if (fine && !best && !likeIn(fine.mesh, known.volumeMm3))
+    best = surest(mesh, shellOf, shells, tinyMm, places.slice(0, 1));
   if (!best) return undefined;
   const upright = meshInFrame(mesh, best.frame, best.originMm);
   const search = searchRotors(upright, shellOf, shells, fineGrid, tinyMm);
@@ -77,10 +79,8 @@ export function findAxis(
 }
 
 /** Whether a coarser copy holds as much as the mesh, so that nothing to speak of vanished. */
-function likeIn(coarse: Mesh, mesh: Mesh): boolean {
-  const whole = signedVolume(mesh);
-  return Math.abs(signedVolume(coarse) - whole) < ALIKE * Math.abs(whole);
-}
+const likeIn = (coarse: Mesh, volumeMm3: number): boolean =>
+  Math.abs(signedVolume(coarse) - volumeMm3) < ALIKE * Math.abs(volumeMm3);
 
 interface Place {
   readonly frame: AxisFrame;

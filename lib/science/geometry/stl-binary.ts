@@ -53,13 +53,11 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
   const out = new Uint32Array(3 * triangles);
   const byParity = new AlignedRecords();
   let against = 0;
+  const nextChunk = chunksOf(source, triangles);
   for (let first = 0; first < triangles; first += RECORDS_PER_CHUNK) {
     watch.step(first, triangles);
     const count = Math.min(RECORDS_PER_CHUNK, triangles - first);
-    const length = count * STL_RECORD_BYTES;
-    const chunk = await source.read(STL_HEADER_BYTES + first * STL_RECORD_BYTES, length);
-    if (chunk.length < length) throw new Refusal("truncated", "The file ends inside its triangles.", first + 1);
-    byParity.set(chunk);
+    await nextChunk(first, byParity);
     for (let record = 0; record < count; record++) {
       const from = (record & 1) === 0 ? byParity.even : byParity.odd;
       const start = (STL_RECORD_BYTES * record + 2) >> 2;
@@ -80,6 +78,26 @@ export async function readBinaryStl(source: ByteSource, triangles: number, watch
   }
   watch.step(triangles, triangles);
   return { mesh: { positions: weld.finish(), triangles: out }, normalsAgainst: NORMALS_EVERY * against, warnings: [] };
+}
+
+/** Copies one chunk after the other; the next is fetched while the last is gone through. */
+function chunksOf(source: ByteSource, triangles: number): (first: number, into: AlignedRecords) => Promise<void> {
+  const lengthFrom = (first: number) => STL_RECORD_BYTES * Math.min(RECORDS_PER_CHUNK, triangles - first);
+  const fetchFrom = async (first: number) =>
+    source.read(STL_HEADER_BYTES + STL_RECORD_BYTES * first, lengthFrom(first));
+  let ahead: Promise<Uint8Array> | undefined;
+  return async (first, into) => {
+    const chunk = await (ahead ?? fetchFrom(first));
+    if (chunk.length < lengthFrom(first)) {
+      throw new Refusal("truncated", "The file ends inside its triangles.", first + 1);
+    }
+    into.set(chunk);
+    const next = first + RECORDS_PER_CHUNK;
+    if (next >= triangles) return;
+    ahead = fetchFrom(next);
+    // A reading that ends early waits for nothing more.
+    ahead.catch(() => undefined);
+  };
 }
 
 /** The bits of a number, −0 as 0. */
