@@ -10,7 +10,7 @@ import { massProperties, shellIntegrals, addIntegrals, type SolidIntegrals } fro
 import { diagonalMm, meshBounds, middleOf, signedVolume, type Mesh, type Vec3 } from "./mesh";
 import { shellOverlaps } from "./overlaps";
 import { outerRadius } from "./polar";
-import { radiiTo, type FoundRow } from "./rotor-search";
+import { radiiTo, type FoundRow, type RotorSearch } from "./rotor-search";
 import { rotorTraits, type MeasuredRow } from "./rotor-traits";
 import { onlyShells, SHELLS_MAX, shellReport, withoutCrumbs, withShellsTurned, type ShellReport } from "./shells";
 import { readDucts } from "./standing-parts";
@@ -76,8 +76,7 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
     ? { integrals: report.integrals.map((one): SolidIntegrals => ({ ...one, originMm: [0, 0, 0] })) }
     : shellIntegrals(upright.mesh, shellOf, shells, [0, 0, 0]);
   const blades = finding?.search.rows[0]?.row.blades ?? 1;
-  const excess = (own: Int32Array): SolidIntegrals =>
-    excessIntegrals(upright.mesh, own, outerRadius(upright.mesh, own), evenAngles(blades));
+  const excess = excessOf(upright.mesh, evenAngles(blades), finding?.search);
   const whole =
     watertight && !soup
       ? lessExcess(sumIntegrals(integrals), overlapLines > 0 ? excess(shellOf) : undefined)
@@ -131,6 +130,19 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
     fit: options.frame && swept.length > 0 ? fitInFrame(swept, options.frame) : null,
     warnings,
     mesh,
+  };
+}
+
+/** What shells have in common, worked out once for each choice of shells: one rotor's are often all that there are. */
+function excessOf(mesh: Mesh, angles: number, search: RotorSearch | undefined): (own: Int32Array) => SolidIntegrals {
+  const known = new Map<Int32Array, SolidIntegrals>();
+  return (own) => {
+    const kept = known.get(own);
+    if (kept) return kept;
+    const columns = search?.shellOf === own ? search.columns : undefined;
+    const made = excessIntegrals(mesh, own, outerRadius(mesh, own), angles, columns);
+    known.set(own, made);
+    return made;
   };
 }
 

@@ -52,10 +52,18 @@ const PHASE_ANGLE = (grid: Columns["grid"], line: number): number =>
  * What shells that share space have in common, counted as often as the sum of their volumes counts it too much:
  * sum − excess = union. Sampled by lines parallel to z, finely over the radii where anything overlaps; volumes come out
  * within some tenths of a percent of the overlap. Shells face outwards, hollows inwards.
+ * @param known the same shells cast before at evenly spaced radii, which tell where they overlap
  */
-export function excessIntegrals(mesh: Mesh, shellOf: Int32Array, outerMm: number, angles: number): SolidIntegrals {
-  const coarse = castColumns(mesh, shellOf, { radiiMm: radiiTo(outerMm, COARSE_RADII), angles: evenAngles(24) / 2 });
-  const step = outerMm / COARSE_RADII;
+export function excessIntegrals(
+  mesh: Mesh,
+  shellOf: Int32Array,
+  outerMm: number,
+  angles: number,
+  known?: Columns,
+): SolidIntegrals {
+  const coarse =
+    known ?? castColumns(mesh, shellOf, { radiiMm: radiiTo(outerMm, COARSE_RADII), angles: evenAngles(24) / 2 });
+  const step = outerMm / coarse.grid.radiiMm.length;
   let [low, high] = [Infinity, -Infinity];
   eachExcess(coarse, (line) => {
     const r = coarse.grid.radiiMm[Math.floor(line / coarse.grid.angles)] ?? 0;
