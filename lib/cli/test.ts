@@ -103,7 +103,7 @@ function allSteps(life: Lifetime, folder: string, seeded: string): Step[][] {
     ],
     // Each waits more than it computes: for processes to die and come back, for one answer after the other.
     [vitest("api"), vitest("faults")],
-    [vitest("browser"), vitest("pages")],
+    [vitest("browser")],
   ];
 }
 

@@ -26,9 +26,6 @@ const served = {
   fileParallelism: false,
 };
 
-/** The crawl of every page is as long as the rest of the browser's tests, so that it has a server of its own. */
-const everyPage = "tests/browser/pages.test.ts";
-
 export default defineConfig({
   root,
   resolve: { alias: { "@": root } },
@@ -43,8 +40,7 @@ export default defineConfig({
       plain("db", { ...patient, globalSetup: ["tests/setup/cluster-setup.ts"] }),
       plain("faults", { ...patient, testTimeout: 400_000, fileParallelism: false }),
       plain("api", served),
-      plain("browser", { ...served, exclude: [everyPage] }),
-      plain("pages", { ...served, include: [everyPage] }),
+      plain("browser", served),
     ],
   },
 });

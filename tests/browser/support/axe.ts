@@ -2,7 +2,7 @@ import { readFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import type { Page } from "playwright-core";
 
-const axeFile = createRequire(import.meta.url).resolve("axe-core/axe.min.js");
+const axeSource = readFileSync(createRequire(import.meta.url).resolve("axe-core/axe.min.js"), "utf8");
 
 /**
  * What axe finds wrong on the page as it stands, a line a rule with the first element it names; empty when nothing.
@@ -10,12 +10,14 @@ const axeFile = createRequire(import.meta.url).resolve("axe-core/axe.min.js");
  */
 export async function wrongsByAxe(page: Page, rules?: string[]): Promise<string[]> {
   // Evaluated, not loaded as a script: the page's policy lets in no script but its own.
-  await page.evaluate(readFileSync(axeFile, "utf8"));
+  if (!(await page.evaluate(() => "axe" in window))) await page.evaluate(axeSource);
   return page.evaluate(async (only) => {
     const { axe } = window as unknown as {
       axe: { run(options: object): Promise<{ violations: { id: string; nodes: { html: string }[] }[] }> };
     };
-    const options = only ? { runOnly: { type: "rule", values: only } } : {};
+    // The same rules; what is only told of (selectors, what passed) is left out, which is a good part of the time.
+    const told = { resultTypes: ["violations"], selectors: false, preload: { assets: ["media"] } };
+    const options = only ? { ...told, runOnly: { type: "rule", values: only } } : told;
     return (await axe.run(options)).violations.map((each) => `${each.id}: ${each.nodes[0]?.html ?? ""}`);
   }, rules);
 }
