@@ -120,16 +120,15 @@ export async function studyDerivations(db: Handle): Promise<Derivation[]> {
 export async function studyChoices(
   db: Handle,
 ): Promise<{ frame: string; rotation: string; season: string; seasonNumber: number; title: string; count: number }[]> {
-  return db("shown.entry")
+  return db("shown.study_choice")
     .select({
       frame: "frame_key",
       rotation: "rotation",
       season: "season_slug",
       seasonNumber: "season_number",
       title: "season_title",
+      count: "count",
     })
-    .select(db.raw("count(*)::int as count"))
-    .groupBy("frame_key", "rotation", "season_slug", "season_number", "season_title")
     .orderBy(["season_number", "frame_key", "rotation"]);
 }
 
