@@ -60,7 +60,7 @@ function analyse(meshIn: Mesh, options: AnalysisOptions, closely: boolean): Mesh
   const shells = soup ? 1 : edges.shellCount;
   const watertight = edges.openEdges === 0 && edges.misorientedEdges === 0 && edges.shellCount > 0;
   const { searched, crumbs } = withoutCrumbs(shellOf, soup ? [] : report.areasMm2);
-  const volumeMm3 =
+  const volumeMm3 = (): number =>
     watertight && turned === 0 ? report.integrals.reduce((sum, shell) => sum + shell.volumeMm3, 0) : signedVolume(mesh);
   const finding = soup
     ? undefined

@@ -53,7 +53,7 @@ function thinned(mesh: Mesh, shellOf: Int32Array): Mesh {
 /**
  * The axis about which the file's blades turn: each likely direction is stood upright, centred and searched coarsely;
  * the one whose rows of blades are surest wins and is searched finely. Undefined where no direction shows blades.
- * @param known bounds of the mesh, and its volume, mm³
+ * @param known bounds of the mesh, and its volume, mm³, asked for only where a coarser copy shows nothing
  * @param direction fixes the direction (length 1), as when a person names a file axis
  */
 export function findAxis(
@@ -61,7 +61,7 @@ export function findAxis(
   shellOf: Int32Array,
   shells: number,
   tinyMm: number,
-  known: { readonly bounds: Bounds; readonly volumeMm3: number },
+  known: { readonly bounds: Bounds; readonly volumeMm3: () => number },
   direction?: Vec3,
 ): AxisFinding | undefined {
   const sample = thinned(mesh, shellOf);
@@ -70,7 +70,7 @@ export function findAxis(
   const fine = shellOf.length > COARSE_ABOVE ? coarsened(mesh, shellOf, known.bounds) : undefined;
   let best = surest(fine?.mesh ?? mesh, fine?.shellOf ?? shellOf, shells, tinyMm, places);
   // Walls too thin for the coarser copy show in the mesh itself, about the likeliest axis.
-  if (fine && !best && !likeIn(fine.mesh, known.volumeMm3))
+  if (fine && !best && !likeIn(fine.mesh, known.volumeMm3()))
     best = surest(mesh, shellOf, shells, tinyMm, places.slice(0, 1));
   if (!best) return undefined;
   const upright = meshInFrame(mesh, best.frame, best.originMm);

@@ -1,10 +1,7 @@
-import type { Readable } from "node:stream";
 import { appDb } from "@/db/client/handles";
 import { insertListened, type RecordingRow } from "@/db/queries/recordings";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import type { Actor } from "@/lib/domain/accounts/actor";
-import { storage } from "@/lib/services/storage/from-env";
-import type { ByteRange } from "@/lib/services/storage/storage";
 import { note, type Asked } from "../audit/audit";
 import { demandRecording } from "./recordings";
 
@@ -29,9 +26,4 @@ export async function findRecordingFile(actor: Actor, { recordingId }: { recordi
     throw new ExpectedError("moved_on", "A recording is served once somebody listened to it and heard no voices.");
   }
   return row;
-}
-
-/** The bytes of a recording, or a part of them. */
-export async function openRecordingFile(row: RecordingRow, range: ByteRange | undefined): Promise<Readable> {
-  return (await storage().get(row.storageKey, range)).body;
 }

@@ -1,11 +1,8 @@
-import type { Readable } from "node:stream";
 import { appDb, publicDb } from "@/db/client/handles";
 import { attachedFile, dropAttachment, shownFile, type AttachedFile } from "@/db/queries/files";
 import { isPerson, type Actor } from "@/lib/domain/accounts/actor";
 import { may } from "@/lib/domain/accounts/policy";
 import { ExpectedError } from "@/lib/domain/expected-error";
-import type { ByteRange } from "@/lib/services/storage/storage";
-import { storage } from "@/lib/services/storage/from-env";
 import { note, type Asked } from "../audit/audit";
 
 const missing = (): ExpectedError => new ExpectedError("not_found", "There is no such file.");
@@ -29,11 +26,6 @@ async function unpublished(actor: Actor, attachmentId: string) {
   const file = await attachedFile(appDb(), { attachmentId, personId: actor.personId });
   if (!file || !may(actor, "design.read", { ownsDesign: file.ownsDesign })) throw missing();
   return file;
-}
-
-/** The bytes of a file, or a part of them. */
-export async function openFile(file: AttachedFile, range: ByteRange | undefined): Promise<Readable> {
-  return (await storage().get(file.storageKey, range)).body;
 }
 
 /** Takes a file off a draft of one's own. @throws ExpectedError not_found; moved_on once the revision was sent in */

@@ -1,11 +1,8 @@
-import type { Readable } from "node:stream";
 import { publicDb } from "@/db/client/handles";
 import { shownSessionFile, type SessionFileRow } from "@/db/queries/shown/session-files";
 import type { SessionFile } from "@/lib/contracts/raw-runs";
 import { ExpectedError } from "@/lib/domain/expected-error";
 import { formatDate } from "@/lib/format/dates";
-import { storage } from "@/lib/services/storage/from-env";
-import type { ByteRange } from "@/lib/services/storage/storage";
 
 /** A log or recording as readers are told of it. */
 export function sessionFileOf(file: SessionFileRow): SessionFile {
@@ -38,9 +35,4 @@ export async function findSessionFile({ fileId }: { fileId: string }): Promise<S
   const why = whyNotServed(file);
   if (why !== null) throw new ExpectedError(file.state === "taken_down" ? "gone" : "moved_on", `This file is ${why}.`);
   return file;
-}
-
-/** The bytes of such a file, or a part of them. */
-export async function openSessionFile(file: SessionFileRow, range: ByteRange | undefined): Promise<Readable> {
-  return (await storage().get(file.storageKey, range)).body;
 }
